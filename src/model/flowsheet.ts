@@ -1,0 +1,109 @@
+import type { Component } from './component.ts';
+import type { Place } from './place.ts';
+import type { Reaction } from './reaction.ts';
+
+export type GasModelName = 'ideal' | 'srk' | 'pr';
+export type MethodName = 'auto' | 'direct' | 'wegstein' | 'anderson';
+
+/** A stream that enters across the battery limit, as the user gave it (SI). */
+export interface Feed {
+  readonly name: string;
+  readonly temperatureK: number;
+  readonly pressurePa: number;
+  /**
+   * Total flow: mol/s for molar, kg/s for mass, normal m3/s (0 degC, 1.01325 bar) for normalVolume.
+   * Null when the flows of the components are given one by one (then `parts` are mol/s).
+   */
+  readonly flow: { readonly value: number; readonly per: 'molar' | 'mass' | 'normalVolume' } | null;
+  /** parts per component in declared order, not normalised (or mol/s, see flow) */
+  readonly parts: Float64Array;
+  /** what the parts of a composition count */
+  readonly basis: 'mole' | 'mass';
+}
+
+/** One unit operation of the file: its kind and its settings in SI, checked by the schema of that kind. */
+export interface BlockSpec {
+  readonly name: string;
+  readonly kind: string;
+  /** as the kind's schema hands it over: K, Pa, W, mol/s, fractions 0–1; keys as in the file */
+  readonly settings: Readonly<Record<string, unknown>>;
+}
+
+/** What flows from one port to another. An end without a block is a feed or the battery limit. */
+export interface StreamSpec {
+  readonly tag: string;
+  /** a feed's or a block's name; port is null for a feed or for a block with a single outlet */
+  readonly from: { readonly name: string; readonly port: string | null };
+  /** null is the battery limit (`out` in the file) */
+  readonly to: { readonly name: string; readonly port: string | null } | null;
+}
+
+/** What the key figures refer to, every default filled in. */
+export interface LedgerSpec {
+  /** null where the flowsheet has no product that can be told */
+  readonly product: { readonly component: string; readonly stream: string } | null;
+  readonly reactant: string | null;
+  readonly purge: readonly string[];
+  readonly recycle: string | null;
+}
+
+/** A number computed from a closed flowsheet; see flowsheet/formula-scope for what it may name. */
+export interface Formula {
+  readonly text: string;
+  readonly evaluate: (scope: Readonly<Record<string, unknown>>) => number;
+}
+
+/** A wanted value for a figure, reached by moving one setting. */
+export interface Aim {
+  readonly name: string;
+  /** path of the setting moved, e.g. purge.fractions.bleed */
+  readonly move: string;
+  /** bounds in SI, low < high */
+  readonly between: readonly [number, number];
+  readonly until: Formula;
+  /** wanted value in the unit of the formula */
+  readonly target: number;
+  /** SI unit of the setting moved, '' for fractions and numbers */
+  readonly unit: string;
+}
+
+export interface UserFigure {
+  readonly name: string;
+  readonly formula: Formula;
+  /** unit shown; '%' shows the fraction times 100 */
+  readonly unit: string;
+}
+
+export interface SolveSpec {
+  readonly method: MethodName;
+  readonly tolerance: number;
+  readonly maxPasses: number;
+  /** tags of prescribed tears, empty: chosen by Looptally */
+  readonly tear: readonly string[];
+}
+
+/** A checked flowsheet: every name resolved, every value in SI. */
+export interface Flowsheet {
+  readonly file: string;
+  readonly title: string;
+  readonly notes: string;
+  /** the case that was applied, if any */
+  readonly caseName: string | null;
+  readonly components: readonly Component[];
+  readonly gas: GasModelName;
+  readonly liquid: 'antoine';
+  readonly dissolvedGases: boolean;
+  readonly reactions: readonly Reaction[];
+  readonly feeds: readonly Feed[];
+  readonly blocks: readonly BlockSpec[];
+  readonly streams: readonly StreamSpec[];
+  readonly ledger: LedgerSpec;
+  readonly aims: readonly Aim[];
+  readonly cases: readonly string[];
+  readonly figures: readonly UserFigure[];
+  readonly solve: SolveSpec;
+  /** defaults that were filled in while reading, in plain sentences */
+  readonly assumptions: readonly string[];
+  /** where a part of the flowsheet stands in the file: `blocks.condenser.temperature`, `streams.S2`, ... */
+  readonly placeOf: (path: string) => Place;
+}

@@ -1,0 +1,27 @@
+import type { GasModelName } from '../model/flowsheet.ts';
+
+/**
+ * Vapour-phase model of a fixed list of components. Every method takes T [K], P [Pa] and mole fractions of
+ * the gas in component order (solids 0), allocates nothing and always takes the vapour root.
+ */
+export interface GasModel {
+  readonly name: GasModelName;
+  readonly size: number;
+  /** ln of the fugacity coefficients, written into `out`; 0 for solids */
+  lnPhi(T: number, P: number, y: Float64Array, out: Float64Array): void;
+  /** Z = PV/(RT) */
+  compressibility(T: number, P: number, y: Float64Array): number;
+  /**
+   * True where the model has only the root of a liquid to offer: the mixture, taken as one fluid, is below its
+   * critical temperature and denser than at its critical point. No gas of that composition exists there.
+   */
+  isLiquidLike(T: number, P: number, y: Float64Array): boolean;
+  /** H − H(ideal gas) at the same T, P, y [J/mol] */
+  enthalpyDeparture(T: number, P: number, y: Float64Array): number;
+  /** S − S(ideal gas) at the same T, P, y [J/(mol K)] */
+  entropyDeparture(T: number, P: number, y: Float64Array): number;
+  /** the same for a pure component, by index */
+  pureLnPhi(i: number, T: number, P: number): number;
+  pureCompressibility(i: number, T: number, P: number): number;
+  pureEnthalpyDeparture(i: number, T: number, P: number): number;
+}

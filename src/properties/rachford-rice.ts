@@ -1,0 +1,45 @@
+/**
+ * Vapour fraction V that solves Σ zᵢ (Kᵢ − 1)/(1 + V (Kᵢ − 1)) = 0, by Newton's method kept inside a bracket.
+ *
+ * @param z  overall mole fractions, sum 1 [-]
+ * @param K  y/x at equilibrium; +Infinity for what stays out of the liquid, 0 for what stays out of the gas [-]
+ * @param start  a guess of V
+ * @returns V between 0 and 1; exactly 0 (1) where the sum says that all is liquid (gas)
+ * @source Rachford & Rice, J. Pet. Technol. 4(10) (1952), sect. 1, 19; sect. 2, 3
+ */
+export function vapourFraction(z: Float64Array, K: Float64Array, start: number): number {
+  if (balance(z, K, 1) >= 0) return 1;
+  if (balance(z, K, 0) <= 0) return 0;
+  let low = 0;
+  let high = 1;
+  let V = start > 0 && start < 1 ? start : 0.5;
+  for (let step = 0; step < 100; step++) {
+    let f = 0;
+    let slope = 0;
+    for (let i = 0; i < z.length; i++) {
+      const zi = z[i]!;
+      if (zi === 0) continue;
+      // (K − 1)/(1 + V (K − 1)) written so that an infinite K gives 1/V
+      const a = K[i]! === Number.POSITIVE_INFINITY ? 1 / V : (K[i]! - 1) / (1 + V * (K[i]! - 1));
+      f += zi * a;
+      slope -= zi * a * a;
+    }
+    if (f > 0) low = V;
+    else high = V;
+    let next = V - f / slope;
+    if (!(next > low && next < high)) next = 0.5 * (low + high);
+    if (Math.abs(next - V) <= 1e-15 * V || high - low <= 1e-16) return next;
+    V = next;
+  }
+  return V;
+}
+
+/** The Rachford-Rice sum at V = 0 (Σ zK − 1) or V = 1 (1 − Σ z/K). */
+function balance(z: Float64Array, K: Float64Array, V: 0 | 1): number {
+  let sum = 0;
+  for (let i = 0; i < z.length; i++) {
+    if (z[i]! === 0) continue;
+    sum += V === 0 ? z[i]! * K[i]! : z[i]! / K[i]!;
+  }
+  return V === 0 ? sum - 1 : 1 - sum;
+}
