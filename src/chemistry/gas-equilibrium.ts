@@ -1,0 +1,133 @@
+import type { GasActivity } from './gas-activity.ts';
+import { reachableSpecies } from './reachable-species.ts';
+import { eliminate } from './reaction-rows.ts';
+import { createSimultaneousEquilibrium } from './simultaneous-equilibrium.ts';
+import { createSingleEquilibrium } from './single-equilibrium.ts';
+
+/** Equilibrium of a fixed set of rows from any feed. */
+export interface GasEquilibrium {
+  /** steps of the last solve */
+  readonly steps: number;
+  /**
+   * @param feed amounts, not negative
+   * @param lnK per original reaction, standard pressure folded in
+   * @param amounts equilibrium amounts, written; solids may come out negative
+   * @param extents per original reaction, written
+   */
+  solve(
+    T: number,
+    P: number,
+    feed: Float64Array,
+    lnK: Float64Array,
+    amounts: Float64Array,
+    extents: Float64Array,
+  ): void;
+}
+
+/** below this share of the gas an amount counts as absent */
+const absentBelow = 1e-200;
+
+/**
+ * Handles what a feed lacks. Species that no sum of the reactions can make stay absent, and the rows are
+ * recombined so that none of the remaining ones touches them; what can be made gets a first trace along a
+ * direction found once per pattern of absent species. The rest is one row, solved inside a bracket, or
+ * several, solved together.
+ *
+ * @param rows reaction rows of `width` (components, then shares of the `reactions` original reactions)
+ */
+export function createGasEquilibrium(
+  rows: Float64Array,
+  count: number,
+  reactions: number,
+  activity: GasActivity,
+): GasEquilibrium {
+  const { inGas } = activity;
+  const size = inGas.length;
+  const width = size + reactions;
+  const single = createSingleEquilibrium(size, activity);
+  const together = createSimultaneousEquilibrium(size, reactions, activity, single);
+  const open = new Float64Array(rows.length);
+  const lacking = new Int8Array(size).fill(-1);
+  const touched = new Uint8Array(size);
+  const direction = new Float64Array(size);
+  const start = new Float64Array(size);
+  const pivots = new Int32Array(count);
+  let openCount = 0;
+  let position = 0;
+  for (let r = 0; r < count; r++) {
+    for (let i = 0; i < size; i++) if (rows[r * width + i] !== 0 && inGas[i] === 1) touched[i] = 1;
+  }
+  const state = { steps: 0, solve };
+
+  function solve(
+    T: number,
+    P: number,
+    feed: Float64Array,
+    lnK: Float64Array,
+    amounts: Float64Array,
+    extents: Float64Array,
+  ): void {
+    state.steps = 0;
+    const total = activity.total(feed);
+    if (patternChanged(feed, total * absentBelow)) openRows();
+    extents.fill(0);
+    amounts.set(feed);
+    if (openCount === 0 || !(total > 0)) return;
+    if (openCount === 1) {
+      let lnKRow = 0;
+      for (let k = 0; k < reactions; k++) lnKRow += open[size + k]! * lnK[k]!;
+      single.solve(open, 0, lnKRow, feed, T, P, position, null, 1e-9, amounts);
+      position = single.position;
+      state.steps = single.steps;
+      for (let k = 0; k < reactions; k++) extents[k] = single.extent * open[size + k]!;
+      return;
+    }
+    interior(feed, total);
+    together.solve(open, openCount, lnK, T, P, feed, start, amounts, extents);
+    state.steps = together.steps;
+  }
+
+  function patternChanged(feed: Float64Array, least: number): boolean {
+    let changed = false;
+    for (let i = 0; i < size; i++) {
+      const lacks = touched[i] === 1 && !(feed[i]! > least) ? 1 : 0;
+      if (lacks !== lacking[i]) {
+        lacking[i] = lacks;
+        changed = true;
+      }
+    }
+    return changed;
+  }
+
+  /** The rows that can run when the species marked in `lacking` are absent, and a way into the open. */
+  function openRows(): void {
+    const absent: number[] = [];
+    for (let i = 0; i < size; i++) if (lacking[i] === 1) absent.push(i);
+    const extentDirection = new Float64Array(count);
+    const reachable = new Uint8Array(absent.length);
+    reachableSpecies(rows, width, count, absent, extentDirection, reachable);
+    direction.fill(0);
+    for (let r = 0; r < count; r++) {
+      for (let i = 0; i < size; i++)
+        direction[i] = direction[i]! + extentDirection[r]! * rows[r * width + i]!;
+    }
+    const never = absent.filter((_, j) => reachable[j] === 0);
+    const work = Float64Array.from(rows);
+    const closed = eliminate(work, width, count, Int32Array.from(never), never.length, pivots);
+    openCount = count - closed;
+    open.set(work.subarray(closed * width));
+    position = 0;
+    together.warm = false;
+  }
+
+  /** A point with every reachable species present: the feed, moved a third of the way it can go. */
+  function interior(feed: Float64Array, total: number): void {
+    let way = total;
+    for (let i = 0; i < size; i++) {
+      if (inGas[i] === 1 && direction[i]! < 0) way = Math.min(way, feed[i]! / -direction[i]!);
+    }
+    for (let i = 0; i < size; i++) start[i] = feed[i]! + 0.3 * way * direction[i]!;
+  }
+
+  return state;
+}
