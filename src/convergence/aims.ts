@@ -1,0 +1,139 @@
+import { PassTrouble } from '../diagnostics/diagnostic.ts';
+import { reachOneAim } from './one-aim.ts';
+import { reachSeveralAims } from './several-aims.ts';
+
+/**
+ * Figures minus their targets at given settings, each divided by the size of its target; closes the loop behind.
+ * May throw PassTrouble or return numbers that are not finite where the loop does not close: such settings are
+ * avoided.
+ */
+export type AimResiduals = (settings: Float64Array) => Float64Array;
+
+export interface AimsOutcome {
+  /** every residual is within its tolerance */
+  readonly reached: boolean;
+  /** the best settings found */
+  readonly values: Float64Array;
+  /** residuals there; NaN when no settings could be evaluated */
+  readonly residuals: Float64Array;
+  /** the setting whose bound stands in the way, −1 when none does */
+  readonly limit: number;
+  readonly limitSide: 'low' | 'high' | null;
+  readonly evaluations: number;
+  /** two aims that ask for the same thing (or one, twice, that no setting moves); null when the aims can be told apart */
+  readonly singular: readonly [number, number] | null;
+  /** the last trouble met on the way, for the account when the aims are not reached */
+  readonly trouble: PassTrouble | null;
+}
+
+export interface AimsOptions {
+  /** evaluations allowed; 60 for each aim when left out */
+  readonly maxEvaluations?: number;
+}
+
+/** The problem of aims with evaluation made safe and counted. */
+export interface AimsSearch {
+  readonly start: Float64Array;
+  readonly low: Float64Array;
+  readonly high: Float64Array;
+  readonly tolerances: Float64Array;
+  /** null where the loop does not close or the evaluations are used up */
+  tryAt(settings: Float64Array): Float64Array | null;
+  /** evaluations left */
+  left(): number;
+  /** the outcome at the best settings tried so far */
+  outcome(
+    limit?: number,
+    side?: 'low' | 'high' | null,
+    singular?: readonly [number, number] | null,
+  ): AimsOutcome;
+}
+
+/**
+ * Move settings within bounds until figures meet their targets: one aim by bracketing, several by a damped
+ * Newton method.
+ *
+ * @param evaluate  residuals of the aims at given settings, as many as settings
+ * @param start,low,high  first settings and their bounds, low < high
+ * @param tolerances  largest |residual| of a reached aim
+ */
+export function reachAims(
+  evaluate: AimResiduals,
+  start: Float64Array,
+  low: Float64Array,
+  high: Float64Array,
+  tolerances: Float64Array,
+  options: AimsOptions = {},
+): AimsOutcome {
+  const search = createSearch(
+    evaluate,
+    start,
+    low,
+    high,
+    tolerances,
+    options.maxEvaluations ?? 60 * start.length,
+  );
+  return start.length === 1 ? reachOneAim(search) : reachSeveralAims(search);
+}
+
+/** Largest residual in units of its tolerance: 1 or less is reached. */
+export function aimsMerit(residuals: Float64Array, tolerances: Float64Array): number {
+  let most = 0;
+  for (let i = 0; i < residuals.length; i++) most = Math.max(most, Math.abs(residuals[i]) / tolerances[i]);
+  return most;
+}
+
+function createSearch(
+  evaluate: AimResiduals,
+  start: Float64Array,
+  low: Float64Array,
+  high: Float64Array,
+  tolerances: Float64Array,
+  maxEvaluations: number,
+): AimsSearch {
+  let evaluations = 0;
+  let trouble: PassTrouble | null = null;
+  let bestMerit = Infinity;
+  let values: Float64Array = Float64Array.from(start);
+  let residuals: Float64Array = new Float64Array(start.length).fill(NaN);
+  return {
+    start: start.map((value, i) => Math.min(Math.max(value, low[i]), high[i])),
+    low,
+    high,
+    tolerances,
+    left: () => maxEvaluations - evaluations,
+    tryAt(settings) {
+      if (evaluations >= maxEvaluations) return null;
+      evaluations++;
+      let found: Float64Array;
+      try {
+        found = Float64Array.from(evaluate(Float64Array.from(settings)));
+      } catch (error) {
+        if (!(error instanceof PassTrouble)) throw error;
+        trouble = error;
+        return null;
+      }
+      if (!found.every(Number.isFinite)) return null;
+      const merit = aimsMerit(found, tolerances);
+      if (merit < bestMerit) {
+        bestMerit = merit;
+        values = Float64Array.from(settings);
+        residuals = found;
+      }
+      return found;
+    },
+    outcome(limit = -1, side = null, singular = null) {
+      const reached = bestMerit <= 1;
+      return {
+        reached,
+        values,
+        residuals,
+        limit: reached ? -1 : limit,
+        limitSide: reached ? null : side,
+        evaluations,
+        singular: reached ? null : singular,
+        trouble,
+      };
+    },
+  };
+}

@@ -1,0 +1,210 @@
+import type { PassTrouble } from '../diagnostics/diagnostic.ts';
+import type { MethodName } from '../model/flowsheet.ts';
+import { evaluateSafely } from './attempt.ts';
+import { keepWithinBounds } from './bounds.ts';
+import { createErrorEstimate } from './error-estimate.ts';
+import { methods } from './methods.ts';
+import type { FixedPointProblem } from './problem.ts';
+
+export type { FixedPointProblem } from './problem.ts';
+
+export interface ClosureOptions {
+  readonly method: MethodName;
+  /** largest scaled error of a closed loop [-]; 1e-9 when left out */
+  readonly tolerance?: number;
+  /** evaluations allowed; 200 when left out */
+  readonly maxPasses?: number;
+  /** Called after every pass, for a live trace. */
+  readonly onPass?: (pass: PassRecord) => void;
+}
+
+/** What happened in one pass. */
+export interface PassRecord {
+  readonly pass: number;
+  /** largest |g − x| / scale; NaN when the pass failed */
+  readonly residual: number;
+  /** index of the variable with that residual, −1 when the pass failed */
+  readonly worst: number;
+  /** estimate of the scaled distance from the fixed point; NaN when the pass failed */
+  readonly error: number;
+  /** guess and answer of that variable; NaN when the pass failed */
+  readonly guess: number;
+  readonly answer: number;
+  /** what problem.extraError said, 0 without one, NaN when the pass failed */
+  readonly extraError: number;
+  /** what made the guess of this pass: start, a method's name, or shortened */
+  readonly method: string;
+  /** what was done and why, empty when nothing is worth saying */
+  readonly note: string;
+}
+
+export interface Closure {
+  readonly converged: boolean;
+  /** why it stopped */
+  readonly reason: 'closed' | 'max-passes' | 'not-finite' | 'trouble' | 'stalled';
+  readonly method: MethodName;
+  /** evaluations made, failed ones included */
+  readonly passes: number;
+  /** scaled residual of the last good pass; NaN when there was none */
+  readonly residual: number;
+  /** estimate of the scaled distance from the fixed point after the last good pass; NaN when not known */
+  readonly error: number;
+  readonly history: readonly PassRecord[];
+  /** the last trouble of a block, when that is why it stopped */
+  readonly trouble: PassTrouble | null;
+  /** guess and answer of the last good pass (of the start when there was none) */
+  readonly x: Float64Array;
+  readonly g: Float64Array;
+}
+
+/** Passes without a better answer after which going on is pointless; every method of `auto` has had its turn. */
+const STALL_PASSES = 60;
+/** What an answer must be better by to count; slow direct substitution (0.01 % purge) gains 1e-4 a pass. */
+const STALL_SHARE = 1 - 1e-6;
+const failedPass = {
+  residual: NaN,
+  worst: -1,
+  error: NaN,
+  guess: NaN,
+  answer: NaN,
+  extraError: NaN,
+} as const;
+/** Halvings of a step that makes a block fail, before the direct step is tried. */
+const HALVINGS = 5;
+
+/**
+ * Close a recycle: find x = G(x).
+ *
+ * Closed means all of: the scaled residual |g − x|, the estimate of the distance from the answer, and
+ * problem.extraError are within the tolerance. The distance matters: behind a purge of 0.1 % the residual is
+ * a thousandth of it. Guesses keep inside the bounds; a guess at which a block fails is drawn back toward the
+ * last good one by halves, then replaced by the direct step.
+ *
+ * @param start  first guess, length problem.size; not changed
+ */
+export function closeFixedPoint(
+  problem: FixedPointProblem,
+  start: Float64Array,
+  options: ClosureOptions,
+): Closure {
+  const n = problem.size;
+  const tolerance = options.tolerance ?? 1e-9;
+  const maxPasses = options.maxPasses ?? 200;
+  const method = methods[options.method]();
+  method.reset(n);
+  const distance = createErrorEstimate(n);
+  const history: PassRecord[] = [];
+  const x = Float64Array.from(start);
+  const g = Float64Array.from(start);
+  const xGood = Float64Array.from(start);
+  const gGood = Float64Array.from(start);
+  const xNext = new Float64Array(n);
+  const scale = new Float64Array(n);
+  let madeBy = 'start';
+  let note = '';
+  let hasGood = false;
+  let halvings = 0;
+  let residual = NaN;
+  let error = NaN;
+  let best = Infinity;
+  let sinceBest = 0;
+
+  keepWithinBounds(problem, x, x, x);
+
+  const stop = (reason: Closure['reason'], trouble: PassTrouble | null = null): Closure => ({
+    converged: reason === 'closed',
+    reason,
+    method: options.method,
+    passes: history.length,
+    residual,
+    error,
+    history,
+    trouble,
+    x: xGood,
+    g: gGood,
+  });
+
+  const log = (record: Omit<PassRecord, 'pass' | 'method' | 'note'>, remark: string): void => {
+    const entry = { pass: history.length + 1, ...record, method: madeBy, note: remark };
+    history.push(entry);
+    options.onPass?.(entry);
+  };
+
+  for (let pass = 1; pass <= maxPasses; pass++) {
+    const failure = evaluateSafely(problem, x, g);
+
+    if (failure !== null) {
+      log(failedPass, joined(note, failure.says));
+      if (!hasGood || halvings > HALVINGS) return stop(failure.reason, failure.trouble);
+      halvings++;
+      if (halvings <= HALVINGS) {
+        for (let i = 0; i < n; i++) x[i] = xGood[i] + (x[i] - xGood[i]) / 2;
+        madeBy = 'shortened';
+        note = 'half the step';
+      } else {
+        x.set(gGood);
+        keepWithinBounds(problem, xGood, gGood, x);
+        madeBy = 'direct';
+        note = `${HALVINGS} halvings did not help: the direct step`;
+      }
+      continue;
+    }
+
+    hasGood = true;
+    halvings = 0;
+    xGood.set(x);
+    gGood.set(g);
+    scaleOf(problem, x, g, scale);
+    const worst = worstVariable(x, g, scale);
+    residual = n === 0 ? 0 : Math.abs(g[worst] - x[worst]) / scale[worst];
+    const extraError = problem.extraError?.() ?? 0;
+    error = distance.next(x, g, scale, residual);
+    log({ residual, worst, error, guess: x[worst], answer: g[worst], extraError }, note);
+
+    if (residual <= tolerance && error <= tolerance && extraError <= tolerance) return stop('closed');
+    const merit = Math.max(residual, extraError);
+    if (merit < STALL_SHARE * best) {
+      best = merit;
+      sinceBest = 0;
+    } else if (++sinceBest >= STALL_PASSES) return stop('stalled');
+
+    method.next(x, g, scale, xNext);
+    madeBy = method.name;
+    note = method.note();
+    if (!allFinite(xNext)) {
+      xNext.set(g);
+      note = joined(note, 'the step was not a finite number: the direct step');
+    }
+    const held = keepWithinBounds(problem, x, g, xNext);
+    if (held > 0) note = joined(note, `${held} held at the bounds of a step`);
+    x.set(xNext);
+  }
+  return stop('max-passes');
+}
+
+function scaleOf(problem: FixedPointProblem, x: Float64Array, g: Float64Array, scale: Float64Array): void {
+  if (problem.scale) problem.scale(x, g, scale);
+  else for (let i = 0; i < g.length; i++) scale[i] = Math.max(1, Math.abs(g[i]));
+}
+
+function worstVariable(x: Float64Array, g: Float64Array, scale: Float64Array): number {
+  let worst = 0;
+  let most = -1;
+  for (let i = 0; i < x.length; i++) {
+    const share = Math.abs(g[i] - x[i]) / scale[i];
+    if (share > most) {
+      most = share;
+      worst = i;
+    }
+  }
+  return worst;
+}
+
+function allFinite(x: Float64Array): boolean {
+  for (let i = 0; i < x.length; i++) if (!Number.isFinite(x[i])) return false;
+  return true;
+}
+
+function joined(first: string, second: string): string {
+  return first === '' ? second : `${first}; ${second}`;
+}

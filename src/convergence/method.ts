@@ -1,0 +1,21 @@
+/**
+ * A way of making the next guess from what a pass returned. Methods see plain numbers only: bounds, failing
+ * blocks, the stopping test and the trace are the driver's business. A method takes part in every pass of one
+ * closure, may be handed any guess (the driver shortens and clips steps), and allocates in `reset` alone.
+ */
+export interface FixedPointMethod {
+  /** as it appears in the trace; `auto` gives the method it is using at the moment */
+  readonly name: string;
+  /** Forget everything and make room for n variables. */
+  reset(n: number): void;
+  /**
+   * The next guess.
+   *
+   * @param x,g  guess and G(guess), length n [units of each variable]
+   * @param scale  characteristic size of each variable, length n, all > 0 [units of each variable]
+   * @param xNext  written in place, length n; may leave the bounds
+   */
+  next(x: Float64Array, g: Float64Array, scale: Float64Array, xNext: Float64Array): void;
+  /** What it did in the last call and why; empty when nothing is worth saying. */
+  note(): string;
+}
