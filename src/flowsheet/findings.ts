@@ -1,0 +1,61 @@
+import type { Diagnostic } from '../diagnostics/diagnostic.ts';
+import type { Place } from '../model/place.ts';
+import type { YamlNode } from './yaml-tree.ts';
+
+/** The four parts of a message without its place. */
+export interface Fault {
+  readonly code: string;
+  readonly what: string;
+  readonly why: string;
+  readonly mend: string;
+}
+
+/** What every part of the reader works on: the tree, and the list its findings go into. */
+export interface Reading {
+  readonly root: YamlNode;
+  readonly findings: Findings;
+}
+
+/** Collects the findings of one file. */
+export interface Findings {
+  error(where: Place, fault: Fault, also?: Place): void;
+  readonly list: readonly Diagnostic[];
+}
+
+export function createFindings(): Findings {
+  const list: Diagnostic[] = [];
+  return {
+    list,
+    error(where, fault, also) {
+      const { code, what, why, mend } = fault;
+      const second = also === undefined ? {} : { also };
+      const twin = list.some(
+        (d) => d.what === what && d.where.line === where.line && d.where.column === where.column,
+      );
+      if (!twin) list.push({ code, severity: 'error', where, what, why, mend, ...second });
+    },
+  };
+}
+
+/** More than this is no help to anybody. */
+const MOST = 100;
+
+/** In the order of the file, the file itself before changes to it; cut short when there are very many. */
+export function inOrder(diagnostics: readonly Diagnostic[], file: string): readonly Diagnostic[] {
+  const sorted = diagnostics.toSorted(
+    (a, b) =>
+      Number(a.where.file !== file) - Number(b.where.file !== file) ||
+      a.where.line - b.where.line ||
+      a.where.column - b.where.column,
+  );
+  if (sorted.length <= MOST) return sorted;
+  const rest: Diagnostic = {
+    code: 'too-many',
+    severity: 'error',
+    where: sorted[MOST].where,
+    what: `${sorted.length - MOST} more errors are not shown.`,
+    why: `only the first ${MOST} are listed`,
+    mend: 'mend those first, then check again',
+  };
+  return [...sorted.slice(0, MOST), rest];
+}

@@ -1,0 +1,163 @@
+import { blockKinds } from '../blocks/registry.ts';
+import type { Diagnostic } from '../diagnostics/diagnostic.ts';
+import { nearest } from '../diagnostics/nearest.ts';
+import type { BlockSpec, Flowsheet } from '../model/flowsheet.ts';
+import { loadUnitEngine, needsUnitEngine } from '../units/quantity.ts';
+import { readAims } from './aims.ts';
+import { type Declared, type ReadBlock, readBlocks } from './blocks.ts';
+import { checkCases, chosenCase } from './cases.ts';
+import { applyChanges, readSetChanges } from './changes.ts';
+import { readComponents, undeclaredGraphite } from './components.ts';
+import { readFeeds } from './feeds.ts';
+import { readFigures } from './figures.ts';
+import { createFindings, inOrder, type Reading } from './findings.ts';
+import { readHeader } from './header.ts';
+import { readLedger } from './ledger.ts';
+import { ledgerDefaults } from './ledger-defaults.ts';
+import { createPlaceOf } from './place-of.ts';
+import { readReactions } from './reactions.ts';
+import { fileKeys } from './schema.ts';
+import { readSolve } from './solve.ts';
+import { readStreams } from './topology.ts';
+import { readYaml } from './yaml-document.ts';
+import { child, entriesOf, scalarsOf, type YamlNode } from './yaml-tree.ts';
+
+export interface ReadOptions {
+  /** name of the file, for messages */
+  readonly file: string;
+  /** changes `PATH=VALUE`, made after those of the case */
+  readonly set?: readonly string[];
+  /** name of the case to apply */
+  readonly case?: string | null;
+}
+
+export interface ReadResult {
+  /** null where there are errors */
+  readonly flowsheet: Flowsheet | null;
+  /** every finding of the file, in its order */
+  readonly diagnostics: readonly Diagnostic[];
+}
+
+/** Read a flowsheet file: its text to a checked Flowsheet in SI, or to all that is wrong with it. Never throws on any text. */
+export async function readFlowsheet(text: string, options: ReadOptions): Promise<ReadResult> {
+  const { file } = options;
+  const document = readYaml(text, file);
+  if (document.root === null) return { flowsheet: null, diagnostics: document.diagnostics };
+  const findings = createFindings();
+  const caseName = options.case ?? null;
+  const changes = [
+    ...(caseName === null ? [] : chosenCase(document.root, caseName, findings)),
+    ...readSetChanges(options.set ?? [], findings),
+  ];
+  const root = applyChanges(document.root, changes, findings);
+  if ([...scalarsOf(root)].some((scalar) => needsUnitEngine(scalar.text))) await loadUnitEngine();
+  const flowsheet = readTree({ root, findings }, document.root, file, caseName);
+  const diagnostics = inOrder([...document.diagnostics, ...findings.list], file);
+  return { flowsheet: diagnostics.length > 0 ? null : flowsheet, diagnostics };
+}
+
+/** @param written  the file before any change to it */
+function readTree(
+  reading: Reading,
+  written: YamlNode,
+  file: string,
+  caseName: string | null,
+): Flowsheet | null {
+  const { root, findings } = reading;
+  if (!isFlowsheet(reading)) return null;
+  const header = readHeader(reading);
+  const read = readComponents(reading);
+  const graphite = read === null ? null : undeclaredGraphite(root, read);
+  const components =
+    read === null ? null : graphite === null ? read.components : [...read.components, graphite];
+  const failedIds = read?.failed ?? new Set<string>();
+  const { reactions, failed } = readReactions(reading, components, failedIds);
+  const feeds = readFeeds(reading, components, failedIds);
+  const declared: Declared = { components, reactions, failedIds, failedReactions: failed };
+  const blocks = readBlocks(reading, blockKinds, declared);
+  const streams = readStreams(reading, feeds.names, blocks);
+  const sound = components !== null && findings.list.length === 0;
+  const defaults = ledgerDefaults(components ?? [], reactions, streams, blocks ?? []);
+  // The ledger, formulas and tears name streams and components: they are judged where those could be read.
+  const named =
+    components !== null &&
+    failedIds.size === 0 &&
+    streams.length === entriesOf(child(root, 'streams')).length;
+  const ledger = named ? readLedger(reading, components, streams, defaults) : null;
+  const world = named
+    ? {
+        tags: streams.map((s) => s.tag),
+        blocks: blocks?.map((b) => b.name) ?? [],
+        components: components.map((c) => c.id),
+        figures: [],
+      }
+    : null;
+  const settings = { kinds: blockKinds, declared };
+  const cases = checkCases({ root: written, findings }, settings);
+  const figures = readFigures(reading, world);
+  const ownFigures = entriesOf(child(root, 'figures')).map((e) => e.key);
+  const aims = readAims(reading, world === null ? null : { ...world, figures: ownFigures }, settings);
+  const solve = readSolve(reading, named ? streams : null);
+  if (
+    !sound ||
+    findings.list.length > 0 ||
+    blocks === null ||
+    header === null ||
+    ledger === null ||
+    solve === null
+  )
+    return null;
+  return {
+    file,
+    caseName,
+    ...header.values,
+    components,
+    reactions,
+    feeds: feeds.feeds,
+    blocks: blocks.map(specOf),
+    streams,
+    ledger: ledger.ledger,
+    aims,
+    cases,
+    figures,
+    solve,
+    assumptions: [
+      ...(graphite === null ? [] : ['Graphite (C_gr) is carried as a component, for a reaction names it.']),
+      ...header.assumptions,
+      ...feeds.assumptions,
+      ...ledger.assumptions,
+    ],
+    placeOf: createPlaceOf(root),
+  };
+}
+
+/** A mapping with known keys; unknown ones are reported. */
+function isFlowsheet({ root, findings }: Reading): boolean {
+  if (root.kind !== 'mapping') {
+    const what = 'the file is no flowsheet.';
+    const why = `it holds ${root.kind === 'list' ? 'a list' : 'a single value'}, where names and their values are needed`;
+    findings.error(root.place, {
+      code: 'wrong-value',
+      what,
+      why,
+      mend: 'begin with looptally: 1, or start from `looptally new ammonia`',
+    });
+    return false;
+  }
+  for (const { key, keyPlace } of root.entries) {
+    if (fileKeys.includes(key)) continue;
+    const near = nearest(key, fileKeys);
+    findings.error(keyPlace, {
+      code: 'unknown-key',
+      what: `the file has an unknown key ${key}.`,
+      why: near === null ? `it takes: ${fileKeys.join(', ')}` : `the nearest known key is ${near}`,
+      mend: near === null ? `take ${key} out` : `write ${near}`,
+    });
+  }
+  return true;
+}
+
+function specOf({ name, kind, settings }: ReadBlock): BlockSpec {
+  if (kind === null || settings === null) throw new Error(`block ${name} was not read`);
+  return { name, kind: kind.kind, settings };
+}

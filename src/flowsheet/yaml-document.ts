@@ -1,0 +1,267 @@
+import {
+  EVENT_ID,
+  type Event,
+  getScalarValue,
+  parseEvents,
+  SCALAR_STYLE,
+  type ScalarEvent,
+  YAMLException,
+} from 'js-yaml';
+import type { Diagnostic } from '../diagnostics/diagnostic.ts';
+import type { Place } from '../model/place.ts';
+import { createPlacer, type Placer } from './text-places.ts';
+import type { YamlEntry, YamlNode, YamlScalar } from './yaml-tree.ts';
+import { syntaxTrouble } from './yaml-trouble.ts';
+
+export interface YamlDocument {
+  /** null where the text cannot be read as one YAML document */
+  readonly root: YamlNode | null;
+  readonly diagnostics: readonly Diagnostic[];
+}
+
+/** Bounds that no real flowsheet meets, so that a hostile file costs neither time nor memory. */
+export const yamlLimits = { characters: 1_000_000, depth: 30, aliases: 50, nodes: 50_000 } as const;
+
+/** Read YAML 1.2 (core schema) into a tree that knows its places. Never throws on any text. */
+export function readYaml(text: string, file: string): YamlDocument {
+  const source = text.replace(/^\uFEFF/, '');
+  const places = createPlacer(source, file);
+  if (source.length > yamlLimits.characters) {
+    const what = `the file is too large: ${(source.length / 1e6).toFixed(1)} million characters.`;
+    const why = 'a flowsheet has at most one million; this is hardly one';
+    return failed(trouble('file-too-large', places.at(0, 1), what, why, 'name the flowsheet file itself'));
+  }
+  try {
+    return buildTree(parseEvents(source, { maxDepth: yamlLimits.depth }), source, places);
+  } catch (error) {
+    if (!(error instanceof YAMLException)) throw error;
+    const found = syntaxTrouble(error.reason, source, error.mark?.position ?? 0);
+    return failed({ ...found, severity: 'error', where: places.at(found.position, found.length) });
+  }
+}
+
+/** A plain scalar by the YAML 1.2 core schema; hexadecimal, octal, infinite and not-a-number stay text. */
+export function resolvePlain(text: string): string | number | boolean | null {
+  if (/^(|~|null|Null|NULL)$/.test(text)) return null;
+  if (/^(true|True|TRUE)$/.test(text)) return true;
+  if (/^(false|False|FALSE)$/.test(text)) return false;
+  if (/^[-+]?(\.\d+|\d+(\.\d*)?)([eE][-+]?\d+)?$/.test(text)) {
+    const value = Number(text);
+    return Number.isFinite(value) ? value : text;
+  }
+  return text;
+}
+
+interface Build {
+  readonly events: readonly Event[];
+  readonly source: string;
+  readonly places: Placer;
+  readonly diagnostics: Diagnostic[];
+  readonly anchors: Map<string, { readonly node: YamlNode; readonly size: number }>;
+  next: number;
+  aliases: number;
+  nodes: number;
+}
+
+function buildTree(events: readonly Event[], source: string, places: Placer): YamlDocument {
+  const documents = events.filter((event) => event.type === EVENT_ID.DOCUMENT).length;
+  if (documents > 1) {
+    const second = source.slice(1).search(/^---/m) + 1;
+    const mend = 'keep one flowsheet in one file: take out the lines --- and what follows the first document';
+    return failed(
+      trouble(
+        'two-documents',
+        places.at(Math.max(second, 0), 3),
+        'the file holds more than one document.',
+        'a line --- begins a new one',
+        mend,
+      ),
+    );
+  }
+  const build: Build = {
+    events,
+    source,
+    places,
+    diagnostics: [],
+    anchors: new Map(),
+    next: 1,
+    aliases: 0,
+    nodes: 0,
+  };
+  const empty = documents === 0 || events.length <= 1 || events[1].type === EVENT_ID.POP;
+  const root = empty ? null : readNode(build);
+  if (root === null) {
+    const what = 'the file is empty.';
+    return failed(
+      trouble(
+        'empty-file',
+        places.at(0, 1),
+        what,
+        'there is no flowsheet in it',
+        'write one, or start from `looptally new ammonia`',
+      ),
+    );
+  }
+  if (build.nodes > yamlLimits.nodes) {
+    const what = 'the file is too large once its aliases are written out.';
+    const why = `a flowsheet has at most ${yamlLimits.nodes} values`;
+    return failed(trouble('file-too-large', places.at(0, 1), what, why, 'take out the aliases (*name)'));
+  }
+  // A lost alias leaves a hole that would only cause further messages.
+  const whole = !build.diagnostics.some((d) => d.code === 'yaml-alias');
+  return { root: whole ? root : null, diagnostics: build.diagnostics };
+}
+
+function readNode(build: Build): YamlNode {
+  const event = build.events[build.next++];
+  build.nodes++;
+  if (event.type === EVENT_ID.ALIAS) return readAlias(build, event.anchorStart, event.anchorEnd);
+  if (event.type === EVENT_ID.DOCUMENT || event.type === EVENT_ID.POP)
+    throw new Error('unexpected YAML event');
+  if (event.tagStart >= 0) {
+    const place = build.places.between(event.tagStart, event.tagEnd);
+    const tag = build.source.slice(event.tagStart, event.tagEnd);
+    build.diagnostics.push(
+      trouble(
+        'yaml-tag',
+        place,
+        `the tag ${tag} is not known.`,
+        'a flowsheet needs no tags',
+        `take out ${tag}`,
+      ),
+    );
+  }
+  const before = build.nodes;
+  const node = event.type === EVENT_ID.SCALAR ? readScalar(build, event) : readCollection(build, event);
+  if (event.anchorStart >= 0) {
+    const name = build.source.slice(event.anchorStart, event.anchorEnd);
+    build.anchors.set(name, { node, size: build.nodes - before + 1 });
+  }
+  return node;
+}
+
+function readScalar(build: Build, event: ScalarEvent): YamlScalar {
+  const { source, places } = build;
+  if (event.valueStart < 0) {
+    const place = places.at(Math.max(0, previousEnd(build)), 1);
+    return { kind: 'scalar', value: null, text: '', place, textPlace: null };
+  }
+  const text = getScalarValue(source, event);
+  const plain = event.style === SCALAR_STYLE.PLAIN;
+  const quoted = event.style === SCALAR_STYLE.SINGLE_QUOTED || event.style === SCALAR_STYLE.DOUBLE_QUOTED;
+  const [start, end] = quoted
+    ? [event.valueStart - 1, event.valueEnd + 1]
+    : [event.valueStart, event.valueEnd];
+  const straight = source.slice(event.valueStart, event.valueEnd) === text;
+  return {
+    kind: 'scalar',
+    value: plain ? resolvePlain(text) : text,
+    text,
+    place: places.between(start, end),
+    textPlace: straight ? places.between(event.valueStart, event.valueEnd) : null,
+  };
+}
+
+/** End of the last thing before an empty value, which has no place of its own. */
+function previousEnd(build: Build): number {
+  for (let i = build.next - 2; i > 0; i--) {
+    const event = build.events[i];
+    if (event.type === EVENT_ID.SCALAR && event.valueEnd >= 0) return event.valueEnd;
+  }
+  return 0;
+}
+
+function readCollection(
+  build: Build,
+  event: Exclude<Event, ScalarEvent> & { readonly start: number },
+): YamlNode {
+  const isList = event.type === EVENT_ID.SEQUENCE;
+  const items: YamlNode[] = [];
+  const entries: YamlEntry[] = [];
+  while (build.events[build.next].type !== EVENT_ID.POP) {
+    if (isList) items.push(readNode(build));
+    else readEntry(build, entries);
+  }
+  build.next++;
+  const place = build.places.toLineEnd(event.start);
+  return isList ? { kind: 'list', items, place } : { kind: 'mapping', entries, place };
+}
+
+function readEntry(build: Build, entries: YamlEntry[]): void {
+  const key = readNode(build);
+  const value = readNode(build);
+  if (key.kind !== 'scalar' || key.text === '') {
+    const what = 'a key is not a plain word.';
+    build.diagnostics.push(
+      trouble(
+        'yaml-key',
+        key.place,
+        what,
+        'every entry is written name: value',
+        'write a name before the colon',
+      ),
+    );
+    return;
+  }
+  if (key.text === '__proto__') {
+    build.diagnostics.push(
+      trouble(
+        'yaml-key',
+        key.place,
+        'the key __proto__ is refused.',
+        'it has a meaning of its own in JavaScript',
+        'choose another name',
+      ),
+    );
+    return;
+  }
+  const first = entries.find((entry) => entry.key === key.text);
+  if (first !== undefined) {
+    const what = `the key ${key.text} stands here twice.`;
+    const why = `line ${first.keyPlace.line} has it already, and only one of the two can count`;
+    const found = trouble('duplicate-key', key.place, what, why, `take one out, or give it another name`);
+    build.diagnostics.push({ ...found, also: first.keyPlace });
+    return;
+  }
+  entries.push({ key: key.text, keyPlace: key.place, value });
+}
+
+function readAlias(build: Build, start: number, end: number): YamlNode {
+  const name = build.source.slice(start, end);
+  const place = build.places.between(start - 1, end);
+  const target = build.anchors.get(name);
+  build.aliases++;
+  if (
+    target !== undefined &&
+    build.aliases <= yamlLimits.aliases &&
+    build.nodes + target.size <= yamlLimits.nodes
+  ) {
+    build.nodes += target.size;
+    return target.node;
+  }
+  const [what, why, mend] =
+    target === undefined
+      ? [
+          `the alias *${name} is not known.`,
+          `no part above is marked &${name}; a part cannot hold itself`,
+          'write the value itself',
+        ]
+      : [
+          `the alias *${name} is one too many.`,
+          `at most ${yamlLimits.aliases} aliases and ${yamlLimits.nodes} values are read`,
+          'write the values themselves',
+        ];
+  const said = build.diagnostics.some(
+    (d) => d.code === 'yaml-alias' && d.mend === mend && target !== undefined,
+  );
+  if (!said) build.diagnostics.push(trouble('yaml-alias', place, what, why, mend));
+  return { kind: 'scalar', value: null, text: '', place, textPlace: null };
+}
+
+function failed(diagnostic: Diagnostic): YamlDocument {
+  return { root: null, diagnostics: [diagnostic] };
+}
+
+function trouble(code: string, where: Place, what: string, why: string, mend: string): Diagnostic {
+  return { code, severity: 'error', where, what, why, mend };
+}
