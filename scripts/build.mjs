@@ -1,0 +1,84 @@
+// Builds dist/: the command line (dist/cli.js, commands and mathjs in chunks of their own that load on demand),
+// the library (dist/index.js) and its type declarations. The same sources give the same bytes.
+import { execFileSync } from 'node:child_process';
+import { chmodSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { createRequire } from 'node:module';
+import { dirname, join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import { build } from 'esbuild';
+
+const root = fileURLToPath(new URL('..', import.meta.url));
+const { version } = JSON.parse(readFileSync(join(root, 'package.json'), 'utf8'));
+
+// zod brings its messages in fifty languages; ours are written by Looptally itself, so one is enough.
+const oneLanguage = {
+  name: 'one-language',
+  setup(bundler) {
+    bundler.onLoad({ filter: /[\\/]zod[\\/]v4[\\/]locales[\\/]index\.js$/ }, ({ path }) => ({
+      contents: "export { default as en } from './en.js';",
+      resolveDir: dirname(path),
+    }));
+  },
+};
+
+const shared = {
+  absWorkingDir: root,
+  bundle: true,
+  splitting: true,
+  format: 'esm',
+  platform: 'node',
+  target: 'node20',
+  minify: true,
+  legalComments: 'none',
+  charset: 'utf8',
+  define: { LOOPTALLY_VERSION: JSON.stringify(version) },
+  plugins: [oneLanguage],
+  logLevel: 'warning',
+};
+
+// commander is CommonJS and asks for Node's own modules by require(), which a module does not have. The banner
+// stands in the chunks too, where it does no harm.
+const banner = `#!/usr/bin/env node
+import { createRequire as looptallyCreateRequire } from 'node:module';
+const require = looptallyCreateRequire(import.meta.url);`;
+
+/** Bundle the command line into a folder: cli.js and chunks beside it. */
+export async function buildCli(folder) {
+  await build({
+    ...shared,
+    entryPoints: { cli: 'src/cli/main.ts' },
+    outdir: folder,
+    chunkNames: 'chunks/[name]-[hash]',
+    banner: { js: banner },
+  });
+  chmodSync(join(folder, 'cli.js'), 0o755);
+}
+
+async function buildLibrary(folder) {
+  await build({
+    ...shared,
+    entryPoints: { index: 'src/index.ts' },
+    outdir: folder,
+    chunkNames: 'chunks/[name]-[hash]',
+  });
+}
+
+function declareTypes(folder) {
+  const compiler = createRequire(import.meta.url).resolve('typescript/bin/tsc');
+  execFileSync(process.execPath, [compiler, '-p', join(root, 'tsconfig.build.json'), '--outDir', folder], {
+    stdio: 'inherit',
+  });
+  for (const entry of readdirSync(folder, { recursive: true, withFileTypes: true })) {
+    if (!entry.isFile() || !entry.name.endsWith('.d.ts')) continue;
+    const file = join(entry.parentPath, entry.name);
+    writeFileSync(file, readFileSync(file, 'utf8').replace(/((?:from|import\()\s*'\.[^']*)\.ts'/g, "$1.js'"));
+  }
+}
+
+if (process.argv[1] === fileURLToPath(import.meta.url)) {
+  const dist = join(root, 'dist');
+  rmSync(dist, { recursive: true, force: true });
+  await buildCli(dist);
+  await buildLibrary(dist);
+  declareTypes(join(dist, 'types'));
+}

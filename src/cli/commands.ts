@@ -1,0 +1,60 @@
+import type { Command } from 'commander';
+
+/** A command as the overview knows it; its file is loaded only when the command is used. */
+export interface CommandEntry {
+  readonly summary: string;
+  load(): Promise<Command>;
+}
+
+/** All commands in the order of a study. A new command is one file and one line here. */
+export const commands: ReadonlyMap<string, CommandEntry> = new Map([
+  [
+    'balance',
+    {
+      summary: 'close the loop: stream table, ledger, key figures, closure',
+      load: async () => (await import('./balance.ts')).balanceCommand(),
+    },
+  ],
+  [
+    'check',
+    {
+      summary: 'read and check a file; show order, tears and assumptions without solving',
+      load: async () => (await import('./check.ts')).checkCommand(),
+    },
+  ],
+  [
+    'sheet',
+    {
+      summary: 'close the loop and write its sheet to files (.csv, .md)',
+      load: async () => (await import('./sheet.ts')).sheetCommand(),
+    },
+  ],
+  [
+    'equilibrium',
+    {
+      summary: 'reaction equilibrium at one temperature and pressure, without a file',
+      load: async () => (await import('./equilibrium.ts')).equilibriumCommand(),
+    },
+  ],
+  [
+    'data',
+    {
+      summary: 'built-in property data and published constants, with their sources',
+      load: async () => (await import('./data.ts')).dataCommand(),
+    },
+  ],
+  [
+    'new',
+    {
+      summary: 'write a commented starter file',
+      load: async () => (await import('./new.ts')).newCommand(),
+    },
+  ],
+  [
+    'schema',
+    {
+      summary: 'JSON Schema of the flowsheet file, for editors',
+      load: async () => (await import('./schema.ts')).schemaCommand(),
+    },
+  ],
+] satisfies [string, CommandEntry][]);

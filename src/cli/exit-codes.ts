@@ -1,0 +1,9 @@
+/** What the exit code of every command says. */
+export const exitCodes = {
+  done: 0,
+  /** a fault of Looptally itself */
+  fault: 1,
+  badInput: 2,
+  notClosed: 3,
+  aimNotReached: 4,
+} as const;

@@ -1,0 +1,87 @@
+import { extname } from 'node:path';
+import type { Command } from 'commander';
+import { type CsvTableName, csvTables } from '../sheets/csv.ts';
+import { renderers } from '../sheets/renderers.ts';
+import { collect, fileCommand, oneOf } from './common-options.ts';
+import { figureUnits } from './figure-units.ts';
+import { type Refusal, usageRefusal } from './refusal.ts';
+import { resultJson, type SolveOptions, solve, tellShortfall, withSolveOptions } from './solve.ts';
+import { printJson, say } from './terminal.ts';
+import { checkOutputs, type Output, writeOutputs } from './write-files.ts';
+
+interface SheetCommandOptions extends SolveOptions {
+  readonly out?: readonly string[];
+  readonly table?: CsvTableName;
+}
+
+/** `looptally sheet FILE --out NAME ...`: close the loop and write its sheet, in one format or several. */
+export function sheetCommand(): Command {
+  const tables = Object.keys(csvTables);
+  const command = fileCommand('sheet', 'Closes the loop and writes its sheet to one or several files.', [
+    'looptally new ammonia --out loop.yaml',
+    'looptally sheet loop.yaml --out loop.md --out loop.csv',
+    'looptally sheet loop.yaml --out ledger.csv --table ledger',
+  ]);
+  return withSolveOptions(command)
+    .option(
+      '--out <name...>',
+      `file to write (repeatable); its ending says the format: ${formats()}`,
+      collect,
+    )
+    .option('--table <name>', `what a .csv holds: ${tables.join(', ')}`, oneOf(tables), 'streams')
+    .action(runSheet);
+}
+
+async function runSheet(file: string, options: SheetCommandOptions): Promise<void> {
+  const paths = options.out ?? [];
+  if (paths.length === 0) throw nowhereToWrite();
+  const chosen = paths.map((path) => ({ path, renderer: rendererFor(path) }));
+  checkOutputs(paths, file);
+  const solved = await solve(file, options);
+  const sheetOptions = {
+    figureUnits: figureUnits(solved.flowsheet),
+    ...(options.table === undefined ? {} : { table: options.table }),
+  };
+  const outputs: Output[] = chosen.map(({ path, renderer }) => ({
+    path,
+    content: renderer.render(solved.result, sheetOptions),
+  }));
+  writeOutputs(outputs);
+  if (options.json) {
+    printJson(resultJson(solved));
+    return;
+  }
+  if (!options.quiet) say(`wrote ${paths.join(', ')}`);
+  tellShortfall(solved);
+}
+
+function rendererFor(path: string) {
+  const renderer = renderers.get(extname(path).toLowerCase());
+  if (renderer === undefined) throw unknownFormat(path);
+  return renderer;
+}
+
+function formats(): string {
+  return [...renderers].map(([extension, { summary }]) => `${extension} (${summary})`).join(', ');
+}
+
+function unknownFormat(path: string): Refusal {
+  const extension = extname(path);
+  return usageRefusal(
+    'unknown-format',
+    extension === '' ? `${path} does not say its format.` : `There is no sheet of the format ${extension}.`,
+    `the ending of the name says the format; there are ${[...renderers.keys()].join(' and ')}`,
+    `write --out ${path.slice(0, path.length - extension.length)}.md`,
+    path,
+  );
+}
+
+function nowhereToWrite(): Refusal {
+  return usageRefusal(
+    'missing-output',
+    'looptally sheet needs to know what to write.',
+    'no --out was given',
+    'write --out loop.md, or looptally balance for the sheet on the terminal',
+    'sheet',
+  );
+}

@@ -1,0 +1,40 @@
+/**
+ * Looptally as a library: text of a flowsheet in, closed balance out. Nothing here reads a file or the clock,
+ * so the same code runs in a terminal, in a worker and in a browser.
+ *
+ *   const { flowsheet, diagnostics } = await readFlowsheet(text, { file: 'loop.yaml' });
+ *   if (flowsheet) {
+ *     const { result, diagnosis } = balance(flowsheet);
+ *     console.log(textSheet(result));
+ *   }
+ */
+
+export { type PublishedConstant, publishedConstants } from './chemistry/published-constants.ts';
+export { type Diagnostic, InputError } from './diagnostics/diagnostic.ts';
+export { type FormatOptions, formatDiagnostic, formatDiagnostics } from './diagnostics/format.ts';
+export { flowsheetJsonSchema } from './flowsheet/json-schema.ts';
+export { readFlowsheet } from './flowsheet/read.ts';
+export type { Flowsheet, GasModelName, MethodName } from './model/flowsheet.ts';
+export type {
+  AimResult,
+  BlockResult,
+  Figures,
+  LedgerEntry,
+  Result,
+  StreamResult,
+  TraceEntry,
+  Warning,
+} from './model/result.ts';
+export {
+  type CatalogueEntry,
+  type CatalogueLine,
+  catalogueEntry,
+  catalogueList,
+} from './properties/catalogue.ts';
+export { type CsvTableName, csvSheet } from './sheets/csv.ts';
+export { markdownSheet } from './sheets/markdown.ts';
+export { type Renderer, type RenderOptions, renderers } from './sheets/renderers.ts';
+export type { SheetOptions } from './sheets/sheet.ts';
+export { textSheet } from './sheets/text.ts';
+export { type Balance, type BalanceOptions, balance } from './tally/balance.ts';
+export { type Plan, planFlowsheet } from './tally/plan.ts';

@@ -1,0 +1,75 @@
+import type { Result } from '../model/result.ts';
+import { closureText, fixed, significant } from './numbers.ts';
+import { plainText } from './plain.ts';
+
+/** What the blocks say of themselves: heads, then name, kind, duty, power. */
+export function blockRows(result: Result): string[][] {
+  return [
+    ['block', 'kind', 'heat added, kW', 'power, kW'],
+    ...Object.entries(result.blocks).map(([name, block]) => [
+      plainText(name),
+      block.kind,
+      significant(block.duty_kW),
+      significant(block.power_kW),
+    ]),
+  ];
+}
+
+/** Units that end the key of a detail, and how they are written. */
+const UNITS: readonly (readonly [ending: string, unit: string])[] = [
+  ['_kJ_mol', 'kJ/mol'],
+  ['_kWh_t', 'kWh/t'],
+  ['_kmol_h', 'kmol/h'],
+  ['_kW_K', 'kW/K'],
+  ['_kg_h', 'kg/h'],
+  ['_kg_m3', 'kg/m3'],
+  ['_m3_h', 'm3/h'],
+  ['_t_d', 't/d'],
+  ['_bar', 'bar'],
+  ['_kW', 'kW'],
+  ['_MW', 'MW'],
+  ['_Pa', 'Pa'],
+  ['_K', 'K'],
+];
+
+/** The details of one block as `name value unit`; the unit is taken from the ending of the key. */
+export function blockDetails(details: Readonly<Record<string, unknown>>): string[] {
+  return flat(details, '', null);
+}
+
+/** The three closures: heads and one row. */
+export function closureRows(result: Result): string[][] {
+  const atoms = Object.entries(result.closure.atoms);
+  return [
+    ['mass', 'energy', ...atoms.map(([element]) => `atoms ${element}`)],
+    [
+      closureText(result.closure.mass),
+      closureText(result.closure.energy),
+      ...atoms.map(([, value]) => closureText(value)),
+    ],
+  ];
+}
+
+/** Keys that only look as if they ended in a unit. */
+const NO_UNIT = /^(ln_?)?K$/;
+/** Kelvins that are a difference and stay kelvins. */
+const DIFFERENCE = /approach|rise|difference|drop|spread/;
+
+function flat(value: unknown, name: string, unit: string | null): string[] {
+  if (value === null || value === undefined) return [];
+  if (typeof value === 'number') return [`${name} ${numberText(value, name, unit)}`];
+  if (typeof value === 'boolean') return [`${name} ${value ? 'yes' : 'no'}`];
+  if (typeof value === 'string') return [`${name} ${plainText(value)}`];
+  return Object.entries(value).flatMap(([key, part]) => {
+    const found = NO_UNIT.test(key) ? undefined : UNITS.find(([ending]) => key.endsWith(ending));
+    const word = plainText(found ? key.slice(0, -found[0].length) : key).replaceAll('_', ' ');
+    return flat(part, name === '' ? word : `${name} ${word}`, found ? found[1] : unit);
+  });
+}
+
+function numberText(value: number, name: string, unit: string | null): string {
+  if (unit === 'K' && !DIFFERENCE.test(name)) return `${fixed(value - 273.15, 2, 1e-9)} degC`;
+  if (unit !== null) return `${significant(value, 5)} ${unit}`;
+  if (Number.isInteger(value) && Math.abs(value) < 1e6) return String(value);
+  return Math.abs(value) < 1e6 ? significant(value, 4) : value.toExponential(2);
+}

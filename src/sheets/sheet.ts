@@ -1,0 +1,22 @@
+/** What a sheet may say beyond the result itself. */
+export interface SheetOptions {
+  /** units of the user's own figures by name; '%' shows the fraction times 100 */
+  readonly figureUnits?: Readonly<Record<string, string>>;
+  /** marks up heads and warnings for a terminal; plain text where absent */
+  readonly paint?: Paint;
+  /** adds the table of passes */
+  readonly trace?: boolean;
+}
+
+export interface Paint {
+  head(text: string): string;
+  alarm(text: string): string;
+}
+
+export const noPaint: Paint = { head: (text) => text, alarm: (text) => text };
+
+/** What every sheet ends with. */
+export const caution =
+  'A study tool, not a design certificate. Hydrogen, ammonia, carbon monoxide and high pressure: design, ' +
+  'materials and relief follow local codes and belong in the hands of licensed practice. ' +
+  'Check the assumptions above before a figure leaves this sheet.';
