@@ -1,0 +1,82 @@
+import { type Closure, closeFixedPoint } from '../convergence/driver.ts';
+import { PassTrouble } from '../diagnostics/diagnostic.ts';
+import type { MethodName } from '../model/flowsheet.ts';
+import type { TraceEntry } from '../model/result.ts';
+import type { Group, Plant } from './plant.ts';
+import { createRecycleProblem } from './recycle-problem.ts';
+import { startFromFeeds } from './start-values.ts';
+
+export interface CloseOptions {
+  readonly method: MethodName;
+  readonly tolerance: number;
+  readonly maxPasses: number;
+  /** true starts from the streams as they stand (a neighbouring case), false from the feeds */
+  readonly warm?: boolean;
+}
+
+/** How the closing of a plant went. */
+export interface PlantClosure {
+  readonly converged: boolean;
+  readonly method: MethodName;
+  /** passes of the recycle that took most */
+  readonly passes: number;
+  /** largest residual of the recycles */
+  readonly residual: number;
+  readonly history: readonly TraceEntry[];
+  /** the group that failed, with its closure and the names of its variables; null when all is closed */
+  readonly failure: {
+    readonly group: Group;
+    readonly closure: Closure | null;
+    readonly trouble: PassTrouble | null;
+    readonly names: readonly string[];
+  } | null;
+}
+
+/** Close the groups of a plant one after another, in calculation order; stops at the first that fails. */
+export function closePlant(plant: Plant, options: CloseOptions): PlantClosure {
+  plant.refreshFeeds();
+  const history: TraceEntry[] = [];
+  let passes = 1;
+  let residual = 0;
+  for (const group of plant.groups) {
+    if (group.tears.length === 0) {
+      const trouble = passOnce(plant, group);
+      if (trouble) {
+        const failure = { group, closure: null, trouble, names: [] };
+        return { converged: false, method: options.method, passes, residual, history, failure };
+      }
+      continue;
+    }
+    const problem = createRecycleProblem(plant, group);
+    const start = new Float64Array(problem.size);
+    if (!options.warm) startFromFeeds(plant, group);
+    problem.read(start);
+    const closure = closeFixedPoint(problem, start, options);
+    for (const record of closure.history) {
+      history.push({
+        pass: record.pass,
+        residual: record.residual,
+        worst: problem.names[record.worst] ?? '',
+        method: record.method,
+        note: record.note,
+      });
+    }
+    passes = Math.max(passes, closure.passes);
+    residual = Math.max(residual, closure.residual);
+    if (!closure.converged) {
+      const failure = { group, closure, trouble: closure.trouble, names: problem.names };
+      return { converged: false, method: options.method, passes, residual, history, failure };
+    }
+  }
+  return { converged: true, method: options.method, passes, residual, history, failure: null };
+}
+
+function passOnce(plant: Plant, group: Group): PassTrouble | null {
+  try {
+    for (const block of group.blocks) plant.passBlock(block);
+    return null;
+  } catch (trouble) {
+    if (trouble instanceof PassTrouble) return trouble;
+    throw trouble;
+  }
+}

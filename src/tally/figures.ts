@@ -1,0 +1,163 @@
+import type { BlockReport } from '../blocks/block.ts';
+import type { Reaction } from '../model/reaction.ts';
+import type { Figures } from '../model/result.ts';
+import type { StreamState } from '../model/stream.ts';
+import type { Tallied } from './ledger.ts';
+import type { Plant } from './plant.ts';
+import { KMOL_H } from './stream-results.ts';
+
+/** The key figures of a closed plant; `user` is left empty. */
+export function keyFigures(plant: Plant, tallied: Tallied, reports: readonly BlockReport[]): Figures {
+  const { flowsheet } = plant;
+  const production = productionTPerD(plant);
+  const power = powers(plant, reports);
+  return {
+    per_pass_conversion: perPassConversion(plant),
+    overall_conversion: overallConversion(plant, tallied),
+    overall_yield: overallYield(plant, tallied),
+    production_t_d: production,
+    recycle_ratio: flowsheet.ledger.recycle
+      ? total(state(plant, flowsheet.ledger.recycle)) / sumOf(tallied.entering)
+      : null,
+    inerts: inerts(plant),
+    purge: purge(plant, tallied),
+    power_kW: power,
+    specific_power_kWh_t: production ? (24 * power['total']) / production : null,
+    duty_kW: Object.fromEntries(
+      plant.blocks.flatMap((b, i) => (reports[i].dutyW === 0 ? [] : [[b.name, reports[i].dutyW / 1e3]])),
+    ),
+    user: {},
+  };
+}
+
+/** The reactions that run in a block, and per component whether it is a reactant of one, or takes no part. */
+function reactionsOf(plant: Plant, block: number): readonly Reaction[] {
+  const names = plant.kinds[block].reactionsIn?.(plant.blocks[block].settings) ?? [];
+  return plant.flowsheet.reactions.filter((reaction) => names.includes(reaction.name));
+}
+
+function reactors(plant: Plant): number[] {
+  return plant.blocks.flatMap((_, b) => (reactionsOf(plant, b).length > 0 ? [b] : []));
+}
+
+/** (in − out)/in of every reactant over one reactor. */
+function perPassConversion(plant: Plant): Figures['per_pass_conversion'] {
+  return Object.fromEntries(
+    reactors(plant).map((b) => {
+      const inlet = plant.inlets[b][0].flowsMolPerS;
+      const outlet = plant.outlets[b][0].flowsMolPerS;
+      const reactants = idsWhere(plant, (i) => inlet[i] > 0 && isReactant(reactionsOf(plant, b), i));
+      return [
+        plant.blocks[b].name,
+        Object.fromEntries(reactants.map(([id, i]) => [id, (inlet[i] - outlet[i]) / inlet[i]])),
+      ];
+    }),
+  );
+}
+
+/** (in − out)/in over the battery limit of every reactant that is fed. */
+function overallConversion(plant: Plant, { entering, leaving }: Tallied): Figures['overall_conversion'] {
+  const running = reactors(plant).flatMap((b) => reactionsOf(plant, b));
+  return Object.fromEntries(
+    idsWhere(plant, (i) => entering[i] > 0 && isReactant(running, i)).map(([id, i]) => [
+      id,
+      (entering[i] - leaving[i]) / entering[i],
+    ]),
+  );
+}
+
+/** Product in the product stream per stoichiometric product of the key reactant fed. */
+function overallYield(plant: Plant, { entering }: Tallied): Figures['overall_yield'] {
+  const { product, reactant } = plant.flowsheet.ledger;
+  if (!product || !reactant) return null;
+  const p = index(plant, product.component);
+  const r = index(plant, reactant);
+  const reaction = plant.flowsheet.reactions.find(
+    (one) => one.coefficients[p] > 0 && one.coefficients[r] < 0,
+  );
+  if (!reaction || entering[r] === 0) return null;
+  const possible = (entering[r] * reaction.coefficients[p]) / -reaction.coefficients[r];
+  const made = state(plant, product.stream).flowsMolPerS[p] - entering[p];
+  return { product: product.component, reactant, value: made / possible };
+}
+
+/** Mass of the product component in the product stream [t/d]. */
+function productionTPerD(plant: Plant): number | null {
+  const { product } = plant.flowsheet.ledger;
+  if (!product) return null;
+  const p = index(plant, product.component);
+  const molarMass = plant.mixture.components[p].molarMassKgPerMol;
+  return state(plant, product.stream).flowsMolPerS[p] * molarMass * 86.4;
+}
+
+/** Mole fraction at each reactor's inlet of what takes no part in its reactions. */
+function inerts(plant: Plant): Figures['inerts'] {
+  return Object.fromEntries(
+    reactors(plant).map((b) => {
+      const inlet = plant.inlets[b][0];
+      const running = reactionsOf(plant, b);
+      let idle = 0;
+      for (const [, i] of idsWhere(plant, (i) => running.every((one) => one.coefficients[i] === 0))) {
+        idle += inlet.flowsMolPerS[i];
+      }
+      const all = total(inlet);
+      return [plant.blocks[b].name, all > 0 ? idle / all : 0];
+    }),
+  );
+}
+
+function purge(plant: Plant, { entering }: Tallied): Figures['purge'] {
+  const tags = plant.flowsheet.ledger.purge;
+  if (tags.length === 0) return null;
+  const lost = new Float64Array(plant.mixture.size);
+  for (const tag of tags) {
+    const { flowsMolPerS } = state(plant, tag);
+    for (let i = 0; i < lost.length; i++) lost[i] += flowsMolPerS[i];
+  }
+  const everything = idsWhere(plant, () => true);
+  return {
+    flow_kmol_h: sumOf(lost) * KMOL_H,
+    fraction_of_makeup: sumOf(lost) / sumOf(entering),
+    lost_kmol_h: Object.fromEntries(everything.map(([id, i]) => [id, lost[i] * KMOL_H])),
+    lost_fraction: Object.fromEntries(
+      everything.filter(([, i]) => entering[i] > 0).map(([id, i]) => [id, lost[i] / entering[i]]),
+    ),
+    lhv_MW: everything.reduce(
+      (sum, [, i]) => sum + (lost[i] * plant.mixture.components[i].lowerHeatingJPerMol) / 1e6,
+      0,
+    ),
+  };
+}
+
+function powers(plant: Plant, reports: readonly BlockReport[]): Record<string, number> {
+  const machines = plant.blocks.flatMap((b, i): [string, number][] =>
+    reports[i].powerW === 0 ? [] : [[b.name, reports[i].powerW / 1e3]],
+  );
+  const refrigeration = reports.reduce((sum, report) => sum + report.refrigerationW, 0) / 1e3;
+  const sum = machines.reduce((all, [, kW]) => all + kW, refrigeration);
+  return { ...Object.fromEntries(machines), refrigeration, total: sum };
+}
+
+function isReactant(reactions: readonly Reaction[], i: number): boolean {
+  return reactions.some((reaction) => reaction.coefficients[i] < 0);
+}
+
+function idsWhere(plant: Plant, holds: (i: number) => boolean): [string, number][] {
+  return plant.mixture.components.flatMap((c, i): [string, number][] => (holds(i) ? [[c.id, i]] : []));
+}
+
+function index(plant: Plant, id: string): number {
+  return plant.mixture.components.findIndex((c) => c.id === id);
+}
+
+function state(plant: Plant, tag: string): StreamState {
+  return plant.streams[plant.flowsheet.streams.findIndex((s) => s.tag === tag)];
+}
+
+function total(stream: StreamState): number {
+  return sumOf(stream.flowsMolPerS);
+}
+
+function sumOf(flows: Float64Array): number {
+  return flows.reduce((sum, flow) => sum + flow, 0);
+}

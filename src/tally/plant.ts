@@ -1,0 +1,123 @@
+import type { BlockKind, Unit } from '../blocks/block.ts';
+import { blockKinds } from '../blocks/registry.ts';
+import { PassTrouble } from '../diagnostics/diagnostic.ts';
+import { planCalculation } from '../graph/calculation-order.ts';
+import type { BlockSpec, Feed, Flowsheet } from '../model/flowsheet.ts';
+import { emptyStream, type StreamState } from '../model/stream.ts';
+import { enthalpyBasisFor } from '../properties/ideal-gas.ts';
+import { createMixture, type Mixture } from '../properties/mixture.ts';
+import { feedFlows } from './feed-flows.ts';
+import { moveSetting, readSetting } from './setting-path.ts';
+import { wire } from './wiring.ts';
+
+/** Blocks that are closed together: those of one recycle system in calculation order, or a single block. */
+export interface Group {
+  /** indices of blocks in calculation order */
+  readonly blocks: readonly number[];
+  /** indices of the streams torn; empty where nothing goes round */
+  readonly tears: readonly number[];
+}
+
+/** A flowsheet made ready to be calculated pass after pass. Its settings can be moved. */
+export interface Plant {
+  readonly flowsheet: Flowsheet;
+  readonly mixture: Mixture;
+  readonly blocks: readonly BlockSpec[];
+  readonly kinds: readonly BlockKind[];
+  readonly units: readonly Unit[];
+  /** state of every stream as its source left it, in the order of the file */
+  readonly streams: readonly StreamState[];
+  /** state of every stream as its destination sees it: the guess for a torn stream, else the same object */
+  readonly seen: readonly StreamState[];
+  /** states per block in port order */
+  readonly inlets: readonly (readonly StreamState[])[];
+  readonly outlets: readonly (readonly StreamState[])[];
+  readonly groups: readonly Group[];
+  /** feeds, with the settings that were moved */
+  readonly feeds: readonly Feed[];
+  /** indices of the streams that enter and leave across the battery limit */
+  readonly enters: readonly number[];
+  readonly leaves: readonly number[];
+  /** write the feeds' flows and states into their streams */
+  refreshFeeds(): void;
+  /**
+   * Evaluate one block from its inlets.
+   * @throws PassTrouble with the block's name
+   */
+  passBlock(block: number): void;
+  /** move a setting by its path, e.g. condenser.temperature; value in SI */
+  set(path: string, value: number): void;
+  /** the number a path stands for, undefined where it is left to its default */
+  get(path: string): number | undefined;
+}
+
+/** Wire up a checked flowsheet: property model, units, streams, calculation order. */
+export function createPlant(flowsheet: Flowsheet): Plant {
+  const { components, reactions } = flowsheet;
+  const mixture = createMixture({
+    components,
+    gas: flowsheet.gas,
+    dissolvedGases: flowsheet.dissolvedGases,
+    basis: enthalpyBasisFor(components, reactions),
+  });
+  const blocks = flowsheet.blocks.map((b) => ({ ...b, settings: structuredClone(b.settings) }));
+  const feeds = flowsheet.feeds.map((feed) => ({ ...feed, parts: feed.parts.slice() }));
+  const kinds = blocks.map((b) => blockKinds.get(b.kind)!);
+  const units = blocks.map((b, i) => kinds[i].create(b.settings, { name: b.name, mixture, reactions }));
+  const wiring = wire(flowsheet, blocks, kinds);
+  const groups = planCalculation(
+    blocks.length,
+    wiring.edgeFrom,
+    wiring.edgeTo,
+    flowsheet.solve.tear.map((tag) => wiring.edgeStreams.indexOf(wiring.streamOf(tag))),
+    // Among equally small tear sets the stream called the recycle is the one an engineer would guess.
+    Float64Array.from(wiring.edgeStreams, (s) =>
+      flowsheet.streams[s].tag === flowsheet.ledger.recycle ? 2 : 1,
+    ),
+  ).groups.map((group) => ({
+    blocks: [...group.nodes],
+    tears: [...group.tears].map((edge) => wiring.edgeStreams[edge]),
+  }));
+  const streams = flowsheet.streams.map(() => emptyStream(components.length));
+  const torn = new Set(groups.flatMap((group) => group.tears));
+  const seen = streams.map((state, s) => (torn.has(s) ? emptyStream(components.length) : state));
+  const inlets = wiring.inlets.map((list) => list.map((s) => seen[s]));
+  const outlets = wiring.outlets.map((list) => list.map((s) => streams[s]));
+  const settings = { blocks, feeds, ids: components.map((c) => c.id) };
+
+  return {
+    flowsheet,
+    mixture,
+    blocks,
+    kinds,
+    units,
+    streams,
+    seen,
+    inlets,
+    outlets,
+    groups,
+    feeds,
+    enters: wiring.enters,
+    leaves: wiring.leaves,
+    refreshFeeds() {
+      for (const s of wiring.enters) {
+        const feed = feeds.find((f) => f.name === flowsheet.streams[s].from.name)!;
+        const state = streams[s];
+        feedFlows(feed, components, state.flowsMolPerS);
+        state.temperatureK = feed.temperatureK;
+        state.pressurePa = feed.pressurePa;
+        mixture.settle(state);
+      }
+    },
+    passBlock(block) {
+      try {
+        units[block].pass(inlets[block], outlets[block]);
+      } catch (trouble) {
+        if (trouble instanceof PassTrouble) trouble.block ??= blocks[block].name;
+        throw trouble;
+      }
+    },
+    set: (path, value) => moveSetting(path, value, settings),
+    get: (path) => readSetting(path, settings),
+  };
+}

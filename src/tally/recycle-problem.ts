@@ -1,0 +1,118 @@
+import type { FixedPointProblem } from '../convergence/problem.ts';
+import type { StreamState } from '../model/stream.ts';
+import type { Group, Plant } from './plant.ts';
+
+/** The variables of a torn stream: component flows [mol/s], then T/100 K and P/bar, so that all are of one size. */
+const KELVIN = 0.01;
+const BAR = 1e-5;
+/** A flow this small beside its stream is measured against the stream [-]. */
+const TRACE = 1e-6;
+
+/** The recycles of one group of blocks as a fixed-point problem, with the names of its variables. */
+export interface RecycleProblem extends FixedPointProblem {
+  /** e.g. S8.Ar, S8.temperature */
+  readonly names: readonly string[];
+  /** write the states of the torn streams as their sources left them into x */
+  read(x: Float64Array): void;
+}
+
+/**
+ * x = the torn streams as guessed, G(x) = the same streams as the blocks of the group return them.
+ * The extra error is the balance over the battery limit that the difference leaves open: per component against
+ * what enters or is formed, and of energy against what the blocks exchange.
+ */
+export function createRecycleProblem(plant: Plant, group: Group): RecycleProblem {
+  const { mixture, streams, seen, flowsheet } = plant;
+  const width = mixture.size + 2;
+  const size = width * group.tears.length;
+  const formed = new Float64Array(mixture.size);
+  const lower = new Float64Array(size);
+  for (let t = 0; t < group.tears.length; t++) {
+    lower[t * width + mixture.size] = 20 * KELVIN;
+    lower[t * width + mixture.size + 1] = 1e-6;
+  }
+
+  function pack(state: StreamState, x: Float64Array, at: number): void {
+    x.set(state.flowsMolPerS, at);
+    x[at + mixture.size] = state.temperatureK * KELVIN;
+    x[at + mixture.size + 1] = state.pressurePa * BAR;
+  }
+
+  return {
+    size,
+    lower,
+    names: group.tears.flatMap((s) =>
+      [...mixture.components.map((c) => c.id), 'temperature', 'pressure'].map(
+        (name) => `${flowsheet.streams[s].tag}.${name}`,
+      ),
+    ),
+    read(x) {
+      group.tears.forEach((s, t) => {
+        pack(streams[s], x, t * width);
+      });
+    },
+    evaluate(x, g) {
+      for (let t = 0; t < group.tears.length; t++) {
+        const guess = seen[group.tears[t]];
+        const at = t * width;
+        for (let i = 0; i < mixture.size; i++) guess.flowsMolPerS[i] = x[at + i];
+        guess.temperatureK = x[at + mixture.size] / KELVIN;
+        guess.pressurePa = x[at + mixture.size + 1] / BAR;
+        mixture.settle(guess);
+      }
+      for (const block of group.blocks) plant.passBlock(block);
+      for (let t = 0; t < group.tears.length; t++) pack(streams[group.tears[t]], g, t * width);
+    },
+    scale(x, g, out) {
+      for (let t = 0; t < group.tears.length; t++) {
+        const at = t * width;
+        let total = 0;
+        for (let i = 0; i < mixture.size; i++) total += Math.max(x[at + i], g[at + i]);
+        for (let i = 0; i < width; i++) {
+          const floor = i < mixture.size ? TRACE * total + 1e-12 : 0;
+          out[at + i] = Math.max(Math.abs(x[at + i]), Math.abs(g[at + i]), floor);
+        }
+      }
+    },
+    extraError() {
+      return Math.max(materialError(), energyError());
+    },
+  };
+
+  /** What the tears leave open of each component, against what enters the flowsheet or is formed in the group. */
+  function materialError(): number {
+    formed.fill(0);
+    for (const block of group.blocks) {
+      if (!plant.kinds[block].reactionsIn) continue;
+      for (const state of plant.outlets[block]) addFlows(state, 1);
+      for (const state of plant.inlets[block]) addFlows(state, -1);
+    }
+    let worst = 0;
+    for (let i = 0; i < mixture.size; i++) {
+      let open = 0;
+      for (const s of group.tears) open += streams[s].flowsMolPerS[i] - seen[s].flowsMolPerS[i];
+      let entering = Math.max(formed[i], 0);
+      for (const s of plant.enters) entering += streams[s].flowsMolPerS[i];
+      if (entering > 0) worst = Math.max(worst, Math.abs(open) / entering);
+    }
+    return worst;
+  }
+
+  function addFlows(state: StreamState, sign: number): void {
+    for (let i = 0; i < mixture.size; i++) formed[i] += sign * state.flowsMolPerS[i];
+  }
+
+  function energyError(): number {
+    let open = 0;
+    for (const s of group.tears) open += streams[s].enthalpyW - seen[s].enthalpyW;
+    let exchanged = 0;
+    for (const s of plant.enters) exchanged += Math.abs(streams[s].enthalpyW);
+    for (const block of group.blocks) {
+      let added = 0;
+      for (const state of plant.outlets[block]) added += state.enthalpyW;
+      for (const state of plant.inlets[block]) added -= state.enthalpyW;
+      exchanged += Math.abs(added);
+    }
+    return exchanged > 0 ? Math.abs(open) / exchanged : 0;
+  }
+}

@@ -1,0 +1,53 @@
+import type { BlockKind } from '../blocks/block.ts';
+import type { BlockSpec, Flowsheet } from '../model/flowsheet.ts';
+
+/** Which stream joins which ports, by index. */
+export interface Wiring {
+  /** stream indices per block, in port order */
+  readonly inlets: readonly (readonly number[])[];
+  readonly outlets: readonly (readonly number[])[];
+  /** the streams between blocks as edges of a graph whose nodes are blocks */
+  readonly edgeFrom: Int32Array;
+  readonly edgeTo: Int32Array;
+  /** stream index of each edge */
+  readonly edgeStreams: readonly number[];
+  readonly enters: readonly number[];
+  readonly leaves: readonly number[];
+  streamOf(tag: string): number;
+}
+
+/** Resolve the ends of the streams of a checked flowsheet. */
+export function wire(
+  flowsheet: Flowsheet,
+  blocks: readonly BlockSpec[],
+  kinds: readonly BlockKind[],
+): Wiring {
+  const { streams } = flowsheet;
+  const indexOf = new Map(blocks.map((b, i) => [b.name, i]));
+  const at = (end: { readonly name: string; readonly port: string | null }, port: string) =>
+    end.port === port || end.port === null;
+  const inlets = blocks.map((block, b) => {
+    const { inlets: ports } = kinds[b].ports(block.settings);
+    const arriving = streams.flatMap((s, i) => (s.to?.name === block.name ? [i] : []));
+    if (ports === 'any') return arriving;
+    return ports.flatMap((port) => arriving.filter((i) => at(streams[i].to!, port)));
+  });
+  const outlets = blocks.map((block, b) => {
+    const { outlets: ports } = kinds[b].ports(block.settings);
+    const leaving = streams.flatMap((s, i) => (s.from.name === block.name ? [i] : []));
+    return ports.flatMap((port) => leaving.filter((i) => at(streams[i].from, port)));
+  });
+  const edgeStreams = streams.flatMap((s, i) =>
+    indexOf.has(s.from.name) && s.to !== null && indexOf.has(s.to.name) ? [i] : [],
+  );
+  return {
+    inlets,
+    outlets,
+    edgeFrom: Int32Array.from(edgeStreams, (i) => indexOf.get(streams[i].from.name)!),
+    edgeTo: Int32Array.from(edgeStreams, (i) => indexOf.get(streams[i].to!.name)!),
+    edgeStreams,
+    enters: streams.flatMap((s, i) => (indexOf.has(s.from.name) ? [] : [i])),
+    leaves: streams.flatMap((s, i) => (s.to === null ? [i] : [])),
+    streamOf: (tag) => streams.findIndex((s) => s.tag === tag),
+  };
+}
