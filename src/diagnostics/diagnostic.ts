@@ -36,6 +36,8 @@ export class PassTrouble extends Error {
   readonly code: string;
   /** the block it happened in; filled in by the pass when the block itself does not know its name */
   block: string | null = null;
+  /** the setting of that block that asks for too much, where one can be named */
+  setting: string | null = null;
   readonly why: string;
   readonly mend: string;
 

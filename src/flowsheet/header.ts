@@ -27,13 +27,12 @@ export function readHeader(reading: Reading): ReadHeader | null {
   const gas = checkPart(reading, headerShape.gas, ['gas']);
   const liquid = checkPart(reading, headerShape.liquid, ['liquid']);
   const dissolved = checkPart(reading, headerShape.dissolved_gases, ['dissolved_gases']);
-  if (liquid === 'eos') {
-    const why = 'condensing by the equation of state alone is not built yet';
+  if (liquid === 'eos' && gas === 'ideal') {
     findings.error(placeOfPath(root, ['liquid']), {
-      code: 'not-available',
-      what: 'liquid: eos is not available.',
-      why,
-      mend: 'write liquid: antoine',
+      code: 'liquid-without-equation',
+      what: 'liquid: eos has no equation of state to condense by.',
+      why: 'gas: ideal is given, and an ideal gas never condenses',
+      mend: 'write gas: srk (or pr), or liquid: antoine',
     });
   }
   if (findings.list.length > before) return null;
@@ -42,7 +41,7 @@ export function readHeader(reading: Reading): ReadHeader | null {
       title: title ?? '',
       notes: notes ?? '',
       gas: gas ?? 'srk',
-      liquid: 'antoine',
+      liquid: liquid ?? 'antoine',
       dissolvedGases: dissolved ?? true,
     },
     assumptions: [

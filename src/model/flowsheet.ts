@@ -3,6 +3,7 @@ import type { Place } from './place.ts';
 import type { Reaction } from './reaction.ts';
 
 export type GasModelName = 'ideal' | 'srk' | 'pr';
+export type LiquidModelName = 'antoine' | 'eos';
 export type MethodName = 'auto' | 'direct' | 'wegstein' | 'anderson';
 
 /** A stream that enters across the battery limit, as the user gave it (SI). */
@@ -91,7 +92,7 @@ export interface Flowsheet {
   readonly caseName: string | null;
   readonly components: readonly Component[];
   readonly gas: GasModelName;
-  readonly liquid: 'antoine';
+  readonly liquid: LiquidModelName;
   readonly dissolvedGases: boolean;
   readonly reactions: readonly Reaction[];
   readonly feeds: readonly Feed[];

@@ -1,4 +1,5 @@
 import type { Component } from '../model/component.ts';
+import { hydrogenAlpha, soaveSlope, squareRootAlpha } from './cubic-alpha.ts';
 import { type InteractionRow, interactionRows } from './data/kij.ts';
 
 /** kᵢⱼ(T) of one pair, i < j: value [-] and slope [1/K]; the row it comes from. */
@@ -25,14 +26,64 @@ export function gasInteractions(
   equation: 'srk' | 'pr',
   components: readonly Component[],
 ): readonly BinaryInteraction[] {
+  return pairsOf(components, (first, second) => {
+    const row = gasRow(equation, first, second);
+    return row && { row, ...roundedLine(row) };
+  });
+}
+
+/**
+ * The interaction parameters of `liquid: eos`, for both phases and everywhere in the flowsheet, because one state
+ * must have one Gibbs energy: the first row of use `liquid`, else what the gas is computed with.
+ *
+ * The rows of hydrogen for the Soave-Redlich-Kwong equation were fitted with Soave's temperature function of
+ * hydrogen. They are carried over to Graboski and Daubert's with the attraction of the pair left as it was:
+ *   1 − k′ = (1 − k) √(α Soave / α Graboski-Daubert).
+ */
+export function liquidInteractions(
+  equation: 'srk' | 'pr',
+  components: readonly Component[],
+): readonly BinaryInteraction[] {
+  return pairsOf(components, (first, second) => {
+    const row = liquidRow(equation, first, second);
+    if (!row) {
+      const gas = gasRow(equation, first, second);
+      return gas && { row: gas, ...roundedLine(gas) };
+    }
+    const hydrogen = equation === 'srk' ? [first, second].find((c) => c.formula === 'H2') : undefined;
+    return { row, ...(hydrogen ? carriedOver(roundedLine(row), hydrogen) : roundedLine(row)) };
+  });
+}
+
+function pairsOf(
+  components: readonly Component[],
+  find: (first: Component, second: Component) => Omit<BinaryInteraction, 'i' | 'j'> | undefined,
+): readonly BinaryInteraction[] {
   const found: BinaryInteraction[] = [];
   for (let i = 0; i < components.length; i++) {
     for (let j = i + 1; j < components.length; j++) {
-      const row = gasRow(equation, components[i]!, components[j]!);
-      if (row) found.push({ i, j, row, ...roundedLine(row) });
+      const pair = find(components[i], components[j]);
+      if (pair) found.push({ i, j, ...pair });
     }
   }
   return found;
+}
+
+/** kᵢⱼ(T) and its slope. */
+type Line = Pick<BinaryInteraction, 'value' | 'slope'>;
+
+function carriedOver(line: Line, hydrogen: Component): Line {
+  const { temperatureK, acentricFactor } = hydrogen.critical!;
+  const from = squareRootAlpha(temperatureK, soaveSlope(acentricFactor));
+  const to = hydrogenAlpha(temperatureK);
+  return {
+    value: (T) => 1 - ((1 - line.value(T)) * from.value(T)) / to.value(T),
+    slope: (T) => {
+      const ratio = from.value(T) / to.value(T);
+      const ratioSlope = (from.slope(T) - ratio * to.slope(T)) / to.value(T);
+      return line.slope(T) * ratio - (1 - line.value(T)) * ratioSlope;
+    },
+  };
 }
 
 /** Whether a component is one of the gases whose light molecules call for constants of their own. */
@@ -40,16 +91,23 @@ export function isQuantumGas(component: Component): boolean {
   return component.formula === 'H2' || component.formula === 'He';
 }
 
-function gasRow(equation: 'srk' | 'pr', first: Component, second: Component): InteractionRow | undefined {
-  if (first.custom || second.custom) return undefined;
-  if (equation === 'srk' && (isQuantumGas(first) || isQuantumGas(second))) return undefined;
-  if (first.id === 'He' || second.id === 'He') return undefined;
-  const rows = interactionRows.filter(
+function liquidRow(equation: 'srk' | 'pr', first: Component, second: Component): InteractionRow | undefined {
+  return rowsOf(equation, first, second).find((row) => row.use === 'liquid');
+}
+
+function rowsOf(equation: 'srk' | 'pr', first: Component, second: Component): readonly InteractionRow[] {
+  if (first.custom || second.custom || first.id === 'He' || second.id === 'He') return [];
+  return interactionRows.filter(
     (row) =>
       row.equation === equation &&
       ((row.first === first.id && row.second === second.id) ||
         (row.first === second.id && row.second === first.id)),
   );
+}
+
+function gasRow(equation: 'srk' | 'pr', first: Component, second: Component): InteractionRow | undefined {
+  if (equation === 'srk' && (isQuantumGas(first) || isQuantumGas(second))) return undefined;
+  const rows = rowsOf(equation, first, second);
   return rows.find((row) => row.use === 'gas') ?? rows.find((row) => row.use === 'vle');
 }
 
@@ -59,7 +117,7 @@ function gasRow(equation: 'srk' | 'pr', first: Component, second: Component): In
  *   T' = fromK + r ln((1 + exp((T − fromK)/r)) / (1 + exp((T − toK)/r))),
  * since a corner in k would be a jump in the enthalpy.
  */
-function roundedLine(row: InteractionRow): { value(T: number): number; slope(T: number): number } {
+function roundedLine(row: InteractionRow): Line {
   const { k0, k1PerK, fromK, toK } = row;
   if (k1PerK === 0) return { value: () => k0, slope: () => 0 };
   return {

@@ -94,9 +94,9 @@ function group(name: string) {
 
 function identityRows(c: Component): readonly CatalogueRow[] {
   const { rows, add } = group('identity');
-  const row = species[c.id]!;
+  const row = species[c.id];
   const critical = row.critical;
-  add('molar mass', grams(c), 'g/mol', c.sources['molar mass']!);
+  add('molar mass', grams(c), 'g/mol', c.sources['molar mass']);
   add('critical temperature', critical?.temperatureK, 'K', critical?.source ?? '');
   add('critical pressure', critical && critical.pressurePa / 1e5, 'bar', critical?.source ?? '');
   add('critical volume', critical && critical.volumeM3PerMol * 1e6, 'cm3/mol', critical?.source ?? '');
@@ -111,13 +111,13 @@ function identityRows(c: Component): readonly CatalogueRow[] {
 
 function idealGasRows(c: Component): readonly CatalogueRow[] {
   const { rows, add } = group('ideal gas');
-  const { source } = nasa9[c.id]!;
-  const row = species[c.id]!;
+  const { source } = nasa9[c.id];
+  const row = species[c.id];
   const gas = createIdealGas([c], 'nasa');
   const out = new Float64Array(1);
   const at298 = (property: 'enthalpies' | 'entropies' | 'heatCapacities') => {
     gas[property](298.15, out);
-    return out[0]!;
+    return out[0];
   };
   add('formation enthalpy, NASA', rounded(at298('enthalpies') / 1000, 3), 'kJ/mol', source);
   add(
@@ -179,7 +179,7 @@ function liquidRows(id: string): readonly CatalogueRow[] {
   const table = saturatedVolumes[id];
   if (table) {
     add('molar volume, table', `${table.temperatureK.length} points`, 'cm3/mol', table.source, {
-      range: { fromK: table.temperatureK[0]!, toK: table.temperatureK.at(-1)! },
+      range: { fromK: table.temperatureK[0], toK: table.temperatureK.at(-1)! },
     });
   }
   add('molar volume at the boiling point', volume(row.volumeAtBoilingM3PerMol), 'cm3/mol', source);

@@ -1,4 +1,5 @@
 import type { Component } from '../model/component.ts';
+import type { LiquidModelName } from '../model/flowsheet.ts';
 import type { StreamState } from '../model/stream.ts';
 import type { Role } from './component-roles.ts';
 import { lnVapourPressure, vapourPressureRange } from './vapour-pressure.ts';
@@ -9,40 +10,48 @@ export interface Caution {
   readonly message: string;
 }
 
+/** Henry's law is a limit for little gas in much liquid; above this share a liquid needs a word. @source common practice */
+const MUCH_DISSOLVED = 0.2;
 /** A component below this mole fraction of the liquid needs no word about its vapour pressure. */
 const WORTH_A_WORD = 1e-4;
 
 /**
  * Cautions for a settled stream: a condensable outside the range of its vapour pressure, a condensate below a
- * freezing point, a gas so cold and dense that it would condense on its own.
+ * freezing point, a gas so cold and dense that it would condense on its own, a liquid that is mostly gas.
  */
 export function cautionsOf(
   stream: StreamState,
   components: readonly Component[],
   roles: readonly Role[],
+  model: LiquidModelName = 'antoine',
 ): Caution[] {
   const { temperatureK: T, pressurePa: P, flowsMolPerS, liquidMolPerS } = stream;
   let liquid = 0;
+  let dissolved = 0;
   let gas = 0;
   for (let i = 0; i < components.length; i++) {
     if (roles[i] === 'solid') continue;
-    liquid += liquidMolPerS[i]!;
-    gas += flowsMolPerS[i]! - liquidMolPerS[i]!;
+    liquid += liquidMolPerS[i];
+    if (roles[i] === 'dissolved') dissolved += liquidMolPerS[i];
+    gas += flowsMolPerS[i] - liquidMolPerS[i];
   }
-  return components.flatMap((c, i): Caution[] => {
+  const muchDissolved = model === 'antoine' && liquid > 0 && dissolved / liquid > MUCH_DISSOLVED;
+  return [...(muchDissolved ? [tooMuchGas(dissolved / liquid)] : []), ...components.flatMap(cautionOf)];
+
+  function cautionOf(c: Component, i: number): Caution[] {
     const range = vapourPressureRange(c);
     if (!range || roles[i] === 'solid') return [];
-    const share = liquid > 0 ? liquidMolPerS[i]! / liquid : 0;
+    const share = liquid > 0 ? liquidMolPerS[i] / liquid : 0;
     if (roles[i] === 'condensable' && share > WORTH_A_WORD) {
       if (T < range.fromK - 0.005) {
         return [
           {
             code: 'below-freezing',
-            message: `${celsius(T)} is below ${celsius(range.fromK)}, where the vapour pressure of ${c.id} ends (freezing point or end of data); it was extrapolated, and ${c.id} may freeze`,
+            message: `${celsius(T)} is below ${celsius(range.fromK)}, where the vapour pressure of ${c.id} ends (freezing point or end of data); ${model === 'eos' ? '' : 'it was extrapolated, and '}${c.id} may freeze`,
           },
         ];
       }
-      if (T > range.toK + 0.01) {
+      if (model === 'antoine' && T > range.toK + 0.01) {
         return [
           {
             code: 'above-critical',
@@ -51,7 +60,9 @@ export function cautionsOf(
         ];
       }
     }
-    const partial = gas > 0 ? ((flowsMolPerS[i]! - liquidMolPerS[i]!) / gas) * P : 0;
+    // An equation of state asks for no vapour pressure; the freezing point alone concerns it.
+    if (model === 'eos') return [];
+    const partial = gas > 0 ? ((flowsMolPerS[i] - liquidMolPerS[i]) / gas) * P : 0;
     const subcritical = T < (c.critical?.temperatureK ?? 0);
     if (roles[i] !== 'condensable' && subcritical && partial > Math.exp(lnVapourPressure(c, T))) {
       return [
@@ -62,7 +73,14 @@ export function cautionsOf(
       ];
     }
     return [];
-  });
+  }
+}
+
+function tooMuchGas(share: number): Caution {
+  return {
+    code: 'much-dissolved',
+    message: `${(100 * share).toFixed(0)} % of the liquid is dissolved gas; Henry's law is meant for a few per cent`,
+  };
 }
 
 function celsius(T: number): string {

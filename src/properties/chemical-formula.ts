@@ -40,8 +40,8 @@ export function parseFormula(text: string): ParsedFormula {
       add(groups.at(-1)!, symbol, count(atomCount));
     }
   }
-  if (openings.length > 0) return fault(text, openings[0]!, 1, 'this bracket is never closed');
-  const elements = Object.fromEntries(groups[0]!);
+  if (openings.length > 0) return fault(text, openings[0], 1, 'this bracket is never closed');
+  const elements = Object.fromEntries(groups[0]);
   if (Object.values(elements).every((n) => n === 0)) {
     return fault(text, 0, Math.max(text.length, 1), 'the formula contains no atoms');
   }

@@ -44,9 +44,27 @@ export function componentRoles(
     );
   return components.map((c, i) => {
     if (c.solid) return 'solid';
-    const candidate = candidates[i]!;
+    const candidate = candidates[i];
     if (candidate && (condense || !solvesIn(c, true))) return 'condensable';
     return dissolvedGases && solvesIn(c, candidate) ? 'dissolved' : 'gas';
+  });
+}
+
+/**
+ * Roles under `liquid: eos`: whatever the equation of state knows is in both phases, so that `condensable` and
+ * `dissolved` differ in name only, by what condenses on its own at a loop's temperatures. What has no critical
+ * data stays gas, and without `dissolvedGases` so does what is not condensable.
+ */
+export function equationOfStateRoles(
+  components: readonly Component[],
+  dissolvedGases: boolean,
+  condense: readonly string[] | null,
+): Role[] {
+  return components.map((c) => {
+    if (c.solid) return 'solid';
+    if (!c.critical) return 'gas';
+    if (condense ? condense.includes(c.id) : mayCondense(c)) return 'condensable';
+    return dissolvedGases ? 'dissolved' : 'gas';
   });
 }
 

@@ -25,8 +25,8 @@ export function builtInComponent(id: string): Component | undefined {
 }
 
 function assemble(id: string): Component {
-  const row = species[id]!;
-  const gas = nasa9[id]!;
+  const row = species[id];
+  const gas = nasa9[id];
   return {
     id,
     name: row.name,
@@ -69,12 +69,12 @@ function liquidOf(id: string): LiquidData | null {
 }
 
 function sourcesOf(id: string): Record<string, string> {
-  const row = species[id]!;
+  const row = species[id];
   const found: Record<string, string | undefined> = {
     'molar mass': 'IUPAC abridged standard atomic weights 2021',
     critical: row.critical?.source,
     'boiling point': row.boilingSource,
-    'ideal gas': nasa9[id]!.source,
+    'ideal gas': nasa9[id].source,
     'formation enthalpy': row.formationAtctJPerMol === null ? undefined : FORMATION_ATCT_SOURCE,
     'vapour pressure': antoine[id] && `Antoine sets fitted to: ${antoine[id].source}`,
     'vapour pressure slope': wideVapourPressure[id]?.source,

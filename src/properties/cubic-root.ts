@@ -16,6 +16,30 @@ export function vapourRoot(A: number, B: number, u: number, w: number): number {
   return polish(closedForm(c2, c1, c0), c2, c1, c0, B);
 }
 
+/**
+ * Smallest real root above B of the same cubic, which is the liquid's; where only one root lies above B, that one.
+ * The closed form loses a root that is small beside the others. Newton's steps do not: at Z = B the cubic is −2B²
+ * and it is concave up to the liquid's root, so that they come up to it from below without passing it; where
+ * there is none, they pass the hill or the point of inflection.
+ *
+ * @param A,B,u,w  as for vapourRoot
+ */
+export function liquidRoot(A: number, B: number, u: number, w: number): number {
+  const c2 = (u - 1) * B - 1;
+  const c1 = A + w * B * B - u * B * (B + 1);
+  const c0 = -(A * B + w * B * B * (B + 1));
+  let Z = B;
+  // Beside a double root each step halves the way.
+  for (let step = 0; step < 60; step++) {
+    const slope = (3 * Z + 2 * c2) * Z + c1;
+    if (!(slope > 0) || 3 * Z + c2 > 0) return vapourRoot(A, B, u, w);
+    const next = Z - (((Z + c2) * Z + c1) * Z + c0) / slope;
+    if (!(next > Z)) break;
+    Z = next;
+  }
+  return Z;
+}
+
 function closedForm(c2: number, c1: number, c0: number): number {
   const p = c1 - (c2 * c2) / 3;
   const halfQ = (c2 * c2 * c2) / 27 - (c2 * c1) / 6 + c0 / 2;

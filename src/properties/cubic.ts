@@ -2,7 +2,7 @@ import type { GasModelName } from '../model/flowsheet.ts';
 import type { BinaryInteraction } from './binary-interaction.ts';
 import { R } from './constants.ts';
 import type { AlphaRoot } from './cubic-alpha.ts';
-import { vapourRoot } from './cubic-root.ts';
+import { liquidRoot, vapourRoot } from './cubic-root.ts';
 import type { GasModel } from './gas-model.ts';
 
 /** What one component brings into a cubic equation of state. */
@@ -27,6 +27,12 @@ export interface CubicForm {
   readonly criticalVolume: number;
 }
 
+/** A cubic equation of state on one of its roots: a gas, or with `liquid: eos` the liquid. */
+export interface Cubic extends GasModel {
+  /** ∂ ln φᵢ/∂T [1/K] and ∂ ln φᵢ/∂P [1/Pa] at constant composition; 0 for solids */
+  lnPhiSlopes(T: number, P: number, y: Float64Array, perKelvin: Float64Array, perPascal: Float64Array): void;
+}
+
 /**
  * Gas model of a cubic equation of state in two constants, with a volume shift,
  *   P = RT/(v' − b) − a/((v' + δ1 b)(v' + δ2 b)),  v' = v + c,
@@ -39,10 +45,12 @@ export interface CubicForm {
  * A component without an entry (null) is an ideal gas mixed ideally with the others: its ln φ is 0 and those
  * of the others follow from their fractions among themselves. That keeps one Gibbs energy for the whole.
  *
- * The pair attractions of the latest temperature are kept, since callers try many compositions at one.
+ * The attractions of the latest temperature are kept, since callers try many compositions at one; so is the state
+ * of the latest mixture, since they ask for its fugacities, enthalpy and entropy in turn.
  *
  * @param entries  per component in declared order, null for solids and components without critical data
  * @param interactions  kᵢⱼ by indices i < j; a pair that is missing has 0
+ * @param phase  which root is taken where there are three
  * @source the equations as in M. L. Michelsen, J. M. Mollerup, Thermodynamic Models, 2nd ed. 2007, ch. 3;
  *   shift: A. Péneloux, E. Rauzy, R. Frèze, Fluid Phase Equilib. 8 (1982) 7
  */
@@ -50,7 +58,9 @@ export function createCubic(
   form: CubicForm,
   entries: readonly (CubicComponent | null)[],
   interactions: readonly BinaryInteraction[],
-): GasModel {
+  phase: 'vapour' | 'liquid' = 'vapour',
+): Cubic {
+  const rootOf = phase === 'vapour' ? vapourRoot : liquidRoot;
   const size = entries.length;
   const { delta1, delta2 } = form;
   const u = delta1 + delta2;
@@ -65,114 +75,169 @@ export function createCubic(
   members.forEach((i, m) => {
     memberOf[i] = m;
   });
-  const pairs = interactions.filter(({ i, j }) => memberOf[i]! >= 0 && memberOf[j]! >= 0);
+  const pairs = interactions.filter(({ i, j }) => memberOf[i] >= 0 && memberOf[j] >= 0);
+  const first = Int32Array.from(pairs, ({ i }) => memberOf[i]);
+  const second = Int32Array.from(pairs, ({ j }) => memberOf[j]);
 
-  // kept for the latest temperature: aᵢⱼ and daᵢⱼ/dT, count × count by rows
+  // kept for the latest temperature: √aᵢ, its slope, and per pair kᵢⱼ √(aᵢ aⱼ) and its slope
   let keptT = Number.NaN;
-  const attraction = new Float64Array(count * count);
-  const attractionSlope = new Float64Array(count * count);
   const root = new Float64Array(count);
   const rootSlope = new Float64Array(count);
+  const taken = new Float64Array(pairs.length);
+  const takenSlope = new Float64Array(pairs.length);
 
   // of the latest mixture; x are fractions among the members
+  const keptY = new Float64Array(size);
   const x = new Float64Array(count);
   const rowSum = new Float64Array(count);
-  let memberShare = 0;
-  let a = 0;
-  let aSlope = 0;
-  let b = 0;
-  let c = 0;
-  let Z = 1;
-  let L = 0;
+  const rowSlope = new Float64Array(count);
+  // Fields, not variables: a number kept in a variable of the closure is allocated anew at each change.
+  const now = { T: Number.NaN, P: Number.NaN, memberShare: 0, a: 0, aSlope: 0, b: 0, c: 0, Z: 1, L: 0 };
 
   function setTemperature(T: number): void {
     if (T === keptT) return;
     for (let m = 0; m < count; m++) {
-      root[m] = criticalRoot[m]! * alphas[m]!.value(T);
-      rootSlope[m] = criticalRoot[m]! * alphas[m]!.slope(T);
+      root[m] = criticalRoot[m] * alphas[m].value(T);
+      rootSlope[m] = criticalRoot[m] * alphas[m].slope(T);
     }
-    for (let m = 0; m < count; m++) {
-      for (let n = 0; n < count; n++) {
-        attraction[m * count + n] = root[m]! * root[n]!;
-        attractionSlope[m * count + n] = rootSlope[m]! * root[n]! + root[m]! * rootSlope[n]!;
-      }
+    for (let k = 0; k < pairs.length; k++) {
+      const m = first[k];
+      const n = second[k];
+      const kij = pairs[k].value(T);
+      taken[k] = kij * root[m] * root[n];
+      takenSlope[k] =
+        kij * (rootSlope[m] * root[n] + root[m] * rootSlope[n]) + pairs[k].slope(T) * root[m] * root[n];
     }
-    for (let k = 0; k < pairs.length; k++) applyInteraction(pairs[k]!, T);
     keptT = T;
   }
 
-  function applyInteraction(pair: BinaryInteraction, T: number): void {
-    const m = memberOf[pair.i]!;
-    const n = memberOf[pair.j]!;
-    const geometric = root[m]! * root[n]!;
-    const geometricSlope = rootSlope[m]! * root[n]! + root[m]! * rootSlope[n]!;
-    const k = pair.value(T);
-    const value = geometric * (1 - k);
-    const slope = geometricSlope * (1 - k) - geometric * pair.slope(T);
-    attraction[m * count + n] = value;
-    attraction[n * count + m] = value;
-    attractionSlope[m * count + n] = slope;
-    attractionSlope[n * count + m] = slope;
-  }
-
-  /** Solves the state of the members of a mixture; false where it has none. */
+  /** Solves the state of the members of a mixture; false where it has none. Asked again, it has the answer. */
   function setMixture(T: number, P: number, y: Float64Array): boolean {
+    if (isKept(T, P, y)) return true;
     let total = 0;
     let ofMembers = 0;
     for (let i = 0; i < size; i++) {
-      total += y[i]!;
-      if (memberOf[i]! >= 0) ofMembers += y[i]!;
+      total += y[i];
+      if (memberOf[i] >= 0) ofMembers += y[i];
     }
     if (!(ofMembers > 0)) return false;
     setTemperature(T);
-    memberShare = ofMembers / total;
-    a = 0;
-    aSlope = 0;
-    b = 0;
-    c = 0;
+    let b = 0;
+    let c = 0;
+    let sum = 0;
+    let slopeSum = 0;
     for (let m = 0; m < count; m++) {
-      x[m] = y[members[m]!]! / ofMembers;
-      b += x[m]! * covolume[m]!;
-      c += x[m]! * shift[m]!;
+      const share = y[members[m]] / ofMembers;
+      x[m] = share;
+      b += share * covolume[m];
+      c += share * shift[m];
+      sum += share * root[m];
+      slopeSum += share * rootSlope[m];
     }
-    for (let m = 0; m < count; m++) {
-      let sum = 0;
-      let slopeSum = 0;
-      for (let n = 0; n < count; n++) {
-        sum += x[n]! * attraction[m * count + n]!;
-        slopeSum += x[n]! * attractionSlope[m * count + n]!;
-      }
-      rowSum[m] = sum;
-      a += x[m]! * sum;
-      aSlope += x[m]! * slopeSum;
+    // Σ Σ xᵢ xⱼ √(aᵢ aⱼ)(1 − kᵢⱼ) = (Σ xᵢ √aᵢ)² less what the pairs take
+    let a = sum * sum;
+    let aSlope = 2 * sum * slopeSum;
+    for (let m = 0; m < count; m++) rowSum[m] = root[m] * sum;
+    for (let k = 0; k < pairs.length; k++) {
+      const m = first[k];
+      const n = second[k];
+      rowSum[m] -= x[n] * taken[k];
+      rowSum[n] -= x[m] * taken[k];
+      a -= 2 * x[m] * x[n] * taken[k];
+      aSlope -= 2 * x[m] * x[n] * takenSlope[k];
     }
-    solveState(T, P);
+    solveState(T, P, a, aSlope, b, c);
+    keptY.set(y);
+    now.memberShare = ofMembers / total;
+    now.P = P;
+    now.T = T;
+    return true;
+  }
+
+  function isKept(T: number, P: number, y: Float64Array): boolean {
+    if (T !== now.T || P !== now.P) return false;
+    for (let i = 0; i < size; i++) if (y[i] !== keptY[i]) return false;
     return true;
   }
 
   function setPure(i: number, T: number, P: number): boolean {
-    const m = memberOf[i]!;
+    const m = memberOf[i];
     if (m < 0) return false;
     setTemperature(T);
-    a = attraction[m * count + m]!;
-    aSlope = attractionSlope[m * count + m]!;
-    b = covolume[m]!;
-    c = shift[m]!;
-    solveState(T, P);
+    now.T = Number.NaN;
+    solveState(T, P, root[m] * root[m], 2 * root[m] * rootSlope[m], covolume[m], shift[m]);
     return true;
   }
 
-  function solveState(T: number, P: number): void {
+  function solveState(T: number, P: number, a: number, aSlope: number, b: number, c: number): void {
     const B = (b * P) / (R * T);
-    Z = vapourRoot((a * P) / (R * T * R * T), B, u, w);
-    L = Math.log((Z + delta1 * B) / (Z + delta2 * B)) / (delta1 - delta2);
+    const Z = rootOf((a * P) / (R * T * R * T), B, u, w);
+    now.a = a;
+    now.aSlope = aSlope;
+    now.b = b;
+    now.c = c;
+    now.Z = Z;
+    now.L = Math.log((Z + delta1 * B) / (Z + delta2 * B)) / (delta1 - delta2);
+  }
+
+  /** Slope of every ln φ in a variable of which A, B, a and the attraction sums have the given slopes. */
+  function slopesNow(
+    RT: number,
+    B: number,
+    slopeA: number,
+    slopeB: number,
+    logSlopeRT: number,
+    attractionSlope: number,
+    rowSlope: Float64Array | null,
+    out: Float64Array,
+  ): void {
+    const { a, b, Z, L } = now;
+    const A = (a * B) / (b * RT);
+    const c2 = (u - 1) * B - 1;
+    const c1 = A + w * B * B - u * B * (B + 1);
+    const moved =
+      (u - 1) * slopeB * Z * Z +
+      (slopeA + 2 * w * B * slopeB - u * slopeB * (2 * B + 1)) * Z -
+      (slopeA * B + A * slopeB + w * slopeB * (3 * B + 2) * B);
+    const slopeZ = -moved / ((3 * Z + 2 * c2) * Z + c1);
+    const slopeL =
+      ((slopeZ + delta1 * slopeB) / (Z + delta1 * B) - (slopeZ + delta2 * slopeB) / (Z + delta2 * B)) /
+      (delta1 - delta2);
+    const perAttraction = L / (b * RT);
+    const perAttractionSlope = slopeL / (b * RT) - perAttraction * logSlopeRT;
+    const repulsion = (slopeZ - slopeB) / (Z - B);
+    out.fill(0);
+    for (let m = 0; m < count; m++) {
+      const share = covolume[m] / b;
+      out[members[m]] =
+        share * slopeZ -
+        repulsion -
+        (2 * (rowSlope ? rowSlope[m] : 0) - attractionSlope * share) * perAttraction -
+        (2 * rowSum[m] - a * share) * perAttractionSlope;
+    }
+  }
+
+  /** ∂(Σ xⱼ aᵢⱼ)/∂T of the latest mixture. */
+  function setRowSlopes(): void {
+    let sum = 0;
+    let slopeSum = 0;
+    for (let m = 0; m < count; m++) {
+      sum += x[m] * root[m];
+      slopeSum += x[m] * rootSlope[m];
+    }
+    for (let m = 0; m < count; m++) rowSlope[m] = rootSlope[m] * sum + root[m] * slopeSum;
+    for (let k = 0; k < pairs.length; k++) {
+      rowSlope[first[k]] -= x[second[k]] * takenSlope[k];
+      rowSlope[second[k]] -= x[first[k]] * takenSlope[k];
+    }
   }
 
   function compressibilityNow(T: number, P: number): number {
-    return Z - (c * P) / (R * T);
+    return now.Z - (now.c * P) / (R * T);
   }
 
   function enthalpyNow(T: number, P: number): number {
+    const { a, aSlope, b, c, Z, L } = now;
     return R * T * (Z - 1) + ((T * aSlope - a) * L) / b - c * P;
   }
 
@@ -182,34 +247,54 @@ export function createCubic(
     lnPhi(T, P, y, out) {
       out.fill(0);
       if (!setMixture(T, P, y)) return;
+      const { a, b, Z, L } = now;
       const RT = R * T;
       const repulsion = Math.log(Z - (b * P) / RT);
       const perAttraction = L / (b * RT);
       for (let m = 0; m < count; m++) {
-        const share = covolume[m]! / b;
-        out[members[m]!] =
-          share * (Z - 1) - repulsion - (2 * rowSum[m]! - a * share) * perAttraction - (shift[m]! * P) / RT;
+        const share = covolume[m] / b;
+        out[members[m]] =
+          share * (Z - 1) - repulsion - (2 * rowSum[m] - a * share) * perAttraction - (shift[m] * P) / RT;
+      }
+    },
+    lnPhiSlopes(T, P, y, perKelvin, perPascal) {
+      perKelvin.fill(0);
+      perPascal.fill(0);
+      if (!setMixture(T, P, y)) return;
+      const { a, aSlope, b } = now;
+      const RT = R * T;
+      const B = (b * P) / RT;
+      const A = (a * B) / (b * RT);
+      setRowSlopes();
+      slopesNow(RT, B, A * (aSlope / a - 2 / T), -B / T, 1 / T, aSlope, rowSlope, perKelvin);
+      slopesNow(RT, B, A / P, B / P, 0, 0, null, perPascal);
+      for (let m = 0; m < count; m++) {
+        perKelvin[members[m]] += (shift[m] * P) / (RT * T);
+        perPascal[members[m]] -= shift[m] / RT;
       }
     },
     compressibility(T, P, y) {
       if (!setMixture(T, P, y)) return 1;
-      return 1 + memberShare * (compressibilityNow(T, P) - 1);
+      return 1 + now.memberShare * (compressibilityNow(T, P) - 1);
     },
     isLiquidLike(T, P, y) {
       if (!setMixture(T, P, y)) return false;
+      const { a, b, Z } = now;
       // Below the critical temperature a root on the liquid's side of the critical volume is the largest only
       // where it is the single one.
       return a > form.criticalAttraction * b * R * T && Z * R * T < form.criticalVolume * b * P;
     },
     enthalpyDeparture(T, P, y) {
-      return setMixture(T, P, y) ? memberShare * enthalpyNow(T, P) : 0;
+      return setMixture(T, P, y) ? now.memberShare * enthalpyNow(T, P) : 0;
     },
     entropyDeparture(T, P, y) {
       if (!setMixture(T, P, y)) return 0;
+      const { aSlope, b, memberShare, Z, L } = now;
       return memberShare * (R * Math.log(Z - (b * P) / (R * T)) + (aSlope * L) / b);
     },
     pureLnPhi(i, T, P) {
       if (!setPure(i, T, P)) return 0;
+      const { a, b, c, Z, L } = now;
       const RT = R * T;
       return Z - 1 - Math.log(Z - (b * P) / RT) - (a * L) / (b * RT) - (c * P) / RT;
     },

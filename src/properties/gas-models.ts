@@ -1,8 +1,8 @@
 import type { Component } from '../model/component.ts';
 import type { GasModelName } from '../model/flowsheet.ts';
-import { gasInteractions, isQuantumGas } from './binary-interaction.ts';
+import { gasInteractions, isQuantumGas, liquidInteractions } from './binary-interaction.ts';
 import { R } from './constants.ts';
-import { type CubicComponent, type CubicForm, createCubic } from './cubic.ts';
+import { type Cubic, type CubicComponent, type CubicForm, createCubic } from './cubic.ts';
 import { hydrogenAlpha, pengRobinsonSlope, soaveSlope, squareRootAlpha } from './cubic-alpha.ts';
 import type { GasModel } from './gas-model.ts';
 
@@ -28,6 +28,20 @@ export function createGasModel(name: GasModelName, components: readonly Componen
         gasInteractions('pr', components),
       );
   }
+}
+
+/** Gas and liquid of one equation of state with one set of parameters, for `liquid: eos`. */
+export function createCubicPhases(
+  name: Exclude<GasModelName, 'ideal'>,
+  components: readonly Component[],
+): { readonly gas: Cubic; readonly liquid: Cubic } {
+  const form = name === 'srk' ? SOAVE : PENG_ROBINSON;
+  const entries = components.map(name === 'srk' ? soaveComponent : pengRobinsonComponent);
+  const interactions = liquidInteractions(name, components);
+  return {
+    gas: createCubic(form, entries, interactions, 'vapour'),
+    liquid: createCubic(form, entries, interactions, 'liquid'),
+  };
 }
 
 /** What each model is and where it comes from, for the assumptions of a result. */

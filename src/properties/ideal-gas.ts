@@ -49,15 +49,15 @@ export function createIdealGas(components: readonly Component[], basis: Enthalpy
   let locatedK = Number.NaN;
 
   components.forEach((c, i) => {
-    first[i + 1] = first[i]! + c.idealGas.length;
+    first[i + 1] = first[i] + c.idealGas.length;
     c.idealGas.forEach((interval, k) => {
-      const at = first[i]! + k;
+      const at = first[i] + k;
       upTo[at] = interval.toK;
       setCoefficients(interval, basis, h, s, cp, STRIDE * at);
     });
-    closeSeams(c.idealGas, first[i]!);
-    setEnd(low, i, c.idealGas[0]?.fromK, first[i]!);
-    setEnd(high, i, c.idealGas.at(-1)?.toK, first[i + 1]! - 1);
+    closeSeams(c.idealGas, first[i]);
+    setEnd(low, i, c.idealGas[0]?.fromK, first[i]);
+    setEnd(high, i, c.idealGas.at(-1)?.toK, first[i + 1] - 1);
   });
 
   /** Interval of every component at T, kept for the next call at the same temperature. */
@@ -65,12 +65,12 @@ export function createIdealGas(components: readonly Component[], basis: Enthalpy
     if (T === locatedK) return;
     locatedK = T;
     for (let i = 0; i < size; i++) {
-      const last = first[i + 1]! - 1;
-      if (!(T >= low[4 * i]!)) segment[i] = BELOW;
-      else if (T > high[4 * i]!) segment[i] = ABOVE;
+      const last = first[i + 1] - 1;
+      if (!(T >= low[4 * i])) segment[i] = BELOW;
+      else if (T > high[4 * i]) segment[i] = ABOVE;
       else {
-        let at = first[i]!;
-        while (at < last && T > upTo[at]!) at++;
+        let at = first[i];
+        while (at < last && T > upTo[at]) at++;
         segment[i] = at;
       }
     }
@@ -81,14 +81,14 @@ export function createIdealGas(components: readonly Component[], basis: Enthalpy
       own.findIndex((interval) => interval.fromK <= 298.15 && 298.15 <= interval.toK),
       0,
     );
-    for (let k = anchor + 1; k < own.length; k++) join(own[k]!.fromK, start + k - 1, start + k);
-    for (let k = anchor - 1; k >= 0; k--) join(own[k]!.toK, start + k + 1, start + k);
+    for (let k = anchor + 1; k < own.length; k++) join(own[k].fromK, start + k - 1, start + k);
+    for (let k = anchor - 1; k >= 0; k--) join(own[k].toK, start + k + 1, start + k);
   }
 
   function join(T: number, inner: number, outer: number): void {
     const lnT = Math.log(T);
-    h[STRIDE * outer + 7]! += enthalpyAt(h, STRIDE * inner, T, lnT) - enthalpyAt(h, STRIDE * outer, T, lnT);
-    s[STRIDE * outer + 7]! += entropyAt(s, STRIDE * inner, T, lnT) - entropyAt(s, STRIDE * outer, T, lnT);
+    h[STRIDE * outer + 7] += enthalpyAt(h, STRIDE * inner, T, lnT) - enthalpyAt(h, STRIDE * outer, T, lnT);
+    s[STRIDE * outer + 7] += entropyAt(s, STRIDE * inner, T, lnT) - entropyAt(s, STRIDE * outer, T, lnT);
   }
 
   function setEnd(end: Float64Array, i: number, T: number | undefined, at: number): void {
@@ -105,11 +105,11 @@ export function createIdealGas(components: readonly Component[], basis: Enthalpy
       locate(T);
       const lnT = Math.log(T);
       for (let i = 0; i < size; i++) {
-        const at = segment[i]!;
+        const at = segment[i];
         if (at >= 0) out[i] = enthalpyAt(h, STRIDE * at, T, lnT);
         else {
           const end = at === BELOW ? low : high;
-          out[i] = end[4 * i + 1]! + end[4 * i + 3]! * (T - end[4 * i]!);
+          out[i] = end[4 * i + 1] + end[4 * i + 3] * (T - end[4 * i]);
         }
       }
     },
@@ -117,20 +117,20 @@ export function createIdealGas(components: readonly Component[], basis: Enthalpy
       locate(T);
       const lnT = Math.log(T);
       for (let i = 0; i < size; i++) {
-        const at = segment[i]!;
+        const at = segment[i];
         if (at >= 0) out[i] = entropyAt(s, STRIDE * at, T, lnT);
         else {
           const end = at === BELOW ? low : high;
-          out[i] = end[4 * i + 2]! + end[4 * i + 3]! * Math.log(T / end[4 * i]!);
+          out[i] = end[4 * i + 2] + end[4 * i + 3] * Math.log(T / end[4 * i]);
         }
       }
     },
     heatCapacities(T, out) {
       locate(T);
       for (let i = 0; i < size; i++) {
-        const at = segment[i]!;
+        const at = segment[i];
         if (at >= 0) out[i] = heatCapacityAt(cp, STRIDE * at, T);
-        else out[i] = (at === BELOW ? low : high)[4 * i + 3]!;
+        else out[i] = (at === BELOW ? low : high)[4 * i + 3];
       }
     },
   };
@@ -180,16 +180,16 @@ function setCoefficients(
 }
 
 function enthalpyAt(h: Float64Array, k: number, T: number, lnT: number): number {
-  const power = h[k + 2]! + T * (h[k + 3]! + T * (h[k + 4]! + T * (h[k + 5]! + T * h[k + 6]!)));
-  return h[k]! / T + h[k + 1]! * lnT + T * power + h[k + 7]!;
+  const power = h[k + 2] + T * (h[k + 3] + T * (h[k + 4] + T * (h[k + 5] + T * h[k + 6])));
+  return h[k] / T + h[k + 1] * lnT + T * power + h[k + 7];
 }
 
 function entropyAt(s: Float64Array, k: number, T: number, lnT: number): number {
-  const power = s[k + 3]! + T * (s[k + 4]! + T * (s[k + 5]! + T * s[k + 6]!));
-  return (s[k]! / T + s[k + 1]!) / T + s[k + 2]! * lnT + T * power + s[k + 7]!;
+  const power = s[k + 3] + T * (s[k + 4] + T * (s[k + 5] + T * s[k + 6]));
+  return (s[k] / T + s[k + 1]) / T + s[k + 2] * lnT + T * power + s[k + 7];
 }
 
 function heatCapacityAt(cp: Float64Array, k: number, T: number): number {
-  const power = cp[k + 3]! + T * (cp[k + 4]! + T * (cp[k + 5]! + T * cp[k + 6]!));
-  return (cp[k]! / T + cp[k + 1]!) / T + cp[k + 2]! + T * power;
+  const power = cp[k + 3] + T * (cp[k + 4] + T * (cp[k + 5] + T * cp[k + 6]));
+  return (cp[k] / T + cp[k + 1]) / T + cp[k + 2] + T * power;
 }

@@ -80,19 +80,19 @@ function prepare(c: Component): Curve {
 
 function fromTable(c: Component, liquid: LiquidData): Curve {
   const kept = wellSpaced(liquid.tableK);
-  const at = <T>(values: readonly T[]) => kept.map((k) => values[k]!);
+  const at = <T>(values: readonly T[]) => kept.map((k) => values[k]);
   const table = createMonotoneCubic(at(liquid.tableK), at(liquid.tableVolumeM3PerMol));
   const last = table.x.length - 1;
-  const [toK, atTo] = [table.x[last]!, table.y[last]!];
+  const [toK, atTo] = [table.x[last], table.y[last]];
   return {
     table,
     rackett: null,
-    fromK: table.x[0]!,
+    fromK: table.x[0],
     toK,
-    atFrom: table.y[0]!,
-    slopeFrom: table.slope[0]!,
+    atFrom: table.y[0],
+    slopeFrom: table.slope[0],
     atTo,
-    slopeTo: table.slope[last]!,
+    slopeTo: table.slope[last],
     top: Math.max(criticalVolumeThrough(c, toK, atTo), 1.05 * atTo),
   };
 }
@@ -103,13 +103,10 @@ function fromTable(c: Component, liquid: LiquidData): Curve {
  */
 function wellSpaced(temperatures: readonly number[]): number[] {
   const last = temperatures.length - 1;
-  const least = (LEAST_SPACING * (temperatures[last]! - temperatures[0]!)) / last;
+  const least = (LEAST_SPACING * (temperatures[last] - temperatures[0])) / last;
   const kept = [0];
   for (let k = 1; k < last; k++) {
-    const room = Math.min(
-      temperatures[k]! - temperatures[kept.at(-1)!]!,
-      temperatures[last]! - temperatures[k]!,
-    );
+    const room = Math.min(temperatures[k] - temperatures[kept.at(-1)!], temperatures[last] - temperatures[k]);
     if (room > least) kept.push(k);
   }
   return [...kept, last];

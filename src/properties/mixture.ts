@@ -1,21 +1,25 @@
 import type { Component } from '../model/component.ts';
-import type { GasModelName } from '../model/flowsheet.ts';
+import type { GasModelName, LiquidModelName } from '../model/flowsheet.ts';
 import type { StreamState } from '../model/stream.ts';
 import { type Caution, cautionsOf } from './cautions.ts';
 import type { Role } from './component-roles.ts';
-import { componentRoles } from './component-roles.ts';
+import { componentRoles, equationOfStateRoles } from './component-roles.ts';
 import { R, STANDARD_PRESSURE_PA } from './constants.ts';
+import { createCubicLiquid } from './cubic-liquid.ts';
+import { createCubicSplit } from './cubic-split.ts';
 import type { GasModel } from './gas-model.ts';
-import { createGasModel } from './gas-models.ts';
+import { createCubicPhases, createGasModel } from './gas-models.ts';
 import type { EnthalpyBasis, IdealGas } from './ideal-gas.ts';
 import { createIdealGas } from './ideal-gas.ts';
-import { createLiquidPhase } from './liquid-phase.ts';
-import { createPhaseSplit } from './phase-split.ts';
+import { createLiquidPhase, type LiquidPhase } from './liquid-phase.ts';
+import { createPhaseSplit, type PhaseSplit } from './phase-split.ts';
 import { solveState } from './solve-state.ts';
 
 export interface MixtureSpec {
   readonly components: readonly Component[];
   readonly gas: GasModelName;
+  /** how the liquid is computed; by vapour pressures and Henry constants where nothing is said */
+  readonly liquid?: LiquidModelName;
   readonly dissolvedGases: boolean;
   readonly basis: EnthalpyBasis;
   /** ids that the user declared condensable; null for the rule of component-roles.ts */
@@ -37,7 +41,7 @@ export interface Mixture {
   settle(stream: StreamState): void;
   /** From T, P, flows and a given share of liquid: the enthalpy. */
   settlePhases(stream: StreamState): void;
-  /** From P, flows and an enthalpy [W]: temperature and phases; nothing holds no enthalpy. @throws PassTrouble outside 20–3500 K */
+  /** From P, flows and an enthalpy [W]: temperature and phases. An empty stream holds none. @throws PassTrouble outside 20–3500 K */
   settleAtEnthalpy(stream: StreamState, enthalpyW: number): void;
   /** From P, flows and an entropy [W/K]: temperature, phases and enthalpy. @throws PassTrouble as above */
   settleAtEntropy(stream: StreamState, entropyWPerK: number): void;
@@ -59,11 +63,8 @@ export interface Mixture {
 export function createMixture(spec: MixtureSpec): Mixture {
   const { components } = spec;
   const size = components.length;
-  const gas = createGasModel(spec.gas, components);
   const idealGas = createIdealGas(components, spec.basis);
-  const roles = componentRoles(components, spec.dissolvedGases, spec.condense ?? null);
-  const liquidPhase = createLiquidPhase(components, roles, gas);
-  const phases = createPhaseSplit(gas, liquidPhase);
+  const { gas, roles, liquidPhase, phases } = spec.liquid === 'eos' ? oneEquation(spec) : twoModels(spec);
   const molarMass = Float64Array.from(components, (c) => c.molarMassKgPerMol);
   const ideal = new Float64Array(size);
   const excess = new Float64Array(size);
@@ -72,7 +73,7 @@ export function createMixture(spec: MixtureSpec): Mixture {
 
   function total(stream: StreamState): number {
     let sum = 0;
-    for (let i = 0; i < size; i++) sum += stream.flowsMolPerS[i]!;
+    for (let i = 0; i < size; i++) sum += stream.flowsMolPerS[i];
     return sum;
   }
 
@@ -81,15 +82,15 @@ export function createMixture(spec: MixtureSpec): Mixture {
     let total = 0;
     for (let i = 0; i < size; i++) {
       // A liquid a rounding error larger than the whole must not make a gas of negative fractions.
-      y[i] = Math.max(stream.flowsMolPerS[i]! - stream.liquidMolPerS[i]!, 0);
-      total += y[i]!;
+      y[i] = Math.max(stream.flowsMolPerS[i] - stream.liquidMolPerS[i], 0);
+      total += y[i];
     }
-    if (total > 0) for (let i = 0; i < size; i++) y[i]! /= total;
+    if (total > 0) for (let i = 0; i < size; i++) y[i] /= total;
     return total;
   }
 
   function holdsLiquid(stream: StreamState): boolean {
-    for (let i = 0; i < size; i++) if (roles[i] !== 'solid' && stream.liquidMolPerS[i]! > 0) return true;
+    for (let i = 0; i < size; i++) if (roles[i] !== 'solid' && stream.liquidMolPerS[i] > 0) return true;
     return false;
   }
 
@@ -97,13 +98,13 @@ export function createMixture(spec: MixtureSpec): Mixture {
     const { temperatureK: T, pressurePa: P, flowsMolPerS, liquidMolPerS } = stream;
     idealGas.enthalpies(T, ideal);
     let sum = 0;
-    for (let i = 0; i < size; i++) sum += flowsMolPerS[i]! * ideal[i]!;
+    for (let i = 0; i < size; i++) sum += flowsMolPerS[i] * ideal[i];
     const gasFlow = gasFractions(stream);
     if (gasFlow > 0) sum += gasFlow * gas.enthalpyDeparture(T, P, y);
     if (holdsLiquid(stream)) {
       liquidPhase.at(T, P);
       liquidPhase.enthalpyOverIdealGas(liquidMolPerS, excess);
-      for (let i = 0; i < size; i++) if (roles[i] !== 'solid') sum += liquidMolPerS[i]! * excess[i]!;
+      for (let i = 0; i < size; i++) if (roles[i] !== 'solid') sum += liquidMolPerS[i] * excess[i];
     }
     return sum;
   }
@@ -112,11 +113,11 @@ export function createMixture(spec: MixtureSpec): Mixture {
     const { temperatureK: T, pressurePa: P, flowsMolPerS, liquidMolPerS } = stream;
     idealGas.entropies(T, ideal);
     let sum = 0;
-    for (let i = 0; i < size; i++) sum += flowsMolPerS[i]! * ideal[i]!;
+    for (let i = 0; i < size; i++) sum += flowsMolPerS[i] * ideal[i];
     const gasFlow = gasFractions(stream);
     if (gasFlow > 0) {
       let mixing = Math.log(P / STANDARD_PRESSURE_PA);
-      for (let i = 0; i < size; i++) if (y[i]! > 0) mixing += y[i]! * Math.log(y[i]!);
+      for (let i = 0; i < size; i++) if (y[i] > 0) mixing += y[i] * Math.log(y[i]);
       sum += gasFlow * (gas.entropyDeparture(T, P, y) - R * mixing);
     }
     if (holdsLiquid(stream)) sum += liquidEntropyOverIdealGas(T, P, liquidMolPerS);
@@ -129,12 +130,12 @@ export function createMixture(spec: MixtureSpec): Mixture {
     liquidPhase.enthalpyOverIdealGas(liquid, excess);
     liquidPhase.lnFugacityPerFraction(liquid, lnLiquid);
     let total = 0;
-    for (let i = 0; i < size; i++) if (roles[i] !== 'solid') total += liquid[i]!;
+    for (let i = 0; i < size; i++) if (roles[i] !== 'solid') total += liquid[i];
     let sum = 0;
     for (let i = 0; i < size; i++) {
-      if (roles[i] === 'solid' || liquid[i]! <= 0) continue;
-      const lnActivity = lnLiquid[i]! + Math.log(liquid[i]! / total / STANDARD_PRESSURE_PA);
-      sum += liquid[i]! * (excess[i]! / T - R * lnActivity);
+      if (roles[i] === 'solid' || liquid[i] <= 0) continue;
+      const lnActivity = lnLiquid[i] + Math.log(liquid[i] / total / STANDARD_PRESSURE_PA);
+      sum += liquid[i] * (excess[i] / T - R * lnActivity);
     }
     return sum;
   }
@@ -176,17 +177,41 @@ export function createMixture(spec: MixtureSpec): Mixture {
       if (holdsLiquid(stream)) {
         liquidPhase.at(T, P);
         liquidPhase.volumes(liquidMolPerS, excess);
-        for (let i = 0; i < size; i++) if (roles[i] !== 'solid') sum += liquidMolPerS[i]! * excess[i]!;
+        for (let i = 0; i < size; i++) if (roles[i] !== 'solid') sum += liquidMolPerS[i] * excess[i];
       }
       return sum;
     },
     total,
     mass: (stream) => {
       let sum = 0;
-      for (let i = 0; i < size; i++) sum += stream.flowsMolPerS[i]! * molarMass[i]!;
+      for (let i = 0; i < size; i++) sum += stream.flowsMolPerS[i] * molarMass[i];
       return sum;
     },
-    cautions: (stream) => cautionsOf(stream, components, roles),
+    cautions: (stream) => cautionsOf(stream, components, roles, spec.liquid ?? 'antoine'),
     withCondensables: (condense) => createMixture({ ...spec, condense }),
   };
+}
+
+/** What gas and liquid are computed with. */
+interface PhaseModels {
+  readonly gas: GasModel;
+  readonly roles: readonly Role[];
+  readonly liquidPhase: LiquidPhase;
+  readonly phases: PhaseSplit;
+}
+
+function twoModels({ components, gas: name, dissolvedGases, condense }: MixtureSpec): PhaseModels {
+  const gas = createGasModel(name, components);
+  const roles = componentRoles(components, dissolvedGases, condense ?? null);
+  const liquidPhase = createLiquidPhase(components, roles, gas);
+  return { gas, roles, liquidPhase, phases: createPhaseSplit(gas, liquidPhase) };
+}
+
+/** One equation of state for both phases. */
+function oneEquation({ components, gas: name, dissolvedGases, condense }: MixtureSpec): PhaseModels {
+  if (name === 'ideal') throw new Error('an ideal gas has no liquid: the reader refuses it');
+  const { gas, liquid } = createCubicPhases(name, components);
+  const roles = equationOfStateRoles(components, dissolvedGases, condense ?? null);
+  const liquidPhase = createCubicLiquid(components, roles, liquid);
+  return { gas, roles, liquidPhase, phases: createCubicSplit(components, gas, liquidPhase) };
 }

@@ -16,15 +16,15 @@ export interface MonotoneCubic {
  */
 export function createMonotoneCubic(x: readonly number[], y: readonly number[]): MonotoneCubic {
   const n = x.length;
-  const secant = Float64Array.from({ length: n - 1 }, (_, k) => (y[k + 1]! - y[k]!) / (x[k + 1]! - x[k]!));
+  const secant = Float64Array.from({ length: n - 1 }, (_, k) => (y[k + 1] - y[k]) / (x[k + 1] - x[k]));
   const slope = new Float64Array(n);
   for (let k = 1; k < n - 1; k++) {
-    const [left, right] = [secant[k - 1]!, secant[k]!];
-    const [toLeft, toRight] = [x[k]! - x[k - 1]!, x[k + 1]! - x[k]!];
+    const [left, right] = [secant[k - 1], secant[k]];
+    const [toLeft, toRight] = [x[k] - x[k - 1], x[k + 1] - x[k]];
     slope[k] = left * right > 0 ? (left * toRight + right * toLeft) / (toLeft + toRight) : 0;
   }
-  slope[0] = n > 2 ? endSlope(secant[0]!, slope[1]!) : secant[0]!;
-  slope[n - 1] = n > 2 ? endSlope(secant[n - 2]!, slope[n - 2]!) : secant[0]!;
+  slope[0] = n > 2 ? endSlope(secant[0], slope[1]) : secant[0];
+  slope[n - 1] = n > 2 ? endSlope(secant[n - 2], slope[n - 2]) : secant[0];
   cutBack(slope, secant);
   return { x: Float64Array.from(x), y: Float64Array.from(y), slope };
 }
@@ -33,12 +33,12 @@ export function createMonotoneCubic(x: readonly number[], y: readonly number[]):
 export function interpolate(curve: MonotoneCubic, T: number): number {
   const { x, y, slope } = curve;
   const k = intervalAt(x, T);
-  const width = x[k + 1]! - x[k]!;
-  const t = (T - x[k]!) / width;
+  const width = x[k + 1] - x[k];
+  const t = (T - x[k]) / width;
   const u = 1 - t;
   return (
-    u * u * ((1 + 2 * t) * y[k]! + t * width * slope[k]!) +
-    t * t * ((1 + 2 * u) * y[k + 1]! - u * width * slope[k + 1]!)
+    u * u * ((1 + 2 * t) * y[k] + t * width * slope[k]) +
+    t * t * ((1 + 2 * u) * y[k + 1] - u * width * slope[k + 1])
   );
 }
 
@@ -46,11 +46,11 @@ export function interpolate(curve: MonotoneCubic, T: number): number {
 export function interpolateSlope(curve: MonotoneCubic, T: number): number {
   const { x, y, slope } = curve;
   const k = intervalAt(x, T);
-  const width = x[k + 1]! - x[k]!;
-  const t = (T - x[k]!) / width;
+  const width = x[k + 1] - x[k];
+  const t = (T - x[k]) / width;
   const u = 1 - t;
-  const secant = (y[k + 1]! - y[k]!) / width;
-  return 6 * t * u * secant + u * (u - 2 * t) * slope[k]! + t * (t - 2 * u) * slope[k + 1]!;
+  const secant = (y[k + 1] - y[k]) / width;
+  return 6 * t * u * secant + u * (u - 2 * t) * slope[k] + t * (t - 2 * u) * slope[k + 1];
 }
 
 /** The parabola over the first (last) interval that has the neighbour's slope, held to the table's direction. */
@@ -66,10 +66,10 @@ function cutBack(slope: Float64Array, secant: Float64Array): void {
       slope[k + 1] = 0;
       continue;
     }
-    const size = Math.hypot(slope[k]! / secant[k]!, slope[k + 1]! / secant[k]!);
+    const size = Math.hypot(slope[k] / secant[k], slope[k + 1] / secant[k]);
     if (size > 3) {
-      slope[k]! *= 3 / size;
-      slope[k + 1]! *= 3 / size;
+      slope[k] *= 3 / size;
+      slope[k + 1] *= 3 / size;
     }
   }
 }
@@ -79,7 +79,7 @@ function intervalAt(x: Float64Array, T: number): number {
   let high = x.length - 1;
   while (high - low > 1) {
     const middle = (low + high) >> 1;
-    if (T < x[middle]!) high = middle;
+    if (T < x[middle]) high = middle;
     else low = middle;
   }
   return low;

@@ -1,15 +1,11 @@
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
+import type { Role } from './component-roles.ts';
 import type { GasModel } from './gas-model.ts';
 import type { LiquidPhase } from './liquid-phase.ts';
-import { vapourFraction } from './rachford-rice.ts';
+import { createSubstitution, SWING } from './phase-substitution.ts';
 
-const MAX_STEPS = 300;
-/** ln K is taken as settled when no value moves more than this. */
-const SETTLED = 1e-13;
-/** A step this small that no longer shrinks is rounding, not drift. */
-const ROUNDING = 1e-10;
-/** A split that has been single-phase for this many steps is taken to stay so. */
-const SINGLE_STEPS = 30;
+/** Rounds after which the first drop or bubble has its composition well enough to tell which way it goes. */
+const MAX_ROUNDS = 50;
 
 /** Shares the fluid of a stream between gas and liquid at given temperature and pressure. */
 export interface PhaseSplit {
@@ -35,101 +31,121 @@ export interface PhaseSplit {
  */
 export function createPhaseSplit(gas: GasModel, liquidPhase: LiquidPhase): PhaseSplit {
   const size = gas.size;
-  const z = new Float64Array(size);
-  const x = new Float64Array(size);
-  const y = new Float64Array(size);
-  const K = new Float64Array(size);
+  const substitution = createSubstitution(gas, liquidPhase);
+  const { z, x, y, lnK, share } = substitution;
+  const drop = new Float64Array(size);
   const lnPhi = new Float64Array(size);
   const lnLiquid = new Float64Array(size);
-  const lnK = new Float64Array(size);
   const lnKKept = new Float64Array(size);
+  const change = new Float64Array(size);
   let kept = false;
-  let V = 0.5;
 
   return {
     split(T, P, flows, liquid) {
-      const total = overallFractions(flows);
-      putAllInGas(flows, liquid);
-      if (total === 0 || !liquidPhase.canExist(T, z)) return 1;
+      const total = overallFractions(flows, liquidPhase.roles, z);
+      putAllInGas(flows, liquidPhase.roles, liquid);
+      if (total === 0 || !liquidPhase.mayForm(T, z)) return 1;
       liquidPhase.at(T, P);
-      const warm = kept && partsFromKept(T, P);
+      const wasKept = kept;
+      const maybeGas = !gas.isLiquidLike(T, P, z);
       kept = false;
-      if (!warm) {
-        if (gasIsStable(T, P)) return 1;
-        if (!liquidIsStable(T, P)) {
-          startFromDrop();
-          if (!substitute(T, P)) throw unsettled(T, P);
-        } else V = 0;
+      if (gasIsStable(T, P, maybeGas)) return 1;
+      if (!(wasKept && partsFromKept(T, P))) {
+        if (liquidIsStable(T, P)) {
+          liquid.set(flows);
+          return 0;
+        }
+        startFromDrop();
+        if (!substitution.run(T, P)) throw unsettled(T, P);
       }
-      if (V >= 1) return 1;
-      if (V <= 0) {
+      // Two phases that have become one: it is a liquid where its density says so.
+      const { V, L } = share;
+      if (V <= 0 || (L <= 0 && !maybeGas && liquidHoldsAll(T))) {
         liquid.set(flows);
         return 0;
       }
+      if (L <= 0 || !liquidPhase.isLiquid(T, x)) return 1;
       lnKKept.set(lnK);
       kept = true;
       for (let i = 0; i < size; i++) {
-        if (liquidPhase.roles[i] !== 'solid') liquid[i] = Math.min((1 - V) * total * x[i]!, flows[i]!);
+        if (liquidPhase.roles[i] !== 'solid') liquid[i] = Math.min(L * total * x[i], flows[i]);
       }
       return V;
     },
   };
 
-  /** Two phases from the K values of the last state? If not, the tests of a single phase must be asked. */
+  /** Two phases from the K values of the last state? */
   function partsFromKept(T: number, P: number): boolean {
     lnK.set(lnKKept);
-    return substitute(T, P) && V > 0 && V < 1 && !gas.isLiquidLike(T, P, y);
+    return (
+      substitution.run(T, P) &&
+      share.V > 0 &&
+      share.L > 0 &&
+      liquidPhase.isLiquid(T, x) &&
+      !gas.isLiquidLike(T, P, y)
+    );
   }
 
-  function overallFractions(flows: Float64Array): number {
-    let total = 0;
-    for (let i = 0; i < size; i++) if (liquidPhase.roles[i] !== 'solid') total += flows[i]!;
-    for (let i = 0; i < size; i++) {
-      z[i] = total > 0 && liquidPhase.roles[i] !== 'solid' ? flows[i]! / total : 0;
-    }
-    return total;
-  }
-
-  function putAllInGas(flows: Float64Array, liquid: Float64Array): void {
-    for (let i = 0; i < size; i++) liquid[i] = liquidPhase.roles[i] === 'solid' ? flows[i]! : 0;
-  }
-
-  /** Would the first drop of liquid evaporate from the gas of composition z? Leaves that drop in x. */
-  function gasIsStable(T: number, P: number): boolean {
-    const isGas = !gas.isLiquidLike(T, P, z);
-    if (isGas) gas.lnPhi(T, P, z, lnPhi);
+  /** Would the first drop of liquid evaporate from the gas of composition z? Leaves it in `drop`, not normalised. */
+  function gasIsStable(T: number, P: number, maybeGas: boolean): boolean {
+    if (maybeGas) gas.lnPhi(T, P, z, lnPhi);
     else lnPhi.fill(0);
     const lnP = Math.log(P);
-    x.set(z);
+    drop.set(z);
+    change.fill(0);
     let sum = 0;
-    // The composition of the drop enters through the solvent shares only: three rounds settle it.
-    for (let round = 0; round < 3; round++) {
-      liquidPhase.lnFugacityPerFraction(x, lnLiquid);
+    let shortened = 1;
+    // The composition of the drop enters through solvent shares and activities: without them two rounds settle it.
+    for (let round = 0; round < MAX_ROUNDS; round++) {
+      liquidPhase.lnFugacityPerFraction(drop, lnLiquid);
+      let moved = 0;
+      let along = 0;
+      let before = 0;
       sum = 0;
       for (let i = 0; i < size; i++) {
-        x[i] = z[i]! === 0 ? 0 : z[i]! * Math.exp(lnPhi[i]! + lnP - lnLiquid[i]!);
-        sum += x[i]!;
+        if (lnLiquid[i] === Number.POSITIVE_INFINITY) drop[i] = 0;
+        if (drop[i] === 0) continue;
+        const off = Math.log(z[i] / drop[i]) + lnPhi[i] + lnP - lnLiquid[i];
+        moved = Math.max(moved, Math.abs(off));
+        along += off * change[i];
+        before += change[i] * change[i];
+        change[i] = off;
       }
+      // Strong attraction in the liquid (ammonia and water) makes plain steps swing, further each time.
+      const eigenvalue = before > 0 ? 1 + (along / before - 1) / shortened : 0;
+      if (eigenvalue < SWING) shortened = Math.min(shortened, 1 / (1 - eigenvalue));
+      for (let i = 0; i < size; i++) {
+        if (drop[i] > 0) drop[i] *= Math.exp(shortened * change[i]);
+        sum += drop[i];
+      }
+      if (moved <= 1e-12) break;
     }
-    return isGas && sum <= 1;
+    return (maybeGas && sum <= 1) || !liquidPhase.isLiquid(T, drop);
+  }
+
+  /** Can all there is be one liquid? Leaves its fugacities in lnLiquid. */
+  function liquidHoldsAll(T: number): boolean {
+    if (!liquidPhase.isLiquid(T, z)) return false;
+    liquidPhase.lnFugacityPerFraction(z, lnLiquid);
+    for (let i = 0; i < size; i++) {
+      if (z[i] > 0 && lnLiquid[i] === Number.POSITIVE_INFINITY) return false;
+    }
+    return true;
   }
 
   /** Would the first bubble collapse in the liquid of composition z? Gases that do not dissolve say no. */
   function liquidIsStable(T: number, P: number): boolean {
-    liquidPhase.lnFugacityPerFraction(z, lnLiquid);
-    for (let i = 0; i < size; i++) {
-      if (z[i]! > 0 && lnLiquid[i] === Number.POSITIVE_INFINITY) return false;
-    }
+    if (!liquidHoldsAll(T)) return false;
     lnPhi.fill(0);
     const lnP = Math.log(P);
     let sum = 0;
-    for (let round = 0; round < 50; round++) {
+    for (let round = 0; round < MAX_ROUNDS; round++) {
       let next = 0;
       for (let i = 0; i < size; i++) {
-        y[i] = z[i]! === 0 ? 0 : z[i]! * Math.exp(lnLiquid[i]! - lnPhi[i]! - lnP);
-        next += y[i]!;
+        y[i] = z[i] === 0 ? 0 : z[i] * Math.exp(lnLiquid[i] - lnPhi[i] - lnP);
+        next += y[i];
       }
-      for (let i = 0; i < size; i++) y[i]! /= next;
+      for (let i = 0; i < size; i++) y[i] /= next;
       if (gas.isLiquidLike(T, P, y)) return true;
       gas.lnPhi(T, P, y, lnPhi);
       if (Math.abs(next - sum) < 1e-12) return next <= 1;
@@ -139,51 +155,24 @@ export function createPhaseSplit(gas: GasModel, liquidPhase: LiquidPhase): Phase
   }
 
   function startFromDrop(): void {
-    for (let i = 0; i < size; i++) lnK[i] = z[i]! === 0 ? 0 : Math.log(z[i]! / x[i]!);
-  }
-
-  /**
-   * Repeat: K → V → x, y → K. Leaves V, x, y, lnK; V of 0 or 1 says that one phase holds all.
-   * @returns false when the K values do not settle
-   */
-  function substitute(T: number, P: number): boolean {
-    const lnP = Math.log(P);
-    let last = Number.POSITIVE_INFINITY;
-    for (let step = 0; step < MAX_STEPS; step++) {
-      for (let i = 0; i < size; i++) K[i] = Math.exp(lnK[i]!);
-      V = vapourFraction(z, K, V);
-      const single = V <= 0 || V >= 1;
-      let sumX = 0;
-      let sumY = 0;
-      for (let i = 0; i < size; i++) {
-        const k = K[i]!;
-        x[i] = k === Number.POSITIVE_INFINITY ? 0 : z[i]! / (1 + V * (k - 1));
-        y[i] = k === Number.POSITIVE_INFINITY ? z[i]! / Math.max(V, 1e-300) : k * x[i]!;
-        sumX += x[i]!;
-        sumY += y[i]!;
-      }
-      for (let i = 0; i < size; i++) {
-        x[i]! /= sumX;
-        y[i]! /= sumY;
-      }
-      liquidPhase.lnFugacityPerFraction(x, lnLiquid);
-      gas.lnPhi(T, P, y, lnPhi);
-      let moved = 0;
-      for (let i = 0; i < size; i++) {
-        if (z[i]! === 0) continue;
-        const next = lnLiquid[i]! - lnPhi[i]! - lnP;
-        if (next !== Number.POSITIVE_INFINITY) moved = Math.max(moved, Math.abs(next - lnK[i]!));
-        lnK[i] = next;
-      }
-      if (moved <= SETTLED || (moved <= ROUNDING && moved >= last)) return true;
-      if (single && step > SINGLE_STEPS) return true;
-      last = moved;
-    }
-    return false;
+    for (let i = 0; i < size; i++) lnK[i] = z[i] === 0 ? 0 : Math.log(z[i] / drop[i]);
   }
 }
 
-function unsettled(T: number, P: number): PassTrouble {
+/** Mole fractions of the fluid; returns its flow [mol/s]. */
+export function overallFractions(flows: Float64Array, roles: readonly Role[], z: Float64Array): number {
+  let total = 0;
+  for (let i = 0; i < z.length; i++) if (roles[i] !== 'solid') total += flows[i];
+  for (let i = 0; i < z.length; i++) z[i] = total > 0 && roles[i] !== 'solid' ? flows[i] / total : 0;
+  return total;
+}
+
+/** Solids lie with the liquid, wherever the rest is. */
+export function putAllInGas(flows: Float64Array, roles: readonly Role[], liquid: Float64Array): void {
+  for (let i = 0; i < liquid.length; i++) liquid[i] = roles[i] === 'solid' ? flows[i] : 0;
+}
+
+export function unsettled(T: number, P: number): PassTrouble {
   return new PassTrouble(
     'phase-split',
     `The split into gas and liquid at ${(T - 273.15).toFixed(2)} degC and ${(P / 1e5).toFixed(3)} bar does not settle.`,

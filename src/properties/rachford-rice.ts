@@ -1,5 +1,6 @@
 /**
  * Vapour fraction V that solves Σ zᵢ (Kᵢ − 1)/(1 + V (Kᵢ − 1)) = 0, by Newton's method kept inside a bracket.
+ * With 1/K in place of K it is the liquid fraction, accurate where that is small.
  *
  * @param z  overall mole fractions, sum 1 [-]
  * @param K  y/x at equilibrium; +Infinity for what stays out of the liquid, 0 for what stays out of the gas [-]
@@ -13,22 +14,24 @@ export function vapourFraction(z: Float64Array, K: Float64Array, start: number):
   let low = 0;
   let high = 1;
   let V = start > 0 && start < 1 ? start : 0.5;
-  for (let step = 0; step < 100; step++) {
+  for (let step = 0; step < 200; step++) {
     let f = 0;
     let slope = 0;
     for (let i = 0; i < z.length; i++) {
-      const zi = z[i]!;
+      const zi = z[i];
       if (zi === 0) continue;
       // (K − 1)/(1 + V (K − 1)) written so that an infinite K gives 1/V
-      const a = K[i]! === Number.POSITIVE_INFINITY ? 1 / V : (K[i]! - 1) / (1 + V * (K[i]! - 1));
+      const a = K[i] === Number.POSITIVE_INFINITY ? 1 / V : (K[i] - 1) / (1 + V * (K[i] - 1));
       f += zi * a;
       slope -= zi * a * a;
     }
     if (f > 0) low = V;
     else high = V;
     let next = V - f / slope;
-    if (!(next > low && next < high)) next = 0.5 * (low + high);
-    if (Math.abs(next - V) <= 1e-15 * V || high - low <= 1e-16) return next;
+    // Newton from the right of a steep 1/V leaves the bracket: a tenth of V comes down faster than halves.
+    if (!(next > low && next < high)) next = next <= low && V > 10 * low ? 0.1 * V : 0.5 * (low + high);
+    // Relative to V: beside a trace of a gas that does not dissolve, V itself may be 1e-15.
+    if (Math.abs(next - V) <= 1e-15 * V || high - low <= 1e-15 * high) return next;
     V = next;
   }
   return V;
@@ -38,8 +41,8 @@ export function vapourFraction(z: Float64Array, K: Float64Array, start: number):
 function balance(z: Float64Array, K: Float64Array, V: 0 | 1): number {
   let sum = 0;
   for (let i = 0; i < z.length; i++) {
-    if (z[i]! === 0) continue;
-    sum += V === 0 ? z[i]! * K[i]! : z[i]! / K[i]!;
+    if (z[i] === 0) continue;
+    sum += V === 0 ? z[i] * K[i] : z[i] / K[i];
   }
   return V === 0 ? sum - 1 : 1 - sum;
 }

@@ -46,17 +46,17 @@ function curveOf(c: Component): Curve | null {
 
 function prepare(c: Component, table: MonotoneCubic): Curve {
   const last = table.x.length - 1;
-  const toK = table.x[last]!;
-  const atTo = table.y[last]!;
+  const toK = table.x[last];
+  const atTo = table.y[last];
   const criticalK = Math.max(c.critical?.temperatureK ?? toK, toK);
   return {
     table,
-    fromK: table.x[0]!,
+    fromK: table.x[0],
     toK,
     criticalK,
-    atFrom: table.y[0]!,
+    atFrom: table.y[0],
     atTo,
     // The root that leaves the table with the table's slope.
-    atCritical: atTo + 2 * table.slope[last]! * (criticalK - toK),
+    atCritical: atTo + 2 * table.slope[last] * (criticalK - toK),
   };
 }

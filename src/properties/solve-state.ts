@@ -5,10 +5,24 @@ import { R } from './constants.ts';
 const LOWEST_K = 20;
 const HIGHEST_K = 3500;
 const MAX_STEPS = 200;
+/**
+ * A step is at most this share of the temperature: a leap from 300 K to 100 K would land where the data of most
+ * liquids end, and what is found there need not be the root nearest to the start.
+ */
+const LONGEST_STEP = 0.2;
+const MAX_SECANTS = 8;
+/** A secant that leaves more of the error than this has met a kink or a jump [-]. */
+const SECANT_LEAVES = 0.25;
+/** Points closer together than this share of T tell rounding, not the slope. */
+const LEAST_SPAN = 1e-7;
+
+/** What each stream's last search found a mole to take up per kelvin, reaction and condensation included [J/(mol K)]. */
+const heatCapacities = new WeakMap<StreamState, number>();
 
 /**
  * Find the temperature at which a state function that rises with temperature (enthalpy or entropy at fixed
- * pressure) has a wanted value, starting from the stream's own temperature. The bracket is found by growing
+ * pressure) has a wanted value, starting from the stream's own temperature: by secants while they close in
+ * fast, the first with the heat capacity of the stream's last search; otherwise a bracket is found by growing
  * steps and closed by regula falsi with halving of the stale end (Illinois). Where the function jumps (a pure
  * component boils) the two sides are mixed so that the value is met.
  *
@@ -39,45 +53,98 @@ export function solveState(
   const start = Math.min(Math.max(stream.temperatureK, LOWEST_K), HIGHEST_K);
   // A kelvin of any stream holds at least the heat of a monatomic gas: this is 1e-12 of the temperature.
   const tolerance = 1e-12 * 2.5 * R * total * (name === 'enthalpy' ? start : 1);
-  let low = start;
-  let errorLow = errorAt(low);
-  if (Number.isNaN(errorLow)) throw outOfReach(name, start);
-  if (Math.abs(errorLow) <= tolerance) return;
-  let high = low;
-  let errorHigh = errorLow;
-  // First step from a slope over 0.1 K: most states lie within a few kelvins of their start.
-  const probe = errorLow < 0 ? start + 0.1 : start - 0.1;
-  const slope = (errorAt(probe) - errorLow) / (probe - start);
-  let step = slope > 0 ? Math.min(Math.max(1.02 * Math.abs(errorLow / slope), 1e-6), 200) : 1;
-  while (errorLow > 0 || errorHigh < 0) {
-    if (errorLow > 0) {
-      if (low <= LOWEST_K) throw outOfReach(name, LOWEST_K);
-      high = low;
-      errorHigh = errorLow;
-      low = Math.max(low - step, LOWEST_K);
-      errorLow = errorAt(low);
-    } else {
-      if (high >= HIGHEST_K) throw outOfReach(name, HIGHEST_K);
-      low = high;
-      errorLow = errorHigh;
-      high = Math.min(high + step, HIGHEST_K);
-      errorHigh = errorAt(high);
-    }
-    step *= 2;
-    if (Number.isNaN(errorLow) || Number.isNaN(errorHigh)) throw outOfReach(name, stream.temperatureK);
+  const error = errorAt(start);
+  if (Number.isNaN(error)) throw outOfReach(name, start);
+  if (Math.abs(error) <= tolerance) return;
+  const perHeatCapacity = name === 'enthalpy' ? total : total / start;
+  const slope = (heatCapacities.get(stream) ?? 0) * perHeatCapacity || slopeAt(start, error, errorAt);
+  const search: Search = { low: Number.NaN, errorLow: 0, high: Number.NaN, errorHigh: 0, slope };
+  narrow(search, start, error);
+  if (closesBySecants(search, start, error, tolerance, errorAt)) {
+    if (search.slope > 0) heatCapacities.set(stream, search.slope / perHeatCapacity);
+    return;
   }
-  if (errorLow === 0) errorAt(low);
-  else if (errorHigh === 0) errorAt(high);
-  else close(stream, { low, errorLow, high, errorHigh }, tolerance, errorAt);
+  if (!findsBracket(search, name, tolerance, errorAt)) close(stream, search, tolerance, errorAt);
 }
 
-function close(
-  stream: StreamState,
-  bracket: { low: number; errorLow: number; high: number; errorHigh: number },
+/** Where the answer lies: below it `low`, above it `high`, NaN before one is met; the slope of the last secant. */
+interface Search {
+  low: number;
+  errorLow: number;
+  high: number;
+  errorHigh: number;
+  slope: number;
+}
+
+function narrow(search: Search, T: number, error: number): void {
+  if (error < 0 && !(T <= search.low)) {
+    search.low = T;
+    search.errorLow = error;
+  } else if (error > 0 && !(T >= search.high)) {
+    search.high = T;
+    search.errorHigh = error;
+  }
+}
+
+/** The slope over 0.1 K towards the answer. */
+function slopeAt(T: number, error: number, errorAt: (T: number) => number): number {
+  const probe = error < 0 ? T + 0.1 : T - 0.1;
+  return (errorAt(probe) - error) / (probe - T);
+}
+
+/** True when the value is met; false leaves what was learnt in `search`. */
+function closesBySecants(
+  search: Search,
+  start: number,
+  errorAtStart: number,
   tolerance: number,
   errorAt: (T: number) => number,
-): void {
-  let { low, errorLow, high, errorHigh } = bracket;
+): boolean {
+  let T = start;
+  let error = errorAtStart;
+  for (let step = 0; step < MAX_SECANTS && search.slope > 0; step++) {
+    const longest = LONGEST_STEP * T;
+    const way = Math.min(Math.max(-error / search.slope, -longest), longest);
+    const next = Math.min(Math.max(T + way, LOWEST_K), HIGHEST_K);
+    if (next <= search.low || next >= search.high) return false;
+    const errorNext = errorAt(next);
+    if (Math.abs(errorNext) <= tolerance) return true;
+    narrow(search, next, errorNext);
+    // The first slope may be that of another pressure or composition: the second secant mends it.
+    if (!(Math.abs(errorNext) < (step === 0 ? 1 : SECANT_LEAVES) * Math.abs(error))) return false;
+    if (Math.abs(next - T) > LEAST_SPAN * T) search.slope = (errorNext - error) / (next - T);
+    T = next;
+    error = errorNext;
+  }
+  return false;
+}
+
+/** Goes on from the known end by growing steps until the other is met; true when a step happens to meet the value. */
+function findsBracket(
+  search: Search,
+  name: 'enthalpy' | 'entropy',
+  tolerance: number,
+  errorAt: (T: number) => number,
+): boolean {
+  const missing = Number.isNaN(search.high) ? search.errorLow : search.errorHigh;
+  const first = 1.02 * Math.abs(missing / search.slope);
+  let step = search.slope > 0 ? Math.max(first, 1e-6) : 1;
+  while (Number.isNaN(search.low) || Number.isNaN(search.high)) {
+    const from = Number.isNaN(search.high) ? search.low : search.high;
+    const way = Math.min(step, LONGEST_STEP * from);
+    const T = Math.min(Math.max(from === search.low ? from + way : from - way, LOWEST_K), HIGHEST_K);
+    if (T === from) throw outOfReach(name, T);
+    const error = errorAt(T);
+    if (Number.isNaN(error)) throw outOfReach(name, T);
+    if (Math.abs(error) <= tolerance) return true;
+    narrow(search, T, error);
+    step *= 2;
+  }
+  return false;
+}
+
+function close(stream: StreamState, search: Search, tolerance: number, errorAt: (T: number) => number): void {
+  let { low, errorLow, high, errorHigh } = search;
   let weightLow = errorLow;
   let weightHigh = errorHigh;
   let stale = 0;
@@ -102,26 +169,22 @@ function close(
       stale = 1;
     }
   }
-  mixSides(stream, low, errorLow, high, errorHigh, errorAt);
+  mixSides(stream, low, high, errorAt);
 }
 
-/** The bracket has shrunk to rounding and the value still jumps across it: find the share of each side. */
-function mixSides(
-  stream: StreamState,
-  low: number,
-  errorLow: number,
-  high: number,
-  errorHigh: number,
-  errorAt: (T: number) => number,
-): void {
-  const share = -errorLow / (errorHigh - errorLow);
-  errorAt(low);
+/**
+ * The bracket has shrunk to rounding and the value still jumps across it: find the share of each side. Their
+ * errors are taken anew with their states, because in so steep a place the last digit of T decides both.
+ */
+function mixSides(stream: StreamState, low: number, high: number, errorAt: (T: number) => number): void {
+  const errorLow = errorAt(low);
   const cold = stream.liquidMolPerS.slice();
   const coldFraction = stream.vapourFraction;
   const coldEnthalpy = stream.enthalpyW;
-  errorAt(high);
+  const errorHigh = errorAt(high);
+  const share = Math.min(Math.max(-errorLow / (errorHigh - errorLow), 0), 1) || 0;
   for (let i = 0; i < cold.length; i++) {
-    stream.liquidMolPerS[i] = (1 - share) * cold[i]! + share * stream.liquidMolPerS[i]!;
+    stream.liquidMolPerS[i] = (1 - share) * cold[i] + share * stream.liquidMolPerS[i];
   }
   stream.vapourFraction = (1 - share) * coldFraction + share * stream.vapourFraction;
   stream.enthalpyW = (1 - share) * coldEnthalpy + share * stream.enthalpyW;

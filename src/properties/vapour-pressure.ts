@@ -111,18 +111,18 @@ function closeJoints(sets: readonly AntoineSet[], boilingK: number | null): LnSe
     toK: set.toK,
   }));
   const join = (T: number, inner: number, outer: number) => {
-    const step = lnSet(plain[inner]!, T) - lnSet(plain[outer]!, T);
-    if (Math.abs(step) < ROUNDING_STEP) plain[outer]!.lnA += step;
+    const step = lnSet(plain[inner], T) - lnSet(plain[outer], T);
+    if (Math.abs(step) < ROUNDING_STEP) plain[outer].lnA += step;
   };
-  for (let k = anchor + 1; k < plain.length; k++) join(plain[k - 1]!.toK, k - 1, k);
-  for (let k = anchor - 1; k >= 0; k--) join(plain[k]!.toK, k + 1, k);
+  for (let k = anchor + 1; k < plain.length; k++) join(plain[k - 1].toK, k - 1, k);
+  for (let k = anchor - 1; k >= 0; k--) join(plain[k].toK, k + 1, k);
   return plain;
 }
 
 function setAt(sets: readonly LnSet[], T: number): LnSet {
   let k = 0;
-  while (k < sets.length - 1 && T > sets[k]!.toK) k++;
-  return sets[k]!;
+  while (k < sets.length - 1 && T > sets[k].toK) k++;
+  return sets[k];
 }
 
 function lnAntoine(sets: readonly LnSet[], T: number): number {

@@ -12,6 +12,10 @@ export type Dimension =
   | 'molarEnergy'
   | 'molarHeatCapacity'
   | 'molarVolume'
+  | 'volume'
+  | 'mass'
+  | 'density'
+  | 'heatTransferPerVolume'
   | 'number';
 
 export interface DimensionFacts {
@@ -119,6 +123,38 @@ export const dimensions: Readonly<Record<Dimension, DimensionFacts>> = {
     offered: ['cm3/mol', 'm3/kmol', 'L/mol'],
     examples: ['25 cm3/mol'],
     above: 0,
+  },
+  volume: {
+    noun: 'a volume',
+    si: 'm3',
+    shown: 'm3',
+    offered: ['m3', 'L', 'ft3'],
+    examples: ['60 m3'],
+    above: 0,
+  },
+  mass: {
+    noun: 'a mass',
+    si: 'kg',
+    shown: 'kg',
+    offered: ['kg', 't', 'g', 'lb'],
+    examples: ['40 t', '34.8 g'],
+    above: 0,
+  },
+  density: {
+    noun: 'a density',
+    si: 'kg/m3',
+    shown: 'kg/m3',
+    offered: ['kg/m3', 'kg/L', 'lb/ft3'],
+    examples: ['1100 kg/m3'],
+    above: 0,
+  },
+  heatTransferPerVolume: {
+    noun: 'a heat transfer per volume',
+    si: 'W/(m3 K)',
+    shown: 'kW/(m3 K)',
+    offered: ['kW/(m3 K)', 'W/(m3 K)'],
+    examples: ['50 kW/(m3 K)'],
+    min: 0,
   },
   number: { noun: 'a plain number', si: '', shown: '', offered: [], examples: ['3', '0.85'] },
 };

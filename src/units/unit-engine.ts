@@ -15,6 +15,10 @@ const targets: Readonly<Record<Dimension, string | null>> = {
   molarEnergy: 'J/mol',
   molarHeatCapacity: 'J/mol/K',
   molarVolume: 'm^3/mol',
+  volume: 'm^3',
+  mass: 'kg',
+  density: 'kg/m^3',
+  heatTransferPerVolume: 'W/m^3/K',
   number: null,
 };
 

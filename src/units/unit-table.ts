@@ -149,6 +149,21 @@ const table: Readonly<Record<Dimension, ReadonlyMap<string, UnitFactor>>> = {
   molarVolume: new Map(
     each({ 'm3/mol': 1, 'm3/kmol': 1e-3, 'cm3/mol': 1e-6, 'L/mol': 1e-3, 'l/mol': 1e-3, 'L/kmol': 1e-6 }),
   ),
+  volume: new Map(each({ m3: 1, L: 1e-3, l: 1e-3, ft3: CUBIC_FOOT })),
+  mass: new Map(each(masses)),
+  density: new Map(
+    each({ 'kg/m3': 1, 'g/cm3': 1e3, 'kg/L': 1e3, 't/m3': 1e3, 'lb/ft3': POUND / CUBIC_FOOT }),
+  ),
+  heatTransferPerVolume: new Map(
+    each({
+      'W/(m3 K)': 1,
+      'kW/(m3 K)': 1e3,
+      'MW/(m3 K)': 1e6,
+      'W/m3/K': 1,
+      'kW/m3/K': 1e3,
+      'kcal/(m3 h K)': KCAL / 3600,
+    }),
+  ),
   number: new Map(each({ '': 1 })),
 };
 

@@ -1,7 +1,8 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
-import { gasInteractions } from '../../src/properties/binary-interaction.ts';
+import { gasInteractions, liquidInteractions } from '../../src/properties/binary-interaction.ts';
 import { builtInComponent, builtInIds } from '../../src/properties/components.ts';
+import { hydrogenAlpha, soaveSlope, squareRootAlpha } from '../../src/properties/cubic-alpha.ts';
 import { interactionRows } from '../../src/properties/data/kij.ts';
 
 const all = builtInIds.map((id) => builtInComponent(id)!);
@@ -70,5 +71,43 @@ describe.each(['srk', 'pr'] as const)('the %s pairs of all built-in components',
         }
       }),
     );
+  });
+});
+
+describe('the parameters of liquid: eos', () => {
+  const components = ['H2', 'N2', 'NH3', 'H2O'].map((id) => builtInComponent(id)!);
+  const useOf = (equation: 'srk' | 'pr') =>
+    Object.fromEntries(
+      liquidInteractions(equation, components).map(({ i, j, row }) => [
+        `${components[i]!.id}-${components[j]!.id}`,
+        row.use,
+      ]),
+    );
+
+  test('are those of gases in a liquid, else those of the gas', () => {
+    expect(useOf('srk')).toEqual({
+      'H2-NH3': 'liquid',
+      'H2-H2O': 'liquid',
+      'N2-NH3': 'liquid',
+      'N2-H2O': 'liquid',
+      'NH3-H2O': 'vle',
+    });
+    expect(useOf('pr')['H2-N2']).toBe('gas');
+  });
+
+  test('leave the attraction between hydrogen and a liquid as it was fitted with the function of Soave', () => {
+    const [hydrogen] = components;
+    const { temperatureK, acentricFactor } = hydrogen!.critical!;
+    const soave = squareRootAlpha(temperatureK, soaveSlope(acentricFactor));
+    const graboski = hydrogenAlpha(temperatureK);
+    const pair = liquidInteractions('srk', components).find(({ i, j }) => i === 0 && j === 2)!;
+    // in the middle of the fitted range; the row: k = 0.1884 + 0.0006742 (T − 298.15)
+    const T = 280;
+    const fitted = (1 - 0.1884 - 0.0006742 * (T - 298.15)) * soave.value(T);
+    expect(Math.abs((1 - pair.value(T)) * graboski.value(T) - fitted)).toBeLessThan(1e-3 * fitted);
+    for (const at of [240, 280, 320, 700]) {
+      const difference = (pair.value(at + 1e-3) - pair.value(at - 1e-3)) / 2e-3;
+      expect(Math.abs(difference - pair.slope(at))).toBeLessThan(1e-7);
+    }
   });
 });

@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
-import { vapourRoot } from '../../src/properties/cubic-root.ts';
+import { liquidRoot, vapourRoot } from '../../src/properties/cubic-root.ts';
 
 const forms = [
   { name: 'Soave-Redlich-Kwong', u: 1, w: 0 },
@@ -53,4 +53,39 @@ test('just either side of critical the root stays finite and moves little', () =
     const Z = vapourRoot(0.42748023354034137 * factor, 0.08664034996495773, 1, 0);
     expect(Math.abs(Z - 1 / 3)).toBeLessThan(2e-3);
   }
+});
+
+describe.each(forms)('the liquid root of $name', ({ u, w }) => {
+  test('solves the cubic, lies above B, and no smaller root lies there', () => {
+    let apart = 0;
+    fc.assert(
+      fc.property(
+        fc.integer({ min: -9000, max: 1000 }),
+        fc.integer({ min: 0, max: 12_000 }),
+        (logB, ratio) => {
+          const B = 10 ** (logB / 1000);
+          const A = (ratio / 1000) * B;
+          const Z = liquidRoot(A, B, u, w);
+          expect(Z).toBeGreaterThan(B);
+          expect(Z).toBeLessThanOrEqual(vapourRoot(A, B, u, w) * (1 + 1e-7));
+          if (Z < 0.9 * vapourRoot(A, B, u, w)) apart += 1;
+          // between B and the root the cubic keeps its sign: -2 B² at B
+          for (const part of [0.1, 0.5, 0.9, 0.999]) {
+            expect(residual(B + part * (Z - B), A, B, u, w)).toBeLessThan(1e-13 * Z * (Z + A));
+          }
+          // of a dense liquid to nearly all digits, however small it is beside the vapour's root
+          const slope =
+            (residual(Z * (1 + 1e-6), A, B, u, w) - residual(Z * (1 - 1e-6), A, B, u, w)) / (2e-6 * Z);
+          if (Z < 2 * B) expect(Math.abs(residual(Z, A, B, u, w) / slope)).toBeLessThan(1e-12 * Z);
+        },
+      ),
+      { numRuns: 2000, endOnFailure: true },
+    );
+    expect(apart).toBeGreaterThan(100);
+  });
+
+  test("is the vapour's where there is no other", () => {
+    expect(liquidRoot(3e-7, 1e-7, u, w)).toBe(vapourRoot(3e-7, 1e-7, u, w));
+    expect(liquidRoot(2, 0.9, u, w)).toBe(vapourRoot(2, 0.9, u, w));
+  });
 });

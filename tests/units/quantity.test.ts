@@ -88,6 +88,10 @@ const si: Readonly<Partial<Record<Dimension, string>>> = {
   molarEnergy: 'J/mol',
   molarHeatCapacity: 'J/mol/K',
   molarVolume: 'm^3/mol',
+  volume: 'm^3',
+  mass: 'kg',
+  density: 'kg/m^3',
+  heatTransferPerVolume: 'W/m^3/K',
 };
 
 function fromMathjs(name: string, dimension: Dimension): number | null {
