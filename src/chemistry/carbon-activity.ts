@@ -76,6 +76,61 @@ export function createCarbonActivity(
   };
 }
 
+/** Temperatures between which a gas of fixed composition is safe from carbon: its activity is below 1. */
+export interface CarbonFreeWindow {
+  /** the activity falls through 1 here as the gas gets hotter (CO lays carbon down in the cold) [K] */
+  readonly aboveK: number | null;
+  /** the activity rises through 1 here as the gas gets hotter (CH4 cracks in the heat) [K] */
+  readonly belowK: number | null;
+}
+
+/** Crossings are looked for between 200 and 1200 degC. */
+const COLDEST_K = 473.15;
+const HOTTEST_K = 1473.15;
+const SEARCH_STEP_K = 25;
+const CROSSING_WITHIN_K = 1e-6;
+
+/**
+ * Where the largest activity of a gas crosses 1 at unchanged composition. Two routes fall with temperature and
+ * one rises, so the gas is below 1 between at most one crossing down and one crossing up.
+ *
+ * @param P  pressure [Pa] @param amounts  of the components in any unit
+ * @returns null for a crossing that does not lie between 200 and 1200 degC
+ */
+export function carbonFreeWindow(
+  activityOf: CarbonActivityOf,
+  P: number,
+  amounts: Float64Array,
+): CarbonFreeWindow {
+  const excess = (T: number) => Math.log(activityOf(T, P, amounts).largest ?? Number.NaN);
+  let aboveK: number | null = null;
+  let belowK: number | null = null;
+  let low = COLDEST_K;
+  let excessLow = excess(low);
+  if (Number.isNaN(excessLow)) return { aboveK, belowK };
+  while (low < HOTTEST_K) {
+    const high = Math.min(low + SEARCH_STEP_K, HOTTEST_K);
+    const excessHigh = excess(high);
+    if (excessLow > 0 && excessHigh <= 0) aboveK = crossing(excess, high, low);
+    if (excessLow <= 0 && excessHigh > 0) belowK ??= crossing(excess, low, high);
+    low = high;
+    excessLow = excessHigh;
+  }
+  return { aboveK, belowK };
+}
+
+/** By halving, between a temperature that is safe and one that is not. */
+function crossing(excess: (T: number) => number, safeK: number, unsafeK: number): number {
+  let safe = safeK;
+  let unsafe = unsafeK;
+  while (Math.abs(unsafe - safe) > CROSSING_WITHIN_K) {
+    const T = 0.5 * (safe + unsafe);
+    if (excess(T) > 0) unsafe = T;
+    else safe = T;
+  }
+  return 0.5 * (safe + unsafe);
+}
+
 interface Term {
   readonly index: number;
   readonly nu: number;

@@ -1,0 +1,79 @@
+import { z } from 'zod';
+import { PassTrouble } from '../diagnostics/diagnostic.ts';
+import { emptyStream } from '../model/stream.ts';
+import { quantity } from '../units/schema.ts';
+import type { BlockKind } from './block.ts';
+import { exactlyOne } from './checks.ts';
+import { settleWithDuty } from './heat-duty.ts';
+import { partPhases } from './phase-outlets.ts';
+import { enthalpyAdded, quietReport } from './report.ts';
+
+const settings = z.strictObject({
+  pressure: quantity('pressure', { description: 'pressure of the vessel' }),
+  adiabatic: z.literal(true).optional(),
+  temperature: quantity('temperature', { description: 'temperature of the vessel' }).optional(),
+  duty: quantity('power', { description: 'heat added; negative for cooling' }).optional(),
+});
+type Settings = z.infer<typeof settings>;
+
+/**
+ * Let-down vessel: one inlet; outlets `gas` and `liquid` in equilibrium at the vessel's pressure.
+ *
+ * Settings: `pressure` [Pa] and one of `adiabatic`, `temperature` [K], `duty` [W, positive heats].
+ * Balance: gas and liquid add up to the inlet; adiabatic keeps the enthalpy.
+ */
+export const flash: BlockKind<Settings> = {
+  kind: 'flash',
+  summary: 'lets a stream down to a pressure and parts gas from liquid',
+  settings,
+  ports: () => ({ inlets: ['in'], outlets: ['gas', 'liquid'] }),
+  check: (setting) =>
+    exactlyOne(setting, {
+      adiabatic: 'adiabatic: true',
+      temperature: 'temperature: -10 degC',
+      duty: 'duty: 50 kW',
+    }),
+  passes: (_, outlet, __, role) =>
+    role === 'solid' ? outlet === 'liquid' : outlet === 'gas' || role !== 'gas',
+  create(setting, { mixture }) {
+    const mixed = emptyStream(mixture.size);
+    let started = false;
+    return {
+      pass([inlet], [gas, liquid]) {
+        if (setting.pressure > inlet!.pressurePa * (1 + 1e-9))
+          throw raisesPressure(setting.pressure, inlet!.pressurePa);
+        mixed.flowsMolPerS.set(inlet!.flowsMolPerS);
+        mixed.pressurePa = setting.pressure;
+        if (setting.temperature !== undefined) {
+          mixed.temperatureK = setting.temperature;
+          mixture.settle(mixed);
+        } else {
+          if (!started) mixed.temperatureK = inlet!.temperatureK;
+          started = true;
+          settleWithDuty(mixture, mixed, inlet!.enthalpyW, setting.duty ?? 0);
+        }
+        partPhases(mixed, gas!, liquid!, mixture);
+      },
+      report(inlets, outlets) {
+        return quietReport({
+          dutyW: setting.adiabatic ? 0 : enthalpyAdded(inlets, outlets),
+          details: {
+            temperature_K: mixed.temperatureK,
+            pressure_bar: mixed.pressurePa / 1e5,
+            gas_fraction: mixed.vapourFraction,
+          },
+          warnings: mixture.cautions(mixed),
+        });
+      },
+    };
+  },
+};
+
+function raisesPressure(vesselPa: number, inletPa: number): PassTrouble {
+  return new PassTrouble(
+    'pressure-rise',
+    `The vessel is set to ${(vesselPa / 1e5).toFixed(3)} bar, above its inlet of ${(inletPa / 1e5).toFixed(3)} bar.`,
+    'a let-down vessel cannot raise the pressure of a stream',
+    'lower the pressure of the vessel, or put a pump or compressor before it',
+  );
+}

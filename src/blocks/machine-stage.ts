@@ -1,0 +1,95 @@
+import { copyStream, emptyStream, type StreamState } from '../model/stream.ts';
+import type { Mixture } from '../properties/mixture.ts';
+
+/** Which ideal path an efficiency is measured against. */
+export type EfficiencyKind = 'isentropic' | 'polytropic';
+
+/** One adiabatic stage of a compressor or expander. Both change the stream in place and return the shaft power given to it [W]. */
+export interface MachineStage {
+  /** h₂ = h₁ + (h₂s − h₁)/η */
+  compress(stream: StreamState, pressurePa: number, efficiency: number, kind: EfficiencyKind): number;
+  /** h₂ = h₁ + η (h₂s − h₁); what is returned is negative */
+  expand(stream: StreamState, pressurePa: number, efficiency: number): number;
+}
+
+/** Isentropic efficiencies tried for a polytropic one; four do where T₂/T₁ is below 3. */
+const MAX_TRIES = 20;
+const CLOSE = 1e-11;
+
+/**
+ * Stages on the real isentrope s(T₂s, P₂) = s(T₁, P₁) of the mixture's own entropy.
+ *
+ * A polytropic efficiency is turned into the isentropic one by the polytropic work of a real gas
+ *   w_p = Δh − Δs (T₂ − T₁)/ln(T₂/T₁),  η_p = w_p/Δh,
+ * which is exact for an ideal gas of constant heat capacity: there η_p = (R ln(P₂/P₁)) / (cp ln(T₂/T₁)).
+ *
+ * @source isentropic efficiency: any textbook of thermodynamics, e.g. Smith, Van Ness & Abbott, ch. 7;
+ *   polytropic work: M. Mallen & G. Saville, Polytropic processes in the performance prediction of centrifugal
+ *   compressors, I. Mech. E. C183/77 (1977), from memory
+ */
+export function createMachineStage(mixture: Mixture): MachineStage {
+  const ideal = emptyStream(mixture.size);
+
+  function isentropicRise(stream: StreamState, pressurePa: number, firstK: number): number {
+    const entropy = mixture.entropy(stream);
+    copyStream(stream, ideal);
+    ideal.temperatureK = firstK;
+    ideal.pressurePa = pressurePa;
+    mixture.settleAtEntropy(ideal, entropy);
+    return ideal.enthalpyW - stream.enthalpyW;
+  }
+
+  function isIdle(stream: StreamState, pressurePa: number): boolean {
+    if (pressurePa !== stream.pressurePa && mixture.total(stream) > 0) return false;
+    stream.pressurePa = pressurePa;
+    return true;
+  }
+
+  function giveWork(stream: StreamState, pressurePa: number, work: number): void {
+    stream.temperatureK = ideal.temperatureK;
+    stream.pressurePa = pressurePa;
+    mixture.settleAtEnthalpy(stream, stream.enthalpyW + work);
+  }
+
+  return {
+    compress(stream, pressurePa, efficiency, kind) {
+      if (isIdle(stream, pressurePa)) return 0;
+      // An ideal diatomic gas gives the first guess: T₂/T₁ = (P₂/P₁)^(2/7).
+      const firstK = stream.temperatureK * (pressurePa / stream.pressurePa) ** (2 / 7);
+      const rise = isentropicRise(stream, pressurePa, firstK);
+      const isentropic = kind === 'isentropic' ? efficiency : matched(stream, rise, efficiency);
+      const work = rise / isentropic;
+      giveWork(stream, pressurePa, work);
+      return work;
+    },
+    expand(stream, pressurePa, efficiency) {
+      if (isIdle(stream, pressurePa)) return 0;
+      const work = efficiency * isentropicRise(stream, pressurePa, stream.temperatureK);
+      giveWork(stream, pressurePa, work);
+      return work;
+    },
+  };
+
+  /** The isentropic efficiency at which the path from `from` has the polytropic efficiency wanted, by secants. */
+  function matched(from: StreamState, rise: number, wanted: number): number {
+    const s1 = mixture.entropy(from);
+    const polytropicAt = (isentropic: number): number => {
+      const work = rise / isentropic;
+      mixture.settleAtEnthalpy(ideal, from.enthalpyW + work);
+      const T1 = from.temperatureK;
+      const T2 = ideal.temperatureK;
+      const meanK = Math.abs(T2 - T1) > 1e-6 * T1 ? (T2 - T1) / Math.log(T2 / T1) : T1;
+      return 1 - ((mixture.entropy(ideal) - s1) * meanK) / work;
+    };
+    let [e, poly] = [1, 1];
+    let next = wanted;
+    for (let tries = 0; tries < MAX_TRIES && Math.abs(next - e) > CLOSE; tries++) {
+      const polyNext = polytropicAt(next);
+      const slope = (polyNext - poly) / (next - e);
+      [e, poly] = [next, polyNext];
+      if (!(slope > 0)) break;
+      next = Math.max(e + (wanted - poly) / slope, 0.5 * e);
+    }
+    return next;
+  }
+}

@@ -1,0 +1,82 @@
+import { z } from 'zod';
+import { PassTrouble } from '../diagnostics/diagnostic.ts';
+import { copyStream } from '../model/stream.ts';
+import { quantity } from '../units/schema.ts';
+import type { BlockKind } from './block.ts';
+import { quietReport } from './report.ts';
+
+const settings = z.strictObject({
+  pressure: quantity('pressure', {
+    description: 'outlet pressure; the lowest inlet pressure if left out',
+  }).optional(),
+});
+type Settings = z.infer<typeof settings>;
+
+/** An inlet that loses more than this share of its pressure in a mixer is worth a word. @source common practice */
+const THROTTLING_WORTH_A_WORD = 0.02;
+
+/**
+ * Mixer: any number of inlets, one outlet, adiabatic.
+ *
+ * Settings: `pressure` [Pa], default the lowest inlet pressure.
+ * Balance: flows and enthalpies of the inlets add up; the outlet temperature follows from the enthalpy.
+ */
+export const mixer: BlockKind<Settings> = {
+  kind: 'mixer',
+  summary: 'joins streams without exchange of heat',
+  settings,
+  ports: () => ({ inlets: 'any', outlets: ['out'] }),
+  create(setting, { mixture }) {
+    return {
+      pass(inlets, outlets) {
+        const out = outlets[0];
+        out.flowsMolPerS.fill(0);
+        let enthalpyW = 0;
+        let pressurePa = Number.POSITIVE_INFINITY;
+        let flow = 0;
+        let flowTimesK = 0;
+        for (const inlet of inlets) {
+          const total = mixture.total(inlet);
+          for (let i = 0; i < mixture.size; i++) out.flowsMolPerS[i] += inlet.flowsMolPerS[i];
+          enthalpyW += inlet.enthalpyW;
+          // An inlet that carries nothing (a recycle not yet started) sets no pressure.
+          if (total > 0) pressurePa = Math.min(pressurePa, inlet.pressurePa);
+          flow += total;
+          flowTimesK += total * inlet.temperatureK;
+        }
+        if (pressurePa === Number.POSITIVE_INFINITY) pressurePa = inlets[0].pressurePa;
+        if (setting.pressure !== undefined) {
+          if (setting.pressure > pressurePa * (1 + 1e-9)) throw raisesPressure(setting.pressure, pressurePa);
+          pressurePa = setting.pressure;
+        }
+        out.pressurePa = pressurePa;
+        out.temperatureK = flow > 0 ? flowTimesK / flow : inlets[0].temperatureK;
+        if (inlets.length === 1 && inlets[0].pressurePa === pressurePa) copyStream(inlets[0], out);
+        else mixture.settleAtEnthalpy(out, enthalpyW);
+      },
+      report(inlets, outlets) {
+        const pressurePa = outlets[0].pressurePa;
+        const throttled = inlets.filter(
+          (inlet) =>
+            mixture.total(inlet) > 0 && inlet.pressurePa > pressurePa * (1 + THROTTLING_WORTH_A_WORD),
+        );
+        return quietReport({
+          details: { outlet_pressure_bar: pressurePa / 1e5 },
+          warnings: throttled.map((inlet) => ({
+            code: 'mixing-pressure',
+            message: `an inlet at ${(inlet.pressurePa / 1e5).toFixed(2)} bar is let down to ${(pressurePa / 1e5).toFixed(2)} bar in the mixer without doing work`,
+          })),
+        });
+      },
+    };
+  },
+};
+
+function raisesPressure(wantedPa: number, lowestPa: number): PassTrouble {
+  return new PassTrouble(
+    'pressure-rise',
+    `The mixer is set to ${(wantedPa / 1e5).toFixed(3)} bar, above its lowest inlet of ${(lowestPa / 1e5).toFixed(3)} bar.`,
+    'a mixer cannot raise the pressure of a stream',
+    'lower the mixer pressure, or put a compressor or pump into the inlet of lower pressure',
+  );
+}

@@ -1,0 +1,154 @@
+import { z } from 'zod';
+import { emptyStream, type StreamState } from '../model/stream.ts';
+import { solveState } from '../properties/solve-state.ts';
+import { fraction, quantity } from '../units/schema.ts';
+import { bedFaults, bedSettings, shotPorts } from './bed-settings.ts';
+import type { BlockContext, BlockKind, SettingsFault, Unit } from './block.ts';
+import { createCarbonReport } from './carbon-report.ts';
+import { exactlyOne, pressureAfterDrop } from './checks.ts';
+import { createConverterBeds } from './converter-beds.ts';
+import { createReactionRun } from './reaction-run.ts';
+import { reactionFaults } from './reactor-checks.ts';
+import { liquidWarnings } from './reactor-warnings.ts';
+import { enthalpyAdded, quietReport } from './report.ts';
+import { raiseSteam, steamFaults, steamSettings } from './steam-raising.ts';
+
+const settings = z.strictObject({
+  reactions: z.record(
+    z.string(),
+    z.strictObject({
+      approach: quantity('temperatureDifference', {
+        min: 0,
+        description: 'temperature approach to equilibrium, 0 K if left out',
+      }).optional(),
+      fraction_of_equilibrium: fraction({
+        description: 'share of the extent at equilibrium that is run, in place of an approach',
+      }).optional(),
+      conversion: fraction({ description: 'share of the key reactant that this reaction takes' }).optional(),
+      of: z.string().meta({ description: 'the key reactant of a conversion' }).optional(),
+    }),
+  ),
+  temperature: quantity('temperature', { description: 'outlet temperature; the duty follows' }).optional(),
+  adiabatic: z.literal(true).optional(),
+  duty: quantity('power', { description: 'heat added; negative for cooling' }).optional(),
+  beds: z.array(bedSettings).optional(),
+  pressure_drop: quantity('pressureDifference', { min: 0, description: 'pressure lost' }).optional(),
+  steam: steamSettings.optional(),
+});
+type Settings = z.infer<typeof settings>;
+
+/**
+ * Reactor: one inlet (and one for each cold shot), one outlet. Each reaction named runs either to equilibrium at
+ * the outlet, all equilibria at once, short of it by a temperature approach or a fraction of the way, or to a
+ * set conversion; conversions are taken first, in the order written.
+ *
+ * Settings: `reactions` {name: {approach [K]} or {fraction_of_equilibrium [0–1]} or {conversion [0–1], of}}; one
+ * of `temperature` [K, isothermal outlet], `adiabatic`, `duty` [W, positive heats], `beds` (adiabatic beds with
+ * cooling or quench between them, see bed-settings.ts); `pressure_drop` [Pa]; `steam`
+ * (what the heat given off could raise, see steam-raising.ts; changes no stream).
+ * Balance: atoms are kept by every reaction; enthalpy out = enthalpy in + duty, formation enthalpies included.
+ */
+export const reactor: BlockKind<Settings> = {
+  kind: 'reactor',
+  summary: 'runs reactions to equilibrium or to a set conversion',
+  settings,
+  ports: (setting) => ({ inlets: ['in', ...shotPorts(setting.beds)], outlets: ['out'] }),
+  check: (setting, known) => [
+    ...exactlyOne(setting, {
+      temperature: 'temperature: 450 degC',
+      adiabatic: 'adiabatic: true',
+      duty: 'duty: -20 MW',
+      beds: 'beds: [{inlet_temperature: 400 degC}, {inlet_temperature: 420 degC}]',
+    }),
+    ...reactionFaults(setting.reactions, known),
+    ...bedFaults(setting.beds, setting.pressure_drop, setting.reactions),
+    ...steamFaults(setting.steam),
+    ...steamWithoutHeat(setting),
+  ],
+  reactionsIn: (setting) => Object.keys(setting.reactions),
+  equilibriaIn: (setting) =>
+    Object.entries(setting.reactions).flatMap(([name, one]) => (one.conversion === undefined ? [name] : [])),
+  create: (setting, context) => {
+    const { beds } = setting;
+    return beds === undefined
+      ? createReactor(setting, context)
+      : createConverterBeds(setting as typeof setting & { beds: typeof beds }, context);
+  },
+};
+
+function createReactor(setting: Settings, context: BlockContext): Unit {
+  const { mixture } = context;
+  const run = createReactionRun(setting.reactions, context);
+  const carbon = createCarbonReport(mixture);
+  const feed = emptyStream(mixture.size);
+  let started = false;
+
+  /** Outlet composition, phases and enthalpy at the outlet's temperature. */
+  function reactAndSettle(out: StreamState): void {
+    run.react(out.temperatureK, out.pressurePa, feed.flowsMolPerS, out.flowsMolPerS);
+    mixture.settle(out);
+  }
+
+  return {
+    pass([inlet], [out]) {
+      feed.flowsMolPerS.set(inlet!.flowsMolPerS);
+      out!.flowsMolPerS.set(inlet!.flowsMolPerS);
+      out!.pressurePa = pressureAfterDrop(inlet!.pressurePa, setting.pressure_drop);
+      if (setting.temperature !== undefined) {
+        out!.temperatureK = setting.temperature;
+        reactAndSettle(out!);
+        return;
+      }
+      if (!started) out!.temperatureK = inlet!.temperatureK;
+      started = true;
+      const wantedW = inlet!.enthalpyW + (setting.duty ?? 0);
+      solveState(out!, wantedW, 'enthalpy', reactAndSettle, (state) => state.enthalpyW);
+      // As in Mixture.settleAtEnthalpy: the balance closes exactly, and nothing holds no enthalpy.
+      if (mixture.total(out!) > 0) out!.enthalpyW = wantedW;
+    },
+    report(inlets, outlets) {
+      const inlet = inlets[0];
+      const outlet = outlets[0];
+      const { details, warnings, assumptions } = run.report(outlet.temperatureK);
+      const atInlet = { name: 'inlet', stream: inlet };
+      const atOutlet = { name: 'outlet', stream: outlet };
+      const dutyW = setting.adiabatic ? 0 : enthalpyAdded(inlets, outlets);
+      // The heat of reaction is given off at the temperature that the catalyst is held at.
+      const steam = setting.steam && raiseSteam(setting.steam, dutyW, () => outlet.temperatureK);
+      return quietReport({
+        dutyW,
+        details: {
+          inlet_K: inlet.temperatureK,
+          outlet_K: outlet.temperatureK,
+          outlet_bar: outlet.pressurePa / 1e5,
+          ...details,
+          ...carbon.details(inlet, outlet),
+          ...(steam && { steam: steam.details }),
+        },
+        warnings: [
+          ...carbon.warnings([atInlet, atOutlet]),
+          ...warnings,
+          ...(steam?.warnings ?? []),
+          ...liquidWarnings([atOutlet]),
+          ...mixture.cautions(outlet),
+        ],
+        assumptions: [...assumptions, ...(steam?.assumptions ?? [])],
+      });
+    },
+  };
+}
+
+function steamWithoutHeat(setting: Settings): SettingsFault[] {
+  if (!setting.steam || !(setting.adiabatic || setting.beds)) return [];
+  return [
+    {
+      path: ['steam'],
+      code: 'idle-setting',
+      what: `Steam is set on a reactor ${setting.beds ? 'of several beds' : 'without cooling'}.`,
+      why: setting.beds
+        ? 'it is counted for one cooler at a time'
+        : 'an adiabatic reactor gives off no heat; its effluent carries it along',
+      mend: 'put a heater that cools the effluent behind the reactor, and set steam there',
+    },
+  ];
+}
