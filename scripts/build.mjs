@@ -44,14 +44,16 @@ const require = looptallyCreateRequire(import.meta.url);`;
 
 /** Bundle the command line into a folder: cli.js and chunks beside it. */
 export async function buildCli(folder) {
-  await build({
+  const { metafile } = await build({
     ...shared,
     entryPoints: { cli: 'src/cli/main.ts' },
     outdir: folder,
     chunkNames: 'chunks/[name]-[hash]',
     banner: { js: banner },
+    metafile: true,
   });
   chmodSync(join(folder, 'cli.js'), 0o755);
+  return metafile;
 }
 
 async function buildLibrary(folder) {
@@ -61,6 +63,24 @@ async function buildLibrary(folder) {
     outdir: folder,
     chunkNames: 'chunks/[name]-[hash]',
   });
+}
+
+/** The licences of the packages that went into a bundle, as they ask for. */
+function collectLicences(folder, metafile) {
+  const packages = new Set(
+    Object.keys(metafile.inputs).flatMap((file) => {
+      const match = file.match(/^node_modules\/((?:@[^/]+\/)?[^/]+)\//);
+      return match ? [match[1]] : [];
+    }),
+  );
+  const texts = [...packages].sort().map((name) => {
+    const home = join(root, 'node_modules', name);
+    const file = readdirSync(home).find((entry) => /^licen[cs]e/i.test(entry));
+    const { license } = JSON.parse(readFileSync(join(home, 'package.json'), 'utf8'));
+    const text = file ? readFileSync(join(home, file), 'utf8').trim() : `licence: ${license}`;
+    return `${name}\n${'='.repeat(name.length)}\n\n${text}\n`;
+  });
+  writeFileSync(join(folder, 'THIRD-PARTY-LICENSES.txt'), texts.join('\n\n'));
 }
 
 function declareTypes(folder) {
@@ -78,7 +98,7 @@ function declareTypes(folder) {
 if (process.argv[1] === fileURLToPath(import.meta.url)) {
   const dist = join(root, 'dist');
   rmSync(dist, { recursive: true, force: true });
-  await buildCli(dist);
+  collectLicences(dist, await buildCli(dist));
   await buildLibrary(dist);
   declareTypes(join(dist, 'types'));
 }

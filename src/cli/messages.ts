@@ -8,7 +8,7 @@ import { inColour, printJson, say } from './terminal.ts';
 /** Tell diagnostics on standard error, each with the line it is about. */
 export function tell(diagnostics: readonly Diagnostic[], source: Source | null): void {
   if (diagnostics.length === 0) return;
-  const texts = source === null ? {} : { [source.name]: source.text };
+  const texts = source === null ? {} : { [source.name]: source.text, ...source.also };
   say(formatDiagnostics(diagnostics, { texts, colour: inColour(process.stderr) }));
 }
 

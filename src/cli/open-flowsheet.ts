@@ -1,4 +1,5 @@
 import type { DiagnosticJson } from '../diagnostics/json.ts';
+import { SET_FILE, setFileText } from '../flowsheet/changes.ts';
 import { readFlowsheet } from '../flowsheet/read.ts';
 import type { Flowsheet } from '../model/flowsheet.ts';
 import type { FileOptions } from './common-options.ts';
@@ -15,10 +16,11 @@ export async function openFlowsheet(
   readonly source: Source;
   readonly warnings: readonly DiagnosticJson[];
 }> {
-  const source = await readSource(file);
+  const set = options.set ?? [];
+  const source = { ...(await readSource(file)), also: { [SET_FILE]: setFileText(set) } };
   const { flowsheet, diagnostics } = await readFlowsheet(source.text, {
     file: source.name,
-    set: options.set ?? [],
+    set,
     case: options.case ?? null,
   });
   if (flowsheet === null) throw new Refusal(diagnostics, source);

@@ -5,6 +5,8 @@ import { exitCodes } from './exit-codes.ts';
 export interface Source {
   readonly name: string;
   readonly text: string;
+  /** further texts that findings may point into, by their pseudo file name: what --set said */
+  readonly also?: Readonly<Record<string, string>>;
 }
 
 /** The user's input cannot be worked with. Carries the text it was about, so that messages can quote its lines. */

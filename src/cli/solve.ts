@@ -51,12 +51,14 @@ export function resultJson({ result, diagnosis }: Solved): unknown {
   return diagnosis === null ? result : { ...result, ...diagnosticsJson([diagnosis]) };
 }
 
-function exitCodeOf(result: Result): number {
+/** The exit code that says how closing went. */
+export function exitCodeOf(result: Result): number {
   if (!result.convergence.converged) return exitCodes.notClosed;
   return Object.values(result.aims).every((aim) => aim.reached) ? exitCodes.done : exitCodes.aimNotReached;
 }
 
-function balanceOptions({ method, tolerance, maxPasses }: SolveOptions): BalanceOptions {
+/** What the options of the command line overrule. */
+export function balanceOptions({ method, tolerance, maxPasses }: SolveOptions): BalanceOptions {
   return {
     ...(method === undefined ? {} : { method }),
     ...(tolerance === undefined ? {} : { tolerance }),

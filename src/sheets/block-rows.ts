@@ -25,6 +25,7 @@ const UNITS: readonly (readonly [ending: string, unit: string])[] = [
   ['_kg_m3', 'kg/m3'],
   ['_m3_h', 'm3/h'],
   ['_t_d', 't/d'],
+  ['_t_h', 't/h'],
   ['_bar', 'bar'],
   ['_kW', 'kW'],
   ['_MW', 'MW'],
@@ -50,6 +51,8 @@ export function closureRows(result: Result): string[][] {
   ];
 }
 
+/** A longer list is a curve to be drawn, not to be read. */
+const LONGEST_LIST = 9;
 /** Keys that only look as if they ended in a unit. */
 const NO_UNIT = /^(ln_?)?K$/;
 /** Kelvins that are a difference and stay kelvins. */
@@ -57,6 +60,7 @@ const DIFFERENCE = /approach|rise|difference|drop|spread/;
 
 function flat(value: unknown, name: string, unit: string | null): string[] {
   if (value === null || value === undefined) return [];
+  if (Array.isArray(value) && value.length > LONGEST_LIST) return [];
   if (typeof value === 'number') return [`${name} ${numberText(value, name, unit)}`];
   if (typeof value === 'boolean') return [`${name} ${value ? 'yes' : 'no'}`];
   if (typeof value === 'string') return [`${name} ${plainText(value)}`];

@@ -4,9 +4,9 @@ import type { Flowsheet, MethodName } from '../model/flowsheet.ts';
 import type { Result } from '../model/result.ts';
 import { closeWithAims } from './aims.ts';
 import { type CloseOptions, closePlant } from './close-plant.ts';
-import { diagnose } from './diagnosis.ts';
+import { diagnose, faultDiagnostics } from './diagnosis.ts';
 import { trappedComponents } from './exits.ts';
-import { createPlant } from './plant.ts';
+import { createPlant, type Plant } from './plant.ts';
 import { tally } from './tally.ts';
 
 export interface BalanceOptions {
@@ -28,7 +28,12 @@ export interface Balance {
  * @throws InputError when a component can enter a loop and has no way out of it
  */
 export function balance(flowsheet: Flowsheet, options: BalanceOptions = {}): Balance {
-  const plant = createPlant(flowsheet);
+  return balancePlant(createPlant(flowsheet), options);
+}
+
+/** The same on a plant that is kept for more; it is left closed. */
+export function balancePlant(plant: Plant, options: BalanceOptions = {}): Balance {
+  const { flowsheet } = plant;
   plant.refreshFeeds();
   const trapped = trappedComponents(plant);
   if (trapped.length > 0) throw new InputError(trapped);
@@ -41,8 +46,8 @@ export function balance(flowsheet: Flowsheet, options: BalanceOptions = {}): Bal
     flowsheet.aims.length === 0
       ? { closure: closePlant(plant, close), aims: {} }
       : closeWithAims(plant, close);
-  return {
-    result: tally(plant, closure, aims),
-    diagnosis: closure.converged ? null : diagnose(plant, closure),
-  };
+  if (!closure.converged) return { result: tally(plant, closure, aims), diagnosis: diagnose(plant, closure) };
+  // Streams that agree with one another are no answer where a block could not do as it was told.
+  const [fault = null] = faultDiagnostics(plant);
+  return { result: tally(plant, { ...closure, converged: fault === null }, aims), diagnosis: fault };
 }

@@ -18,7 +18,7 @@ export interface CloseOptions {
 export interface PlantClosure {
   readonly converged: boolean;
   readonly method: MethodName;
-  /** passes of the recycle that took most */
+  /** passes of the recycle that took most, the one that found its start values included */
   readonly passes: number;
   /** largest residual of the recycles */
   readonly residual: number;
@@ -49,19 +49,22 @@ export function closePlant(plant: Plant, options: CloseOptions): PlantClosure {
     }
     const problem = createRecycleProblem(plant, group);
     const start = new Float64Array(problem.size);
-    if (!options.warm) startFromFeeds(plant, group);
+    const spent = options.warm ? 0 : startFromFeeds(plant, group);
     problem.read(start);
-    const closure = closeFixedPoint(problem, start, options);
+    const closure = closeFixedPoint(problem, start, {
+      ...options,
+      maxPasses: Math.max(options.maxPasses - spent, 1),
+    });
     for (const record of closure.history) {
       history.push({
-        pass: record.pass,
+        pass: record.pass + spent,
         residual: record.residual,
         worst: problem.names[record.worst] ?? '',
         method: record.method,
         note: record.note,
       });
     }
-    passes = Math.max(passes, closure.passes);
+    passes = Math.max(passes, closure.passes + spent);
     residual = Math.max(residual, closure.residual);
     if (!closure.converged) {
       const failure = { group, closure, trouble: closure.trouble, names: problem.names };
@@ -73,7 +76,7 @@ export function closePlant(plant: Plant, options: CloseOptions): PlantClosure {
 
 function passOnce(plant: Plant, group: Group): PassTrouble | null {
   try {
-    for (const block of group.blocks) plant.passBlock(block);
+    for (const step of group.steps) plant.pass(step);
     return null;
   } catch (trouble) {
     if (trouble instanceof PassTrouble) return trouble;

@@ -24,6 +24,20 @@ export function diagnose(plant: Plant, closure: PlantClosure): Diagnostic {
   };
 }
 
+/** What keeps the blocks of a plant whose streams have closed from doing what their settings ask for. */
+export function faultDiagnostics(plant: Plant): Diagnostic[] {
+  return plant.units.flatMap((unit, b) =>
+    unit.report(plant.inlets[b], plant.outlets[b]).faults.map(({ code, path = [], what, why, mend }) => ({
+      code,
+      severity: 'error' as const,
+      where: plant.flowsheet.placeOf(['blocks', plant.blocks[b].name, ...path].join('.')),
+      what: `${plant.blocks[b].name}: ${what}`,
+      why,
+      mend,
+    })),
+  );
+}
+
 function adviceOn(
   reading: ReturnType<typeof readTrend>,
   variable: string,
@@ -64,11 +78,16 @@ function adviceOn(
   }
 }
 
+function placeOfTrouble({ block, setting }: PassTrouble): string {
+  if (block === null) return '';
+  return setting === null ? `blocks.${block}` : `blocks.${block}.${setting}`;
+}
+
 function troubleDiagnostic(plant: Plant, trouble: PassTrouble): Diagnostic {
   return {
     code: trouble.code,
     severity: 'error',
-    where: plant.flowsheet.placeOf(trouble.block ? `blocks.${trouble.block}` : ''),
+    where: plant.flowsheet.placeOf(placeOfTrouble(trouble)),
     what: trouble.block ? `${trouble.block}: ${trouble.message}` : trouble.message,
     why: trouble.why,
     mend: trouble.mend,

@@ -1,4 +1,5 @@
 import type { Diagnostic } from '../diagnostics/diagnostic.ts';
+import type { StreamSpec } from '../model/flowsheet.ts';
 import type { Group, Plant } from './plant.ts';
 
 /**
@@ -20,35 +21,49 @@ export function trappedComponents(plant: Plant): Diagnostic[] {
 
 function isTrapped(plant: Plant, group: Group, component: number): boolean {
   const inLoop = new Set(group.blocks);
-  const streams = plant.flowsheet.streams;
-  const blockNamed = (name: string) => plant.blocks.findIndex((b) => b.name === name);
-  const reached = new Set(group.blocks.filter((b) => enters(plant, inLoop, b, component)));
+  const { streams } = plant.flowsheet;
+  // Followed by streams, not by blocks: the two sides of an exchanger have their own ways.
+  const reached = new Set([
+    ...streams.flatMap((_, s) => (bringsIn(plant, inLoop, s, component) ? [s] : [])),
+    ...group.blocks
+      .filter((b) => reacts(plant, b, component, 1))
+      .flatMap((b) => onward(plant, b, null, component)),
+  ]);
   const queue = [...reached];
-  for (let b = queue.pop(); b !== undefined; b = queue.pop()) {
-    if (reacts(plant, b, component, -1)) return false;
-    for (const stream of streams) {
-      if (stream.from.name !== plant.blocks[b].name || !passes(plant, b, stream.from.port, component))
-        continue;
-      const next = stream.to === null ? -1 : blockNamed(stream.to.name);
-      if (!inLoop.has(next)) return false;
-      if (!reached.has(next)) {
-        reached.add(next);
-        queue.push(next);
-      }
+  for (let s = queue.pop(); s !== undefined; s = queue.pop()) {
+    const b = blockAt(plant, streams[s].to);
+    if (!inLoop.has(b) || reacts(plant, b, component, -1)) return false;
+    for (const next of onward(plant, b, streams[s].to, component)) {
+      if (!reached.has(next)) queue.push(next);
+      reached.add(next);
     }
   }
   return reached.size > 0;
 }
 
-/** Does a component come into the loop at this block, from a feed or a block outside, or by reaction? */
-function enters(plant: Plant, inLoop: ReadonlySet<number>, block: number, component: number): boolean {
-  if (reacts(plant, block, component, 1)) return true;
-  return plant.flowsheet.streams.some((stream, s) => {
-    if (stream.to?.name !== plant.blocks[block].name) return false;
-    const from = plant.blocks.findIndex((b) => b.name === stream.from.name);
-    if (from < 0) return plant.streams[s].flowsMolPerS[component] > 0;
-    return !inLoop.has(from) && isFed(plant, component) && passes(plant, from, stream.from.port, component);
+/** Does a stream bring a component into the loop, from a feed or from a block outside? */
+function bringsIn(plant: Plant, inLoop: ReadonlySet<number>, s: number, component: number): boolean {
+  const { from, to } = plant.flowsheet.streams[s];
+  if (!inLoop.has(blockAt(plant, to))) return false;
+  const source = blockAt(plant, from);
+  if (source < 0) return plant.streams[s].flowsMolPerS[component] > 0;
+  return !inLoop.has(source) && isFed(plant, component) && passes(plant, source, from.port, component);
+}
+
+/** The streams by which a component that has come in by an inlet (null: is formed inside) leaves a block. */
+function onward(plant: Plant, block: number, inlet: StreamSpec['to'], component: number): number[] {
+  const kind = plant.kinds[block];
+  return plant.flowsheet.streams.flatMap((stream, s) => {
+    if (stream.from.name !== plant.blocks[block].name) return [];
+    const { port } = stream.from;
+    if (inlet?.port && port && kind.through && !kind.through(inlet.port, port)) return [];
+    return passes(plant, block, port, component) ? [s] : [];
   });
+}
+
+/** The block at an end of a stream; −1 for a feed or the battery limit. */
+function blockAt(plant: Plant, end: { readonly name: string } | null): number {
+  return end === null ? -1 : plant.blocks.findIndex((b) => b.name === end.name);
 }
 
 function isFed(plant: Plant, component: number): boolean {

@@ -40,13 +40,21 @@ function reactors(plant: Plant): number[] {
   return plant.blocks.flatMap((_, b) => (reactionsOf(plant, b).length > 0 ? [b] : []));
 }
 
-/** (in − out)/in of every reactant over one reactor. */
+/** All that enters a block, the cold shots of a reactor too, per component [mol/s]. */
+function fedTo(plant: Plant, block: number): Float64Array {
+  const sum = new Float64Array(plant.mixture.size);
+  for (const { flowsMolPerS } of plant.inlets[block])
+    for (let i = 0; i < sum.length; i++) sum[i] += flowsMolPerS[i];
+  return sum;
+}
+
+/** (in − out)/in over one reactor of every reactant that it takes on balance. */
 function perPassConversion(plant: Plant): Figures['per_pass_conversion'] {
   return Object.fromEntries(
     reactors(plant).map((b) => {
-      const inlet = plant.inlets[b][0].flowsMolPerS;
+      const inlet = fedTo(plant, b);
       const outlet = plant.outlets[b][0].flowsMolPerS;
-      const reactants = idsWhere(plant, (i) => inlet[i] > 0 && isReactant(reactionsOf(plant, b), i));
+      const reactants = idsWhere(plant, (i) => inlet[i] > outlet[i] && isReactant(reactionsOf(plant, b), i));
       return [
         plant.blocks[b].name,
         Object.fromEntries(reactants.map(([id, i]) => [id, (inlet[i] - outlet[i]) / inlet[i]])),
@@ -94,13 +102,13 @@ function productionTPerD(plant: Plant): number | null {
 function inerts(plant: Plant): Figures['inerts'] {
   return Object.fromEntries(
     reactors(plant).map((b) => {
-      const inlet = plant.inlets[b][0];
+      const inlet = fedTo(plant, b);
       const running = reactionsOf(plant, b);
       let idle = 0;
       for (const [, i] of idsWhere(plant, (i) => running.every((one) => one.coefficients[i] === 0))) {
-        idle += inlet.flowsMolPerS[i];
+        idle += inlet[i];
       }
-      const all = total(inlet);
+      const all = sumOf(inlet);
       return [plant.blocks[b].name, all > 0 ? idle / all : 0];
     }),
   );

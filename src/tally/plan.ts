@@ -9,6 +9,7 @@ export interface Plan {
   readonly blocks: readonly { readonly name: string; readonly kind: string }[];
   readonly loops: readonly { readonly blocks: readonly string[]; readonly tears: readonly string[] }[];
   readonly tears: readonly string[];
+  /** blocks, and outlets of blocks that are calculated ahead of the rest (exchanger.cold) */
   readonly order: readonly string[];
   /** settings moved by aims, one wanted value each: what is free and what fixes it */
   readonly aims: readonly { readonly name: string; readonly moves: string; readonly until: string }[];
@@ -31,7 +32,9 @@ export function planFlowsheet(flowsheet: Flowsheet): Plan {
       .filter((group) => group.tears.length > 0)
       .map((group) => ({ blocks: group.blocks.map(name), tears: group.tears.map(tag) })),
     tears,
-    order: plant.groups.flatMap((group) => group.blocks.map(name)),
+    order: plant.groups.flatMap((group) =>
+      group.steps.map(({ block, ahead }) => (ahead === null ? name(block) : `${name(block)}.${ahead}`)),
+    ),
     aims: flowsheet.aims.map((aim) => ({ name: aim.name, moves: aim.move, until: aim.until.text })),
     unknowns: tears.length * (flowsheet.components.length + 2),
     assumptions: assumptionsOf(plant, []),

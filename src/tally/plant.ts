@@ -6,13 +6,16 @@ import type { BlockSpec, Feed, Flowsheet } from '../model/flowsheet.ts';
 import { emptyStream, type StreamState } from '../model/stream.ts';
 import { enthalpyBasisFor } from '../properties/ideal-gas.ts';
 import { createMixture, type Mixture } from '../properties/mixture.ts';
+import { type Step, stepGraph } from './calculation-steps.ts';
 import { feedFlows } from './feed-flows.ts';
 import { moveSetting, readSetting } from './setting-path.ts';
 import { wire } from './wiring.ts';
 
-/** Blocks that are closed together: those of one recycle system in calculation order, or a single block. */
+/** Blocks that are closed together: those of one recycle system, or a single block. */
 export interface Group {
-  /** indices of blocks in calculation order */
+  /** what a pass does, in calculation order */
+  readonly steps: readonly Step[];
+  /** indices of the blocks, each once, in the order in which they are first needed */
   readonly blocks: readonly number[];
   /** indices of the streams torn; empty where nothing goes round */
   readonly tears: readonly number[];
@@ -41,10 +44,10 @@ export interface Plant {
   /** write the feeds' flows and states into their streams */
   refreshFeeds(): void;
   /**
-   * Evaluate one block from its inlets.
+   * Evaluate one block from its inlets, or one outlet of it ahead of the rest.
    * @throws PassTrouble with the block's name
    */
-  passBlock(block: number): void;
+  pass(step: Step): void;
   /** move a setting by its path, e.g. condenser.temperature; value in SI */
   set(path: string, value: number): void;
   /** the number a path stands for, undefined where it is left to its default */
@@ -57,6 +60,7 @@ export function createPlant(flowsheet: Flowsheet): Plant {
   const mixture = createMixture({
     components,
     gas: flowsheet.gas,
+    liquid: flowsheet.liquid,
     dissolvedGases: flowsheet.dissolvedGases,
     basis: enthalpyBasisFor(components, reactions),
   });
@@ -65,19 +69,25 @@ export function createPlant(flowsheet: Flowsheet): Plant {
   const kinds = blocks.map((b) => blockKinds.get(b.kind)!);
   const units = blocks.map((b, i) => kinds[i].create(b.settings, { name: b.name, mixture, reactions }));
   const wiring = wire(flowsheet, blocks, kinds);
+  const graph = stepGraph(flowsheet, blocks, kinds);
   const groups = planCalculation(
-    blocks.length,
-    wiring.edgeFrom,
-    wiring.edgeTo,
-    flowsheet.solve.tear.map((tag) => wiring.edgeStreams.indexOf(wiring.streamOf(tag))),
+    graph.steps.length,
+    graph.edgeFrom,
+    graph.edgeTo,
+    flowsheet.solve.tear.map((tag) => graph.edgeStreams.indexOf(wiring.streamOf(tag))),
     // Among equally small tear sets the stream called the recycle is the one an engineer would guess.
-    Float64Array.from(wiring.edgeStreams, (s) =>
-      flowsheet.streams[s].tag === flowsheet.ledger.recycle ? 2 : 1,
-    ),
-  ).groups.map((group) => ({
-    blocks: [...group.nodes],
-    tears: [...group.tears].map((edge) => wiring.edgeStreams[edge]),
-  }));
+    Float64Array.from(graph.edgeStreams, (s, edge) => {
+      if (graph.inner[edge]) return 0;
+      return flowsheet.streams[s].tag === flowsheet.ledger.recycle ? 2 : 1;
+    }),
+  ).groups.map((group): Group => {
+    const steps = Array.from(group.nodes, (node) => graph.steps[node]);
+    return {
+      steps,
+      blocks: [...new Set(steps.map((step) => step.block))],
+      tears: [...new Set(Array.from(group.tears, (edge) => graph.edgeStreams[edge]))],
+    };
+  });
   const streams = flowsheet.streams.map(() => emptyStream(components.length));
   const torn = new Set(groups.flatMap((group) => group.tears));
   const seen = streams.map((state, s) => (torn.has(s) ? emptyStream(components.length) : state));
@@ -109,9 +119,10 @@ export function createPlant(flowsheet: Flowsheet): Plant {
         mixture.settle(state);
       }
     },
-    passBlock(block) {
+    pass({ block, ahead }) {
       try {
-        units[block].pass(inlets[block], outlets[block]);
+        if (ahead === null) units[block].pass(inlets[block], outlets[block]);
+        else units[block].passAhead!(ahead, inlets[block], outlets[block]);
       } catch (trouble) {
         if (trouble instanceof PassTrouble) trouble.block ??= blocks[block].name;
         throw trouble;

@@ -60,7 +60,7 @@ export function createRecycleProblem(plant: Plant, group: Group): RecycleProblem
         guess.pressurePa = x[at + mixture.size + 1] / BAR;
         mixture.settle(guess);
       }
-      for (const block of group.blocks) plant.passBlock(block);
+      for (const step of group.steps) plant.pass(step);
       for (let t = 0; t < group.tears.length; t++) pack(streams[group.tears[t]], g, t * width);
     },
     scale(x, g, out) {

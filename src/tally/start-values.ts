@@ -1,21 +1,31 @@
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
+import { copyStream, type StreamState } from '../model/stream.ts';
 import type { Group, Plant } from './plant.ts';
 
+/** Passes at most before the guess is scaled up: the second mends what the first could not do yet. */
+const FIRST_PASSES = 3;
+/** A block with a set duty may need more than once through: so many times t₀ is tried. */
+const MULTIPLES = [4, 16] as const;
+/** A share that comes back above this would scale a guess out of all proportion. */
+const LARGEST_SHARE = 0.99;
+
 /**
- * Start values for the torn streams of a group without the user's help: an empty recycle at the state of the
- * warmest entering stream, one pass through the blocks ("once through"), and what comes back is scaled up
- * component by component as if it came back in that share every time:
- *   x = r/(1 − r) × entering,  r = returned/entering, at most 0.99.
- * Components that react are scaled by the same rule; their share is that of a gas free of product, which errs
- * on the low side. The states found are written into the torn streams; a block that fails at an empty recycle
- * leaves the entering streams' state as the guess.
+ * Start values for the torn streams of a group without the user's help.
+ *
+ * The first pass has empty tears at the state of the warmest entering stream, so that each tear finds out what
+ * reaches it when nothing has come round (t₀). A second pass with that finds what reaches it then (t₁), and the
+ * difference is scaled up component by component as if the same share came back every time:
+ *   t = t₀/(1 − r),  r = (t₁ − t₀)/t₀, held in 0…0.99.
+ * Where the tears feed one another (a feed/effluent exchanger with a set approach), the first pass leaves some
+ * of them empty: then as many passes as it takes to fill them all stand for each of the two.
+ * A block that cannot work yet (nothing flows, no pressure) is passed over and leaves its outlets empty; a third
+ * pass is made where that was so in the second, and where it is so still, multiples of t₀ are tried as the guess.
+ *
+ * @returns passes made
  */
-export function startFromFeeds(plant: Plant, group: Group): void {
+export function startFromFeeds(plant: Plant, group: Group): number {
   const { mixture, streams, seen } = plant;
-  const inside = new Set(group.blocks.flatMap((block) => plant.outlets[block]));
-  const entering = [
-    ...new Set(group.blocks.flatMap((block) => plant.inlets[block].filter((state) => !inside.has(state)))),
-  ].filter((state) => !group.tears.some((s) => seen[s] === state));
+  const entering = enteringStates(plant, group);
   const arriving = new Float64Array(mixture.size);
   let pressurePa = 0;
   let temperatureK = 0;
@@ -24,30 +34,85 @@ export function startFromFeeds(plant: Plant, group: Group): void {
     pressurePa = Math.max(pressurePa, state.pressurePa);
     temperatureK = Math.max(temperatureK, state.temperatureK);
   }
-  for (const s of group.tears) {
-    for (const state of [seen[s], streams[s]]) {
-      state.flowsMolPerS.fill(0);
-      state.liquidMolPerS.fill(0);
-      state.enthalpyW = 0;
-      state.vapourFraction = 1;
-      state.pressurePa = pressurePa || 1e5;
-      state.temperatureK = temperatureK || 298.15;
+  for (const block of group.blocks) for (const state of plant.outlets[block]) empty(state);
+  for (const s of group.tears) empty(seen[s]);
+
+  function empty(state: StreamState): void {
+    state.flowsMolPerS.fill(0);
+    state.liquidMolPerS.fill(0);
+    state.enthalpyW = 0;
+    state.vapourFraction = 1;
+    state.pressurePa = pressurePa || 1e5;
+    state.temperatureK = temperatureK || 298.15;
+  }
+
+  /** Let the tears hold so many times what reached them the last time. */
+  function holdMultiple(multiple: number): void {
+    for (const [t, s] of group.tears.entries()) {
+      for (let i = 0; i < mixture.size; i++) streams[s].flowsMolPerS[i] = multiple * before[t][i];
+      mixture.settle(streams[s]);
     }
   }
-  try {
-    for (const block of group.blocks) plant.passBlock(block);
-  } catch (trouble) {
-    if (!(trouble instanceof PassTrouble)) throw trouble;
-    for (const s of group.tears) streams[s].flowsMolPerS.set(arriving);
-    return;
+
+  let passes = 0;
+  let complete = false;
+  const pass = () => {
+    if (passes > 0) for (const s of group.tears) copyStream(streams[s], seen[s]);
+    complete = passLeniently(plant, group);
+    passes++;
+  };
+  do pass();
+  while (passes < group.tears.length && group.tears.some((s) => mixture.total(streams[s]) === 0));
+  const round = passes;
+  const before = group.tears.map((s) => streams[s].flowsMolPerS.slice());
+  while (passes < 2 * round || (!complete && passes < FIRST_PASSES)) {
+    if (passes >= 2 * round)
+      for (const [t, s] of group.tears.entries()) before[t].set(streams[s].flowsMolPerS);
+    pass();
   }
-  for (const s of group.tears) {
-    const state = streams[s];
+  for (let k = 0; !complete && k < MULTIPLES.length; k++) {
+    holdMultiple(MULTIPLES[k]);
+    pass();
+    if (!complete) continue;
+    for (const s of group.tears) copyStream(seen[s], streams[s]);
+    return passes;
+  }
+  if (!complete) holdMultiple(1);
+  group.tears.forEach((s, t) => {
+    const { flowsMolPerS } = streams[s];
+    const total = mixture.total(streams[s]);
     for (let i = 0; i < mixture.size; i++) {
-      const returned = state.flowsMolPerS[i];
-      if (returned === 0 || arriving[i] === 0) continue;
-      const share = Math.min(returned / arriving[i], 0.99);
-      state.flowsMolPerS[i] = (share / (1 - share)) * arriving[i];
+      if (total === 0) flowsMolPerS[i] = arriving[i];
+      else if (complete) flowsMolPerS[i] = scaledUp(before[t][i], flowsMolPerS[i]);
+    }
+  });
+  return passes;
+}
+
+/** t₀/(1 − r), r = (t₁ − t₀)/t₀; t₁ where nothing came the first time or less the second. */
+function scaledUp(first: number, second: number): number {
+  if (first <= 0 || second <= first) return second;
+  return first / (1 - Math.min((second - first) / first, LARGEST_SHARE));
+}
+
+/** The streams that enter a group from feeds and from groups closed before it. */
+function enteringStates(plant: Plant, group: Group): StreamState[] {
+  const inside = new Set(group.blocks.flatMap((block) => plant.outlets[block]));
+  const torn = new Set(group.tears.map((s) => plant.seen[s]));
+  const all = new Set(group.blocks.flatMap((block) => plant.inlets[block]));
+  return [...all].filter((state) => !inside.has(state) && !torn.has(state));
+}
+
+/** Take every step; false when one of them could not. */
+function passLeniently(plant: Plant, group: Group): boolean {
+  let complete = true;
+  for (const step of group.steps) {
+    try {
+      plant.pass(step);
+    } catch (trouble) {
+      if (!(trouble instanceof PassTrouble)) throw trouble;
+      complete = false;
     }
   }
+  return complete;
 }

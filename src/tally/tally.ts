@@ -48,6 +48,14 @@ export function tally(
   };
 }
 
+/** The figures of the plant as it stands, the user's own included. */
+export function figuresOf(plant: Plant): Figures {
+  const reports = plant.units.map((unit, b) => unit.report(plant.inlets[b], plant.outlets[b]));
+  const plain = keyFigures(plant, count(plant), reports);
+  const user = userFigures(plant, streamResults(plant), blockResults(plant, reports), plain);
+  return { ...plain, user };
+}
+
 /** The scope in which the user's formulas are evaluated on the plant as it stands. */
 export function scopeOf(plant: Plant): Record<string, unknown> {
   const reports = plant.units.map((unit, b) => unit.report(plant.inlets[b], plant.outlets[b]));
@@ -75,6 +83,7 @@ function userFigures(
   blocks: Result['blocks'],
   figures: Figures,
 ): Record<string, number | null> {
+  if (plant.flowsheet.figures.length === 0) return {};
   const scope = formulaScope(streams, blocks, figures, molarMasses(plant));
   return Object.fromEntries(
     plant.flowsheet.figures.map(({ name, formula }) => {
@@ -90,7 +99,11 @@ function molarMasses(plant: Plant): Record<string, number> {
 
 function blockWarnings(plant: Plant, reports: readonly BlockReport[]): Warning[] {
   return reports.flatMap((report, b) =>
-    report.warnings.map(({ code, message }) => ({ code, where: plant.blocks[b].name, message })),
+    // A fault is told as an error as well; here the result keeps all of them.
+    [
+      ...report.faults.map(({ code, what, why }) => ({ code, message: `${what} (${why})` })),
+      ...report.warnings,
+    ].map(({ code, message }) => ({ code, where: plant.blocks[b].name, message })),
   );
 }
 

@@ -6,11 +6,6 @@ export interface Wiring {
   /** stream indices per block, in port order */
   readonly inlets: readonly (readonly number[])[];
   readonly outlets: readonly (readonly number[])[];
-  /** the streams between blocks as edges of a graph whose nodes are blocks */
-  readonly edgeFrom: Int32Array;
-  readonly edgeTo: Int32Array;
-  /** stream index of each edge */
-  readonly edgeStreams: readonly number[];
   readonly enters: readonly number[];
   readonly leaves: readonly number[];
   streamOf(tag: string): number;
@@ -37,15 +32,9 @@ export function wire(
     const leaving = streams.flatMap((s, i) => (s.from.name === block.name ? [i] : []));
     return ports.flatMap((port) => leaving.filter((i) => at(streams[i].from, port)));
   });
-  const edgeStreams = streams.flatMap((s, i) =>
-    indexOf.has(s.from.name) && s.to !== null && indexOf.has(s.to.name) ? [i] : [],
-  );
   return {
     inlets,
     outlets,
-    edgeFrom: Int32Array.from(edgeStreams, (i) => indexOf.get(streams[i].from.name)!),
-    edgeTo: Int32Array.from(edgeStreams, (i) => indexOf.get(streams[i].to!.name)!),
-    edgeStreams,
     enters: streams.flatMap((s, i) => (indexOf.has(s.from.name) ? [] : [i])),
     leaves: streams.flatMap((s, i) => (s.to === null ? [i] : [])),
     streamOf: (tag) => streams.findIndex((s) => s.tag === tag),

@@ -26,7 +26,7 @@ blocks:
     reactions: {synthesis: {approach: 10 K}}
     temperature: 440 degC
     pressure_drop: 5 bar
-  condenser:  {kind: condenser, temperature: -5 degC, pressure_drop: 3 bar}
+  condenser:  {kind: condenser, temperature: -5 degC, pressure_drop: 3 bar, cooling: {water: 25 degC, approach: 10 K}}
   purge:      {kind: splitter, fractions: {bleed: 3 %}}      # the rest goes round
   circulator: {kind: compressor, pressure: 160 bar, efficiency: 78 %}
 
