@@ -1,6 +1,7 @@
 import { benchCommand } from './command.ts';
 import { benchKernels } from './kernels.ts';
 import { benchMethods } from './methods.ts';
+import { benchRandomLoops } from './random-loops.ts';
 
 /**
  * Everything, or the parts named: npm run bench -- methods kernels command.
@@ -8,6 +9,7 @@ import { benchMethods } from './methods.ts';
  */
 const parts: Readonly<Record<string, () => Promise<void>>> = {
   methods: benchMethods,
+  loops: benchRandomLoops,
   kernels: benchKernels,
   command: benchCommand,
 };

@@ -5,7 +5,7 @@ import { column, title } from './measure.ts';
 
 const LOOPS = 2000;
 const SEED = 20_260_101;
-const METHODS: readonly MethodName[] = ['auto', 'anderson'];
+const METHODS: readonly MethodName[] = ['auto', 'anderson', 'newton'];
 
 /** Closed or not, and at what cost, over random ammonia loops from hopeless to easy. */
 export async function benchRandomLoops(): Promise<void> {

@@ -22,7 +22,15 @@ export interface Solved {
   readonly diagnosis: Diagnostic | null;
 }
 
-const METHODS: readonly MethodName[] = ['auto', 'direct', 'wegstein', 'anderson'];
+const METHODS: readonly MethodName[] = [
+  'auto',
+  'direct',
+  'wegstein',
+  'eigenvalue',
+  'anderson',
+  'broyden',
+  'newton',
+];
 
 /** The options of every command that closes a loop. */
 export function withSolveOptions(command: Command): Command {
@@ -35,7 +43,9 @@ export function withSolveOptions(command: Command): Command {
 /** Read a flowsheet, close it and set the exit code. */
 export async function solve(file: string, options: SolveOptions): Promise<Solved> {
   const { flowsheet, source } = await openFlowsheet(file, options);
-  const { result, diagnosis } = aboutSource(source, () => balance(flowsheet, balanceOptions(options)));
+  const { result, diagnosis } = aboutSource(source, () =>
+    balance(flowsheet, { ...balanceOptions(options), curves: options.json === true }),
+  );
   process.exitCode = exitCodeOf(result);
   return { flowsheet, source, result, diagnosis };
 }

@@ -57,8 +57,12 @@ export interface Closure {
   readonly g: Float64Array;
 }
 
-/** Passes without a better answer after which going on is pointless; every method of `auto` has had its turn. */
+/**
+ * Passes without a better answer after which going on is pointless, and how many more for each variable: every method
+ * of `auto` has had its turn by then, and Newton spends a pass on each variable before it makes a step.
+ */
 const STALL_PASSES = 60;
+const STALL_PASSES_EACH = 7;
 /** What an answer must be better by to count; slow direct substitution (0.01 % purge) gains 1e-4 a pass. */
 const STALL_SHARE = 1 - 1e-6;
 const failedPass = {
@@ -166,7 +170,7 @@ export function closeFixedPoint(
     if (merit < STALL_SHARE * best) {
       best = merit;
       sinceBest = 0;
-    } else if (++sinceBest >= STALL_PASSES) return stop('stalled');
+    } else if (++sinceBest >= STALL_PASSES + STALL_PASSES_EACH * n) return stop('stalled');
 
     method.next(x, g, scale, xNext);
     madeBy = method.name;
@@ -175,7 +179,8 @@ export function closeFixedPoint(
       xNext.set(g);
       note = joined(note, 'the step was not a finite number: the direct step');
     }
-    const held = keepWithinBounds(problem, x, g, xNext);
+    const from = method.base ?? { x, g };
+    const held = keepWithinBounds(problem, from.x, from.g, xNext);
     if (held > 0) note = joined(note, `${held} held at the bounds of a step`);
     x.set(xNext);
   }

@@ -16,6 +16,8 @@ export interface FixedPointMethod {
    * @param xNext  written in place, length n; may leave the bounds
    */
   next(x: Float64Array, g: Float64Array, scale: Float64Array, xNext: Float64Array): void;
+  /** Guess and answer that the next guess starts from, where they are not those just handed in. */
+  readonly base?: { readonly x: Float64Array; readonly g: Float64Array } | null;
   /** What it did in the last call and why; empty when nothing is worth saying. */
   note(): string;
 }

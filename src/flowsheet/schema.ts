@@ -94,7 +94,7 @@ export const figureSchema = z.strictObject({
 });
 
 export const solveSchema = z.strictObject({
-  method: z.enum(['auto', 'direct', 'wegstein', 'anderson']).optional(),
+  method: z.enum(['auto', 'direct', 'wegstein', 'eigenvalue', 'anderson', 'broyden', 'newton']).optional(),
   tolerance: plainNumber({ above: 0, max: 0.01, description: 'relative' }).optional(),
   max_passes: count({ max: 100_000 }).optional(),
   tear: z.union([z.array(z.string()), z.string().transform((tag) => [tag])]).optional(),

@@ -4,7 +4,7 @@ import type { Reaction } from './reaction.ts';
 
 export type GasModelName = 'ideal' | 'srk' | 'pr';
 export type LiquidModelName = 'antoine' | 'eos';
-export type MethodName = 'auto' | 'direct' | 'wegstein' | 'anderson';
+export type MethodName = 'auto' | 'direct' | 'wegstein' | 'eigenvalue' | 'anderson' | 'broyden' | 'newton';
 
 /** A stream that enters across the battery limit, as the user gave it (SI). */
 export interface Feed {
@@ -64,6 +64,8 @@ export interface Aim {
   readonly until: Formula;
   /** wanted value in the unit of the formula */
   readonly target: number;
+  /** the wanted value as written, with its unit */
+  readonly wanted: string;
   /** SI unit of the setting moved, '' for fractions and numbers */
   readonly unit: string;
 }

@@ -104,7 +104,7 @@ describe('a command line that cannot be followed is told in four parts with exit
   --method cannot be magic.
    1 | looptally balance methanol.yaml --method magic
      |                                 ^^^^^^^^
-  why:  it must be one of auto, direct, wegstein, anderson
+  why:  it must be one of auto, direct, wegstein, eigenvalue, anderson, broyden, newton
   mend: looptally balance --help tells the options and shows an example
 
 1 error

@@ -1,0 +1,243 @@
+import { solveInPlace } from './linear-solve.ts';
+import type { FixedPointMethod } from './method.ts';
+
+/** Length of a probe relative to the size of its variable: passes are good to some 1e-12. */
+const PROBE = 1e-6;
+/** A guess this far from its answer (an empty recycle: 1) is first led by direct steps, so many at most. */
+const FAR = 0.5;
+const DIRECT_STEPS = 3;
+/** Guess and answer this near to one another are equal. */
+const SETTLED = 1e-13;
+/** Pivots smaller than this, in scaled variables, make the derivatives singular; behind a purge of 0.01 % they are 1e-4. */
+const SINGULAR = 1e-14;
+/** With derivatives brought up to date by steps, what a step may leave over beside it before they are taken afresh. */
+const CHORD = 1.5;
+/** A correction that takes this share of the step back again shows derivatives of the other side of a kink. */
+const OVERSHOT = 0.8;
+/** Share of a step at which the derivatives are to blame rather than its length. */
+const SHORTEST = 0.02;
+/** A step lets no variable grow by more than twice its size nor lose more than this share of it. */
+const GROW = 2;
+const LOSE = 0.7;
+/** The least of the shares that follow from how badly the last step was foreseen. */
+const LEAST_SHARE = 0.1;
+
+/**
+ * Newton's method on f(x) = G(x) − x with derivatives by finite differences, one pass per variable; then steps with
+ * Broyden's update of the derivatives until they stop paying, and derivatives afresh. A step is judged by the
+ * correction it leaves over under the derivatives it was made with (natural monotonicity), not by the
+ * residual: behind a small purge a small residual says little.
+ *
+ * A variable that is settled (guess = answer, and no probe of another has moved its answer) needs no probe: its
+ * correction is zero whatever its column. Pressure is such a one, and often temperature.
+ *
+ * @source P. Deuflhard, Newton Methods for Nonlinear Problems, Springer 2004, chapters 2 and 3; the update:
+ * C. G. Broyden, Math. Comput. 19 (1965) 577-593
+ */
+export function createNewton(): FixedPointMethod {
+  let n = 0;
+  /** the point a probe or step starts from, and the sizes its derivatives are scaled with */
+  let xBase = new Float64Array(0);
+  let gBase = new Float64Array(0);
+  let size = new Float64Array(0);
+  /** the whole step from the base; what is left over where it led */
+  let step = new Float64Array(0);
+  let left = new Float64Array(0);
+  let moved = new Float64Array(0);
+  let settled = new Uint8Array(0);
+  let order: number[] = [];
+  let J: Float64Array[] = [];
+  let work: Float64Array[] = [];
+  let base: { readonly x: Float64Array; readonly g: Float64Array } = { x: xBase, g: gBase };
+  let directSteps = 0;
+  let probe = 0;
+  let phase: 'begin' | 'probe' | 'step' = 'begin';
+  /** the derivatives are of the base itself, not brought up to date from elsewhere */
+  let fresh = false;
+  let taken = 1;
+  let note = '';
+
+  /** Take the derivatives at a point: its first probe into xNext. */
+  function takeDerivatives(x: Float64Array, g: Float64Array, scale: Float64Array, xNext: Float64Array): void {
+    xBase.set(x);
+    gBase.set(g);
+    size.set(scale);
+    order.sort((a, b) => Math.abs(g[b] - x[b]) / scale[b] - Math.abs(g[a] - x[a]) / scale[a] || a - b);
+    for (let i = 0; i < n; i++) {
+      settled[i] = Math.abs(g[i] - x[i]) <= SETTLED * scale[i] ? 1 : 0;
+      J[i].fill(0);
+      J[i][i] = -1;
+    }
+    probe = -1;
+    phase = 'probe';
+    nextProbe(scale, xNext);
+  }
+
+  /** The next probe, or the step when there are no more. */
+  function nextProbe(scale: Float64Array, xNext: Float64Array): void {
+    do probe++;
+    while (probe < n && settled[order[probe]] === 1);
+    if (probe < n) {
+      const j = order[probe];
+      xNext.set(xBase);
+      // toward the answer, where the block is more likely to work
+      xNext[j] += (gBase[j] < xBase[j] ? -PROBE : PROBE) * size[j];
+      return;
+    }
+    fresh = true;
+    stepFromBase(scale, xNext, 1);
+  }
+
+  function readProbe(x: Float64Array, g: Float64Array): void {
+    const j = order[probe];
+    const h = (x[j] - xBase[j]) / size[j];
+    if (h === 0) return;
+    for (let i = 0; i < n; i++) {
+      const change = g[i] - gBase[i];
+      if (Math.abs(change) > SETTLED * size[i]) settled[i] = 0;
+      J[i][j] = change / (h * size[i]) - (i === j ? 1 : 0);
+    }
+  }
+
+  /** Correction −J⁻¹ f in units of the variables; false when the derivatives are singular. */
+  function correction(x: Float64Array, g: Float64Array, out: Float64Array): boolean {
+    for (let i = 0; i < n; i++) {
+      work[i].set(J[i]);
+      out[i] = (x[i] - g[i]) / size[i];
+    }
+    if (!solveInPlace(work, out, SINGULAR)) return false;
+    for (let i = 0; i < n; i++) out[i] = out[i] * size[i];
+    return true;
+  }
+
+  /** Solve for the step and go along it by the share given at most; a direct step when it cannot be solved for. */
+  function stepFromBase(scale: Float64Array, xNext: Float64Array, most: number): void {
+    if (!correction(xBase, gBase, step)) {
+      note = 'the derivatives are singular: the direct step';
+      phase = 'begin';
+      xNext.set(gBase);
+      return;
+    }
+    phase = 'step';
+    let share = most;
+    for (let i = 0; i < n; i++) {
+      const rise = GROW * Math.max(Math.abs(xBase[i]), scale[i]);
+      const fall = LOSE * scale[i];
+      if (step[i] > rise) share = Math.min(share, rise / step[i]);
+      else if (step[i] < -fall) share = Math.min(share, fall / -step[i]);
+    }
+    go(xNext, share);
+  }
+
+  function go(xNext: Float64Array, share: number): void {
+    taken = share;
+    for (let i = 0; i < n; i++) xNext[i] = xBase[i] + share * step[i];
+  }
+
+  /** Broyden's good update with the step from the base to x. */
+  function update(x: Float64Array, g: Float64Array): void {
+    let whole = 0;
+    for (let i = 0; i < n; i++) {
+      moved[i] = (x[i] - xBase[i]) / size[i];
+      whole += moved[i] * moved[i];
+    }
+    if (!(whole > 0)) return;
+    for (let i = 0; i < n; i++) {
+      let unforeseen = (g[i] - x[i] - (gBase[i] - xBase[i])) / size[i];
+      for (let j = 0; j < n; j++) unforeseen -= J[i][j] * moved[j];
+      for (let j = 0; j < n; j++) J[i][j] += (unforeseen * moved[j]) / whole;
+    }
+  }
+
+  /** Judge the step that led to x and make the next one. */
+  function judge(x: Float64Array, g: Float64Array, scale: Float64Array, xNext: Float64Array): void {
+    if (!correction(x, g, left)) {
+      takeDerivatives(x, g, scale, xNext);
+      return;
+    }
+    let before = 0;
+    let after = 0;
+    let unforeseen = 0;
+    for (let i = 0; i < n; i++) {
+      before = Math.max(before, Math.abs(step[i]) / scale[i]);
+      after = Math.max(after, Math.abs(left[i]) / scale[i]);
+      unforeseen = Math.max(unforeseen, Math.abs(left[i] - (1 - taken) * step[i]) / scale[i]);
+    }
+    // what the linear model does not foresee grows with the square of the share
+    const bearable = (0.5 * before * taken * taken) / unforeseen;
+    if (!fresh && !(after <= CHORD * before)) {
+      note = 'a step without gain: derivatives afresh';
+      takeDerivatives(xBase, gBase, scale, xNext);
+    } else if (fresh && !(after <= (1 - taken / 4) * before) && Math.min(bearable, taken / 2) > SHORTEST) {
+      note = 'a step without gain: a shorter one';
+      go(xNext, Math.min(bearable, taken / 2));
+    } else if (takenBack(left, step, scale) > OVERSHOT * taken) {
+      note = 'the step went too far: derivatives afresh';
+      takeDerivatives(x, g, scale, xNext);
+    } else if (!fresh && after - (1 - taken) * before > before) {
+      note = 'slow progress: derivatives afresh';
+      takeDerivatives(x, g, scale, xNext);
+    } else {
+      update(x, g);
+      xBase.set(x);
+      gBase.set(g);
+      fresh = false;
+      stepFromBase(scale, xNext, unforeseen > 0 ? Math.min(Math.max(bearable, LEAST_SHARE), 1) : 1);
+    }
+  }
+
+  return {
+    name: 'newton',
+    get base() {
+      return phase === 'begin' ? null : base;
+    },
+    reset(variables) {
+      n = variables;
+      xBase = new Float64Array(n);
+      gBase = new Float64Array(n);
+      base = { x: xBase, g: gBase };
+      directSteps = 0;
+      size = new Float64Array(n);
+      step = new Float64Array(n);
+      left = new Float64Array(n);
+      moved = new Float64Array(n);
+      settled = new Uint8Array(n);
+      order = Array.from({ length: n }, (_, i) => i);
+      J = order.map(() => new Float64Array(n));
+      work = order.map(() => new Float64Array(n));
+      phase = 'begin';
+      note = '';
+    },
+    next(x, g, scale, xNext) {
+      note = '';
+      if (phase === 'begin') {
+        if (directSteps < DIRECT_STEPS && isFar(x, g, scale)) {
+          directSteps++;
+          note = 'far off: a direct step first';
+          xNext.set(g);
+        } else takeDerivatives(x, g, scale, xNext);
+      } else if (phase === 'step') judge(x, g, scale, xNext);
+      else {
+        readProbe(x, g);
+        nextProbe(scale, xNext);
+      }
+    },
+    note: () => (note === '' && phase === 'probe' ? `probe ${probe + 1} for the derivatives` : note),
+  };
+}
+
+function isFar(x: Float64Array, g: Float64Array, scale: Float64Array): boolean {
+  for (let i = 0; i < x.length; i++) if (Math.abs(g[i] - x[i]) > FAR * scale[i]) return true;
+  return false;
+}
+
+/** The share of `step` that the correction left over takes back again; negative when it goes on. */
+function takenBack(left: Float64Array, step: Float64Array, scale: Float64Array): number {
+  let along = 0;
+  let whole = 0;
+  for (let i = 0; i < step.length; i++) {
+    along += (left[i] * step[i]) / (scale[i] * scale[i]);
+    whole += (step[i] / scale[i]) ** 2;
+  }
+  return -along / whole;
+}
