@@ -13,6 +13,7 @@ export { type PublishedConstant, publishedConstants } from './chemistry/publishe
 export { type Diagnostic, InputError } from './diagnostics/diagnostic.ts';
 export { type FormatOptions, formatDiagnostic, formatDiagnostics } from './diagnostics/format.ts';
 export { flowsheetJsonSchema } from './flowsheet/json-schema.ts';
+export { type NumericSetting, numericSettings } from './flowsheet/numeric-settings.ts';
 export { readFlowsheet } from './flowsheet/read.ts';
 export type { Flowsheet, GasModelName, MethodName } from './model/flowsheet.ts';
 export type {
@@ -32,9 +33,11 @@ export {
   catalogueList,
 } from './properties/catalogue.ts';
 export { type CsvTableName, csvSheet } from './sheets/csv.ts';
+export { leversText } from './sheets/levers.ts';
 export { markdownSheet } from './sheets/markdown.ts';
 export { type Renderer, type RenderOptions, renderers } from './sheets/renderers.ts';
 export type { SheetOptions } from './sheets/sheet.ts';
 export { textSheet } from './sheets/text.ts';
 export { type Balance, type BalanceOptions, balance } from './tally/balance.ts';
+export { type Lever, type Levers, levers } from './tally/levers.ts';
 export { type Plan, planFlowsheet } from './tally/plan.ts';

@@ -63,6 +63,11 @@ export interface BlockReport {
    */
   readonly faults: readonly BlockFault[];
   readonly assumptions: readonly string[];
+  /**
+   * Plot-ready curves, in the same form as `details`. Worked out when asked for: a curve takes longer than a pass,
+   * and the figures of an aim or a sweep need none.
+   */
+  readonly curves: () => Readonly<Record<string, unknown>>;
 }
 
 /** A block made ready to be evaluated pass after pass; it keeps its own work space and warm starts. */

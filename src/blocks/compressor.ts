@@ -141,10 +141,14 @@ export const compressor: BlockKind<Settings> = {
             ...(idleCooler ? [idleIntercooling(idleCooler, setting.intercooling!)] : []),
             ...hotDischarge(hottestK, setting.discharge_limit),
           ],
-          assumptions:
-            setting.efficiency === undefined && setting.polytropic_efficiency === undefined
+          assumptions: [
+            ...(setting.efficiency === undefined && setting.polytropic_efficiency === undefined
               ? [`Isentropic efficiency ${100 * EFFICIENCY} % (common practice; none given).`]
-              : [],
+              : []),
+            ...(setting.drive_efficiency === undefined
+              ? ['Power is that of the shaft: no drive efficiency is given.']
+              : []),
+          ],
         });
       },
     };

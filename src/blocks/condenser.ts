@@ -96,11 +96,11 @@ export const condenser: BlockKind<Settings> = {
             condensed_kmol_h: condensed * 3.6,
             gas_fraction: mixed.vapourFraction,
             ...split?.details,
-            heat_curve: heatCurve(inlet!, mixed, mixture),
           },
           warnings: [...warnings, ...mixture.cautions(mixed)],
           faults: split?.faults ?? [],
           assumptions: split?.assumptions ?? [],
+          curves: () => ({ heat_curve: heatCurve(inlet!, mixed, mixture) }),
         });
       },
     };

@@ -112,10 +112,10 @@ export function createConverterBeds(setting: BedsSetting, context: BlockContext)
           extent_kmol_h: totalExtents(),
           ...carbon.details(inlets[0], outlets[0]),
           beds: Object.fromEntries(beds.map((bed, k) => [`bed${k + 1}`, bedDetails(bed, inlets)])),
-          ...lines(),
         },
         warnings: warnings(inlets, outlets),
         assumptions: assumptions(),
+        curves: lines,
       });
     },
   };

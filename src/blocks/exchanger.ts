@@ -145,7 +145,10 @@ export const exchanger: BlockKind<ExchangerSettings> = {
               },
               log_mean_difference_K: meanOfEnds(hot, hotOut, cold, coldOut),
               conductance_kW_K: kilo(curve.conductance(movedW)),
-              heat_curve: movedW > 0 ? curve.curve(movedW, closest) : null,
+            },
+            curves: () => {
+              curve.lay(hot, hotOut, cold, coldOut);
+              return { heat_curve: movedW > 0 ? curve.curve(movedW, closest) : null };
             },
             faults: exchangerFaults(setting, { hot, cold }, { wantedW, movedW, closest }, limit),
             assumptions: ['Counter-current flow without losses; pressure falls in proportion to the heat.'],

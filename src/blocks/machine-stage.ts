@@ -40,7 +40,9 @@ export function createMachineStage(mixture: Mixture): MachineStage {
   }
 
   function isIdle(stream: StreamState, pressurePa: number): boolean {
-    if (pressurePa !== stream.pressurePa && mixture.total(stream) > 0) return false;
+    // A ratio of 1 but for rounding is no work.
+    const idle = Math.abs(pressurePa - stream.pressurePa) <= 1e-12 * stream.pressurePa;
+    if (!idle && mixture.total(stream) > 0) return false;
     stream.pressurePa = pressurePa;
     return true;
   }

@@ -12,6 +12,7 @@ export function quietReport(said: Partial<BlockReport> = {}): BlockReport {
     warnings: [],
     faults: [],
     assumptions: [],
+    curves: () => ({}),
     ...said,
   };
 }

@@ -6,6 +6,7 @@ import type { GasModel } from '../properties/gas-model.ts';
 import { createGasModel } from '../properties/gas-models.ts';
 import type { IdealGas } from '../properties/ideal-gas.ts';
 import { createIdealGas, enthalpyBasisFor } from '../properties/ideal-gas.ts';
+import { lnVapourPressure, vapourPressureRange } from '../properties/vapour-pressure.ts';
 import type { CarbonActivity } from './carbon-activity.ts';
 import { createCarbonActivity } from './carbon-activity.ts';
 import type { EquilibriumSolver } from './equilibrium.ts';
@@ -109,7 +110,7 @@ export function solveEquilibriumCase(input: EquilibriumCase): EquilibriumCaseRes
     carbon_activity: largest,
     carbon_activities: carbon,
     iterations,
-    assumptions: assumptionsOf(input, basis, T, constants),
+    assumptions: [...assumptionsOf(input, basis, T, constants), ...condensing(input, T, product, gasTotal)],
   };
 }
 
@@ -203,6 +204,20 @@ function noOutlet(inletK: number, where: string): PassTrouble {
   );
 }
 
+/** What would condense at the outlet, by its own vapour pressure: the answer is that of a gas all the same. */
+function condensing(input: EquilibriumCase, T: number, product: Float64Array, gasTotal: number): string[] {
+  return input.components.flatMap((c, i) => {
+    const range = vapourPressureRange(c);
+    if (!range || c.solid || T >= range.toK || gasTotal <= 0) return [];
+    const partialPa = (product[i] / gasTotal) * input.pressurePa;
+    const vapourPa = Math.exp(lnVapourPressure(c, T));
+    if (partialPa <= vapourPa) return [];
+    return [
+      `CAUTION: ${c.id} would condense: its partial pressure of ${(partialPa / 1e5).toPrecision(3)} bar is above its vapour pressure of ${(vapourPa / 1e5).toPrecision(3)} bar, and the figures are those of a gas that does not exist there.`,
+    ];
+  });
+}
+
 function assumptionsOf(
   input: EquilibriumCase,
   basis: 'atct' | 'nasa',
@@ -211,7 +226,7 @@ function assumptionsOf(
 ): string[] {
   const models = { ideal: 'an ideal gas', srk: 'Soave-Redlich-Kwong', pr: 'Peng-Robinson' };
   const said = [
-    `The gas is ${input.gas === 'ideal' ? models.ideal : `described by ${models[input.gas]}`}; nothing condenses.`,
+    `The gas is ${input.gas === 'ideal' ? models.ideal : `described by ${models[input.gas]}`}; taken as a gas throughout.`,
     basis === 'atct'
       ? 'Formation enthalpies are those of the Active Thermochemical Tables where they have them.'
       : 'Formation enthalpies are those of the NASA tables.',

@@ -23,6 +23,13 @@ export const commands: ReadonlyMap<string, CommandEntry> = new Map([
     },
   ],
   [
+    'levers',
+    {
+      summary: 'what one unit more of each setting does to every key figure',
+      load: async () => (await import('./levers.ts')).leversCommand(),
+    },
+  ],
+  [
     'sheet',
     {
       summary: 'close the loop and write its sheet to files (.csv, .md)',

@@ -38,6 +38,15 @@ async function runSheet(file: string, options: SheetCommandOptions): Promise<voi
   const chosen = paths.map((path) => ({ path, renderer: rendererFor(path) }));
   checkOutputs(paths, file);
   const solved = await solve(file, options);
+  if (!solved.result.convergence.converged) {
+    // What does not close is no sheet: a file without that word on it would pass for an answer.
+    if (options.json) printJson(resultJson(solved));
+    else {
+      if (!options.quiet) say(`nothing was written: ${file} did not close`);
+      tellShortfall(solved);
+    }
+    return;
+  }
   const sheetOptions = {
     figureUnits: figureUnits(solved.flowsheet),
     ...(options.table === undefined ? {} : { table: options.table }),

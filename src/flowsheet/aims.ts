@@ -128,7 +128,9 @@ function readUntil(reading: Reading, world: FormulaWorld | null, name: string, p
   if (read === null) return null;
   const single = read.names.length === 1 && read.names[0].length === text.trim().length;
   const target = readTarget(node.text.slice(at + 1), read.names, single);
-  if (!('fault' in target)) return { until: read.formula, target: target.value };
+  if (!('fault' in target)) {
+    return { until: read.formula, target: target.value, wanted: node.text.slice(at + 1).trim() };
+  }
   const lead = node.text.slice(at + 1).search(/\S|$/);
   const { fault } = target;
   findings.error(placeInside(node, at + 1 + lead, node.text.slice(at + 1).trim().length), {

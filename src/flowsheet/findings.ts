@@ -19,6 +19,8 @@ export interface Reading {
 /** Collects the findings of one file. */
 export interface Findings {
   error(where: Place, fault: Fault, also?: Place): void;
+  /** something worth a word that does not stand in the way */
+  warning(where: Place, fault: Fault): void;
   readonly list: readonly Diagnostic[];
 }
 
@@ -33,6 +35,9 @@ export function createFindings(): Findings {
         (d) => d.what === what && d.where.line === where.line && d.where.column === where.column,
       );
       if (!twin) list.push({ code, severity: 'error', where, what, why, mend, ...second });
+    },
+    warning(where, { code, what, why, mend }) {
+      list.push({ code, severity: 'warning', where, what, why, mend });
     },
   };
 }

@@ -6,11 +6,11 @@ import { loadUnitEngine, needsUnitEngine } from '../units/quantity.ts';
 import { readAims } from './aims.ts';
 import { type Declared, type ReadBlock, readBlocks } from './blocks.ts';
 import { checkCases, chosenCase } from './cases.ts';
-import { applyChanges, readSetChanges } from './changes.ts';
+import { applyChanges, type Change, readSetChanges, SET_FILE } from './changes.ts';
 import { readComponents, undeclaredGraphite } from './components.ts';
 import { readFeeds } from './feeds.ts';
 import { readFigures } from './figures.ts';
-import { createFindings, inOrder, type Reading } from './findings.ts';
+import { createFindings, type Fault, inOrder, type Reading } from './findings.ts';
 import { readHeader } from './header.ts';
 import { readLedger } from './ledger.ts';
 import { ledgerDefaults } from './ledger-defaults.ts';
@@ -51,9 +51,10 @@ export async function readFlowsheet(text: string, options: ReadOptions): Promise
   ];
   const root = applyChanges(document.root, changes, findings);
   if ([...scalarsOf(root)].some((scalar) => needsUnitEngine(scalar.text))) await loadUnitEngine();
-  const flowsheet = readTree({ root, findings }, document.root, file, caseName);
+  const flowsheet = readTree({ root, findings }, document.root, file, caseName, changes);
   const diagnostics = inOrder([...document.diagnostics, ...findings.list], file);
-  return { flowsheet: diagnostics.length > 0 ? null : flowsheet, diagnostics };
+  const sound = diagnostics.every((d) => d.severity === 'warning');
+  return { flowsheet: sound ? flowsheet : null, diagnostics };
 }
 
 /** @param written  the file before any change to it */
@@ -62,6 +63,7 @@ function readTree(
   written: YamlNode,
   file: string,
   caseName: string | null,
+  changes: readonly Change[],
 ): Flowsheet | null {
   const { root, findings } = reading;
   if (!isFlowsheet(reading)) return null;
@@ -107,6 +109,10 @@ function readTree(
     solve === null
   )
     return null;
+  for (const { path, pathPlace } of changes) {
+    const aim = aims.find((one) => one.move === path);
+    if (aim) findings.warning(pathPlace, setAndAimed(path, aim.name));
+  }
   return {
     file,
     caseName,
@@ -122,6 +128,9 @@ function readTree(
     figures,
     solve,
     assumptions: [
+      ...changes
+        .filter(({ pathPlace }) => pathPlace.file === SET_FILE)
+        .map(({ path, value }) => `Changed by --set: ${path} = ${changedTo(value)}.`),
       ...(graphite === null ? [] : ['Graphite (C_gr) is carried as a component, for a reaction names it.']),
       ...header.assumptions,
       ...feeds.assumptions,
@@ -129,6 +138,19 @@ function readTree(
     ],
     placeOf: createPlaceOf(root),
   };
+}
+
+function setAndAimed(path: string, aim: string): Fault {
+  return {
+    code: 'set-and-aimed',
+    what: `${path} is set here and moved by the aim ${aim}.`,
+    why: 'the aim finds its value, and what is set here is only where it starts',
+    mend: `to fix ${path}, take the aim out of the file`,
+  };
+}
+
+function changedTo(value: YamlNode): string {
+  return value.kind === 'scalar' ? value.text : 'another value';
 }
 
 /** A mapping with known keys; unknown ones are reported. */

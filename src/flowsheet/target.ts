@@ -97,6 +97,20 @@ function convert(text: string, dimension: Dimension, unitInName: (typeof suffixe
   return { value: result.value * (named ?? formulaUnits[dimension] ?? 1) };
 }
 
+/** Unit of a single name of a formula, '' for a fraction; null where it cannot be told. */
+export function unitOfName(parts: readonly string[]): string | null {
+  const units: Readonly<Partial<Record<Dimension, string>>> = {
+    temperature: 'K',
+    pressure: 'bar',
+    molarFlow: 'kmol/h',
+    massFlow: 'kg/h',
+    power: 'kW',
+    fraction: '',
+  };
+  const dimension = dimensionOf(parts);
+  return dimension === null ? null : (units[dimension] ?? null);
+}
+
 /** What a single name of a formula stands for; null where it cannot be told or has no dimension. */
 function dimensionOf(parts: readonly string[]): Dimension | null {
   const [root, , field] = parts;

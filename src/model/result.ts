@@ -49,6 +49,8 @@ export interface Figures {
   readonly recycle_ratio: number | null;
   readonly inerts: Readonly<Record<string, number>>;
   readonly purge: {
+    /** tags of the streams that count as lost */
+    readonly streams: readonly string[];
     readonly flow_kmol_h: number;
     readonly fraction_of_makeup: number;
     readonly lost_kmol_h: Readonly<Record<string, number>>;
@@ -82,6 +84,8 @@ export interface AimResult {
   readonly value: number;
   readonly unit: string;
   readonly target: number;
+  /** the aim as written: formula = wanted value with its unit */
+  readonly until: string;
   readonly achieved: number;
   readonly note: string | null;
 }

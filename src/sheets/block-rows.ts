@@ -33,9 +33,36 @@ const UNITS: readonly (readonly [ending: string, unit: string])[] = [
   ['_K', 'K'],
 ];
 
-/** The details of one block as `name value unit`; the unit is taken from the ending of the key. */
+/**
+ * The details of one block as `name value unit`, the unit taken from the ending of the key: first what stands alone in
+ * one line, then a line for each bed, level or whatever else there are several of.
+ */
 export function blockDetails(details: Readonly<Record<string, unknown>>): string[] {
-  return flat(details, '', null);
+  const alone: Record<string, unknown> = {};
+  const groups: string[] = [];
+  for (const [key, value] of Object.entries(details)) {
+    const parts = severalParts(key, value);
+    if (parts === null) alone[key] = value;
+    else for (const [name, part] of parts) groups.push(`${name}: ${flat(part, '', null).join(', ')}`);
+  }
+  const first = flat(alone, '', null).join(', ');
+  return first === '' ? groups : [first, ...groups];
+}
+
+/** The parts of a detail that holds several things of one kind, by name; null for any other. */
+function severalParts(key: string, value: unknown): [string, unknown][] | null {
+  const isThing = (part: unknown) => typeof part === 'object' && part !== null && !Array.isArray(part);
+  if (typeof value !== 'object' || value === null) return null;
+  const parts = Object.entries(value);
+  if (parts.length === 0 || parts.length > LONGEST_LIST || !parts.every(([, part]) => isThing(part)))
+    return null;
+  // A map of reactions by component (selectivity) reads better in one line.
+  if (parts.every(([, part]) => Object.values(part).length < 3)) return null;
+  const word = plainText(key).replaceAll('_', ' ').replace(/s$/, '');
+  return parts.map(([name, part], k) => [
+    Array.isArray(value) ? `${word} ${k + 1}` : plainText(name).replace(/(\D)(\d+)$/, '$1 $2'),
+    part,
+  ]);
 }
 
 /** The three closures: heads and one row. */

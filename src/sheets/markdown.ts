@@ -74,7 +74,7 @@ function streamTables(result: Result): string {
 
 function blocks(result: Result): string {
   const [head, ...rows] = blockRows(result);
-  const details = Object.values(result.blocks).map((block) => blockDetails(block.details).join(', '));
+  const details = Object.values(result.blocks).map((block) => blockDetails(block.details).join('; '));
   return table([[...head!, 'details'], ...rows.map((row, index) => [...row, details[index] ?? ''])], 2, 4);
 }
 

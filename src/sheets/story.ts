@@ -103,7 +103,8 @@ function purge(result: Result): StoryLine[] {
   const { purge: lost } = result.figures;
   if (lost === null) return [];
   const heating = lost.lhv_MW > 0 ? `, ${significant(lost.lhv_MW, 4)} MW lower heating value` : '';
-  const head = `${significant(lost.flow_kmol_h)} kmol/h, ${percent(lost.fraction_of_makeup)} of the fresh feed${heating}`;
+  const where = lost.streams.length > 1 ? ` in ${lost.streams.map(plainText).join(' and ')} together` : '';
+  const head = `${significant(lost.flow_kmol_h)} kmol/h${where}, ${percent(lost.fraction_of_makeup)} of the fresh feed${heating}`;
   const parts = Object.entries(lost.lost_kmol_h)
     .filter(([, flow]) => flow > 0)
     .map(([id, flow]) => {

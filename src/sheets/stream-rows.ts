@@ -55,7 +55,8 @@ export function streamRows(result: Result): StreamRow[] {
     massRow(streams),
     numberRow(
       'normal volume, Nm3/h',
-      streams.map((stream) => stream.normal_m3_h),
+      // The trade gives it for gas only.
+      streams.map((stream) => (stream.phase === 'gas' ? stream.normal_m3_h : null)),
       0,
       2,
     ),
@@ -91,15 +92,22 @@ function endRows(head: string, ends: readonly string[]): StreamRow[] {
   return ports.every((port) => port === '') ? [blocks] : [blocks, textRow('  port', ports)];
 }
 
+/** A row of numbers with the same decimals; null leaves its cell empty. */
 function numberRow(
   head: string,
-  values: readonly number[],
+  values: readonly (number | null)[],
   least: number,
   most: number,
   digits = 6,
 ): StreamRow {
-  const decimals = decimalsFor(values, digits, least, most);
-  return { head, cells: values.map((value) => fixed(value, decimals, noiseOf(values))), section: false };
+  const numbers = values.filter((value) => value !== null);
+  const decimals = decimalsFor(numbers, digits, least, most);
+  const noise = noiseOf(numbers);
+  return {
+    head,
+    cells: values.map((value) => (value === null ? '' : fixed(value, decimals, noise))),
+    section: false,
+  };
 }
 
 function vapourFraction(streams: readonly StreamResult[]): StreamRow[] {

@@ -56,8 +56,16 @@ function title(result: Result, options: SheetOptions): string[] {
     paint.head(name),
     '='.repeat(Math.min(WIDTH, [...name].length)),
     `case: ${result.case === null ? 'as in the file' : plainText(result.case)}`,
+    ...changedLines(result),
     result.convergence.converged ? closing : paint.alarm(closing),
   ];
+}
+
+/** What was changed on the command line, in the head: a sheet must tell what it is a sheet of. */
+function changedLines(result: Result): string[] {
+  return result.assumptions
+    .filter((text) => text.startsWith('Changed by --set'))
+    .flatMap((text) => wrapped(plainText(text.replace('Changed by --set', 'changed')), WIDTH));
 }
 
 function storyLines(result: Result, options: SheetOptions): string[] {
@@ -75,7 +83,7 @@ function aimLines(result: Result): string[] {
     const value = settingText(aim.setting, aim.value, aim.unit);
     const text =
       `${plainText(name)}: ${aim.reached ? 'reached' : 'NOT REACHED'} with ${plainText(aim.setting)} = ${value}; ` +
-      `wanted ${significant(aim.target)}, got ${significant(aim.achieved)}` +
+      `until ${plainText(aim.until)}; got ${significant(aim.achieved)} for ${significant(aim.target)}` +
       (aim.note === null ? '' : `; ${plainText(aim.note)}`);
     return wrapped(text, WIDTH, '  ', '    ');
   });
@@ -113,8 +121,8 @@ function blockLines(result: Result): string[] {
   return [
     head ?? '',
     ...rows.flatMap((row, index) => {
-      const details = blockDetails(blocks[index]!.details).join(', ');
-      return details === '' ? [row] : [row, ...wrapped(details, WIDTH, '      ', '      ')];
+      const details = blockDetails(blocks[index].details);
+      return [row, ...details.flatMap((line) => wrapped(line, WIDTH, '      ', '        '))];
     }),
   ];
 }

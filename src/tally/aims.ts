@@ -6,7 +6,7 @@ import { type CloseOptions, closePlant, type PlantClosure } from './close-plant.
 import type { Plant } from './plant.ts';
 import { scopeOf } from './tally.ts';
 
-/** A figure meets its target within this share of the target's size. */
+/** A figure meets its target within this share of the size of the target, or of the figure's first value. */
 const TOLERANCE = 1e-8;
 
 /**
@@ -20,6 +20,8 @@ export function closeWithAims(
   const { aims } = plant.flowsheet;
   let warm = false;
   let closure = closePlant(plant, options);
+  // A target of zero has no size of its own: the figure's first value gives it one.
+  let sizes: number[] | null = null;
   const closeAt = (settings: Float64Array): PlantClosure => {
     aims.forEach((aim, a) => {
       plant.set(aim.move, settings[a]);
@@ -35,7 +37,9 @@ export function closeWithAims(
       const tried = closeAt(settings);
       if (!tried.converged) throw tried.failure?.trouble ?? notClosed();
       const scope = scopeOf(plant);
-      return Float64Array.from(aims, (aim) => (aim.until.evaluate(scope) - aim.target) / sizeOf(aim));
+      const found = aims.map((aim) => aim.until.evaluate(scope));
+      sizes ??= aims.map((aim, a) => Math.max(Math.abs(aim.target), Math.abs(found[a])) || 1);
+      return Float64Array.from(aims, (aim, a) => (found[a] - aim.target) / sizes![a]);
     },
     Float64Array.from(aims, (aim) => plant.get(aim.move) ?? 0.5 * (aim.between[0] + aim.between[1])),
     Float64Array.from(aims, (aim) => aim.between[0]),
@@ -55,16 +59,13 @@ export function closeWithAims(
           value: outcome.values[a],
           unit: aim.unit,
           target: aim.target,
+          until: aim.until.text === '' ? '' : `${aim.until.text} = ${aim.wanted}`,
           achieved: scope ? aim.until.evaluate(scope) : Number.NaN,
           note: noteOf(outcome, a, aims),
         },
       ]),
     ),
   };
-}
-
-function sizeOf(aim: Aim): number {
-  return aim.target === 0 ? 1 : Math.abs(aim.target);
 }
 
 /** Why an aim was not reached, in one sentence; null when it was. */

@@ -7,6 +7,7 @@ import { type CloseOptions, closePlant } from './close-plant.ts';
 import { diagnose, faultDiagnostics } from './diagnosis.ts';
 import { trappedComponents } from './exits.ts';
 import { createPlant, type Plant } from './plant.ts';
+import { reportsOf } from './reports.ts';
 import { tally } from './tally.ts';
 
 export interface BalanceOptions {
@@ -14,6 +15,8 @@ export interface BalanceOptions {
   readonly method?: MethodName;
   readonly tolerance?: number;
   readonly maxPasses?: number;
+  /** false leaves the plot-ready curves out of the details of the blocks (the printed sheets show none) */
+  readonly curves?: boolean;
 }
 
 export interface Balance {
@@ -46,8 +49,10 @@ export function balancePlant(plant: Plant, options: BalanceOptions = {}): Balanc
     flowsheet.aims.length === 0
       ? { closure: closePlant(plant, close), aims: {} }
       : closeWithAims(plant, close);
-  if (!closure.converged) return { result: tally(plant, closure, aims), diagnosis: diagnose(plant, closure) };
+  const reports = reportsOf(plant);
+  const read = { aims, reports, curves: options.curves ?? true };
+  if (!closure.converged) return { result: tally(plant, closure, read), diagnosis: diagnose(plant, closure) };
   // Streams that agree with one another are no answer where a block could not do as it was told.
-  const [fault = null] = faultDiagnostics(plant);
-  return { result: tally(plant, { ...closure, converged: fault === null }, aims), diagnosis: fault };
+  const [fault = null] = faultDiagnostics(plant, reports);
+  return { result: tally(plant, { ...closure, converged: fault === null }, read), diagnosis: fault };
 }

@@ -1,7 +1,9 @@
+import type { BlockReport } from '../blocks/block.ts';
 import { diagnose as readTrend } from '../convergence/diagnosis.ts';
+import type { Closure } from '../convergence/driver.ts';
 import type { Diagnostic, PassTrouble } from '../diagnostics/diagnostic.ts';
 import type { PlantClosure } from './close-plant.ts';
-import type { Plant } from './plant.ts';
+import type { Group, Plant } from './plant.ts';
 
 /** Say why a plant did not close: the block that cannot be evaluated, or the worst variable and its trend. */
 export function diagnose(plant: Plant, closure: PlantClosure): Diagnostic {
@@ -13,7 +15,10 @@ export function diagnose(plant: Plant, closure: PlantClosure): Diagnostic {
   const reading = readTrend(failure.closure ?? { history: [] }, plant.flowsheet.solve.tolerance);
   const variable = failure.names[reading.worst] ?? `${tag} as a whole`;
   const size = closure.residual.toExponential(1);
-  const advice = adviceOn(reading, variable, plant);
+  const advice =
+    runawayAdvice(plant, failure.group) ??
+    limitAdvice(closure, failure.closure?.reason) ??
+    adviceOn(reading, variable, plant);
   return {
     code: 'not-closed',
     severity: 'error',
@@ -25,9 +30,9 @@ export function diagnose(plant: Plant, closure: PlantClosure): Diagnostic {
 }
 
 /** What keeps the blocks of a plant whose streams have closed from doing what their settings ask for. */
-export function faultDiagnostics(plant: Plant): Diagnostic[] {
-  return plant.units.flatMap((unit, b) =>
-    unit.report(plant.inlets[b], plant.outlets[b]).faults.map(({ code, path = [], what, why, mend }) => ({
+export function faultDiagnostics(plant: Plant, reports: readonly BlockReport[]): Diagnostic[] {
+  return reports.flatMap(({ faults }, b) =>
+    faults.map(({ code, path = [], what, why, mend }) => ({
       code,
       severity: 'error' as const,
       where: plant.flowsheet.placeOf(['blocks', plant.blocks[b].name, ...path].join('.')),
@@ -36,6 +41,41 @@ export function faultDiagnostics(plant: Plant): Diagnostic[] {
       mend,
     })),
   );
+}
+
+/** A recycle this many times the feed has run away rather than not yet closed. */
+const RUNAWAY = 1000;
+
+/** A recycle grown out of all proportion: what piles up in it has too small a way out. */
+function runawayAdvice(plant: Plant, group: Group): Advice | null {
+  const sum = (flows: Float64Array) => flows.reduce((all, flow) => all + flow, 0);
+  const fed = plant.enters.reduce((all, s) => all + sum(plant.streams[s].flowsMolPerS), 0);
+  const largest = group.tears
+    .map((s) => plant.seen[s].flowsMolPerS)
+    .reduce((most, flows) => (sum(flows) > sum(most) ? flows : most));
+  if (!(fed > 0) || !(sum(largest) > RUNAWAY * fed)) return null;
+  const piling = plant.mixture.components
+    .map((c, i) => ({ id: c.id, share: largest[i] / sum(largest) }))
+    .filter(({ share }) => share > 0.02)
+    .sort((a, b) => b.share - a.share)
+    .map(({ id, share }) => `${id} ${(100 * share).toFixed(0)} %`);
+  return {
+    why: `the recycle has grown to ${(sum(largest) * 3.6).toPrecision(3)} kmol/h, ${(sum(largest) / fed).toPrecision(3)} times the feed: ${piling.join(', ')} of it pile up, for they leave the loop more slowly than they enter`,
+    mend: 'give them a way out: a purge (a splitter in the recycle) or a larger one, a feed with less of them, or a feed closer to the stoichiometric ratio',
+  };
+}
+
+function limitAdvice(closure: PlantClosure, reason: Closure['reason'] | undefined): Advice | null {
+  if (reason !== 'max-passes' || closure.passes > 25) return null;
+  return {
+    why: `it was stopped after the ${closure.passes} passes that were allowed`,
+    mend: 'raise --max-passes (or solve: max_passes in the file)',
+  };
+}
+
+interface Advice {
+  readonly why: string;
+  readonly mend: string;
 }
 
 function adviceOn(

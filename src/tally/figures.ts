@@ -80,13 +80,26 @@ function overallYield(plant: Plant, { entering }: Tallied): Figures['overall_yie
   if (!product || !reactant) return null;
   const p = index(plant, product.component);
   const r = index(plant, reactant);
-  const reaction = plant.flowsheet.reactions.find(
-    (one) => one.coefficients[p] > 0 && one.coefficients[r] < 0,
-  );
+  const reaction = yieldReaction(plant, p, r);
   if (!reaction || entering[r] === 0) return null;
   const possible = (entering[r] * reaction.coefficients[p]) / -reaction.coefficients[r];
   const made = state(plant, product.stream).flowsMolPerS[p] - entering[p];
   return { product: product.component, reactant, value: made / possible };
+}
+
+/**
+ * The reaction that says how much product a key reactant can make: of those that turn the one into the other, the one
+ * that makes most of it, so that the order in which they are written does not matter.
+ */
+export function yieldReaction(plant: Plant, product: number, reactant: number): Reaction | null {
+  const share = ({ coefficients }: Reaction) => coefficients[product] / -coefficients[reactant];
+  const fitting = plant.flowsheet.reactions.filter(
+    ({ coefficients }) => coefficients[product] > 0 && coefficients[reactant] < 0,
+  );
+  return fitting.reduce<Reaction | null>(
+    (best, one) => (best === null || share(one) > share(best) ? one : best),
+    null,
+  );
 }
 
 /** Mass of the product component in the product stream [t/d]. */
@@ -124,6 +137,7 @@ function purge(plant: Plant, { entering }: Tallied): Figures['purge'] {
   }
   const everything = idsWhere(plant, () => true);
   return {
+    streams: tags,
     flow_kmol_h: sumOf(lost) * KMOL_H,
     fraction_of_makeup: sumOf(lost) / sumOf(entering),
     lost_kmol_h: Object.fromEntries(everything.map(([id, i]) => [id, lost[i] * KMOL_H])),

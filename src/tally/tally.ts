@@ -5,24 +5,30 @@ import type { PlantClosure } from './close-plant.ts';
 import { keyFigures } from './figures.ts';
 import { closures, count, ledger } from './ledger.ts';
 import type { Plant } from './plant.ts';
+import { reportsOf } from './reports.ts';
 import { formulaScope } from './scope.ts';
 import { streamResults } from './stream-results.ts';
 
 /** A closure worse than this is said aloud. */
 const CLOSED = 1e-9;
 
+export interface TallyOptions {
+  readonly aims?: Readonly<Record<string, AimResult>>;
+  /** what the blocks say, when that has been asked already */
+  readonly reports?: readonly BlockReport[];
+  /** false leaves the plot-ready curves out of the details of the blocks; true when left out */
+  readonly curves?: boolean;
+}
+
 /** Read a plant out into the result contract. Every number is taken from the streams of the last pass. */
-export function tally(
-  plant: Plant,
-  closure: PlantClosure,
-  aims: Readonly<Record<string, AimResult>> = {},
-): Result {
+export function tally(plant: Plant, closure: PlantClosure, options: TallyOptions = {}): Result {
   const { flowsheet } = plant;
-  const reports = plant.units.map((unit, b) => unit.report(plant.inlets[b], plant.outlets[b]));
+  const { aims = {}, reports = reportsOf(plant), curves = true } = options;
   const tallied = count(plant);
   const streams = streamResults(plant);
   const blocks = blockResults(plant, reports);
   const plain = keyFigures(plant, tallied, reports);
+  if (curves) addCurves(plant, blocks, reports);
   const figures = { ...plain, user: userFigures(plant, streams, blocks, plain) };
   const closed = closures(plant, tallied, reports);
   return {
@@ -43,14 +49,14 @@ export function tally(
     ledger: ledger(plant, tallied),
     closure: closed,
     aims,
-    warnings: [...blockWarnings(plant, reports), ...closureWarnings(closed)],
+    warnings: [...blockWarnings(plant, reports), ...yieldWarnings(figures), ...closureWarnings(closed)],
     assumptions: assumptionsOf(plant, reports),
   };
 }
 
 /** The figures of the plant as it stands, the user's own included. */
 export function figuresOf(plant: Plant): Figures {
-  const reports = plant.units.map((unit, b) => unit.report(plant.inlets[b], plant.outlets[b]));
+  const reports = reportsOf(plant);
   const plain = keyFigures(plant, count(plant), reports);
   const user = userFigures(plant, streamResults(plant), blockResults(plant, reports), plain);
   return { ...plain, user };
@@ -58,7 +64,7 @@ export function figuresOf(plant: Plant): Figures {
 
 /** The scope in which the user's formulas are evaluated on the plant as it stands. */
 export function scopeOf(plant: Plant): Record<string, unknown> {
-  const reports = plant.units.map((unit, b) => unit.report(plant.inlets[b], plant.outlets[b]));
+  const reports = reportsOf(plant);
   const figures = keyFigures(plant, count(plant), reports);
   return formulaScope(streamResults(plant), blockResults(plant, reports), figures, molarMasses(plant));
 }
@@ -75,6 +81,12 @@ function blockResults(plant: Plant, reports: readonly BlockReport[]): Record<str
       },
     ]),
   );
+}
+
+function addCurves(plant: Plant, blocks: Record<string, BlockResult>, reports: readonly BlockReport[]): void {
+  plant.blocks.forEach(({ name }, b) => {
+    blocks[name] = { ...blocks[name], details: { ...blocks[name].details, ...reports[b].curves() } };
+  });
 }
 
 function userFigures(
@@ -107,6 +119,18 @@ function blockWarnings(plant: Plant, reports: readonly BlockReport[]): Warning[]
   );
 }
 
+/** A yield above one is no error: product has come from something else than the key reactant too. */
+function yieldWarnings({ overall_yield: overall }: Figures): Warning[] {
+  if (overall === null || overall.value <= 1 + 1e-9) return [];
+  return [
+    {
+      code: 'yield-above-one',
+      where: 'ledger',
+      message: `the yield of ${overall.product} per ${overall.reactant} is ${(100 * overall.value).toFixed(2)} %: part of it came from another feed or by another reaction than the one the yield refers to; name another key reactant under ledger`,
+    },
+  ];
+}
+
 function closureWarnings(closed: Result['closure']): Warning[] {
   const all: [string, number][] = [
     ['mass', closed.mass],
@@ -118,6 +142,11 @@ function closureWarnings(closed: Result['closure']): Warning[] {
     .map(([what, value]) => ({
       code: 'balance-open',
       where: 'battery limit',
-      message: `the balance of ${what} is open by ${value.toExponential(1)} of what enters`,
+      message: `the balance of ${what} is open by ${percentOf(value)} of what enters`,
     }));
+}
+
+function percentOf(share: number): string {
+  const size = Math.abs(share);
+  return size >= 1e-4 ? `${(100 * size).toPrecision(3)} %` : size.toExponential(1);
 }

@@ -34,7 +34,7 @@ export interface FaultParams {
  * code, what, why and mend.
  */
 export function quantity(dimension: Dimension, options: QuantityOptions = {}): QuantitySchema {
-  return z
+  const schema = z
     .unknown()
     .meta(jsonSchemaOf(dimension, options))
     .transform((raw, context) => {
@@ -43,6 +43,16 @@ export function quantity(dimension: Dimension, options: QuantityOptions = {}): Q
       context.issues.push(issueOf(result, raw));
       return z.NEVER;
     });
+  dimensionOf.set(schema, dimension);
+  return schema;
+}
+
+/** What the quantity schemas stand for. */
+const dimensionOf = new WeakMap<object, Dimension>();
+
+/** The dimension of a schema made by `quantity`, `fraction` or `plainNumber`; undefined for any other. */
+export function dimensionOfSchema(schema: object): Dimension | undefined {
+  return dimensionOf.get(schema);
 }
 
 /** Schema of a fraction, 0 to 1 unless said otherwise; `3 %` and `0.03` mean the same. */

@@ -235,7 +235,7 @@ test('a polytropic efficiency takes more work than the same as isentropic, and s
   const cut = run({ ratio: 8, stages: 4, polytropic_efficiency: '80 %' });
   // Of an ideal gas to rounding; in a real one the formula's mean temperature is 0.13 % off at this ratio of 8.
   expectClose(cut.report.powerW, whole.report.powerW, 2e-3 * whole.report.powerW);
-  expect(whole.report.assumptions).toEqual([]);
+  expect(whole.report.assumptions).toEqual(['Power is that of the shaft: no drive efficiency is given.']);
   expect(
     faultsOf('compressor', { ratio: 2, efficiency: '80 %', polytropic_efficiency: '80 %' })[0]?.code,
   ).toBe('too-many-settings');
@@ -258,11 +258,13 @@ test('a hot discharge and liquid at a suction are worth a word', () => {
   ]);
 });
 
-test('an efficiency not given is 75 %, and the report says so', () => {
+test('efficiencies not given are filled in, and the report says so', () => {
   expect(run({ ratio: 2 }).report.assumptions).toEqual([
     'Isentropic efficiency 75 % (common practice; none given).',
+    'Power is that of the shaft: no drive efficiency is given.',
   ]);
-  expect(run({ ratio: 2, efficiency: '75 %' }).report.assumptions).toEqual([]);
+  const given = run({ ratio: 2, efficiency: '75 %', drive_efficiency: '97 %' });
+  expect(given.report.assumptions).toEqual([]);
 });
 
 test('it cannot lower the pressure, and a ratio below 1 is turned down', () => {

@@ -112,7 +112,7 @@ describe('beds of a sulphur dioxide converter', () => {
   });
 
   test('the operating line runs from bed inlet to bed outlet, and the equilibrium line is met at each outlet', () => {
-    const { operating_line, equilibrium_line, lines_of } = four.report.details as {
+    const { operating_line, equilibrium_line, lines_of } = four.report.curves() as {
       operating_line: readonly Point[];
       equilibrium_line: readonly Point[];
       lines_of: string;
@@ -228,7 +228,7 @@ describe('a quench converter', () => {
     const { report, outlets } = run();
     const { bed1, bed2, bed3 } = bedsOf(report.details);
     expectClose(bed3!.conversion['N2']!, 1 - flowOf(outlets[0]!, mixture, 'N2') / 22, 1e-12);
-    const points = report.details['operating_line'] as readonly Point[];
+    const points = report.curves()['operating_line'] as readonly Point[];
     const startOfBed2 = points.find((point) => point.bed === 2)!;
     expectClose(startOfBed2.conversion, (bed1!.conversion['N2']! * 0.6) / 0.82, 1e-9);
     expect(bed2!.conversion['N2']!).toBeGreaterThan(startOfBed2.conversion);

@@ -38,7 +38,7 @@ interface Details {
     readonly cold_K: number[];
   } | null;
 }
-const detailsOf = (t: Trial) => t.report.details as unknown as Details;
+const detailsOf = (t: Trial) => ({ ...t.report.details, ...t.report.curves() }) as unknown as Details;
 
 /**
  * The closest approach by brute force: both streams settled at each of many shares of the heat, straight from

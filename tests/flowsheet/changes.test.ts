@@ -149,3 +149,24 @@ test('an unknown case is refused with the nearest name', async () => {
   expect(message).toContain('There is no case "cold condensor".');
   expect(message).toContain("mend: write --case 'cold condenser'");
 });
+
+test('a set value that an aim moves anyway is warned of, and the file is still read', async () => {
+  const set = ['purge.fractions.bleed=5 %'];
+  const { flowsheet, diagnostics } = await readFlowsheet(text, { file: 'ammonia.yaml', set });
+  expect(flowsheet).not.toBeNull();
+  expect(diagnostics.map(({ code, severity, what }) => ({ code, severity, what }))).toEqual([
+    {
+      code: 'set-and-aimed',
+      severity: 'warning',
+      what: 'purge.fractions.bleed is set here and moved by the aim inert cap.',
+    },
+  ]);
+});
+
+test('what --set changed is told among the assumptions', async () => {
+  const { flowsheet } = await readFlowsheet(text, {
+    file: 'ammonia.yaml',
+    set: ['condenser.temperature=-20 degC'],
+  });
+  expect(flowsheet?.assumptions).toContain('Changed by --set: condenser.temperature = -20 degC.');
+});

@@ -138,6 +138,7 @@ export const exampleResult: Result = {
     recycle_ratio: 2.66124,
     inerts: { converter: 0.10553 },
     purge: {
+      streams: ['S6'],
       flow_kmol_h: 40.5,
       fraction_of_makeup: 0.00623,
       lost_kmol_h: { H2: 24.4, N2: 8.9, NH3: 1.6, Ar: 5.6 },
@@ -163,6 +164,7 @@ export const exampleResult: Result = {
       value: 0.00251,
       unit: '',
       target: 12,
+      until: 'streams.S2.y.Ar = 12',
       achieved: 12.0000001,
       note: null,
     },
@@ -172,6 +174,7 @@ export const exampleResult: Result = {
       value: 233.15,
       unit: 'K',
       target: 0.999,
+      until: 'streams.S2.y.Ar = 0.999',
       achieved: 0.9958,
       note: 'the bound of -40 degC is in the way',
     },

@@ -153,16 +153,25 @@ describe('details of a block', () => {
         nothing: null,
       }),
     ).toEqual([
-      'outlet temperature 0 degC',
-      'approach synthesis 10.000 K',
-      'heat of reaction -42000 kW',
-      'carbon activity 0.5123',
-      'stages 2',
-      'ln K synthesis -9.797',
-      'temperature rise 0.040000 K',
-      'carbon at inlet 1.24e+8',
-      'power 0 100.00 kW',
-      'adiabatic yes',
+      'outlet temperature 0 degC, approach synthesis 10.000 K, heat of reaction -42000 kW, ' +
+        'carbon activity 0.5123, stages 2, ln K synthesis -9.797, temperature rise 0.040000 K, ' +
+        'carbon at inlet 1.24e+8, power 0 100.00 kW, adiabatic yes',
+    ]);
+  });
+
+  test('give a line to each of several beds or levels, counted from 1', () => {
+    const level = (K: number, kW: number) => ({ evaporator_K: K, duty_kW: kW, power_kW: kW / 4 });
+    expect(
+      blockDetails({
+        condensed_kmol_h: 10,
+        levels: [level(283.15, 100), level(263.15, 200)],
+        beds: { bed1: { inlet_K: 673.15, outlet_K: 773.15, outlet_bar: 180 } },
+      }),
+    ).toEqual([
+      'condensed 10.000 kmol/h',
+      'level 1: evaporator 10.00 degC, duty 100.00 kW, power 25.000 kW',
+      'level 2: evaporator -10.00 degC, duty 200.00 kW, power 50.000 kW',
+      'bed 1: inlet 400.00 degC, outlet 500.00 degC, outlet 180.00 bar',
     ]);
   });
 });

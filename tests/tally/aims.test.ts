@@ -49,3 +49,13 @@ test('an aim out of reach ends at the bound that stands in the way, and says so'
   expect(aim.note).toMatch(/bound of condenser.temperature/);
   expect(aim.achieved).toBeLessThan(0.995);
 });
+
+test('an aim of zero is reached: a converter duty that comes to nothing', async () => {
+  const text = shippedText('ammonia-loop.yaml').replace('adiabatic: true', 'temperature: 470 degC');
+  const aim =
+    'aims:\n  autothermal: {move: converter.temperature, between: [420 degC, 520 degC], until: blocks.converter.duty = 0 kW}\n';
+  const { result } = balance(await read(`${text}\n${aim}`));
+  expect(result.aims['autothermal']).toMatchObject({ reached: true, until: 'blocks.converter.duty = 0 kW' });
+  const adiabatic = balance(await read(shippedText('ammonia-loop.yaml'))).result;
+  expect(result.streams['S5'].temperature_K).toBeCloseTo(adiabatic.streams['S5'].temperature_K, 3);
+});

@@ -55,3 +55,18 @@ test.each([
 ])('%s is enough of a way out', async (_, change) => {
   expect(planFlowsheet(await read(loop(change))).diagnostics).toEqual([]);
 });
+
+test('a recycle that runs away is told as such, with what piles up in it', async () => {
+  const { result, diagnosis } = balance(
+    await read(loop({ dissolved: true, makeup: 'H2: 75, N2: 25, Ar: 3' })),
+  );
+  expect(result.convergence.converged).toBe(false);
+  expect(diagnosis?.why).toMatch(/times the feed: Ar \d+ %.* pile up/);
+  expect(diagnosis?.mend).toMatch(/^give them a way out: a purge/);
+});
+
+test('a trace of inert finds its way out with the dissolved gas alone', async () => {
+  const { result } = balance(await read(loop({ dissolved: true })));
+  expect(result.convergence.converged).toBe(true);
+  expect(Math.abs(result.ledger['Ar'].closure)).toBeLessThan(1e-9);
+});

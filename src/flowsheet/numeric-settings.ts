@@ -1,0 +1,106 @@
+import { z } from 'zod';
+import { blockKinds } from '../blocks/registry.ts';
+import type { BlockSpec, Feed, Flowsheet } from '../model/flowsheet.ts';
+import { type Dimension, dimensions } from '../units/dimension.ts';
+import { dimensionOfSchema } from '../units/schema.ts';
+import { unitFactor } from '../units/unit-table.ts';
+
+/** A setting that is one number and has a value, e.g. `condenser.temperature`. */
+export interface NumericSetting {
+  readonly path: string;
+  readonly dimension: Dimension;
+  /** SI; a flow in mol/s, kg/s or normal m3/s as the file counts it; a part of a composition as written */
+  readonly value: number;
+  /** SI in one natural unit: 1 K, 1e5 Pa, 0.01 of a fraction; of a composition a hundredth of all its parts */
+  readonly unitSI: number;
+  /** the natural unit: K, bar, %, kmol/h, ... */
+  readonly unit: string;
+}
+
+/**
+ * Every setting of blocks and feeds that is a number with a value, in the order of the file. Counts (stages)
+ * and settings left to their defaults are none of them.
+ */
+export function numericSettings(flowsheet: Flowsheet): readonly NumericSetting[] {
+  const ids = flowsheet.components.map((c) => c.id);
+  return [
+    ...flowsheet.feeds.flatMap((feed) => ofFeed(feed, ids)),
+    ...flowsheet.blocks.flatMap((block) => ofBlock(block)),
+  ];
+}
+
+function ofFeed({ name, flow, parts, temperatureK, pressurePa }: Feed, ids: readonly string[]) {
+  const sum = parts.reduce((all, part) => all + part, 0);
+  const shares = ids.flatMap((id, i): NumericSetting[] => {
+    if (parts[i] === 0) return [];
+    if (flow === null) return [setting(`${name}.flows.${id}`, 'molarFlow', parts[i])];
+    return [{ ...setting(`${name}.composition.${id}`, 'fraction', parts[i]), unitSI: 0.01 * sum }];
+  });
+  return [
+    ...(flow === null ? [] : [setting(`${name}.flow`, flowDimensions[flow.per], flow.value)]),
+    setting(`${name}.temperature`, 'temperature', temperatureK),
+    setting(`${name}.pressure`, 'pressure', pressurePa),
+    ...shares,
+  ];
+}
+
+function ofBlock({ name, kind, settings }: BlockSpec): NumericSetting[] {
+  return within(name, settings, blockKinds.get(kind)!.settings);
+}
+
+function within(path: string, value: unknown, schema: z.ZodType): NumericSetting[] {
+  if (typeof value === 'number') {
+    const dimension = leafDimension(schema);
+    return dimension === undefined ? [] : [setting(path, dimension, value)];
+  }
+  if (typeof value !== 'object' || value === null) return [];
+  if (isFlow(value)) return [setting(path, flowDimensions[value.per], value.value)];
+  return Object.entries(value).flatMap(([key, part]) => {
+    const inner = child(schema, key);
+    return inner === undefined ? [] : within(`${path}.${key}`, part, inner);
+  });
+}
+
+function leafDimension(schema: z.ZodType): Dimension | undefined {
+  for (const one of alternatives(schema)) {
+    const dimension = dimensionOfSchema(one);
+    if (dimension !== undefined) return dimension;
+  }
+  return undefined;
+}
+
+function child(schema: z.ZodType, key: string): z.ZodType | undefined {
+  for (const one of alternatives(schema)) {
+    if (one instanceof z.ZodObject && key in one.shape) return one.shape[key];
+    if (one instanceof z.ZodRecord) return one.valueType as z.ZodType;
+    if (one instanceof z.ZodArray) return one.element as z.ZodType;
+  }
+  return undefined;
+}
+
+/** What a schema may stand for once optional, default and union wrappings are taken off. */
+function alternatives(schema: z.ZodType): z.ZodType[] {
+  if (schema instanceof z.ZodOptional || schema instanceof z.ZodNullable || schema instanceof z.ZodDefault)
+    return alternatives(schema.def.innerType as z.ZodType);
+  if (schema instanceof z.ZodUnion)
+    return schema.options.flatMap((option) => alternatives(option as z.ZodType));
+  if (schema instanceof z.ZodPipe && dimensionOfSchema(schema) === undefined)
+    return alternatives(schema.def.in as z.ZodType);
+  return [schema];
+}
+
+function setting(path: string, dimension: Dimension, value: number): NumericSetting {
+  const { shown } = dimensions[dimension];
+  const unit = dimension === 'temperature' ? 'K' : shown || '1';
+  return { path, dimension, value, unit, unitSI: unitFactor(shown, dimension)?.factor ?? 1 };
+}
+
+const flowDimensions = {
+  molar: 'molarFlow',
+  mass: 'massFlow',
+  normalVolume: 'normalVolumeFlow',
+} as const;
+
+function isFlow(value: object): value is { value: number; per: keyof typeof flowDimensions } {
+  return 'per' in value && 'value' in value && typeof value.value === 'number';
+}
