@@ -343,7 +343,8 @@ describe.each(cases)(
           };
           const [first, second] = [run(), run()];
           expect(second.outlets).toEqual(first.outlets);
-          expect(second.report).toEqual(first.report);
+          const said = ({ report }: typeof first) => ({ ...report, curves: report.curves() });
+          expect(said(second)).toEqual(said(first));
         }),
         { numRuns: 10 },
       );
