@@ -21,7 +21,8 @@ export interface PhaseSplit {
 
 /**
  * Phase split by successive substitution in ln K = ln(f/x)_liquid − ln(φ P), with tests for a single phase
- * first. The last K values are kept: a neighbouring state starts from them.
+ * first. It always starts from the first drop, never from the last state: near a critical point two answers may both
+ * hold, and which one is given must not depend on what was asked before.
  *
  * A cubic equation has no gas to offer for the composition of a compressed liquid: its only root is then its
  * own liquid, a few per cent off this one in fugacity, and to compare the two would be to toss a coin. Such a
@@ -36,9 +37,7 @@ export function createPhaseSplit(gas: GasModel, liquidPhase: LiquidPhase): Phase
   const drop = new Float64Array(size);
   const lnPhi = new Float64Array(size);
   const lnLiquid = new Float64Array(size);
-  const lnKKept = new Float64Array(size);
   const change = new Float64Array(size);
-  let kept = false;
 
   return {
     split(T, P, flows, liquid) {
@@ -46,18 +45,14 @@ export function createPhaseSplit(gas: GasModel, liquidPhase: LiquidPhase): Phase
       putAllInGas(flows, liquidPhase.roles, liquid);
       if (total === 0 || !liquidPhase.mayForm(T, z)) return 1;
       liquidPhase.at(T, P);
-      const wasKept = kept;
       const maybeGas = !gas.isLiquidLike(T, P, z);
-      kept = false;
       if (gasIsStable(T, P, maybeGas)) return 1;
-      if (!(wasKept && partsFromKept(T, P))) {
-        if (liquidIsStable(T, P)) {
-          liquid.set(flows);
-          return 0;
-        }
-        startFromDrop();
-        if (!substitution.run(T, P)) throw unsettled(T, P);
+      if (liquidIsStable(T, P)) {
+        liquid.set(flows);
+        return 0;
       }
+      startFromDrop();
+      if (!substitution.run(T, P)) throw unsettled(T, P);
       // Two phases that have become one: it is a liquid where its density says so.
       const { V, L } = share;
       if (V <= 0 || (L <= 0 && !maybeGas && liquidHoldsAll(T))) {
@@ -65,26 +60,12 @@ export function createPhaseSplit(gas: GasModel, liquidPhase: LiquidPhase): Phase
         return 0;
       }
       if (L <= 0 || !liquidPhase.isLiquid(T, x)) return 1;
-      lnKKept.set(lnK);
-      kept = true;
       for (let i = 0; i < size; i++) {
         if (liquidPhase.roles[i] !== 'solid') liquid[i] = Math.min(L * total * x[i], flows[i]);
       }
       return V;
     },
   };
-
-  /** Two phases from the K values of the last state? */
-  function partsFromKept(T: number, P: number): boolean {
-    lnK.set(lnKKept);
-    return (
-      substitution.run(T, P) &&
-      share.V > 0 &&
-      share.L > 0 &&
-      liquidPhase.isLiquid(T, x) &&
-      !gas.isLiquidLike(T, P, y)
-    );
-  }
 
   /** Would the first drop of liquid evaporate from the gas of composition z? Leaves it in `drop`, not normalised. */
   function gasIsStable(T: number, P: number, maybeGas: boolean): boolean {
