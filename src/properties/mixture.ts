@@ -134,6 +134,8 @@ export function createMixture(spec: MixtureSpec): Mixture {
     let sum = 0;
     for (let i = 0; i < size; i++) {
       if (roles[i] === 'solid' || liquid[i] <= 0) continue;
+      // A trace of a gas that does not dissolve (phase-split.ts) has no fugacity in the liquid and no weight.
+      if (lnLiquid[i] === Number.POSITIVE_INFINITY) continue;
       const lnActivity = lnLiquid[i] + Math.log(liquid[i] / total / STANDARD_PRESSURE_PA);
       sum += liquid[i] * (excess[i] / T - R * lnActivity);
     }

@@ -7,6 +7,9 @@ import { createSubstitution, SWING } from './phase-substitution.ts';
 /** Rounds after which the first drop or bubble has its composition well enough to tell which way it goes. */
 const MAX_ROUNDS = 50;
 
+/** A gas that does not dissolve makes no bubble below this mole fraction: the bubble would be rounding. */
+const NO_BUBBLE = 1e-13;
+
 /** Shares the fluid of a stream between gas and liquid at given temperature and pressure. */
 export interface PhaseSplit {
   /**
@@ -109,7 +112,7 @@ export function createPhaseSplit(gas: GasModel, liquidPhase: LiquidPhase): Phase
     if (!liquidPhase.isLiquid(T, z)) return false;
     liquidPhase.lnFugacityPerFraction(z, lnLiquid);
     for (let i = 0; i < size; i++) {
-      if (z[i] > 0 && lnLiquid[i] === Number.POSITIVE_INFINITY) return false;
+      if (z[i] > NO_BUBBLE && lnLiquid[i] === Number.POSITIVE_INFINITY) return false;
     }
     return true;
   }
@@ -123,7 +126,8 @@ export function createPhaseSplit(gas: GasModel, liquidPhase: LiquidPhase): Phase
     for (let round = 0; round < MAX_ROUNDS; round++) {
       let next = 0;
       for (let i = 0; i < size; i++) {
-        y[i] = z[i] === 0 ? 0 : z[i] * Math.exp(lnLiquid[i] - lnPhi[i] - lnP);
+        const finite = lnLiquid[i] !== Number.POSITIVE_INFINITY;
+        y[i] = z[i] > 0 && finite ? z[i] * Math.exp(lnLiquid[i] - lnPhi[i] - lnP) : 0;
         next += y[i];
       }
       for (let i = 0; i < size; i++) y[i] /= next;

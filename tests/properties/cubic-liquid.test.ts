@@ -1,5 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
+import { PassTrouble } from '../../src/diagnostics/diagnostic.ts';
 import { equationOfStateRoles } from '../../src/properties/component-roles.ts';
 import { R } from '../../src/properties/constants.ts';
 import { createCubicLiquid } from '../../src/properties/cubic-liquid.ts';
@@ -111,10 +112,20 @@ describe.each(equations)('the liquid of %s', (gas) => {
       fc.assert(
         fc.property(between(240, 420), between(2, 250), shares, between(240, 420), (T, bar, parts, other) => {
           const fresh = mixtureOf(ids, { gas, liquid: 'eos' });
-          const first = streamOf(fresh, T, bar, parts.slice(0, size));
-          streamOf(fresh, other, bar, parts.slice(0, size));
-          const again = streamOf(fresh, T, bar, parts.slice(0, size));
-          expect(Math.abs(again.vapourFraction - first.vapourFraction)).toBeLessThan(1e-7);
+          // Where three phases are near a split may not settle; then it does not settle again.
+          const shareAt = (at: number) => {
+            try {
+              return streamOf(fresh, at, bar, parts.slice(0, size)).vapourFraction;
+            } catch (trouble) {
+              if (trouble instanceof PassTrouble) return trouble.code;
+              throw trouble;
+            }
+          };
+          const first = shareAt(T);
+          shareAt(other);
+          const again = shareAt(T);
+          if (typeof first === 'string' || typeof again === 'string') expect(again).toBe(first);
+          else expect(Math.abs(again - first)).toBeLessThan(1e-7);
         }),
         { numRuns: 60, endOnFailure: true },
       );
