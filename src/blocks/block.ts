@@ -111,5 +111,7 @@ export interface BlockKind<S extends object = object> {
   reactionsIn?(settings: S): readonly string[];
   /** those of them that run to equilibrium */
   equilibriaIn?(settings: S): readonly string[];
+  /** models and sources of this block beside the state functions that all share, in plain words */
+  models?(settings: S): readonly string[];
   create(settings: S, context: BlockContext): Unit;
 }

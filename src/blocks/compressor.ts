@@ -66,6 +66,7 @@ export const compressor: BlockKind<Settings> = {
   kind: 'compressor',
   summary: 'raises the pressure of a gas, in one or more stages',
   settings,
+  models: () => ['real isentrope by the entropies of the mixture'],
   ports: ({ knock_out }) => ({ inlets: ['in'], outlets: knock_out ? ['out', 'condensate'] : ['out'] }),
   check: (setting) => [
     ...exactlyOne(setting, {

@@ -38,6 +38,8 @@ export const condenser: BlockKind<Settings> = {
   kind: 'condenser',
   summary: 'cools a stream and takes out what condenses',
   settings,
+  models: (setting) =>
+    setting.cooling ? ['refrigeration: Carnot times a second-law efficiency (common practice)'] : [],
   ports: () => ({ inlets: ['in'], outlets: ['gas', 'liquid'] }),
   check: (setting, { components }) => [
     ...exactlyOne(setting, { temperature: 'temperature: -5 degC', duty: 'duty: -12 MW' }),

@@ -34,6 +34,7 @@ export const expander: BlockKind<Settings> = {
   kind: 'expander',
   summary: 'lets a stream down to a lower pressure and delivers power',
   settings,
+  models: () => ['real isentrope by the entropies of the mixture'],
   ports: () => ({ inlets: ['in'], outlets: ['out'] }),
   check: (setting) => exactlyOne(setting, { pressure: 'pressure: 6 bar', ratio: 'ratio: 3' }),
   create(setting, { mixture }) {

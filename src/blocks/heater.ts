@@ -30,6 +30,7 @@ export const heater: BlockKind<Settings> = {
   kind: 'heater',
   summary: 'heats or cools a stream without parting its phases',
   settings,
+  models: (setting) => (setting.steam ? ['steam: IAPWS-IF97, R7-97(2012)'] : []),
   ports: () => ({ inlets: ['in'], outlets: ['out'] }),
   check: (setting) => [
     ...exactlyOne(setting, {

@@ -29,6 +29,7 @@ export const kineticBed: BlockKind<KineticBedSettings> = {
   ports: () => ({ inlets: ['in'], outlets: ['out'] }),
   check: kineticBedFaults,
   reactionsIn: (setting) => setting.reactions,
+  models: (setting) => [`rate law: ${rateLaws.get(setting.rate_law)?.source ?? setting.rate_law}`],
   equilibriaIn: (setting) => (setting.equilibrium === 'authors' ? [] : setting.reactions),
   create: (setting, context) => createKineticBed(setting, context),
 };

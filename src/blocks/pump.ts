@@ -23,6 +23,7 @@ export const pump: BlockKind<Settings> = {
   kind: 'pump',
   summary: 'raises the pressure of a liquid',
   settings,
+  models: () => ['incompressible liquid'],
   ports: () => ({ inlets: ['in'], outlets: ['out'] }),
   create(setting, { mixture }) {
     let powerW = 0;

@@ -66,6 +66,10 @@ export const reactor: BlockKind<Settings> = {
     ...steamWithoutHeat(setting),
   ],
   reactionsIn: (setting) => Object.keys(setting.reactions),
+  models: (setting) =>
+    Object.entries(setting.reactions).flatMap(([name, one]) =>
+      one.conversion === undefined ? [] : [`${name}: set conversion of ${one.of}`],
+    ),
   equilibriaIn: (setting) =>
     Object.entries(setting.reactions).flatMap(([name, one]) => (one.conversion === undefined ? [name] : [])),
   create: (setting, context) => {

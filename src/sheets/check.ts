@@ -32,10 +32,28 @@ export function checkText(flowsheet: Flowsheet, plan: Plan, options: SheetOption
     ...freedomLines(flowsheet),
     ...(plan.aims.length === 0 ? [] : ['', paint.head('Aims'), ...aimLines(plan)]),
     '',
+    paint.head('Sources'),
+    ...sourceLines(plan),
+    '',
     paint.head('Assumptions'),
     ...plan.assumptions.flatMap((text) => wrapped(plainText(text), WIDTH, '  - ', '    ')),
     '',
   ].join('\n');
+}
+
+/** Models, constants and data: what all share, then by block, then by component with each source once. */
+function sourceLines({ sources }: Plan): string[] {
+  const numbered = [...new Set(sources.components.flatMap(({ data }) => Object.values(data)))];
+  const cited = (data: Readonly<Record<string, string>>) =>
+    Object.entries(data)
+      .map(([what, source]) => `${what} [${numbered.indexOf(source) + 1}]`)
+      .join(', ');
+  return [
+    ...sources.shared.map((text) => `all blocks: ${text}`),
+    ...sources.blocks.flatMap(({ name, models }) => models.map((text) => `${name}: ${text}`)),
+    ...sources.components.map(({ id, role, data }) => `${id} (${role}): ${cited(data)}`),
+    ...numbered.map((source, k) => `[${k + 1}] ${source}`),
+  ].flatMap((line) => wrapped(plainText(line), WIDTH, '  ', '      '));
 }
 
 function contents(flowsheet: Flowsheet): string[][] {

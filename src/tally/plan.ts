@@ -3,6 +3,7 @@ import type { Flowsheet } from '../model/flowsheet.ts';
 import { assumptionsOf } from './assumptions.ts';
 import { trappedComponents } from './exits.ts';
 import { createPlant } from './plant.ts';
+import { type Sources, sourcesOf } from './sources.ts';
 
 /** What `check` shows of a flowsheet that has been read without errors: what would be solved, and how. */
 export interface Plan {
@@ -15,6 +16,8 @@ export interface Plan {
   readonly aims: readonly { readonly name: string; readonly moves: string; readonly until: string }[];
   /** unknowns that the solver guesses: component flows, temperature and pressure of each tear */
   readonly unknowns: number;
+  /** models, constants and data, by component and by block */
+  readonly sources: Sources;
   readonly assumptions: readonly string[];
   readonly diagnostics: readonly Diagnostic[];
 }
@@ -37,6 +40,7 @@ export function planFlowsheet(flowsheet: Flowsheet): Plan {
     ),
     aims: flowsheet.aims.map((aim) => ({ name: aim.name, moves: aim.move, until: aim.until.text })),
     unknowns: tears.length * (flowsheet.components.length + 2),
+    sources: sourcesOf(plant),
     assumptions: assumptionsOf(plant, []),
     diagnostics: trappedComponents(plant),
   };

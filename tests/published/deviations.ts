@@ -1,6 +1,7 @@
 import { ammoniaEquilibrium, ammoniaOverCondensate } from './deviations-ammonia.ts';
 import { bubblePointRows } from './deviations-bubble-points.ts';
 import { chemistryRows } from './deviations-chemistry.ts';
+import { converterRows } from './deviations-converters.ts';
 import { machineRows } from './deviations-machines.ts';
 import { propertyRows } from './deviations-properties.ts';
 import { recycleDeviations } from './deviations-recycle-examples.ts';
@@ -18,6 +19,7 @@ export function deviations(): string {
     ...chemistryRows(),
     ...machineRows(),
     ...refrigerationRows(),
+    ...converterRows(),
     {
       what: 'recycle and purge examples of textbooks, five loops',
       source:

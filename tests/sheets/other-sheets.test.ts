@@ -38,6 +38,17 @@ const plan: Plan = {
   order: ['mixer', 'divider'],
   aims: [{ name: 'cap', moves: 'divider.fractions.bleed', until: 'streams.S2.y.N2 = 0.2' }],
   unknowns: 5,
+  sources: {
+    components: [
+      { id: 'H2', role: 'gas', data: { critical: 'Book A', 'ideal gas': 'Table B' } },
+      { id: 'N2', role: 'gas', data: { critical: 'Book A' } },
+    ],
+    blocks: [
+      { name: 'mixer', kind: 'mixer', models: [] },
+      { name: 'divider', kind: 'splitter', models: ['a rule of thumb'] },
+    ],
+    shared: ['gas: ideal gas'],
+  },
   assumptions: ['Everything is ideal.'],
   diagnostics: [],
 };
@@ -72,6 +83,14 @@ Degrees of freedom
 
 Aims
   cap: moves divider.fractions.bleed until streams.S2.y.N2 = 0.2
+
+Sources
+  all blocks: gas: ideal gas
+  divider: a rule of thumb
+  H2 (gas): critical [1], ideal gas [2]
+  N2 (gas): critical [1]
+  [1] Book A
+  [2] Table B
 
 Assumptions
   - Everything is ideal.
