@@ -10,7 +10,7 @@ export interface AtomGap {
 export function atomGaps(coefficients: Float64Array, components: readonly Component[]): AtomGap[] {
   const gaps = new Map<string, { gap: number; size: number }>();
   components.forEach((component, i) => {
-    const v = coefficients[i]!;
+    const v = coefficients[i];
     if (v === 0) return;
     for (const [element, atoms] of Object.entries(component.elements)) {
       const sum = gaps.get(element) ?? { gap: 0, size: 0 };
@@ -51,7 +51,7 @@ export function balancingCoefficients(
   if (free.length !== 1) return null;
   const values = species.map((_, j) => {
     if (j === free[0]) return fraction(1, 1);
-    const entry = rows[pivots.indexOf(j)]![free[0]!]!;
+    const entry = rows[pivots.indexOf(j)][free[0]];
     return fraction(-entry.top, entry.bottom);
   });
   if (values.some((x) => x.top <= 0)) return null;
@@ -67,15 +67,15 @@ function reduceFractions(rows: Fraction[][], columns: number): number[] {
   const pivots: number[] = [];
   for (let column = 0; column < columns && pivots.length < rows.length; column++) {
     const at = pivots.length;
-    const found = rows.findIndex((row, r) => r >= at && row[column]!.top !== 0);
+    const found = rows.findIndex((row, r) => r >= at && row[column].top !== 0);
     if (found < 0) continue;
-    [rows[at], rows[found]] = [rows[found]!, rows[at]!];
-    const head = rows[at]![column]!;
-    rows[at] = rows[at]!.map((x) => fraction(x.top * head.bottom, x.bottom * head.top));
+    [rows[at], rows[found]] = [rows[found], rows[at]];
+    const head = rows[at][column];
+    rows[at] = rows[at].map((x) => fraction(x.top * head.bottom, x.bottom * head.top));
     rows.forEach((row, r) => {
-      if (r === at || row[column]!.top === 0) return;
-      const factor = row[column]!;
-      rows[r] = row.map((x, j) => subtract(x, factor, rows[at]![j]!));
+      if (r === at || row[column].top === 0) return;
+      const factor = row[column];
+      rows[r] = row.map((x, j) => subtract(x, factor, rows[at][j]));
     });
     pivots.push(column);
   }

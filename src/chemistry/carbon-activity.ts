@@ -49,8 +49,8 @@ export function createCarbonActivity(
 
   return (T, P, amounts) => {
     let total = 0;
-    for (let i = 0; i < size; i++) if (!components[i]!.solid) total += amounts[i]!;
-    for (let i = 0; i < size; i++) y[i] = components[i]!.solid || total <= 0 ? 0 : amounts[i]! / total;
+    for (let i = 0; i < size; i++) if (!components[i].solid) total += amounts[i];
+    for (let i = 0; i < size; i++) y[i] = components[i].solid || total <= 0 ? 0 : amounts[i] / total;
     if (total > 0) gas.lnPhi(T, P, y, lnPhi);
     idealGas.enthalpies(T, h);
     idealGas.entropies(T, s);
@@ -59,13 +59,13 @@ export function createCarbonActivity(
       if (terms === null) return null;
       let ln = gibbs(size);
       for (const { index, nu } of terms) {
-        if (!(y[index]! > 0)) return null;
-        ln += nu * (gibbs(index) - Math.log(y[index]!) - lnPhi[index]! - lnPressure);
+        if (!(y[index] > 0)) return null;
+        ln += nu * (gibbs(index) - Math.log(y[index]) - lnPhi[index] - lnPressure);
       }
       return Math.exp(ln);
     };
     /** −G°/(R T) */
-    const gibbs = (i: number): number => (s[i]! - h[i]! / T) / R_NASA;
+    const gibbs = (i: number): number => (s[i] - h[i] / T) / R_NASA;
     const found = {
       boudouard: activity(boudouard),
       methaneCracking: activity(methaneCracking),

@@ -38,19 +38,19 @@ export function applyConversions(
 ): void {
   product.set(feed);
   for (let r = 0; r < reactions.length; r++) {
-    const reaction = reactions[r]!;
+    const reaction = reactions[r];
     const key = reaction.of;
-    let base = feed[key]!;
-    for (let k = 0; k < r; k++) base += Math.max(0, reactions[k]!.coefficients[key]! * extents[k]!);
-    const extent = (reaction.conversion * base) / -reaction.coefficients[key]!;
+    let base = feed[key];
+    for (let k = 0; k < r; k++) base += Math.max(0, reactions[k].coefficients[key] * extents[k]);
+    const extent = (reaction.conversion * base) / -reaction.coefficients[key];
     extents[r] = extent;
     for (let i = 0; i < product.length; i++) {
-      const change = reaction.coefficients[i]! * extent;
+      const change = reaction.coefficients[i] * extent;
       if (change === 0) continue;
-      const left = product[i]! + change;
+      const left = product[i] + change;
       if (left >= 0) product[i] = left;
-      else if (-left <= rounding * Math.max(product[i]!, -change)) product[i] = 0;
-      else throw usedUp(reaction, components, i, product[i]!, -change);
+      else if (-left <= rounding * Math.max(product[i], -change)) product[i] = 0;
+      else throw usedUp(reaction, components, i, product[i], -change);
     }
   }
 }
@@ -62,8 +62,8 @@ function usedUp(
   available: number,
   wanted: number,
 ): PassTrouble {
-  const short = components[i]!.id;
-  const key = components[reaction.of]!.id;
+  const short = components[i].id;
+  const key = components[reaction.of].id;
   const percent = (100 * reaction.conversion).toPrecision(4).replace(/\.?0+$/, '');
   const most = (100 * reaction.conversion * available) / wanted;
   return new PassTrouble(

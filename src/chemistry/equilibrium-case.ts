@@ -71,8 +71,8 @@ export function solveEquilibriumCase(input: EquilibriumCase): EquilibriumCaseRes
   const constants = reactions.map((r) => createLnK(r, idealGas));
   const equilibrium = reactions.map((r, k) => ({
     coefficients: r.coefficients,
-    lnK: constants[k]!.lnK,
-    standardPressurePa: constants[k]!.standardPressurePa,
+    lnK: constants[k].lnK,
+    standardPressurePa: constants[k].standardPressurePa,
     approachK: input.approachK,
   }));
   const solver = createEquilibriumSolver(equilibrium, gas, components);
@@ -83,29 +83,27 @@ export function solveEquilibriumCase(input: EquilibriumCase): EquilibriumCaseRes
     : { T: input.temperatureK, iterations: solver.solve(input.temperatureK, P, feed, product) };
 
   const { largest, ...carbon } = createCarbonActivity(components, gas, basis)(T, P, product);
-  const gasTotal = components.reduce((sum, c, i) => (c.solid ? sum : sum + product[i]!), 0);
+  const gasTotal = components.reduce((sum, c, i) => (c.solid ? sum : sum + product[i]), 0);
   const byId = (value: (i: number) => number): Record<string, number> =>
     Object.fromEntries(components.map((c, i) => [c.id, value(i)]));
   return {
     reactions: reactions.map((r, k) => {
-      const lnK = lnKAtApproach(equilibrium[k]!, T);
+      const lnK = lnKAtApproach(equilibrium[k], T);
       return {
         equation: r.equation,
         K: Math.exp(lnK),
         lnK,
         delta_h_kJ_mol: createReactionEnthalpy(r.coefficients, idealGas)(T) / 1000,
-        extent: solver.extents[k]!,
-        source: constants[k]!.source,
+        extent: solver.extents[k],
+        source: constants[k].source,
       };
     }),
     temperature_K: T,
     pressure_bar: P / 1e5,
-    mole_fraction: byId((i) => (components[i]!.solid || gasTotal <= 0 ? 0 : product[i]! / gasTotal)),
-    amounts: byId((i) => product[i]!),
+    mole_fraction: byId((i) => (components[i].solid || gasTotal <= 0 ? 0 : product[i] / gasTotal)),
+    amounts: byId((i) => product[i]),
     conversion: Object.fromEntries(
-      components.flatMap((c, i) =>
-        product[i]! < feed[i]! ? [[c.id, (feed[i]! - product[i]!) / feed[i]!]] : [],
-      ),
+      components.flatMap((c, i) => (product[i] < feed[i] ? [[c.id, (feed[i] - product[i]) / feed[i]]] : [])),
     ),
     carbon_activity: largest,
     carbon_activities: carbon,
@@ -127,11 +125,11 @@ function createEnthalpy(components: readonly Component[], idealGas: IdealGas, ga
     let sum = 0;
     for (let i = 0; i < size; i++) {
       if (amounts[i] === 0) continue;
-      sum += amounts[i]! * h[i]!;
-      if (!components[i]!.solid) total += amounts[i]!;
+      sum += amounts[i] * h[i];
+      if (!components[i].solid) total += amounts[i];
     }
     if (total <= 0) return sum;
-    for (let i = 0; i < size; i++) y[i] = components[i]!.solid ? 0 : amounts[i]! / total;
+    for (let i = 0; i < size; i++) y[i] = components[i].solid ? 0 : amounts[i] / total;
     return sum + total * gas.enthalpyDeparture(T, P, y);
   };
 }
@@ -238,11 +236,11 @@ function assumptionsOf(
   constants.forEach((c, k) => {
     if (c.range === null || (T >= c.range.fromK && T <= c.range.toK)) return;
     said.push(
-      `The constant of ${input.reactions[k]!.equation} is used outside its range ${c.range.fromK}-${c.range.toK} K (${c.source}).`,
+      `The constant of ${input.reactions[k].equation} is used outside its range ${c.range.fromK}-${c.range.toK} K (${c.source}).`,
     );
   });
   for (const { index } of dependentReactions(input.reactions.map((r) => r.coefficients))) {
-    said.push(`${input.reactions[index]!.equation} follows from the other reactions and is left out.`);
+    said.push(`${input.reactions[index].equation} follows from the other reactions and is left out.`);
   }
   return said;
 }

@@ -72,7 +72,7 @@ export function lnKcMolPerL(
 ): number {
   let change = 0;
   components.forEach((c, i) => {
-    if (!c.solid) change += coefficients[i]!;
+    if (!c.solid) change += coefficients[i];
   });
   const molPerL = standardPressurePa / (R * T) / 1000;
   return lnK + change * Math.log(molPerL);
@@ -93,8 +93,8 @@ function gibbsLnK(coefficients: Float64Array, idealGas: IdealGas): (T: number) =
 function dot(coefficients: Float64Array, x: Float64Array): number {
   let sum = 0;
   for (let i = 0; i < coefficients.length; i++) {
-    const v = coefficients[i]!;
-    if (v !== 0) sum += v * x[i]!;
+    const v = coefficients[i];
+    if (v !== 0) sum += v * x[i];
   }
   return sum;
 }

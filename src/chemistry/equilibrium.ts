@@ -81,7 +81,7 @@ export function createEquilibriumSolver(
 
   function solve(T: number, P: number, feed: Float64Array, product: Float64Array): number {
     for (let r = 0; r < count; r++) {
-      const value = constants[r]!(T) - moleChange[r]! * Math.log(P / used[r]!.standardPressurePa);
+      const value = constants[r](T) - moleChange[r] * Math.log(P / used[r].standardPressurePa);
       if (!Number.isFinite(value)) throw noConstant(T, P);
       lnK[r] = value;
     }
@@ -96,17 +96,17 @@ export function createEquilibriumSolver(
         removeSolid(gone);
         continue;
       }
-      for (let r = 0; r < count; r++) sum[r] = sum[r]! + part[r]!;
+      for (let r = 0; r < count; r++) sum[r] = sum[r] + part[r];
       const forming = turn < 8 ? formingSolid(branch.formation, T, P) : -1;
       if (forming < 0) break;
       absence &= ~(1 << forming);
       from.set(feed);
       sum.fill(0);
       // any other solid that is absent but fed starts present again
-      for (let s = 0; s < solids.length; s++) if (feed[solids[s]!]! > 0) absence &= ~(1 << s);
+      for (let s = 0; s < solids.length; s++) if (feed[solids[s]] > 0) absence &= ~(1 << s);
     }
     extents.fill(0);
-    for (let r = 0; r < count; r++) extents[place[r]!] = sum[r]!;
+    for (let r = 0; r < count; r++) extents[place[r]] = sum[r];
     product.set(amounts);
     return steps;
   }
@@ -115,7 +115,7 @@ export function createEquilibriumSolver(
   function restart(feed: Float64Array): void {
     from.set(feed);
     sum.fill(0);
-    for (let s = 0; s < solids.length; s++) if (feed[solids[s]!]! > 0) absence &= ~(1 << s);
+    for (let s = 0; s < solids.length; s++) if (feed[solids[s]] > 0) absence &= ~(1 << s);
   }
 
   function branchOf(mask: number): { gas: GasEquilibrium; formation: Float64Array[] } {
@@ -126,7 +126,7 @@ export function createEquilibriumSolver(
       const pivots = new Int32Array(count);
       const closed = eliminate(values, rows.width, count, Int32Array.from(absent), absent.length, pivots);
       const formation = absent.map((_, a) => {
-        const r = pivots.subarray(0, closed).indexOf(absent[a]!);
+        const r = pivots.subarray(0, closed).indexOf(absent[a]);
         return r < 0 ? new Float64Array(rows.width) : values.slice(r * rows.width, (r + 1) * rows.width);
       });
       const open = values.slice(closed * rows.width);
@@ -141,9 +141,9 @@ export function createEquilibriumSolver(
     let first = -1;
     let least = 2;
     for (let s = 0; s < solids.length; s++) {
-      const i = solids[s]!;
-      if (!(amounts[i]! < 0)) continue;
-      const way = from[i]! / (from[i]! - amounts[i]!);
+      const i = solids[s];
+      if (!(amounts[i] < 0)) continue;
+      const way = from[i] / (from[i] - amounts[i]);
       if (way < least) {
         least = way;
         first = s;
@@ -154,11 +154,11 @@ export function createEquilibriumSolver(
 
   /** Go only as far as the solid lasts, and stay there without it. */
   function removeSolid(s: number): void {
-    const i = solids[s]!;
-    const way = from[i]! / (from[i]! - amounts[i]!);
-    for (let j = 0; j < size; j++) from[j] = from[j]! + way * (amounts[j]! - from[j]!);
+    const i = solids[s];
+    const way = from[i] / (from[i] - amounts[i]);
+    for (let j = 0; j < size; j++) from[j] = from[j] + way * (amounts[j] - from[j]);
     from[i] = 0;
-    for (let r = 0; r < count; r++) sum[r] = sum[r]! + way * part[r]!;
+    for (let r = 0; r < count; r++) sum[r] = sum[r] + way * part[r];
     absence |= 1 << s;
   }
 
@@ -171,12 +171,12 @@ export function createEquilibriumSolver(
     let k = 0;
     for (let s = 0; s < solids.length; s++) {
       if ((absence & (1 << s)) === 0) continue;
-      const row = formation[k++]!;
+      const row = formation[k++];
       let affinity = 0;
-      for (let r = 0; r < count; r++) affinity -= row[size + r]! * lnK[r]!;
+      for (let r = 0; r < count; r++) affinity -= row[size + r] * lnK[r];
       for (let i = 0; i < size; i++) {
         if (row[i] === 0 || activity.inGas[i] === 0) continue;
-        affinity += row[i]! * (Math.log(amounts[i]! / total) + lnPhi[i]!);
+        affinity += row[i] * (Math.log(amounts[i] / total) + lnPhi[i]);
       }
       // NaN: the gas lacks species on both sides; whether the solid forms shows only with it present
       if (!(affinity >= -solidSlack)) return s;
@@ -210,7 +210,7 @@ export function lnKAtApproach(reaction: Pick<EquilibriumReaction, 'lnK' | 'appro
 }
 
 function gasMoleChange(coefficients: Float64Array, components: readonly Component[]): number {
-  return components.reduce((sum, c, i) => (c.solid ? sum : sum + coefficients[i]!), 0);
+  return components.reduce((sum, c, i) => (c.solid ? sum : sum + coefficients[i]), 0);
 }
 
 /** Indices of the solids that take part. */

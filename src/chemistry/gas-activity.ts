@@ -22,7 +22,7 @@ export function createGasActivity(gas: GasModel, solids: readonly boolean[]): Ga
     inGas,
     total(amounts) {
       let sum = 0;
-      for (let i = 0; i < size; i++) if (inGas[i] === 1) sum += amounts[i]!;
+      for (let i = 0; i < size; i++) if (inGas[i] === 1) sum += amounts[i];
       return sum;
     },
     lnPhi(T, P, amounts, total, out) {
@@ -30,7 +30,7 @@ export function createGasActivity(gas: GasModel, solids: readonly boolean[]): Ga
         out.fill(0);
         return;
       }
-      for (let i = 0; i < size; i++) y[i] = inGas[i] === 1 ? amounts[i]! / total : 0;
+      for (let i = 0; i < size; i++) y[i] = inGas[i] === 1 ? amounts[i] / total : 0;
       gas.lnPhi(T, P, y, out);
     },
   };

@@ -75,11 +75,11 @@ export function createGasEquilibrium(
     if (openCount === 0 || !(total > 0)) return;
     if (openCount === 1) {
       let lnKRow = 0;
-      for (let k = 0; k < reactions; k++) lnKRow += open[size + k]! * lnK[k]!;
+      for (let k = 0; k < reactions; k++) lnKRow += open[size + k] * lnK[k];
       single.solve(open, 0, lnKRow, feed, T, P, position, null, 1e-9, amounts);
       position = single.position;
       state.steps = single.steps;
-      for (let k = 0; k < reactions; k++) extents[k] = single.extent * open[size + k]!;
+      for (let k = 0; k < reactions; k++) extents[k] = single.extent * open[size + k];
       return;
     }
     interior(feed, total);
@@ -90,7 +90,7 @@ export function createGasEquilibrium(
   function patternChanged(feed: Float64Array, least: number): boolean {
     let changed = false;
     for (let i = 0; i < size; i++) {
-      const lacks = touched[i] === 1 && !(feed[i]! > least) ? 1 : 0;
+      const lacks = touched[i] === 1 && !(feed[i] > least) ? 1 : 0;
       if (lacks !== lacking[i]) {
         lacking[i] = lacks;
         changed = true;
@@ -108,8 +108,7 @@ export function createGasEquilibrium(
     reachableSpecies(rows, width, count, absent, extentDirection, reachable);
     direction.fill(0);
     for (let r = 0; r < count; r++) {
-      for (let i = 0; i < size; i++)
-        direction[i] = direction[i]! + extentDirection[r]! * rows[r * width + i]!;
+      for (let i = 0; i < size; i++) direction[i] = direction[i] + extentDirection[r] * rows[r * width + i];
     }
     const never = absent.filter((_, j) => reachable[j] === 0);
     const work = Float64Array.from(rows);
@@ -124,9 +123,9 @@ export function createGasEquilibrium(
   function interior(feed: Float64Array, total: number): void {
     let way = total;
     for (let i = 0; i < size; i++) {
-      if (inGas[i] === 1 && direction[i]! < 0) way = Math.min(way, feed[i]! / -direction[i]!);
+      if (inGas[i] === 1 && direction[i] < 0) way = Math.min(way, feed[i] / -direction[i]);
     }
-    for (let i = 0; i < size; i++) start[i] = feed[i]! + 0.3 * way * direction[i]!;
+    for (let i = 0; i < size; i++) start[i] = feed[i] + 0.3 * way * direction[i];
   }
 
   return state;

@@ -30,20 +30,20 @@ export function holdBackEquilibria(
 ): void {
   let moved = 0;
   for (let r = 0; r < reactions.length; r++) {
-    const { coefficients, fraction } = reactions[r]!;
+    const { coefficients, fraction } = reactions[r];
     if (fraction === 1) continue;
-    const back = (1 - fraction) * extents[r]!;
-    extents[r] = fraction * extents[r]!;
+    const back = (1 - fraction) * extents[r];
+    extents[r] = fraction * extents[r];
     for (let i = 0; i < amounts.length; i++) {
-      const change = coefficients[i]! * back;
-      amounts[i] = amounts[i]! - change;
+      const change = coefficients[i] * back;
+      amounts[i] = amounts[i] - change;
       moved = Math.max(moved, Math.abs(change));
     }
   }
   if (moved === 0) return;
   for (let i = 0; i < amounts.length; i++) {
-    if (amounts[i]! >= 0) continue;
-    if (amounts[i]! < -rounding * moved) throw lessThanNothing(reactions, components[i]!.id, i);
+    if (amounts[i] >= 0) continue;
+    if (amounts[i] < -rounding * moved) throw lessThanNothing(reactions, components[i].id, i);
     amounts[i] = 0;
   }
 }

@@ -208,10 +208,10 @@ function multiple(
 ): number | null {
   const ids = Object.keys(published);
   if (Object.keys(user).some((id) => user[id] !== 0 && published[id] === undefined)) return null;
-  const factor = (user[ids[0]!] ?? 0) / published[ids[0]!]!;
+  const factor = (user[ids[0]] ?? 0) / published[ids[0]];
   if (factor === 0) return null;
   const fits = ids.every(
-    (id) => Math.abs((user[id] ?? 0) - factor * published[id]!) <= 1e-9 * Math.abs(factor),
+    (id) => Math.abs((user[id] ?? 0) - factor * published[id]) <= 1e-9 * Math.abs(factor),
   );
   return fits ? factor : null;
 }

@@ -31,8 +31,8 @@ export function reachableSpecies(
   absent.forEach((species, j) => {
     const row = new Float64Array(variables + 1);
     for (let r = 0; r < count; r++) {
-      row[r] = -rows[r * width + species]!;
-      row[count + r] = rows[r * width + species]!;
+      row[r] = -rows[r * width + species];
+      row[count + r] = rows[r * width + species];
     }
     row[2 * count + j] = 1;
     limits.push(row);
@@ -46,8 +46,8 @@ export function reachableSpecies(
   const worth = new Float64Array(variables);
   worth.fill(1, 2 * count);
   const x = maximise(worth, limits);
-  for (let r = 0; r < count; r++) direction[r] = x[r]! - x[count + r]!;
-  for (let j = 0; j < z; j++) reachable[j] = x[2 * count + j]! > 1e-7 ? 1 : 0;
+  for (let r = 0; r < count; r++) direction[r] = x[r] - x[count + r];
+  for (let j = 0; j < z; j++) reachable[j] = x[2 * count + j] > 1e-7 ? 1 : 0;
 }
 
 const tiny = 1e-9;
@@ -61,7 +61,7 @@ function maximise(worth: Float64Array, limits: readonly Float64Array[]): Float64
     const row = new Float64Array(width);
     row.set(limit.subarray(0, n));
     row[n + i] = 1;
-    row[width - 1] = limit[n]!;
+    row[width - 1] = limit[n];
     return row;
   });
   const basis = limits.map((_, i) => n + i);
@@ -77,7 +77,7 @@ function maximise(worth: Float64Array, limits: readonly Float64Array[]): Float64
   }
   const x = new Float64Array(n);
   basis.forEach((column, i) => {
-    if (column < n) x[column] = table[i]![width - 1]!;
+    if (column < n) x[column] = table[i][width - 1];
   });
   return x;
 }
@@ -92,9 +92,9 @@ function leavingRow(
   let leave = -1;
   let least = Number.POSITIVE_INFINITY;
   table.forEach((row, i) => {
-    if (row[enter]! <= tiny) return;
-    const ratio = row[width - 1]! / row[enter]!;
-    if (ratio < least - tiny || (ratio < least + tiny && basis[i]! < basis[leave]!)) {
+    if (row[enter] <= tiny) return;
+    const ratio = row[width - 1] / row[enter];
+    if (ratio < least - tiny || (ratio < least + tiny && basis[i] < basis[leave])) {
       least = Math.min(ratio, least);
       leave = i;
     }
@@ -103,15 +103,15 @@ function leavingRow(
 }
 
 function exchange(table: readonly Float64Array[], cost: Float64Array, leave: number, enter: number): void {
-  const pivotRow = table[leave]!;
-  const scale = 1 / pivotRow[enter]!;
-  for (let j = 0; j < pivotRow.length; j++) pivotRow[j] = pivotRow[j]! * scale;
+  const pivotRow = table[leave];
+  const scale = 1 / pivotRow[enter];
+  for (let j = 0; j < pivotRow.length; j++) pivotRow[j] = pivotRow[j] * scale;
   for (const row of [...table, cost]) {
     if (row === pivotRow) continue;
-    const factor = row[enter]!;
+    const factor = row[enter];
     if (factor === 0) continue;
     for (let j = 0; j < row.length; j++) {
-      const left = row[j]! - factor * pivotRow[j]!;
+      const left = row[j] - factor * pivotRow[j];
       row[j] = Math.abs(left) < 1e-13 ? 0 : left;
     }
   }

@@ -42,15 +42,15 @@ export function createReactionBasis(size: number, reactions: number, inGas: Uint
     if (rank < m) throw new Error('reaction basis: a row without gas species, or dependent rows');
     rest.set(n);
     for (let r = 0; r < m; r++) {
-      const amount = n[own[r]!]!;
+      const amount = n[own[r]];
       moleChange[r] = 0;
       for (let i = 0; i < size; i++) {
-        const v = rows[r * width + i]!;
-        rest[i] = rest[i]! - v * amount;
-        if (inGas[i] === 1) moleChange[r] = moleChange[r]! + v;
+        const v = rows[r * width + i];
+        rest[i] = rest[i] - v * amount;
+        if (inGas[i] === 1) moleChange[r] = moleChange[r] + v;
       }
     }
-    for (let r = 0; r < m; r++) rest[own[r]!] = 0;
+    for (let r = 0; r < m; r++) rest[own[r]] = 0;
   }
 
   /** Gas species by ascending amount into `order`; returns their number. */
@@ -58,10 +58,10 @@ export function createReactionBasis(size: number, reactions: number, inGas: Uint
     let tried = 0;
     for (let i = 0; i < size; i++) if (inGas[i] === 1) order[tried++] = i;
     for (let a = 1; a < tried; a++) {
-      const species = order[a]!;
+      const species = order[a];
       let b = a - 1;
-      while (b >= 0 && n[order[b]!]! > n[species]!) {
-        order[b + 1] = order[b]!;
+      while (b >= 0 && n[order[b]] > n[species]) {
+        order[b + 1] = order[b];
         b--;
       }
       order[b + 1] = species;
@@ -71,9 +71,9 @@ export function createReactionBasis(size: number, reactions: number, inGas: Uint
 
   function isStale(n: Float64Array): boolean {
     for (let r = 0; r < state.count; r++) {
-      const amount = n[own[r]!]!;
+      const amount = n[own[r]];
       for (let i = 0; i < size; i++) {
-        if (inGas[i] === 1 && rows[r * width + i] !== 0 && n[i]! < 0.1 * amount) return true;
+        if (inGas[i] === 1 && rows[r * width + i] !== 0 && n[i] < 0.1 * amount) return true;
       }
     }
     return false;
@@ -83,12 +83,12 @@ export function createReactionBasis(size: number, reactions: number, inGas: Uint
     for (let i = 0; i < size; i++) {
       if (isOwn(i)) continue;
       let touched = false;
-      let sum = rest[i]!;
+      let sum = rest[i];
       for (let r = 0; r < state.count; r++) {
-        const v = rows[r * width + i]!;
+        const v = rows[r * width + i];
         if (v === 0) continue;
         touched = true;
-        sum += v * n[own[r]!]!;
+        sum += v * n[own[r]];
       }
       n[i] = sum;
       if (touched && inGas[i] === 1 && !(sum > 0)) return false;
@@ -104,17 +104,17 @@ export function createReactionBasis(size: number, reactions: number, inGas: Uint
   function resume(n: Float64Array, factor: number, feed: Float64Array, total: number): boolean {
     rest.set(feed);
     for (let r = 0; r < state.count; r++) {
-      const amount = feed[own[r]!]!;
+      const amount = feed[own[r]];
       if (amount === 0) continue;
-      for (let i = 0; i < size; i++) rest[i] = rest[i]! - rows[r * width + i]! * amount;
+      for (let i = 0; i < size; i++) rest[i] = rest[i] - rows[r * width + i] * amount;
     }
     for (let i = 0; i < size; i++) {
       // what cancels but for rounding is 0
-      if (Math.abs(rest[i]!) <= 4e-16 * total && rest[i] !== feed[i]) rest[i] = 0;
+      if (Math.abs(rest[i]) <= 4e-16 * total && rest[i] !== feed[i]) rest[i] = 0;
     }
     for (let r = 0; r < state.count; r++) {
-      rest[own[r]!] = 0;
-      n[own[r]!] = n[own[r]!]! * factor;
+      rest[own[r]] = 0;
+      n[own[r]] = n[own[r]] * factor;
     }
     return fill(n);
   }

@@ -2,7 +2,7 @@ import type { Component } from '../model/component.ts';
 
 /** Coefficients in component order as text: 'N2 + 3 H2 <=> 2 NH3'. */
 export function formatReaction(coefficients: Float64Array, components: readonly Component[]): string {
-  return formatSides(components.map((c, i) => [c.id, coefficients[i]!]));
+  return formatSides(components.map((c, i) => [c.id, coefficients[i]]));
 }
 
 /** The same for coefficients by component id. */

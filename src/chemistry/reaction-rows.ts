@@ -48,13 +48,13 @@ export function eliminate(
 ): number {
   let done = 0;
   for (let k = 0; k < tried && done < count; k++) {
-    const column = columns[k]!;
+    const column = columns[k];
     const row = largestEntry(values, width, done, count, column);
     if (row < 0) continue;
     swapRows(values, width, row, done);
     const at = done * width;
-    const scale = 1 / values[at + column]!;
-    for (let j = 0; j < width; j++) values[at + j] = values[at + j]! * scale;
+    const scale = 1 / values[at + column];
+    for (let j = 0; j < width; j++) values[at + j] = values[at + j] * scale;
     values[at + column] = 1;
     for (let r = 0; r < count; r++) {
       if (r !== done) subtractRow(values, width, r, done, column);
@@ -80,13 +80,13 @@ export function dependentReactions(coefficients: readonly Float64Array[]): Depen
   const found: DependentReaction[] = [];
   const kept: number[] = [];
   coefficients.forEach((_, index) => {
-    const chosen = [...kept, index].map((k) => coefficients[k]!);
+    const chosen = [...kept, index].map((k) => coefficients[k]);
     const factors = combination(chosen);
     if (factors === null) kept.push(index);
     else {
       const all = new Array<number>(index).fill(0);
       kept.forEach((k, at) => {
-        all[k] = factors[at]!;
+        all[k] = factors[at];
       });
       found.push({ index, factors: all });
     }
@@ -96,15 +96,15 @@ export function dependentReactions(coefficients: readonly Float64Array[]): Depen
 
 /** Factors of the earlier rows that add up to the last one, or null when it is independent. */
 function combination(coefficients: readonly Float64Array[]): number[] | null {
-  const size = coefficients[0]!.length;
+  const size = coefficients[0].length;
   const rows = reactionRows(coefficients, size);
   const pivots = new Int32Array(rows.count);
   const columns = Int32Array.from({ length: size }, (_, i) => i);
   const rank = eliminate(rows.values, rows.width, rows.count, columns, size, pivots);
   if (rank === rows.count) return null;
   const at = (rows.count - 1) * rows.width + size;
-  const own = rows.values[at + rows.count - 1]!;
-  return coefficients.slice(0, -1).map((_, r) => round(-rows.values[at + r]! / own));
+  const own = rows.values[at + rows.count - 1];
+  return coefficients.slice(0, -1).map((_, r) => round(-rows.values[at + r] / own));
 }
 
 function round(x: number): number {
@@ -121,7 +121,7 @@ function largestEntry(
   let best = -1;
   let size = 1e-9;
   for (let r = from; r < count; r++) {
-    const entry = Math.abs(values[r * width + column]!);
+    const entry = Math.abs(values[r * width + column]);
     if (entry > size) {
       size = entry;
       best = r;
@@ -133,18 +133,18 @@ function largestEntry(
 function swapRows(values: Float64Array, width: number, a: number, b: number): void {
   if (a === b) return;
   for (let j = 0; j < width; j++) {
-    const keep = values[a * width + j]!;
-    values[a * width + j] = values[b * width + j]!;
+    const keep = values[a * width + j];
+    values[a * width + j] = values[b * width + j];
     values[b * width + j] = keep;
   }
 }
 
 /** Clear `column` of row r with the pivot row; what rounding leaves of a cancelled entry becomes 0. */
 function subtractRow(values: Float64Array, width: number, r: number, pivotRow: number, column: number): void {
-  const factor = values[r * width + column]!;
+  const factor = values[r * width + column];
   if (factor === 0) return;
   for (let j = 0; j < width; j++) {
-    const left = values[r * width + j]! - factor * values[pivotRow * width + j]!;
+    const left = values[r * width + j] - factor * values[pivotRow * width + j];
     values[r * width + j] = Math.abs(left) < 1e-11 ? 0 : left;
   }
   values[r * width + column] = 0;

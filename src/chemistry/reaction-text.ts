@@ -60,7 +60,7 @@ export function parseReaction(text: string, components: readonly Component[]): P
   const coefficients = new Float64Array(components.length);
   for (const t of terms) {
     const i = ids.indexOf(t.id);
-    coefficients[i] = coefficients[i]! + (t.side === 'left' ? -t.coefficient : t.coefficient);
+    coefficients[i] = coefficients[i] + (t.side === 'left' ? -t.coefficient : t.coefficient);
   }
   const idle = terms.filter((t, k) => {
     const first = terms.findIndex((other) => other.id === t.id) === k;
@@ -102,8 +102,8 @@ function splitSides(text: string): readonly [Side, Side] | ReactionFault {
       length: second?.[0].length ?? text.length,
     };
   }
-  const { index } = found[0]!;
-  const after = index + found[0]![0].length;
+  const { index } = found[0];
+  const after = index + found[0][0].length;
   return [
     { side: 'left', text: text.slice(0, index), offset: 0 },
     { side: 'right', text: text.slice(after), offset: after },
@@ -137,7 +137,7 @@ function readTerm(text: string, offset: number, side: Side): Term | ReactionFaul
       length: Math.max(1, text.length),
     };
   }
-  const id = match[2]!;
+  const id = match[2];
   const coefficient = match[1] === undefined ? 1 : readNumber(match[1]);
   if (!(coefficient > 0 && Number.isFinite(coefficient))) {
     return {
@@ -195,7 +195,7 @@ function asWritten(
 ): { component: Component; coefficient: number }[] {
   return [...new Set(terms.map((t) => t.id))].map((id) => {
     const i = components.findIndex((c) => c.id === id);
-    return { component: components[i]!, coefficient: coefficients[i]! };
+    return { component: components[i], coefficient: coefficients[i] };
   });
 }
 
@@ -228,8 +228,8 @@ function balancedText(written: ReturnType<typeof asWritten>): string {
     return 'check the components and coefficients: no positive coefficients that balance these sides were found';
   }
   const terms = [
-    ...left.map((c, j) => [c.id, -balanced.left[j]!] as const),
-    ...right.map((c, j) => [c.id, balanced.right[j]!] as const),
+    ...left.map((c, j) => [c.id, -balanced.left[j]] as const),
+    ...right.map((c, j) => [c.id, balanced.right[j]] as const),
   ];
   return `write ${formatTerms(Object.fromEntries(terms))}`;
 }

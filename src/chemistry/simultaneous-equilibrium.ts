@@ -139,9 +139,9 @@ export function createSimultaneousEquilibrium(
     amounts.set(n);
     extents.fill(0);
     for (let r = 0; r < m; r++) {
-      const extent = n[pivots[r]!]! - feed[pivots[r]!]!;
+      const extent = n[pivots[r]] - feed[pivots[r]];
       for (let k = 0; k < reactions; k++) {
-        extents[k] = extents[k]! + extent * nu[r * width + size + k]!;
+        extents[k] = extents[k] + extent * nu[r * width + size + k];
       }
     }
     state.warm = true;
@@ -150,7 +150,7 @@ export function createSimultaneousEquilibrium(
   function foldLnK(lnK: Float64Array): void {
     for (let r = 0; r < m; r++) {
       lnKs[r] = 0;
-      for (let k = 0; k < reactions; k++) lnKs[r] = lnKs[r]! + nu[r * width + size + k]! * lnK[k]!;
+      for (let k = 0; k < reactions; k++) lnKs[r] = lnKs[r] + nu[r * width + size + k] * lnK[k];
     }
   }
 
@@ -160,28 +160,28 @@ export function createSimultaneousEquilibrium(
     activity.lnPhi(T, P, n, total, lnPhi);
     let worst = 0;
     for (let r = 0; r < m; r++) {
-      let sum = -lnKs[r]! - change[r]! * Math.log(total);
+      let sum = -lnKs[r] - change[r] * Math.log(total);
       let phi = 0;
       let blur = 0;
       for (let i = 0; i < size; i++) {
-        const v = nu[r * width + i]!;
+        const v = nu[r * width + i];
         if (v === 0 || inGas[i] === 0) continue;
-        const part = Math.log(n[i]!);
+        const part = Math.log(n[i]);
         sum += v * part;
-        phi += v * lnPhi[i]!;
-        blur += Math.abs(v) * ((i === pivots[r] ? 0 : Math.abs(rest[i]!) / n[i]!) + Math.abs(part));
+        phi += v * lnPhi[i];
+        blur += Math.abs(v) * ((i === pivots[r] ? 0 : Math.abs(rest[i]) / n[i]) + Math.abs(part));
       }
       affinity[r] = sum + phi;
       phiSum[r] = phi;
-      if (sum + phi > 0 && n[pivots[r]!]! <= vanished * scale) affinity[r] = 0;
-      worst = Math.max(worst, Math.abs(affinity[r]!) / (tolerance + 2e-15 * blur));
+      if (sum + phi > 0 && n[pivots[r]] <= vanished * scale) affinity[r] = 0;
+      worst = Math.max(worst, Math.abs(affinity[r]) / (tolerance + 2e-15 * blur));
     }
     return worst;
   }
 
   function largest(x: Float64Array): number {
     let most = 0;
-    for (let r = 0; r < m; r++) most = Math.max(most, Math.abs(x[r]!));
+    for (let r = 0; r < m; r++) most = Math.max(most, Math.abs(x[r]));
     return most;
   }
 
@@ -193,25 +193,25 @@ export function createSimultaneousEquilibrium(
     const total = activity.total(n);
     const w = m + 1;
     for (let r = 0; r < m; r++) {
-      const rootR = Math.sqrt(n[pivots[r]!]!);
+      const rootR = Math.sqrt(n[pivots[r]]);
       for (let q = 0; q < m; q++) {
-        const rootQ = Math.sqrt(n[pivots[q]!]!);
+        const rootQ = Math.sqrt(n[pivots[q]]);
         let sum = r === q ? 1 : 0;
         for (let i = 0; i < size; i++) {
-          const a = nu[r * width + i]!;
-          const b = nu[q * width + i]!;
+          const a = nu[r * width + i];
+          const b = nu[q * width + i];
           if (a === 0 || b === 0 || inGas[i] === 0 || pivots[r] === i) continue;
-          sum += ((a * rootR) / n[i]!) * (b * rootQ);
+          sum += ((a * rootR) / n[i]) * (b * rootQ);
         }
-        sum -= ((change[r]! * rootR) / total) * (change[q]! * rootQ);
-        if (withSecant) sum += (secant[r * reactions + q]! / total) * rootR * rootQ;
+        sum -= ((change[r] * rootR) / total) * (change[q] * rootQ);
+        if (withSecant) sum += (secant[r * reactions + q] / total) * rootR * rootQ;
         matrix[r * w + q] = sum;
       }
-      matrix[r * w + m] = -affinity[r]! * rootR;
+      matrix[r * w + m] = -affinity[r] * rootR;
     }
     if (!solveLinear(matrix, m)) return false;
     for (let r = 0; r < m; r++) {
-      const move = matrix[r * w + m]! / Math.sqrt(n[pivots[r]!]!);
+      const move = matrix[r * w + m] / Math.sqrt(n[pivots[r]]);
       if (!Number.isFinite(move)) return false;
       step[r] = Math.max(-60, Math.min(60, move));
     }
@@ -224,11 +224,11 @@ export function createSimultaneousEquilibrium(
       trial.set(n);
       let along = 0;
       for (let r = 0; r < m; r++) {
-        const own = n[pivots[r]!]!;
-        const next = Math.max(own * Math.exp(part * step[r]!), 0.1 * vanished * scale);
-        trial[pivots[r]!] = next;
-        moved[r] = own * Math.expm1(part * step[r]!);
-        if (Math.abs(affinity[r]!) > blurred) along += affinity[r]! * moved[r]!;
+        const own = n[pivots[r]];
+        const next = Math.max(own * Math.exp(part * step[r]), 0.1 * vanished * scale);
+        trial[pivots[r]] = next;
+        moved[r] = own * Math.expm1(part * step[r]);
+        if (Math.abs(affinity[r]) > blurred) along += affinity[r] * moved[r];
       }
       if (!basis.fill(trial)) continue;
       if (!keepsPrimaries()) continue;
@@ -245,7 +245,7 @@ export function createSimultaneousEquilibrium(
   /** No species but the variables shrinks by more than a factor of 50 in one step. */
   function keepsPrimaries(): boolean {
     for (let i = 0; i < size; i++) {
-      if (inGas[i] === 0 || trial[i]! >= 0.02 * n[i]!) continue;
+      if (inGas[i] === 0 || trial[i] >= 0.02 * n[i]) continue;
       let own = false;
       for (let r = 0; r < m; r++) if (pivots[r] === i) own = true;
       if (!own) return false;
@@ -258,12 +258,12 @@ export function createSimultaneousEquilibrium(
     const total = activity.total(trial);
     let end = 0;
     for (let r = 0; r < m; r++) {
-      let sum = -lnKs[r]! - change[r]! * Math.log(total) + phiSum[r]!;
+      let sum = -lnKs[r] - change[r] * Math.log(total) + phiSum[r];
       for (let i = 0; i < size; i++) {
-        const v = nu[r * width + i]!;
-        if (v !== 0 && inGas[i] === 1) sum += v * Math.log(trial[i]!);
+        const v = nu[r * width + i];
+        if (v !== 0 && inGas[i] === 1) sum += v * Math.log(trial[i]);
       }
-      if (Math.abs(sum) > blurred) end += sum * moved[r]!;
+      if (Math.abs(sum) > blurred) end += sum * moved[r];
     }
     return end <= -0.3 * along;
   }
@@ -271,14 +271,14 @@ export function createSimultaneousEquilibrium(
   /** Broyden: the secant matrix learns what the last step did to Σ ν ln φ. */
   function updateSecant(): void {
     let square = 0;
-    for (let q = 0; q < m; q++) square += (moved[q]! / scale) ** 2;
+    for (let q = 0; q < m; q++) square += (moved[q] / scale) ** 2;
     if (!(square > 1e-24)) return;
     for (let r = 0; r < m; r++) {
       let expected = 0;
-      for (let q = 0; q < m; q++) expected += (secant[r * reactions + q]! * moved[q]!) / scale;
-      const miss = phiSum[r]! - phiBefore[r]! - expected;
+      for (let q = 0; q < m; q++) expected += (secant[r * reactions + q] * moved[q]) / scale;
+      const miss = phiSum[r] - phiBefore[r] - expected;
       for (let q = 0; q < m; q++) {
-        secant[r * reactions + q] = secant[r * reactions + q]! + (miss * moved[q]!) / scale / square;
+        secant[r * reactions + q] = secant[r * reactions + q] + (miss * moved[q]) / scale / square;
       }
     }
   }
@@ -288,7 +288,7 @@ export function createSimultaneousEquilibrium(
     foldLnK(lnK);
     activity.lnPhi(T, P, n, activity.total(n), lnPhi);
     for (let r = 0; r < m; r++) {
-      single.solve(nu, r * width, lnKs[r]!, n, T, P, 0, lnPhi, 1e-3, trial);
+      single.solve(nu, r * width, lnKs[r], n, T, P, 0, lnPhi, 1e-3, trial);
       n.set(trial);
     }
   }

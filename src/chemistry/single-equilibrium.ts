@@ -74,11 +74,11 @@ export function createSingleEquilibrium(size: number, activity: GasActivity): Si
     let last = Number.POSITIVE_INFINITY;
     let change = 0;
     for (let i = 0; i < size; i++) {
-      const v = rows[at + i]!;
+      const v = rows[at + i];
       if (v === 0 || inGas[i] === 0) continue;
       change += v;
-      if (v > 0) first = Math.max(first, -from[i]! / v);
-      else last = Math.min(last, from[i]! / -v);
+      if (v > 0) first = Math.max(first, -from[i] / v);
+      else last = Math.min(last, from[i] / -v);
     }
     if (first === Number.NEGATIVE_INFINITY) first = -unbounded * total;
     if (last === Number.POSITIVE_INFINITY) last = unbounded * total;
@@ -90,8 +90,8 @@ export function createSingleEquilibrium(size: number, activity: GasActivity): Si
       return true;
     }
     for (let i = 0; i < size; i++) {
-      low[i] = amountAtEnd(from[i]!, rows[at + i]! * first, inGas[i] === 1);
-      high[i] = amountAtEnd(from[i]!, rows[at + i]! * last, inGas[i] === 1);
+      low[i] = amountAtEnd(from[i], rows[at + i] * first, inGas[i] === 1);
+      high[i] = amountAtEnd(from[i], rows[at + i] * last, inGas[i] === 1);
     }
 
     let t = Math.max(-farthest, Math.min(farthest, start));
@@ -107,8 +107,8 @@ export function createSingleEquilibrium(size: number, activity: GasActivity): Si
       const fromHigh = way / (1 + Math.exp(t));
       const extent = t < 0 ? first + fromLow : last - fromHigh;
       for (let i = 0; i < size; i++) {
-        const v = rows[at + i]!;
-        amounts[i] = v === 0 ? from[i]! : t < 0 ? low[i]! + v * fromLow : high[i]! - v * fromHigh;
+        const v = rows[at + i];
+        amounts[i] = v === 0 ? from[i] : t < 0 ? low[i] + v * fromLow : high[i] - v * fromHigh;
       }
       state.extent = extent;
       if (settled) break;
@@ -118,11 +118,11 @@ export function createSingleEquilibrium(size: number, activity: GasActivity): Si
       let curvature = (-change * change) / gasTotal;
       let phiSum = 0;
       for (let i = 0; i < size; i++) {
-        const v = rows[at + i]!;
+        const v = rows[at + i];
         if (v === 0 || inGas[i] === 0) continue;
-        affinity += v * Math.log(amounts[i]!);
-        phiSum += v * phi[i]!;
-        curvature += (v * v) / amounts[i]!;
+        affinity += v * Math.log(amounts[i]);
+        phiSum += v * phi[i];
+        curvature += (v * v) / amounts[i];
       }
       affinity += phiSum;
       if (lnPhi === null && activity.real) {

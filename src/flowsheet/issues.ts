@@ -25,7 +25,7 @@ export function checkPart<T>(
 }
 
 /** `converter.temperature` for ['blocks', 'converter', 'temperature']: the way a setting is called. */
-export function nameOfPath(path: Path): string {
+function nameOfPath(path: Path): string {
   const shown = path[0] === 'blocks' || path[0] === 'feeds' ? path.slice(1) : path;
   return shown.length === 0 ? 'the file' : shown.join('.');
 }

@@ -20,7 +20,7 @@ export interface YamlDocument {
 }
 
 /** Bounds that no real flowsheet meets, so that a hostile file costs neither time nor memory. */
-export const yamlLimits = { characters: 1_000_000, depth: 30, aliases: 50, nodes: 50_000 } as const;
+const yamlLimits = { characters: 1_000_000, depth: 30, aliases: 50, nodes: 50_000 } as const;
 
 /** Read YAML 1.2 (core schema) into a tree that knows its places. Never throws on any text. */
 export function readYaml(text: string, file: string): YamlDocument {
@@ -41,7 +41,7 @@ export function readYaml(text: string, file: string): YamlDocument {
 }
 
 /** A plain scalar by the YAML 1.2 core schema; hexadecimal, octal, infinite and not-a-number stay text. */
-export function resolvePlain(text: string): string | number | boolean | null {
+function resolvePlain(text: string): string | number | boolean | null {
   if (/^(|~|null|Null|NULL)$/.test(text)) return null;
   if (/^(true|True|TRUE)$/.test(text)) return true;
   if (/^(false|False|FALSE)$/.test(text)) return false;

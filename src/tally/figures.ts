@@ -91,7 +91,7 @@ function overallYield(plant: Plant, { entering }: Tallied): Figures['overall_yie
  * The reaction that says how much product a key reactant can make: of those that turn the one into the other, the one
  * that makes most of it, so that the order in which they are written does not matter.
  */
-export function yieldReaction(plant: Plant, product: number, reactant: number): Reaction | null {
+function yieldReaction(plant: Plant, product: number, reactant: number): Reaction | null {
   const share = ({ coefficients }: Reaction) => coefficients[product] / -coefficients[reactant];
   const fitting = plant.flowsheet.reactions.filter(
     ({ coefficients }) => coefficients[product] > 0 && coefficients[reactant] < 0,

@@ -99,7 +99,7 @@ export function splitQuantity(text: string): { readonly number: number; readonly
 }
 
 /** One spelling for the many ways a unit is typed: `Nm³/hr`, `bar(g)`, `°C`, `kmol / h`. */
-export function tidyUnit(text: string): string {
+function tidyUnit(text: string): string {
   return text
     .trim()
     .replace(/\s+/g, ' ')
