@@ -4,6 +4,7 @@ import type { Reaction } from '../model/reaction.ts';
 import type { StreamState } from '../model/stream.ts';
 import type { Role } from '../properties/component-roles.ts';
 import type { Mixture } from '../properties/mixture.ts';
+import type { BlockSlopes } from './slopes.ts';
 
 /** Ports of a block with given settings. */
 export interface Ports {
@@ -83,6 +84,11 @@ export interface Unit {
    * @throws PassTrouble
    */
   passAhead?(outlet: string, inlets: readonly StreamState[], outlets: readonly StreamState[]): void;
+  /**
+   * Write the derivatives of the outlets of the last pass; `slopes` comes filled with zeros. Left out, or false where
+   * it has none at this point (a kink, a limit that holds): then they are taken by differences of passes.
+   */
+  slopes?(inlets: readonly StreamState[], outlets: readonly StreamState[], slopes: BlockSlopes): boolean;
   /** Heat, power and details for the inlets and outlets of the last pass. */
   report(inlets: readonly StreamState[], outlets: readonly StreamState[]): BlockReport;
 }

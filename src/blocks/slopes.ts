@@ -1,0 +1,20 @@
+/**
+ * Derivatives of the outlets of a block with respect to its inlets at the last pass. The variables of a stream are its
+ * flows [mol/s], its temperature [K] and its pressure [Pa], in this order.
+ */
+export interface BlockSlopes {
+  /** variables of a stream: components + 2 */
+  readonly width: number;
+  /** by outlet, then by inlet: width rows (of the outlet) of width columns (of the inlet), row by row */
+  readonly of: readonly (readonly Float64Array[])[];
+}
+
+/** Room for the derivatives of a block, all zero. */
+export function blockSlopes(width: number, outlets: number, inlets: number): BlockSlopes {
+  return {
+    width,
+    of: Array.from({ length: outlets }, () =>
+      Array.from({ length: inlets }, () => new Float64Array(width * width)),
+    ),
+  };
+}
