@@ -2,6 +2,7 @@ import { ANDERSON_INDEPENDENCE, ANDERSON_MEMORY } from './anderson.ts';
 import { createDirect } from './direct.ts';
 import type { FixedPointMethod } from './method.ts';
 import { createNewton } from './newton.ts';
+import type { Derivatives } from './problem.ts';
 import { createSecants, type Secants } from './secants.ts';
 import { limitStep } from './step-limit.ts';
 import { createWegstein } from './wegstein.ts';
@@ -21,7 +22,10 @@ const LED_FURTHEST = 100;
 /** A method changed to goes back to the best pass when the last one is this many times worse. */
 const MUCH_WORSE = 10;
 
-const stages = ['anderson', 'newton', 'anderson', 'newton', 'wegstein', 'direct'] as const;
+type Stage = 'anderson' | 'newton' | 'wegstein' | 'direct';
+/** The order of the methods where derivatives have to be found by passes, and where the map has them to give. */
+const BY_PASSES: readonly Stage[] = ['anderson', 'newton', 'anderson', 'newton', 'wegstein', 'direct'];
+const DERIVED: readonly Stage[] = ['newton', 'anderson', 'newton', 'wegstein', 'direct'];
 
 /**
  * Chooses and changes over. One direct pass; then components that pile up from pass to pass (inerts before a
@@ -45,6 +49,8 @@ export function createAuto(): FixedPointMethod {
   let gFirst = new Float64Array(0);
   let xBest = new Float64Array(0);
   let gBest = new Float64Array(0);
+  let stages = BY_PASSES;
+  let derivatives: Derivatives | null = null;
   let stage = 0;
   let passes = 0;
   /** smallest residual of all, and of this stage; that of the last pass */
@@ -58,8 +64,21 @@ export function createAuto(): FixedPointMethod {
 
   function patience(n: number): number {
     if (leading > 0) return LEAD_PATIENCE;
+    if (stages === DERIVED && stages[stage] === 'newton') return 2 * PATIENCE;
     // Newton spends n passes on its derivatives before it makes a step: three times of that
     return stages[stage] === 'newton' ? 3 * (n + 1) + 2 * PATIENCE : PATIENCE;
+  }
+
+  function begin(): void {
+    stage = 0;
+    passes = 0;
+    least = Infinity;
+    best = Infinity;
+    last = Infinity;
+    sinceProgress = 0;
+    leading = 0;
+    fromBest = false;
+    note = '';
   }
 
   function changeOver(n: number, residual: number): void {
@@ -75,7 +94,7 @@ export function createAuto(): FixedPointMethod {
     stage = (stage + 1) % stages.length;
     secants.clear();
     wegstein.reset(n);
-    newton.reset(n);
+    newton.reset(n, derivatives);
     best = Infinity;
     fromBest = residual > MUCH_WORSE * least;
     note = `no progress in ${waited} passes: from ${from} to ${stages[stage]}${fromBest ? ', from the best pass on' : ''}`;
@@ -83,13 +102,15 @@ export function createAuto(): FixedPointMethod {
 
   return {
     get name() {
-      return passes < 2 ? 'direct' : stages[stage];
+      return passes < 2 && stages === BY_PASSES ? 'direct' : stages[stage];
     },
     get base() {
       if (stages[stage] === 'newton' && newton.base) return newton.base;
       return fromBest ? { x: xBest, g: gBest } : null;
     },
-    reset(n) {
+    reset(n, ofMap = null) {
+      derivatives = ofMap;
+      stages = derivatives ? DERIVED : BY_PASSES;
       secants = createSecants(n, ANDERSON_MEMORY, ANDERSON_INDEPENDENCE);
       mixing = new Float64Array(n).fill(1);
       xFirst = new Float64Array(n);
@@ -97,17 +118,17 @@ export function createAuto(): FixedPointMethod {
       xBest = new Float64Array(n);
       gBest = new Float64Array(n);
       wegstein.reset(n);
-      newton.reset(n);
-      stage = 0;
-      passes = 0;
-      least = Infinity;
-      best = Infinity;
-      last = Infinity;
-      sinceProgress = 0;
-      leading = 0;
-      fromBest = false;
-      note = '';
+      newton.reset(n, derivatives);
+      begin();
     },
+    resume() {
+      if (stages[stage] !== 'newton' || !newton.resume!()) return false;
+      const kept = stage;
+      begin();
+      stage = kept;
+      return true;
+    },
+    distance: (x, g, scale) => (stages[stage] === 'newton' ? newton.distance!(x, g, scale) : NaN),
     next(xSeen, gSeen, scale, xNext) {
       const n = xSeen.length;
       passes++;
@@ -130,7 +151,7 @@ export function createAuto(): FixedPointMethod {
       if (passes === 1) {
         xFirst.set(xSeen);
         gFirst.set(gSeen);
-      } else if (passes === 2) {
+      } else if (passes === 2 && stages[stage] === 'anderson') {
         leading = setLeads(xSeen, gSeen, xFirst, gFirst, mixing);
         if (leading > 0) note = `${leading} of ${n} variables pile up and are led ahead`;
       }

@@ -9,11 +9,12 @@ import type { FixedPointProblem } from './problem.ts';
 export type { FixedPointProblem } from './problem.ts';
 
 export interface ClosureOptions {
-  readonly method: MethodName;
   /** largest scaled error of a closed loop [-]; 1e-9 when left out */
   readonly tolerance?: number;
   /** evaluations allowed; 200 when left out */
   readonly maxPasses?: number;
+  /** the start is the answer of a neighbouring map: keep what the method has learnt of that */
+  readonly warm?: boolean;
   /** Called after every pass, for a live trace. */
   readonly onPass?: (pass: PassRecord) => void;
 }
@@ -89,102 +90,120 @@ const HALVINGS = 5;
 export function closeFixedPoint(
   problem: FixedPointProblem,
   start: Float64Array,
-  options: ClosureOptions,
+  options: ClosureOptions & { readonly method: MethodName },
 ): Closure {
+  return createCloser(problem, options.method).close(start, options);
+}
+
+/** Closes one problem again and again, with room made once. */
+export interface Closer {
+  readonly method: MethodName;
+  /** @param start  first guess, length problem.size; not changed */
+  close(start: Float64Array, options: ClosureOptions): Closure;
+}
+
+/** The same for many closures of one problem, as its settings move. */
+export function createCloser(problem: FixedPointProblem, name: MethodName): Closer {
   const n = problem.size;
-  const tolerance = options.tolerance ?? 1e-9;
-  const maxPasses = options.maxPasses ?? 200;
-  const method = methods[options.method]();
-  method.reset(n);
+  const method = methods[name]();
   const distance = createErrorEstimate(n);
-  const history: PassRecord[] = [];
-  const x = Float64Array.from(start);
-  const g = Float64Array.from(start);
-  const xGood = Float64Array.from(start);
-  const gGood = Float64Array.from(start);
+  const x = new Float64Array(n);
+  const g = new Float64Array(n);
+  const xGood = new Float64Array(n);
+  const gGood = new Float64Array(n);
   const xNext = new Float64Array(n);
   const scale = new Float64Array(n);
-  let madeBy = 'start';
-  let note = '';
-  let hasGood = false;
-  let halvings = 0;
-  let residual = NaN;
-  let error = NaN;
-  let best = Infinity;
-  let sinceBest = 0;
+  return { method: name, close };
 
-  keepWithinBounds(problem, x, x, x);
+  function close(start: Float64Array, options: ClosureOptions): Closure {
+    const tolerance = options.tolerance ?? 1e-9;
+    const maxPasses = options.maxPasses ?? 200;
+    if (!(options.warm && method.resume?.())) method.reset(n, problem.derivatives ?? null);
+    distance.clear();
+    const history: PassRecord[] = [];
+    for (const vector of [x, g, xGood, gGood]) vector.set(start);
+    let madeBy = 'start';
+    let note = '';
+    let hasGood = false;
+    let halvings = 0;
+    let residual = NaN;
+    let error = NaN;
+    let best = Infinity;
+    let sinceBest = 0;
 
-  const stop = (reason: Closure['reason'], trouble: PassTrouble | null = null): Closure => ({
-    converged: reason === 'closed',
-    reason,
-    method: options.method,
-    passes: history.length,
-    residual,
-    error,
-    history,
-    trouble,
-    x: xGood,
-    g: gGood,
-  });
+    keepWithinBounds(problem, x, x, x);
 
-  const log = (record: Omit<PassRecord, 'pass' | 'method' | 'note'>, remark: string): void => {
-    const entry = { pass: history.length + 1, ...record, method: madeBy, note: remark };
-    history.push(entry);
-    options.onPass?.(entry);
-  };
+    const stop = (reason: Closure['reason'], trouble: PassTrouble | null = null): Closure => ({
+      converged: reason === 'closed',
+      reason,
+      method: name,
+      passes: history.length,
+      residual,
+      error,
+      history,
+      trouble,
+      x: xGood.slice(),
+      g: gGood.slice(),
+    });
 
-  for (let pass = 1; pass <= maxPasses; pass++) {
-    const failure = evaluateSafely(problem, x, g);
+    const log = (record: Omit<PassRecord, 'pass' | 'method' | 'note'>, remark: string): void => {
+      const entry = { pass: history.length + 1, ...record, method: madeBy, note: remark };
+      history.push(entry);
+      options.onPass?.(entry);
+    };
 
-    if (failure !== null) {
-      log(failedPass, joined(note, failure.says));
-      if (!hasGood || halvings > HALVINGS) return stop(failure.reason, failure.trouble);
-      halvings++;
-      if (halvings <= HALVINGS) {
-        for (let i = 0; i < n; i++) x[i] = xGood[i] + (x[i] - xGood[i]) / 2;
-        madeBy = 'shortened';
-        note = 'half the step';
-      } else {
-        x.set(gGood);
-        keepWithinBounds(problem, xGood, gGood, x);
-        madeBy = 'direct';
-        note = `${HALVINGS} halvings did not help: the direct step`;
+    for (let pass = 1; pass <= maxPasses; pass++) {
+      const failure = evaluateSafely(problem, x, g);
+
+      if (failure !== null) {
+        log(failedPass, joined(note, failure.says));
+        if (!hasGood || halvings > HALVINGS) return stop(failure.reason, failure.trouble);
+        halvings++;
+        if (halvings <= HALVINGS) {
+          for (let i = 0; i < n; i++) x[i] = xGood[i] + (x[i] - xGood[i]) / 2;
+          madeBy = 'shortened';
+          note = 'half the step';
+        } else {
+          x.set(gGood);
+          keepWithinBounds(problem, xGood, gGood, x);
+          madeBy = 'direct';
+          note = `${HALVINGS} halvings did not help: the direct step`;
+        }
+        continue;
       }
-      continue;
+
+      hasGood = true;
+      halvings = 0;
+      xGood.set(x);
+      gGood.set(g);
+      scaleOf(problem, x, g, scale);
+      const worst = worstVariable(x, g, scale);
+      residual = n === 0 ? 0 : Math.abs(g[worst] - x[worst]) / scale[worst];
+      const extraError = problem.extraError?.() ?? 0;
+      error = distance.next(x, g, scale, residual, method.distance?.(x, g, scale) ?? NaN);
+      log({ residual, worst, error, guess: x[worst], answer: g[worst], extraError }, note);
+
+      if (residual <= tolerance && error <= tolerance && extraError <= tolerance) return stop('closed');
+      const merit = Math.max(residual, extraError);
+      if (merit < STALL_SHARE * best) {
+        best = merit;
+        sinceBest = 0;
+      } else if (++sinceBest >= STALL_PASSES + STALL_PASSES_EACH * n) return stop('stalled');
+
+      method.next(x, g, scale, xNext);
+      madeBy = method.name;
+      note = method.note();
+      if (!allFinite(xNext)) {
+        xNext.set(g);
+        note = joined(note, 'the step was not a finite number: the direct step');
+      }
+      const from = method.base ?? { x, g };
+      const held = keepWithinBounds(problem, from.x, from.g, xNext);
+      if (held > 0) note = joined(note, `${held} held at the bounds of a step`);
+      x.set(xNext);
     }
-
-    hasGood = true;
-    halvings = 0;
-    xGood.set(x);
-    gGood.set(g);
-    scaleOf(problem, x, g, scale);
-    const worst = worstVariable(x, g, scale);
-    residual = n === 0 ? 0 : Math.abs(g[worst] - x[worst]) / scale[worst];
-    const extraError = problem.extraError?.() ?? 0;
-    error = distance.next(x, g, scale, residual);
-    log({ residual, worst, error, guess: x[worst], answer: g[worst], extraError }, note);
-
-    if (residual <= tolerance && error <= tolerance && extraError <= tolerance) return stop('closed');
-    const merit = Math.max(residual, extraError);
-    if (merit < STALL_SHARE * best) {
-      best = merit;
-      sinceBest = 0;
-    } else if (++sinceBest >= STALL_PASSES + STALL_PASSES_EACH * n) return stop('stalled');
-
-    method.next(x, g, scale, xNext);
-    madeBy = method.name;
-    note = method.note();
-    if (!allFinite(xNext)) {
-      xNext.set(g);
-      note = joined(note, 'the step was not a finite number: the direct step');
-    }
-    const from = method.base ?? { x, g };
-    const held = keepWithinBounds(problem, from.x, from.g, xNext);
-    if (held > 0) note = joined(note, `${held} held at the bounds of a step`);
-    x.set(xNext);
+    return stop('max-passes');
   }
-  return stop('max-passes');
 }
 
 function scaleOf(problem: FixedPointProblem, x: Float64Array, g: Float64Array, scale: Float64Array): void {

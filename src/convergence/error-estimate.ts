@@ -15,8 +15,11 @@ export interface ErrorEstimate {
    * Take in a point and estimate its largest scaled distance from the fixed point [-]; never below the residual.
    *
    * @param residual  largest |g − x| / scale
+   * @param known  the distance where the method knows it from derivatives, NaN where it does not
    */
-  next(x: Float64Array, g: Float64Array, scale: Float64Array, residual: number): number;
+  next(x: Float64Array, g: Float64Array, scale: Float64Array, residual: number, known: number): number;
+  /** Forget all points. */
+  clear(): void;
 }
 
 /**
@@ -46,10 +49,17 @@ export function createErrorEstimate(n: number): ErrorEstimate {
   }
 
   return {
-    next(x, g, scale, residual) {
+    clear() {
+      secants.clear();
+      unanswered = 0;
+    },
+    next(x, g, scale, residual, known) {
       secants.record(x, g);
       let most = residual;
-      if (secants.held === 0) most = residual / SLOWEST;
+      if (!Number.isNaN(known)) {
+        most = Math.max(residual, known);
+        if (secants.held > 0) lookForAnswer(x, g, scale);
+      } else if (secants.held === 0) most = residual / SLOWEST;
       else {
         secants.step(x, g, scale, mixing, xStar);
         for (let i = 0; i < n; i++) most = Math.max(most, Math.abs(xStar[i] - x[i]) / scale[i]);

@@ -1,5 +1,6 @@
 import { solveInPlace } from './linear-solve.ts';
 import type { FixedPointMethod } from './method.ts';
+import type { Derivatives } from './problem.ts';
 
 /** Length of a probe relative to the size of its variable: passes are good to some 1e-12. */
 const PROBE = 1e-6;
@@ -12,6 +13,10 @@ const SETTLED = 1e-13;
 const SINGULAR = 1e-14;
 /** With derivatives brought up to date by steps, what a step may leave over beside it before they are taken afresh. */
 const CHORD = 1.5;
+/** The same where derivatives cost no more than a pass. */
+const CHORD_PROPAGATED = 0.1;
+/** What a step may leave unforeseen of itself for derivatives that cost a pass to be brought up to date rather than taken. */
+const FORESEEN = 0.02;
 /** A correction that takes this share of the step back again shows derivatives of the other side of a kink. */
 const OVERSHOT = 0.8;
 /** Share of a step at which the derivatives are to blame rather than its length. */
@@ -23,19 +28,22 @@ const LOSE = 0.7;
 const LEAST_SHARE = 0.1;
 
 /**
- * Newton's method on f(x) = G(x) − x with derivatives by finite differences, one pass per variable; then steps with
- * Broyden's update of the derivatives until they stop paying, and derivatives afresh. A step is judged by the
- * correction it leaves over under the derivatives it was made with (natural monotonicity), not by the
- * residual: behind a small purge a small residual says little.
+ * Newton's method on f(x) = G(x) − x. The derivatives are those that the map carries through its passes, or finite
+ * differences at one pass per variable; then steps with Broyden's update of the derivatives until they stop paying, and
+ * derivatives afresh. A step is judged by the correction it leaves over under the derivatives it was made
+ * with (natural monotonicity), not by the residual: behind a small purge a small residual says little.
  *
- * A variable that is settled (guess = answer, and no probe of another has moved its answer) needs no probe: its
- * correction is zero whatever its column. Pressure is such a one, and often temperature.
+ * By differences, a variable that is settled (guess = answer, and no probe of another has moved its answer) needs no
+ * probe: its correction is zero whatever its column. Pressure is such a one, and often temperature.
  *
  * @source P. Deuflhard, Newton Methods for Nonlinear Problems, Springer 2004, chapters 2 and 3; the update:
  * C. G. Broyden, Math. Comput. 19 (1965) 577-593
  */
 export function createNewton(): FixedPointMethod {
   let n = 0;
+  let derivatives: Derivatives | null = null;
+  /** ∂G/∂x as the map gives it, row by row */
+  let given = new Float64Array(0);
   /** the point a probe or step starts from, and the sizes its derivatives are scaled with */
   let xBase = new Float64Array(0);
   let gBase = new Float64Array(0);
@@ -51,17 +59,33 @@ export function createNewton(): FixedPointMethod {
   let base: { readonly x: Float64Array; readonly g: Float64Array } = { x: xBase, g: gBase };
   let directSteps = 0;
   let probe = 0;
-  let phase: 'begin' | 'probe' | 'step' = 'begin';
+  let phase: 'begin' | 'kept' | 'revisit' | 'probe' | 'step' = 'begin';
+  /** `left` is that of the point handed in last: 1 yes, 0 not yet looked at, −1 the derivatives are singular */
+  let leftKnown = 0;
   /** the derivatives are of the base itself, not brought up to date from elsewhere */
   let fresh = false;
   let taken = 1;
   let note = '';
 
-  /** Take the derivatives at a point: its first probe into xNext. */
-  function takeDerivatives(x: Float64Array, g: Float64Array, scale: Float64Array, xNext: Float64Array): void {
+  /** Take the derivatives at the point handed in, and the step or the first probe into xNext. */
+  function takeDerivatives(
+    x: Float64Array,
+    g: Float64Array,
+    scale: Float64Array,
+    xNext: Float64Array,
+    most = 1,
+  ): void {
     xBase.set(x);
     gBase.set(g);
     size.set(scale);
+    if (derivatives?.at(given) && allFinite(given)) {
+      for (let i = 0; i < n; i++) {
+        for (let j = 0; j < n; j++) J[i][j] = (given[i * n + j] * size[j]) / size[i] - (i === j ? 1 : 0);
+      }
+      fresh = true;
+      stepFromBase(scale, xNext, most);
+      return;
+    }
     order.sort((a, b) => Math.abs(g[b] - x[b]) / scale[b] - Math.abs(g[a] - x[a]) / scale[a] || a - b);
     for (let i = 0; i < n; i++) {
       settled[i] = Math.abs(g[i] - x[i]) <= SETTLED * scale[i] ? 1 : 0;
@@ -71,6 +95,15 @@ export function createNewton(): FixedPointMethod {
     probe = -1;
     phase = 'probe';
     nextProbe(scale, xNext);
+  }
+
+  /** The same at the base, which is not the point handed in: a map gives derivatives of its last pass only. */
+  function takeThemAtBase(scale: Float64Array, xNext: Float64Array): void {
+    if (derivatives === null) takeDerivatives(xBase, gBase, scale, xNext);
+    else {
+      xNext.set(xBase);
+      phase = 'revisit';
+    }
   }
 
   /** The next probe, or the step when there are no more. */
@@ -108,6 +141,12 @@ export function createNewton(): FixedPointMethod {
     if (!solveInPlace(work, out, SINGULAR)) return false;
     for (let i = 0; i < n; i++) out[i] = out[i] * size[i];
     return true;
+  }
+
+  /** `left` at the point handed in; false when the derivatives are singular. */
+  function knowLeft(x: Float64Array, g: Float64Array): boolean {
+    if (leftKnown === 0) leftKnown = correction(x, g, left) ? 1 : -1;
+    return leftKnown === 1;
   }
 
   /** Solve for the step and go along it by the share given at most; a direct step when it cannot be solved for. */
@@ -151,7 +190,7 @@ export function createNewton(): FixedPointMethod {
 
   /** Judge the step that led to x and make the next one. */
   function judge(x: Float64Array, g: Float64Array, scale: Float64Array, xNext: Float64Array): void {
-    if (!correction(x, g, left)) {
+    if (!knowLeft(x, g)) {
       takeDerivatives(x, g, scale, xNext);
       return;
     }
@@ -163,17 +202,21 @@ export function createNewton(): FixedPointMethod {
       after = Math.max(after, Math.abs(left[i]) / scale[i]);
       unforeseen = Math.max(unforeseen, Math.abs(left[i] - (1 - taken) * step[i]) / scale[i]);
     }
+    const propagated = derivatives?.propagated === true;
     // what the linear model does not foresee grows with the square of the share
     const bearable = (0.5 * before * taken * taken) / unforeseen;
+    const share = unforeseen > 0 ? Math.min(Math.max(bearable, LEAST_SHARE), 1) : 1;
     if (!fresh && !(after <= CHORD * before)) {
       note = 'a step without gain: derivatives afresh';
-      takeDerivatives(xBase, gBase, scale, xNext);
+      takeThemAtBase(scale, xNext);
     } else if (fresh && !(after <= (1 - taken / 4) * before) && Math.min(bearable, taken / 2) > SHORTEST) {
       note = 'a step without gain: a shorter one';
       go(xNext, Math.min(bearable, taken / 2));
     } else if (takenBack(left, step, scale) > OVERSHOT * taken) {
       note = 'the step went too far: derivatives afresh';
       takeDerivatives(x, g, scale, xNext);
+    } else if (propagated && (fresh ? unforeseen > FORESEEN * before : after > CHORD_PROPAGATED * before)) {
+      takeDerivatives(x, g, scale, xNext, share);
     } else if (!fresh && after - (1 - taken) * before > before) {
       note = 'slow progress: derivatives afresh';
       takeDerivatives(x, g, scale, xNext);
@@ -182,7 +225,7 @@ export function createNewton(): FixedPointMethod {
       xBase.set(x);
       gBase.set(g);
       fresh = false;
-      stepFromBase(scale, xNext, unforeseen > 0 ? Math.min(Math.max(bearable, LEAST_SHARE), 1) : 1);
+      stepFromBase(scale, xNext, share);
     }
   }
 
@@ -191,22 +234,29 @@ export function createNewton(): FixedPointMethod {
     get base() {
       return phase === 'begin' ? null : base;
     },
-    reset(variables) {
-      n = variables;
-      xBase = new Float64Array(n);
-      gBase = new Float64Array(n);
-      base = { x: xBase, g: gBase };
+    reset(variables, ofMap = null) {
+      if (variables !== n) makeRoom(variables);
+      derivatives = ofMap;
+      if (derivatives !== null && given.length !== n * n) given = new Float64Array(n * n);
       directSteps = 0;
-      size = new Float64Array(n);
-      step = new Float64Array(n);
-      left = new Float64Array(n);
-      moved = new Float64Array(n);
-      settled = new Uint8Array(n);
-      order = Array.from({ length: n }, (_, i) => i);
-      J = order.map(() => new Float64Array(n));
-      work = order.map(() => new Float64Array(n));
+      leftKnown = 0;
       phase = 'begin';
       note = '';
+    },
+    resume() {
+      if (phase !== 'step') return false;
+      phase = 'kept';
+      leftKnown = 0;
+      note = '';
+      return true;
+    },
+    distance(x, g, scale) {
+      leftKnown = 0;
+      if (phase !== 'step' && phase !== 'kept') return NaN;
+      if (!knowLeft(x, g)) return Infinity;
+      let most = 0;
+      for (let i = 0; i < n; i++) most = Math.max(most, Math.abs(left[i]) / scale[i]);
+      return most;
     },
     next(x, g, scale, xNext) {
       note = '';
@@ -216,14 +266,41 @@ export function createNewton(): FixedPointMethod {
           note = 'far off: a direct step first';
           xNext.set(g);
         } else takeDerivatives(x, g, scale, xNext);
+      } else if (phase === 'revisit') takeDerivatives(x, g, scale, xNext);
+      else if (phase === 'kept') {
+        xBase.set(x);
+        gBase.set(g);
+        fresh = false;
+        stepFromBase(scale, xNext, 1);
       } else if (phase === 'step') judge(x, g, scale, xNext);
       else {
         readProbe(x, g);
         nextProbe(scale, xNext);
       }
+      leftKnown = 0;
     },
     note: () => (note === '' && phase === 'probe' ? `probe ${probe + 1} for the derivatives` : note),
   };
+
+  function makeRoom(variables: number): void {
+    n = variables;
+    xBase = new Float64Array(n);
+    gBase = new Float64Array(n);
+    base = { x: xBase, g: gBase };
+    size = new Float64Array(n);
+    step = new Float64Array(n);
+    left = new Float64Array(n);
+    moved = new Float64Array(n);
+    settled = new Uint8Array(n);
+    order = Array.from({ length: n }, (_, i) => i);
+    J = order.map(() => new Float64Array(n));
+    work = order.map(() => new Float64Array(n));
+  }
+}
+
+function allFinite(values: Float64Array): boolean {
+  for (let i = 0; i < values.length; i++) if (!Number.isFinite(values[i])) return false;
+  return true;
 }
 
 function isFar(x: Float64Array, g: Float64Array, scale: Float64Array): boolean {

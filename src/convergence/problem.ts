@@ -12,4 +12,17 @@ export interface FixedPointProblem {
   scale?(x: Float64Array, g: Float64Array, out: Float64Array): void;
   /** An error of the last pass that must be within the tolerance too, e.g. of the balance over the battery limit. */
   extraError?(): number;
+  /** dG/dx at the last guess evaluated; left out where only differences of passes can tell. */
+  readonly derivatives?: Derivatives;
+}
+
+/** Derivatives of a map, as the map itself knows them. */
+export interface Derivatives {
+  /** they cost about as much as a pass, not one pass for each variable */
+  readonly propagated: boolean;
+  /**
+   * @param out  written: ∂gᵢ/∂xⱼ row by row, size² numbers
+   * @returns false where there are none at this guess; the map then is as the last evaluation left it
+   */
+  at(out: Float64Array): boolean;
 }

@@ -1,9 +1,9 @@
-import { type Closure, closeFixedPoint } from '../convergence/driver.ts';
+import { type Closer, type Closure, createCloser } from '../convergence/driver.ts';
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
 import type { MethodName } from '../model/flowsheet.ts';
 import type { TraceEntry } from '../model/result.ts';
 import type { Group, Plant } from './plant.ts';
-import { createRecycleProblem } from './recycle-problem.ts';
+import { createRecycleProblem, type RecycleProblem } from './recycle-problem.ts';
 import { startFromFeeds } from './start-values.ts';
 
 export interface CloseOptions {
@@ -47,11 +47,10 @@ export function closePlant(plant: Plant, options: CloseOptions): PlantClosure {
       }
       continue;
     }
-    const problem = createRecycleProblem(plant, group);
-    const start = new Float64Array(problem.size);
+    const { problem, start, closer } = recycleOf(plant, group, options.method);
     const spent = options.warm ? 0 : startFromFeeds(plant, group);
     problem.read(start);
-    const closure = closeFixedPoint(problem, start, {
+    const closure = closer.close(start, {
       ...options,
       maxPasses: Math.max(options.maxPasses - spent, 1),
     });
@@ -72,6 +71,25 @@ export function closePlant(plant: Plant, options: CloseOptions): PlantClosure {
     }
   }
   return { converged: true, method: options.method, passes, residual, history, failure: null };
+}
+
+/** What is made once for the recycle of a group and kept while its plant is. */
+interface Recycle {
+  readonly problem: RecycleProblem;
+  readonly start: Float64Array;
+  closer: Closer;
+}
+const recycles = new WeakMap<Group, Recycle>();
+
+function recycleOf(plant: Plant, group: Group, method: MethodName): Recycle {
+  let recycle = recycles.get(group);
+  if (recycle === undefined) {
+    const problem = createRecycleProblem(plant, group);
+    recycle = { problem, start: new Float64Array(problem.size), closer: createCloser(problem, method) };
+    recycles.set(group, recycle);
+  }
+  if (recycle.closer.method !== method) recycle.closer = createCloser(recycle.problem, method);
+  return recycle;
 }
 
 function passOnce(plant: Plant, group: Group): PassTrouble | null {

@@ -1,5 +1,6 @@
 import type { FixedPointProblem } from '../convergence/problem.ts';
 import type { StreamState } from '../model/stream.ts';
+import { createPassSlopes } from './pass-slopes.ts';
 import type { Group, Plant } from './plant.ts';
 
 /** The variables of a torn stream: component flows [mol/s], then T/100 K and P/bar, so that all are of one size. */
@@ -32,15 +33,34 @@ export function createRecycleProblem(plant: Plant, group: Group): RecycleProblem
     lower[t * width + mixture.size + 1] = 1e-6;
   }
 
+  /** What a variable of a stream is multiplied with to become that of the problem. */
+  function unit(i: number): number {
+    const v = i % width;
+    if (v < mixture.size) return 1;
+    return v === mixture.size ? KELVIN : BAR;
+  }
+
   function pack(state: StreamState, x: Float64Array, at: number): void {
     x.set(state.flowsMolPerS, at);
     x[at + mixture.size] = state.temperatureK * KELVIN;
     x[at + mixture.size + 1] = state.pressurePa * BAR;
   }
 
+  const slopes = createPassSlopes(plant, group);
+
   return {
     size,
     lower,
+    derivatives: {
+      propagated: slopes.propagated,
+      at(out) {
+        if (!slopes.at(out)) return false;
+        for (let i = 0; i < size; i++) {
+          for (let j = 0; j < size; j++) out[i * size + j] *= unit(i) / unit(j);
+        }
+        return true;
+      },
+    },
     names: group.tears.flatMap((s) =>
       [...mixture.components.map((c) => c.id), 'temperature', 'pressure'].map(
         (name) => `${flowsheet.streams[s].tag}.${name}`,
