@@ -4,7 +4,10 @@ import type { Derivatives } from './problem.ts';
 
 /** Length of a probe relative to the size of its variable: passes are good to some 1e-12. */
 const PROBE = 1e-6;
-/** A guess this far from its answer (an empty recycle: 1) is first led by direct steps, so many at most. */
+/**
+ * Without derivatives from the map, a guess this far from its answer (an empty recycle: 1) is first led by direct steps, so
+ * many at most.
+ */
 const FAR = 0.5;
 const DIRECT_STEPS = 3;
 /** Guess and answer this near to one another are equal. */
@@ -21,11 +24,14 @@ const FORESEEN = 0.02;
 const OVERSHOT = 0.8;
 /** Share of a step at which the derivatives are to blame rather than its length. */
 const SHORTEST = 0.02;
-/** A step lets no variable grow by more than twice its size nor lose more than this share of it. */
+/** A step lets no variable grow by more than so many times its size, with derivatives by differences and by the map. */
 const GROW = 2;
-const LOSE = 0.7;
+const GROW_GIVEN = 9;
 /** The least of the shares that follow from how badly the last step was foreseen. */
 const LEAST_SHARE = 0.1;
+/** A step that takes this share of the way before it back again turns; so many times it may. */
+const TURNED_BACK = 0.5;
+const FREE_TURNS = 1;
 
 /**
  * Newton's method on f(x) = G(x) − x. The derivatives are those that the map carries through its passes, or finite
@@ -52,10 +58,16 @@ export function createNewton(): FixedPointMethod {
   let step = new Float64Array(0);
   let left = new Float64Array(0);
   let moved = new Float64Array(0);
+  /** the way from the last base to this one */
+  let came = new Float64Array(0);
+  /** steps that took the last one back */
+  let turns = 0;
   let settled = new Uint8Array(0);
   let order: number[] = [];
   let J: Float64Array[] = [];
   let work: Float64Array[] = [];
+  let spare: Float64Array[] = [];
+  let spareSize = new Float64Array(0);
   let base: { readonly x: Float64Array; readonly g: Float64Array } = { x: xBase, g: gBase };
   let directSteps = 0;
   let probe = 0;
@@ -75,17 +87,13 @@ export function createNewton(): FixedPointMethod {
     xNext: Float64Array,
     most = 1,
   ): void {
-    xBase.set(x);
-    gBase.set(g);
-    size.set(scale);
-    if (derivatives?.at(given) && allFinite(given)) {
-      for (let i = 0; i < n; i++) {
-        for (let j = 0; j < n; j++) J[i][j] = (given[i * n + j] * size[j]) / size[i] - (i === j ? 1 : 0);
-      }
+    rebase(x, g);
+    if (readDerivatives(scale)) {
       fresh = true;
       stepFromBase(scale, xNext, most);
       return;
     }
+    size.set(scale);
     order.sort((a, b) => Math.abs(g[b] - x[b]) / scale[b] - Math.abs(g[a] - x[a]) / scale[a] || a - b);
     for (let i = 0; i < n; i++) {
       settled[i] = Math.abs(g[i] - x[i]) <= SETTLED * scale[i] ? 1 : 0;
@@ -95,6 +103,23 @@ export function createNewton(): FixedPointMethod {
     probe = -1;
     phase = 'probe';
     nextProbe(scale, xNext);
+  }
+
+  /** Make a point the base, and remember the way that led to it. */
+  function rebase(x: Float64Array, g: Float64Array): void {
+    if (x !== xBase) for (let i = 0; i < n; i++) came[i] = x[i] - xBase[i];
+    xBase.set(x);
+    gBase.set(g);
+  }
+
+  /** J and the sizes from the derivatives that the map has at the last guess; false where it has none. */
+  function readDerivatives(scale: Float64Array): boolean {
+    if (!derivatives?.at(given) || !allFinite(given)) return false;
+    size.set(scale);
+    for (let i = 0; i < n; i++) {
+      for (let j = 0; j < n; j++) J[i][j] = (given[i * n + j] * size[j]) / size[i] - (i === j ? 1 : 0);
+    }
+    return true;
   }
 
   /** The same at the base, which is not the point handed in: a map gives derivatives of its last pass only. */
@@ -159,11 +184,13 @@ export function createNewton(): FixedPointMethod {
     }
     phase = 'step';
     let share = most;
+    // Two sides of a kink may send each other back and forth: then half the last way at most.
+    const back = takenBack(step, came, scale);
+    if (back > TURNED_BACK && ++turns > FREE_TURNS) share = Math.min(share, 0.5 / back);
     for (let i = 0; i < n; i++) {
-      const rise = GROW * Math.max(Math.abs(xBase[i]), scale[i]);
-      const fall = LOSE * scale[i];
+      // What falls is held at the bounds by itself: a flow of no consequence must not hold back the others.
+      const rise = (derivatives === null ? GROW : GROW_GIVEN) * Math.max(Math.abs(xBase[i]), scale[i]);
       if (step[i] > rise) share = Math.min(share, rise / step[i]);
-      else if (step[i] < -fall) share = Math.min(share, fall / -step[i]);
     }
     go(xNext, share);
   }
@@ -188,6 +215,26 @@ export function createNewton(): FixedPointMethod {
     }
   }
 
+  /**
+   * Is the point handed in nearer to the answer by its own derivatives than the base was? Then it is the base, and they are
+   * kept; else nothing is changed. Across a kink (a condenser that has begun to condense) the old ones tell nothing.
+   */
+  function otherSide(x: Float64Array, g: Float64Array, scale: Float64Array, before: number): boolean {
+    for (let i = 0; i < n; i++) spare[i].set(J[i]);
+    spareSize.set(size);
+    if (!readDerivatives(scale)) return false;
+    let now = 0;
+    if (correction(x, g, left)) for (let i = 0; i < n; i++) now = Math.max(now, Math.abs(left[i]) / scale[i]);
+    else now = Infinity;
+    if (now < before) {
+      rebase(x, g);
+      return true;
+    }
+    for (let i = 0; i < n; i++) J[i].set(spare[i]);
+    size.set(spareSize);
+    return false;
+  }
+
   /** Judge the step that led to x and make the next one. */
   function judge(x: Float64Array, g: Float64Array, scale: Float64Array, xNext: Float64Array): void {
     if (!knowLeft(x, g)) {
@@ -209,6 +256,9 @@ export function createNewton(): FixedPointMethod {
     if (!fresh && !(after <= CHORD * before)) {
       note = 'a step without gain: derivatives afresh';
       takeThemAtBase(scale, xNext);
+    } else if (fresh && !(after <= (1 - taken / 4) * before) && otherSide(x, g, scale, before)) {
+      note = 'a step without gain, but nearer by the derivatives at its end';
+      stepFromBase(scale, xNext, 1);
     } else if (fresh && !(after <= (1 - taken / 4) * before) && Math.min(bearable, taken / 2) > SHORTEST) {
       note = 'a step without gain: a shorter one';
       go(xNext, Math.min(bearable, taken / 2));
@@ -222,8 +272,7 @@ export function createNewton(): FixedPointMethod {
       takeDerivatives(x, g, scale, xNext);
     } else {
       update(x, g);
-      xBase.set(x);
-      gBase.set(g);
+      rebase(x, g);
       fresh = false;
       stepFromBase(scale, xNext, share);
     }
@@ -239,6 +288,8 @@ export function createNewton(): FixedPointMethod {
       derivatives = ofMap;
       if (derivatives !== null && given.length !== n * n) given = new Float64Array(n * n);
       directSteps = 0;
+      turns = 0;
+      came.fill(0);
       leftKnown = 0;
       phase = 'begin';
       note = '';
@@ -246,6 +297,8 @@ export function createNewton(): FixedPointMethod {
     resume() {
       if (phase !== 'step') return false;
       phase = 'kept';
+      turns = 0;
+      came.fill(0);
       leftKnown = 0;
       note = '';
       return true;
@@ -261,11 +314,14 @@ export function createNewton(): FixedPointMethod {
     next(x, g, scale, xNext) {
       note = '';
       if (phase === 'begin') {
-        if (directSteps < DIRECT_STEPS && isFar(x, g, scale)) {
+        if (derivatives === null && directSteps < DIRECT_STEPS && isFar(x, g, scale)) {
           directSteps++;
           note = 'far off: a direct step first';
           xNext.set(g);
-        } else takeDerivatives(x, g, scale, xNext);
+        } else {
+          xBase.set(x);
+          takeDerivatives(x, g, scale, xNext);
+        }
       } else if (phase === 'revisit') takeDerivatives(x, g, scale, xNext);
       else if (phase === 'kept') {
         xBase.set(x);
@@ -291,10 +347,13 @@ export function createNewton(): FixedPointMethod {
     step = new Float64Array(n);
     left = new Float64Array(n);
     moved = new Float64Array(n);
+    came = new Float64Array(n);
     settled = new Uint8Array(n);
     order = Array.from({ length: n }, (_, i) => i);
     J = order.map(() => new Float64Array(n));
     work = order.map(() => new Float64Array(n));
+    spare = order.map(() => new Float64Array(n));
+    spareSize = new Float64Array(n);
   }
 }
 
@@ -316,5 +375,5 @@ function takenBack(left: Float64Array, step: Float64Array, scale: Float64Array):
     along += (left[i] * step[i]) / (scale[i] * scale[i]);
     whole += (step[i] / scale[i]) ** 2;
   }
-  return -along / whole;
+  return whole > 0 ? -along / whole : 0;
 }
