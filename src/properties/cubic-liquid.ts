@@ -44,6 +44,10 @@ export function createCubicLiquid(
       cubic.lnPhiSlopes(now.T, now.P, x, perKelvin, perPascal);
       for (let i = 0; i < size; i++) out[i] = inside[i] ? -R * now.T * now.T * perKelvin[i] : 0;
     },
+    byAmount(x, lnFugacity, enthalpy) {
+      cubic.lnPhiByAmount(now.T, now.P, x, lnFugacity);
+      enthalpy.fill(0);
+    },
     volumes(x, out) {
       cubic.lnPhiSlopes(now.T, now.P, x, perKelvin, perPascal);
       for (let i = 0; i < size; i++) out[i] = inside[i] ? R * now.T * (1 / now.P + perPascal[i]) : 0;
