@@ -1,7 +1,7 @@
 import type { Component } from '../model/component.ts';
 import type { Role } from './component-roles.ts';
 import { R } from './constants.ts';
-import type { Cubic } from './cubic.ts';
+import type { GasModel } from './gas-model.ts';
 import type { LiquidPhase } from './liquid-phase.ts';
 
 /**
@@ -14,7 +14,7 @@ import type { LiquidPhase } from './liquid-phase.ts';
 export function createCubicLiquid(
   components: readonly Component[],
   roles: readonly Role[],
-  cubic: Cubic,
+  cubic: GasModel,
 ): LiquidPhase {
   const size = components.length;
   const inside = roles.map((role) => role === 'condensable' || role === 'dissolved');
@@ -43,6 +43,10 @@ export function createCubicLiquid(
     enthalpyOverIdealGas(x, out) {
       cubic.lnPhiSlopes(now.T, now.P, x, perKelvin, perPascal);
       for (let i = 0; i < size; i++) out[i] = inside[i] ? -R * now.T * now.T * perKelvin[i] : 0;
+    },
+    byAmount(x, lnFugacity, enthalpy) {
+      cubic.lnPhiByAmount(now.T, now.P, x, lnFugacity);
+      enthalpy.fill(0);
     },
     volumes(x, out) {
       cubic.lnPhiSlopes(now.T, now.P, x, perKelvin, perPascal);

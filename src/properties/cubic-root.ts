@@ -40,6 +40,29 @@ export function liquidRoot(A: number, B: number, u: number, w: number): number {
   return Z;
 }
 
+/**
+ * How a root Z of the cubic moves along a variable in which A and B have the given slopes.
+ *
+ * @param A,B,u,w  as for vapourRoot
+ */
+export function slopeOfRoot(
+  A: number,
+  B: number,
+  Z: number,
+  u: number,
+  w: number,
+  slopeA: number,
+  slopeB: number,
+): number {
+  const c2 = (u - 1) * B - 1;
+  const c1 = A + w * B * B - u * B * (B + 1);
+  const moved =
+    (u - 1) * slopeB * Z * Z +
+    (slopeA + 2 * w * B * slopeB - u * slopeB * (2 * B + 1)) * Z -
+    (slopeA * B + A * slopeB + w * slopeB * (3 * B + 2) * B);
+  return -moved / ((3 * Z + 2 * c2) * Z + c1);
+}
+
 function closedForm(c2: number, c1: number, c0: number): number {
   const p = c1 - (c2 * c2) / 3;
   const halfQ = (c2 * c2 * c2) / 27 - (c2 * c1) / 6 + c0 / 2;

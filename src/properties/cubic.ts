@@ -2,7 +2,8 @@ import type { GasModelName } from '../model/flowsheet.ts';
 import type { BinaryInteraction } from './binary-interaction.ts';
 import { R } from './constants.ts';
 import type { AlphaRoot } from './cubic-alpha.ts';
-import { liquidRoot, vapourRoot } from './cubic-root.ts';
+import { fillLnPhiByAmount } from './cubic-by-amount.ts';
+import { liquidRoot, slopeOfRoot, vapourRoot } from './cubic-root.ts';
 import type { GasModel } from './gas-model.ts';
 
 /** What one component brings into a cubic equation of state. */
@@ -25,12 +26,6 @@ export interface CubicForm {
   readonly criticalAttraction: number;
   /** v'/b at the critical point of a pure fluid [-] */
   readonly criticalVolume: number;
-}
-
-/** A cubic equation of state on one of its roots: a gas, or with `liquid: eos` the liquid. */
-export interface Cubic extends GasModel {
-  /** ∂ ln φᵢ/∂T [1/K] and ∂ ln φᵢ/∂P [1/Pa] at constant composition; 0 for solids */
-  lnPhiSlopes(T: number, P: number, y: Float64Array, perKelvin: Float64Array, perPascal: Float64Array): void;
 }
 
 /**
@@ -59,7 +54,7 @@ export function createCubic(
   entries: readonly (CubicComponent | null)[],
   interactions: readonly BinaryInteraction[],
   phase: 'vapour' | 'liquid' = 'vapour',
-): Cubic {
+): GasModel {
   const rootOf = phase === 'vapour' ? vapourRoot : liquidRoot;
   const size = entries.length;
   const { delta1, delta2 } = form;
@@ -93,6 +88,8 @@ export function createCubic(
   const rowSlope = new Float64Array(count);
   // Fields, not variables: a number kept in a variable of the closure is allocated anew at each change.
   const now = { T: Number.NaN, P: Number.NaN, memberShare: 0, a: 0, aSlope: 0, b: 0, c: 0, Z: 1, L: 0 };
+
+  const state = { delta1, delta2, members, covolume, root, rowSum, first, second, taken, now };
 
   function setTemperature(T: number): void {
     if (T === keptT) return;
@@ -193,13 +190,7 @@ export function createCubic(
   ): void {
     const { a, b, Z, L } = now;
     const A = (a * B) / (b * RT);
-    const c2 = (u - 1) * B - 1;
-    const c1 = A + w * B * B - u * B * (B + 1);
-    const moved =
-      (u - 1) * slopeB * Z * Z +
-      (slopeA + 2 * w * B * slopeB - u * slopeB * (2 * B + 1)) * Z -
-      (slopeA * B + A * slopeB + w * slopeB * (3 * B + 2) * B);
-    const slopeZ = -moved / ((3 * Z + 2 * c2) * Z + c1);
+    const slopeZ = slopeOfRoot(A, B, Z, u, w, slopeA, slopeB);
     const slopeL =
       ((slopeZ + delta1 * slopeB) / (Z + delta1 * B) - (slopeZ + delta2 * slopeB) / (Z + delta2 * B)) /
       (delta1 - delta2);
@@ -272,6 +263,10 @@ export function createCubic(
         perKelvin[members[m]] += (shift[m] * P) / (RT * T);
         perPascal[members[m]] -= shift[m] / RT;
       }
+    },
+    lnPhiByAmount(T, P, y, out) {
+      out.fill(0);
+      if (setMixture(T, P, y)) fillLnPhiByAmount(state, size, out);
     },
     compressibility(T, P, y) {
       if (!setMixture(T, P, y)) return 1;

@@ -9,6 +9,10 @@ export interface GasModel {
   readonly size: number;
   /** ln of the fugacity coefficients, written into `out`; 0 for solids */
   lnPhi(T: number, P: number, y: Float64Array, out: Float64Array): void;
+  /** ∂ ln φᵢ/∂T [1/K] and ∂ ln φᵢ/∂P [1/Pa] at constant composition; 0 for solids */
+  lnPhiSlopes(T: number, P: number, y: Float64Array, perKelvin: Float64Array, perPascal: Float64Array): void;
+  /** N ∂ ln φᵢ/∂nⱼ at constant T and P, size rows of size columns, row by row; N counts all moles of y [-] */
+  lnPhiByAmount(T: number, P: number, y: Float64Array, out: Float64Array): void;
   /** Z = PV/(RT) */
   compressibility(T: number, P: number, y: Float64Array): number;
   /**

@@ -2,7 +2,7 @@ import type { Component } from '../model/component.ts';
 import type { GasModelName } from '../model/flowsheet.ts';
 import { gasInteractions, isQuantumGas, liquidInteractions } from './binary-interaction.ts';
 import { R } from './constants.ts';
-import { type Cubic, type CubicComponent, type CubicForm, createCubic } from './cubic.ts';
+import { type CubicComponent, type CubicForm, createCubic } from './cubic.ts';
 import { hydrogenAlpha, pengRobinsonSlope, soaveSlope, squareRootAlpha } from './cubic-alpha.ts';
 import type { GasModel } from './gas-model.ts';
 
@@ -34,7 +34,7 @@ export function createGasModel(name: GasModelName, components: readonly Componen
 export function createCubicPhases(
   name: Exclude<GasModelName, 'ideal'>,
   components: readonly Component[],
-): { readonly gas: Cubic; readonly liquid: Cubic } {
+): { readonly gas: GasModel; readonly liquid: GasModel } {
   const form = name === 'srk' ? SOAVE : PENG_ROBINSON;
   const entries = components.map(name === 'srk' ? soaveComponent : pengRobinsonComponent);
   const interactions = liquidInteractions(name, components);
@@ -140,6 +140,13 @@ function createIdealGasModel(size: number): GasModel {
     name: 'ideal',
     size,
     lnPhi: (_T, _P, _y, out) => {
+      out.fill(0);
+    },
+    lnPhiSlopes: (_T, _P, _y, perKelvin, perPascal) => {
+      perKelvin.fill(0);
+      perPascal.fill(0);
+    },
+    lnPhiByAmount: (_T, _P, _y, out) => {
       out.fill(0);
     },
     compressibility: () => 1,

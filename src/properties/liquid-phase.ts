@@ -5,6 +5,7 @@ import { R } from './constants.ts';
 import type { GasModel } from './gas-model.ts';
 import type { HenryConstant } from './henry.ts';
 import { henryConstant, lnHenry, lnHenrySlope, partialVolume, partialVolumeSlope } from './henry.ts';
+import { createLiquidByAmount } from './liquid-by-amount.ts';
 import { liquidVolume, liquidVolumeSlope } from './liquid-volume.ts';
 import { saturatedGasCompressibility } from './saturated-gas.ts';
 import { lnVapourPressure, lnVapourPressureSlope } from './vapour-pressure.ts';
@@ -33,6 +34,12 @@ export interface LiquidPhase {
   lnFugacityPerFraction(x: Float64Array, out: Float64Array): void;
   /** partial molar enthalpy less that of the ideal gas at T [J/mol] */
   enthalpyOverIdealGas(x: Float64Array, out: Float64Array): void;
+  /**
+   * What composition does in a liquid of amounts x that add up to N:
+   * @param lnFugacity  written: N ∂ ln(fᵢ/xᵢ)/∂xⱼ, size rows of size columns, row by row [-]
+   * @param enthalpy  written: Σ xᵢ ∂hᵢ/∂xⱼ of `enthalpyOverIdealGas` [J/mol]; 0 where the hᵢ are true partial ones
+   */
+  byAmount(x: Float64Array, lnFugacity: Float64Array, enthalpy: Float64Array): void;
   /** partial molar volumes [m3/mol] */
   volumes(x: Float64Array, out: Float64Array): void;
 }
@@ -162,7 +169,7 @@ export function createLiquidPhase(
   };
   const volumeTerm = (share: number, _s: number, h: HenryConstant) => share * partialVolume(h, T);
 
-  return {
+  const phase: Omit<LiquidPhase, 'byAmount'> = {
     roles,
     condensables,
     at,
@@ -202,6 +209,7 @@ export function createLiquidPhase(
       for (let d = 0; d < dissolved.length; d++) out[dissolved[d]] = overSolvents(d, x, volumeTerm, 0);
     },
   };
+  return { ...phase, byAmount: createLiquidByAmount(size, condensables, phase) };
 }
 
 function indicesOf(roles: readonly Role[], wanted: Role): number[] {

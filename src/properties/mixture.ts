@@ -14,6 +14,7 @@ import { createIdealGas } from './ideal-gas.ts';
 import { createLiquidPhase, type LiquidPhase } from './liquid-phase.ts';
 import { createPhaseSplit, type PhaseSplit } from './phase-split.ts';
 import { solveState } from './solve-state.ts';
+import { createStateSlopes, type FillStateSlopes } from './state-slopes.ts';
 
 export interface MixtureSpec {
   readonly components: readonly Component[];
@@ -47,6 +48,8 @@ export interface Mixture {
   settleAtEntropy(stream: StreamState, entropyWPerK: number): void;
   /** Entropy of a settled stream; elements have their standard entropies [W/K] */
   entropy(stream: StreamState): number;
+  /** Derivatives of a settled stream in its flows, T and P; false where it has none (see state-slopes.ts) */
+  readonly slopes: FillStateSlopes;
   /** Volume flow of a settled stream [m3/s], solids left out */
   volume(stream: StreamState): number;
   /** Total flow of all components, solids included [mol/s] */
@@ -172,6 +175,7 @@ export function createMixture(spec: MixtureSpec): Mixture {
     },
     settleAtEntropy: (stream, entropyWPerK) => solveState(stream, entropyWPerK, 'entropy', settle, entropy),
     entropy,
+    slopes: createStateSlopes(idealGas, gas, liquidPhase),
     volume: (stream) => {
       const { temperatureK: T, pressurePa: P, liquidMolPerS } = stream;
       const gasFlow = gasFractions(stream);

@@ -47,6 +47,13 @@ export function idealGasModel(size: number): GasModel {
     lnPhi: (_T, _P, _y, out) => {
       out.fill(0);
     },
+    lnPhiSlopes: (_T, _P, _y, perKelvin, perPascal) => {
+      perKelvin.fill(0);
+      perPascal.fill(0);
+    },
+    lnPhiByAmount: (_T, _P, _y, out) => {
+      out.fill(0);
+    },
     compressibility: () => 1,
     isLiquidLike: () => false,
     enthalpyDeparture: () => 0,

@@ -124,6 +124,35 @@ describe.each(['srk', 'pr'] as const)('the %s gas', (name) => {
     );
   });
 
+  test('has the ∂ ln φᵢ/∂nⱼ that finite differences give, the same for i and j', () => {
+    fc.assert(
+      fc.property(mixtures(name), fc.nat(5), (m, pick) => {
+        const size = m.gas.size;
+        const j = pick % size;
+        const slopes = new Float64Array(size * size);
+        m.gas.lnPhiByAmount(m.T, m.P, m.y, slopes);
+        if (m.y[j] === 0) return;
+        const step = 1e-4 * m.y[j]!;
+        // GasModel reads y as fractions of whatever they add up to
+        const moved = (by: number) =>
+          lnPhi(
+            m.gas,
+            m.T,
+            m.P,
+            m.y.map((yi, i) => (i === j ? yi + by : yi)),
+          );
+        const [up, down] = [moved(step), moved(-step)];
+        const size1 = 1 + slopes.reduce((most, s) => Math.max(most, Math.abs(s)), 0);
+        for (let i = 0; i < size; i++) {
+          const difference = (up[i]! - down[i]!) / (2 * step);
+          expect(Math.abs(slopes[i * size + j]! - difference), m.label).toBeLessThan(1e-6 * size1);
+          expect(Math.abs(slopes[i * size + j]! - slopes[j * size + i]!)).toBeLessThan(1e-11 * size1);
+        }
+      }),
+      runs,
+    );
+  });
+
   test('equals the pure gas when one component is alone', () => {
     fc.assert(
       fc.property(mixtures(name), fc.nat(5), (m, pick) => {
