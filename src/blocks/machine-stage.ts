@@ -29,13 +29,20 @@ const CLOSE = 1e-11;
  */
 export function createMachineStage(mixture: Mixture): MachineStage {
   const ideal = emptyStream(mixture.size);
+  /**
+   * What the last stage teaches for the first guess of the next: d ln T/d ln P along the isentrope, null before any; the
+   * rise of temperature that was found over the one guessed.
+   */
+  const last: { exponent: number | null; stretch: number } = { exponent: null, stretch: 1 };
 
-  function isentropicRise(stream: StreamState, pressurePa: number, firstK: number): number {
+  function isentropicRise(stream: StreamState, pressurePa: number, firstExponent: number): number {
     const entropy = mixture.entropy(stream);
+    const lnRatio = Math.log(pressurePa / stream.pressurePa);
     copyStream(stream, ideal);
-    ideal.temperatureK = firstK;
+    ideal.temperatureK = stream.temperatureK * Math.exp((last.exponent ?? firstExponent) * lnRatio);
     ideal.pressurePa = pressurePa;
     mixture.settleAtEntropy(ideal, entropy);
+    last.exponent = within(0, Math.log(ideal.temperatureK / stream.temperatureK) / lnRatio, 0.5);
     return ideal.enthalpyW - stream.enthalpyW;
   }
 
@@ -47,27 +54,31 @@ export function createMachineStage(mixture: Mixture): MachineStage {
     return true;
   }
 
-  function giveWork(stream: StreamState, pressurePa: number, work: number): void {
-    stream.temperatureK = ideal.temperatureK;
+  function giveWork(stream: StreamState, pressurePa: number, work: number, guessedRiseK: number): void {
+    const fromK = stream.temperatureK;
+    stream.temperatureK = fromK + last.stretch * guessedRiseK;
     stream.pressurePa = pressurePa;
     mixture.settleAtEnthalpy(stream, stream.enthalpyW + work);
+    last.stretch = within(0.5, (stream.temperatureK - fromK) / guessedRiseK || 1, 2);
   }
 
   return {
     compress(stream, pressurePa, efficiency, kind) {
       if (isIdle(stream, pressurePa)) return 0;
       // An ideal diatomic gas gives the first guess: T₂/T₁ = (P₂/P₁)^(2/7).
-      const firstK = stream.temperatureK * (pressurePa / stream.pressurePa) ** (2 / 7);
-      const rise = isentropicRise(stream, pressurePa, firstK);
-      const isentropic = kind === 'isentropic' ? efficiency : matched(stream, rise, efficiency);
+      const rise = isentropicRise(stream, pressurePa, 2 / 7);
+      const isPolytropic = kind === 'polytropic';
+      const isentropic = isPolytropic ? matched(stream, rise, efficiency) : efficiency;
       const work = rise / isentropic;
-      giveWork(stream, pressurePa, work);
+      // Where an efficiency was matched, `ideal` has come to the end of the real path.
+      const riseK = ideal.temperatureK - stream.temperatureK;
+      giveWork(stream, pressurePa, work, isPolytropic ? riseK : riseK / efficiency);
       return work;
     },
     expand(stream, pressurePa, efficiency) {
       if (isIdle(stream, pressurePa)) return 0;
-      const work = efficiency * isentropicRise(stream, pressurePa, stream.temperatureK);
-      giveWork(stream, pressurePa, work);
+      const work = efficiency * isentropicRise(stream, pressurePa, 0);
+      giveWork(stream, pressurePa, work, efficiency * (ideal.temperatureK - stream.temperatureK));
       return work;
     },
   };
@@ -94,4 +105,8 @@ export function createMachineStage(mixture: Mixture): MachineStage {
     }
     return next;
   }
+}
+
+function within(least: number, value: number, most: number): number {
+  return Math.min(Math.max(value, least), most);
 }

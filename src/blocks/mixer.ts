@@ -27,6 +27,8 @@ export const mixer: BlockKind<Settings> = {
   settings,
   ports: () => ({ inlets: 'any', outlets: ['out'] }),
   create(setting, { mixture }) {
+    /** what mixing adds to the mean temperature of the inlets, from the last pass: next time's first guess [K] */
+    const last = { riseK: 0 };
     return {
       pass(inlets, outlets) {
         const out = outlets[0];
@@ -35,7 +37,8 @@ export const mixer: BlockKind<Settings> = {
         let pressurePa = Number.POSITIVE_INFINITY;
         let flow = 0;
         let flowTimesK = 0;
-        for (const inlet of inlets) {
+        for (let k = 0; k < inlets.length; k++) {
+          const inlet = inlets[k];
           const total = mixture.total(inlet);
           for (let i = 0; i < mixture.size; i++) out.flowsMolPerS[i] += inlet.flowsMolPerS[i];
           enthalpyW += inlet.enthalpyW;
@@ -50,9 +53,14 @@ export const mixer: BlockKind<Settings> = {
           pressurePa = setting.pressure;
         }
         out.pressurePa = pressurePa;
-        out.temperatureK = flow > 0 ? flowTimesK / flow : inlets[0].temperatureK;
-        if (inlets.length === 1 && inlets[0].pressurePa === pressurePa) copyStream(inlets[0], out);
-        else mixture.settleAtEnthalpy(out, enthalpyW);
+        const meanK = flow > 0 ? flowTimesK / flow : inlets[0].temperatureK;
+        if (inlets.length === 1 && inlets[0].pressurePa === pressurePa) {
+          copyStream(inlets[0], out);
+          return;
+        }
+        out.temperatureK = meanK + last.riseK;
+        mixture.settleAtEnthalpy(out, enthalpyW);
+        last.riseK = out.temperatureK - meanK;
       },
       report(inlets, outlets) {
         const pressurePa = outlets[0].pressurePa;

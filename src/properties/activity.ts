@@ -93,11 +93,11 @@ function createNrtl(count: number, pairs: readonly NrtlPair[], placeOf: (id: str
   const q = new Float64Array(count);
   const slopeS = new Float64Array(count);
   const slopeQ = new Float64Array(count);
-  let keptT = Number.NaN;
+  const kept = { T: Number.NaN };
 
   function setTemperature(T: number): void {
-    if (T === keptT) return;
-    keptT = T;
+    if (T === kept.T) return;
+    kept.T = T;
     for (let k = 0; k < tau.length; k++) {
       tau[k] = perR[k] / T;
       G[k] = Math.exp(-alpha[k] * tau[k]);

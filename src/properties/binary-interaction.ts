@@ -9,6 +9,8 @@ export interface BinaryInteraction {
   readonly row: InteractionRow;
   value(T: number): number;
   slope(T: number): number;
+  /** both, written into place `at` (see AlphaRoot.write) */
+  write(T: number, at: number, values: Float64Array, slopes: Float64Array): void;
 }
 
 /** [K] over which a line in temperature goes over into its constant end */
@@ -70,18 +72,24 @@ function pairsOf(
 }
 
 /** kᵢⱼ(T) and its slope. */
-type Line = Pick<BinaryInteraction, 'value' | 'slope'>;
+type Line = Pick<BinaryInteraction, 'value' | 'slope' | 'write'>;
 
 function carriedOver(line: Line, hydrogen: Component): Line {
   const { temperatureK, acentricFactor } = hydrogen.critical!;
   const from = squareRootAlpha(temperatureK, soaveSlope(acentricFactor));
   const to = hydrogenAlpha(temperatureK);
+  const value = (T: number) => 1 - ((1 - line.value(T)) * from.value(T)) / to.value(T);
+  const slope = (T: number) => {
+    const ratio = from.value(T) / to.value(T);
+    const ratioSlope = (from.slope(T) - ratio * to.slope(T)) / to.value(T);
+    return line.slope(T) * ratio - (1 - line.value(T)) * ratioSlope;
+  };
   return {
-    value: (T) => 1 - ((1 - line.value(T)) * from.value(T)) / to.value(T),
-    slope: (T) => {
-      const ratio = from.value(T) / to.value(T);
-      const ratioSlope = (from.slope(T) - ratio * to.slope(T)) / to.value(T);
-      return line.slope(T) * ratio - (1 - line.value(T)) * ratioSlope;
+    value,
+    slope,
+    write(T, at, values, slopes) {
+      values[at] = value(T);
+      slopes[at] = slope(T);
     },
   };
 }
@@ -119,10 +127,31 @@ function gasRow(equation: 'srk' | 'pr', first: Component, second: Component): In
  */
 function roundedLine(row: InteractionRow): Line {
   const { k0, k1PerK, fromK, toK } = row;
-  if (k1PerK === 0) return { value: () => k0, slope: () => 0 };
+  if (k1PerK === 0) return constantLine(k0);
   return {
     value: (T) => k0 + k1PerK * (heldWithin(T, fromK, toK) - 298.15),
     slope: (T) => k1PerK * (logistic((T - fromK) / ROUNDING_K) - logistic((T - toK) / ROUNDING_K)),
+    write(T, at, values, slopes) {
+      const low = (T - fromK) / ROUNDING_K;
+      const high = (T - toK) / ROUNDING_K;
+      // softplus and logistic share their exponential
+      const eLow = Math.exp(-Math.abs(low));
+      const eHigh = Math.exp(-Math.abs(high));
+      const held = Math.max(low, 0) + Math.log1p(eLow) - Math.max(high, 0) - Math.log1p(eHigh);
+      values[at] = k0 + k1PerK * (fromK + ROUNDING_K * held - 298.15);
+      slopes[at] = k1PerK * ((low > 0 ? 1 : eLow) / (1 + eLow) - (high > 0 ? 1 : eHigh) / (1 + eHigh));
+    },
+  };
+}
+
+function constantLine(k0: number): Line {
+  return {
+    value: () => k0,
+    slope: () => 0,
+    write(_T, at, values, slopes) {
+      values[at] = k0;
+      slopes[at] = 0;
+    },
   };
 }
 

@@ -5,6 +5,8 @@
 export interface AlphaRoot {
   value(T: number): number;
   slope(T: number): number;
+  /** Both, written into place `at`: numbers handed back one by one would each be allocated. */
+  write(T: number, at: number, values: Float64Array, slopes: Float64Array): void;
 }
 
 /** √α below which the square-root form is continued by an exponential: N2 near 900 K, CH4 near 1500 K */
@@ -23,16 +25,22 @@ export function squareRootAlpha(criticalK: number, m: number): AlphaRoot {
   const slope = Math.max(m, 0);
   const jointRootTr = slope === 0 ? Number.POSITIVE_INFINITY : 1 + (1 - CONTINUED_BELOW) / slope;
   const rate = slope / CONTINUED_BELOW;
+  function value(T: number): number {
+    const rootTr = Math.sqrt(T / criticalK);
+    if (rootTr <= jointRootTr) return 1 + slope * (1 - rootTr);
+    return CONTINUED_BELOW * Math.exp(-rate * (rootTr - jointRootTr));
+  }
+  function slopeAt(T: number): number {
+    const rootTr = Math.sqrt(T / criticalK);
+    const perRootTr = rootTr <= jointRootTr ? -slope : -slope * Math.exp(-rate * (rootTr - jointRootTr));
+    return perRootTr / (2 * Math.sqrt(T * criticalK));
+  }
   return {
-    value(T) {
-      const rootTr = Math.sqrt(T / criticalK);
-      if (rootTr <= jointRootTr) return 1 + slope * (1 - rootTr);
-      return CONTINUED_BELOW * Math.exp(-rate * (rootTr - jointRootTr));
-    },
-    slope(T) {
-      const rootTr = Math.sqrt(T / criticalK);
-      const perRootTr = rootTr <= jointRootTr ? -slope : -slope * Math.exp(-rate * (rootTr - jointRootTr));
-      return perRootTr / (2 * Math.sqrt(T * criticalK));
+    value,
+    slope: slopeAt,
+    write(T, at, values, slopes) {
+      values[at] = value(T);
+      slopes[at] = slopeAt(T);
     },
   };
 }
@@ -45,7 +53,14 @@ export function squareRootAlpha(criticalK: number, m: number): AlphaRoot {
 export function hydrogenAlpha(criticalK: number): AlphaRoot {
   const rate = 0.30288 / (2 * criticalK);
   const value = (T: number): number => Math.sqrt(1.202) * Math.exp(-rate * T);
-  return { value, slope: (T) => -rate * value(T) };
+  return {
+    value,
+    slope: (T) => -rate * value(T),
+    write(T, at, values, slopes) {
+      values[at] = value(T);
+      slopes[at] = -rate * values[at];
+    },
+  };
 }
 
 /** m = 0.480 + 1.574 ω − 0.176 ω². @source G. Soave, Chem. Eng. Sci. 27 (1972) 1197 */

@@ -75,11 +75,13 @@ export function createCubic(
   const second = Int32Array.from(pairs, ({ j }) => memberOf[j]);
 
   // kept for the latest temperature: √aᵢ, its slope, and per pair kᵢⱼ √(aᵢ aⱼ) and its slope
-  let keptT = Number.NaN;
+  const kept = { T: Number.NaN };
   const root = new Float64Array(count);
   const rootSlope = new Float64Array(count);
   const taken = new Float64Array(pairs.length);
   const takenSlope = new Float64Array(pairs.length);
+  const kij = new Float64Array(pairs.length);
+  const kijSlope = new Float64Array(pairs.length);
 
   // of the latest mixture; x are fractions among the members
   const keptY = new Float64Array(size);
@@ -92,20 +94,21 @@ export function createCubic(
   const state = { delta1, delta2, members, covolume, root, rowSum, first, second, taken, now };
 
   function setTemperature(T: number): void {
-    if (T === keptT) return;
+    if (T === kept.T) return;
     for (let m = 0; m < count; m++) {
-      root[m] = criticalRoot[m] * alphas[m].value(T);
-      rootSlope[m] = criticalRoot[m] * alphas[m].slope(T);
+      alphas[m].write(T, m, root, rootSlope);
+      root[m] *= criticalRoot[m];
+      rootSlope[m] *= criticalRoot[m];
     }
     for (let k = 0; k < pairs.length; k++) {
+      pairs[k].write(T, k, kij, kijSlope);
       const m = first[k];
       const n = second[k];
-      const kij = pairs[k].value(T);
-      taken[k] = kij * root[m] * root[n];
+      taken[k] = kij[k] * root[m] * root[n];
       takenSlope[k] =
-        kij * (rootSlope[m] * root[n] + root[m] * rootSlope[n]) + pairs[k].slope(T) * root[m] * root[n];
+        kij[k] * (rootSlope[m] * root[n] + root[m] * rootSlope[n]) + kijSlope[k] * root[m] * root[n];
     }
-    keptT = T;
+    kept.T = T;
   }
 
   /** Solves the state of the members of a mixture; false where it has none. Asked again, it has the answer. */

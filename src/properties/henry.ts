@@ -26,11 +26,13 @@ export function henryConstant(solventId: string, soluteId: string): HenryConstan
 /**
  * ln(H/Pa), H = lim f/x at the solvent's saturation pressure: ln(H/bar) = A + B/T + C ln T + D T inside the
  * range, linear in 1/T from the range's end beyond it.
+ *
+ * @param lnT  ln(T/K), for a caller that asks many constants at one temperature
  */
-export function lnHenry(h: HenryConstant, T: number): number {
+export function lnHenry(h: HenryConstant, T: number, lnT = Math.log(T)): number {
   if (T < h.fromK) return h.lnFrom + h.steepnessFrom * (1 / h.fromK - 1 / T);
   if (T > h.toK) return h.lnTo + h.steepnessTo * (1 / h.toK - 1 / T);
-  return lnInside(h, T);
+  return lnInside(h, T, lnT);
 }
 
 /** d ln H/dT [1/K]; continuous over the ends of the range. */
@@ -67,16 +69,16 @@ function fill(): void {
     bySolvent.set(row.solvent, solutes);
     solutes.set(row.solute, {
       ...row,
-      lnFrom: lnInside(row, row.fromK),
-      lnTo: lnInside(row, row.toK),
+      lnFrom: lnInside(row, row.fromK, Math.log(row.fromK)),
+      lnTo: lnInside(row, row.toK, Math.log(row.toK)),
       steepnessFrom: steepnessInside(row, row.fromK),
       steepnessTo: steepnessInside(row, row.toK),
     });
   }
 }
 
-function lnInside(row: HenryRow, T: number): number {
-  return LN_BAR + row.A + row.B / T + row.C * Math.log(T) + row.D * T;
+function lnInside(row: HenryRow, T: number, lnT: number): number {
+  return LN_BAR + row.A + row.B / T + row.C * lnT + row.D * T;
 }
 
 /** T² d ln H/dT [K] */

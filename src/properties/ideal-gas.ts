@@ -46,7 +46,7 @@ export function createIdealGas(components: readonly Component[], basis: Enthalpy
   const low = new Float64Array(4 * size).fill(Number.NaN);
   const high = new Float64Array(4 * size).fill(Number.NaN);
   const segment = new Int32Array(size);
-  let locatedK = Number.NaN;
+  const located = { T: Number.NaN };
 
   components.forEach((c, i) => {
     first[i + 1] = first[i] + c.idealGas.length;
@@ -62,8 +62,8 @@ export function createIdealGas(components: readonly Component[], basis: Enthalpy
 
   /** Interval of every component at T, kept for the next call at the same temperature. */
   function locate(T: number): void {
-    if (T === locatedK) return;
-    locatedK = T;
+    if (T === located.T) return;
+    located.T = T;
     for (let i = 0; i < size; i++) {
       const last = first[i + 1] - 1;
       if (!(T >= low[4 * i])) segment[i] = BELOW;

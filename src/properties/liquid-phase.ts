@@ -18,6 +18,8 @@ export interface LiquidPhase {
   readonly roles: readonly Role[];
   /** indices of the condensables */
   readonly condensables: readonly number[];
+  /** false where fugacities per fraction are the same at every composition */
+  readonly compositionActs: boolean;
   /** set T [K] and P [Pa] */
   at(T: number, P: number): void;
   /** true when z holds a condensable below its critical temperature: a liquid may form */
@@ -70,49 +72,77 @@ export function createLiquidPhase(
   gas: GasModel,
 ): LiquidPhase {
   const size = components.length;
+  // Typed arrays and fields instead of lists, closures and variables: a pass asks for all this some twenty times.
   const condensables = indicesOf(roles, 'condensable');
-  const dissolved = indicesOf(roles, 'dissolved');
-  const solvents = dissolved.map((i) =>
+  const dissolved = Int32Array.from(indicesOf(roles, 'dissolved'));
+  const known = Array.from(dissolved, (i) =>
     condensables
       .map((s) => ({ s, henry: henryConstant(components[s].id, components[i].id) }))
       .filter((pair): pair is { s: number; henry: HenryConstant } => pair.henry !== undefined),
   );
+  // The Henry constants of dissolved gas number d are firstPair[d] to firstPair[d + 1] − 1.
+  const pairs = known.flat();
+  const solvent = Int32Array.from(pairs, ({ s }) => s);
+  const firstPair = Int32Array.of(0, ...known.map((_, d) => known.slice(0, d + 1).flat().length));
   const activity = createActivityModel(components, condensables);
   const pressureActs = gas.name !== 'ideal';
-  const criticalK = components.map((c) => c.critical?.temperatureK ?? Number.POSITIVE_INFINITY);
+  const criticalK = Float64Array.from(
+    components,
+    (c) => c.critical?.temperatureK ?? Number.POSITIVE_INFINITY,
+  );
   const lnGamma = new Float64Array(size);
-  // Of each condensable at the present T and P: ln f of the pure liquid, Psat [Pa], its slope [Pa/K], volume, enthalpy.
+  // Of each condensable: ln f of the pure liquid at Psat and at P, Psat [Pa], its slope [Pa/K], volume, enthalpy.
+  const lnSaturated = new Float64Array(size);
   const lnPure = new Float64Array(size);
   const psat = new Float64Array(size);
   const psatSlope = new Float64Array(size);
   const volume = new Float64Array(size);
   const enthalpy = new Float64Array(size);
-  let T = Number.NaN;
-  let P = Number.NaN;
-  let enthalpyAtT = Number.NaN;
-  let enthalpyAtP = Number.NaN;
+  // Of each Henry constant: ln H at Psat and at P, partial volume, enthalpy over that of the ideal gas.
+  const lnH = new Float64Array(pairs.length);
+  const lnHAtP = new Float64Array(pairs.length);
+  const gasVolume = new Float64Array(pairs.length);
+  const gasEnthalpy = new Float64Array(pairs.length);
+  const now = { T: Number.NaN, P: Number.NaN, enthalpiesKnown: false };
 
-  function at(temperatureK: number, pressurePa: number): void {
-    if (temperatureK === T && pressurePa === P) return;
-    T = temperatureK;
-    P = pressurePa;
-    for (const i of condensables) {
-      const c = components[i];
-      const lnPsat = lnVapourPressure(c, T);
+  function at(T: number, P: number): void {
+    if (T === now.T && P === now.P) return;
+    if (T !== now.T) setTemperature(T);
+    now.T = T;
+    now.P = P;
+    now.enthalpiesKnown = false;
+    for (let c = 0; c < condensables.length; c++) {
+      const i = condensables[c];
+      lnPure[i] = lnSaturated[i];
+      if (pressureActs) lnPure[i] += (volume[i] * (P - psat[i])) / (R * T);
+    }
+    for (let k = 0; k < pairs.length; k++)
+      lnHAtP[k] = lnH[k] + (gasVolume[k] * (P - psat[solvent[k]])) / (R * T);
+  }
+
+  function setTemperature(T: number): void {
+    for (let c = 0; c < condensables.length; c++) {
+      const i = condensables[c];
+      const lnPsat = lnVapourPressure(components[i], T);
       psat[i] = Math.exp(lnPsat);
-      const v = liquidVolume(c, T);
+      const v = liquidVolume(components[i], T);
       // A user's component may come without any: then pressure does not act on its liquid.
       volume[i] = Number.isNaN(v) ? 0 : v;
-      lnPure[i] = lnPsat + gas.pureLnPhi(i, T, psat[i]);
-      if (pressureActs) lnPure[i] += (volume[i] * (P - psat[i])) / (R * T);
+      lnSaturated[i] = lnPsat + gas.pureLnPhi(i, T, psat[i]);
+    }
+    const lnT = Math.log(T);
+    for (let k = 0; k < pairs.length; k++) {
+      lnH[k] = lnHenry(pairs[k].henry, T, lnT);
+      gasVolume[k] = partialVolume(pairs[k].henry, T);
     }
   }
 
-  function condensableEnthalpies(): void {
-    if (enthalpyAtT === T && enthalpyAtP === P) return;
-    enthalpyAtT = T;
-    enthalpyAtP = P;
-    for (const i of condensables) {
+  function setEnthalpies(): void {
+    if (now.enthalpiesKnown) return;
+    now.enthalpiesKnown = true;
+    const { T, P } = now;
+    for (let n = 0; n < condensables.length; n++) {
+      const i = condensables[n];
       const c = components[i];
       const v = volume[i];
       const p = psat[i];
@@ -124,89 +154,89 @@ export function createLiquidPhase(
         T * psatSlope[i] * (vGas - v) +
         (v === 0 || !pressureActs ? 0 : (v - T * liquidVolumeSlope(c, T)) * (P - p));
     }
+    for (let k = 0; k < pairs.length; k++) {
+      const { henry } = pairs[k];
+      const s = solvent[k];
+      const v = gasVolume[k];
+      gasEnthalpy[k] =
+        -R * T * T * lnHenrySlope(henry, T) +
+        (v - T * partialVolumeSlope(henry, T)) * (P - psat[s]) +
+        T * v * psatSlope[s];
+    }
   }
 
   /**
-   * Sum of `term` over the solvents of dissolved gas number d, each with its share among them; `none` where
-   * no solvent can be liquid. Above its critical temperature a component dissolves nothing: the Henry
-   * constant carried on to there would have all the gas disappear in a trace of it.
+   * Writes for each dissolved gas the mean of what its Henry constants say (`of`), each with the share of its solvent
+   * among them; `none` where no solvent can be liquid. Above its critical temperature a component dissolves
+   * nothing: the Henry constant carried on to there would have all the gas disappear in a trace of it.
    */
-  function overSolvents(
-    d: number,
-    x: Float64Array,
-    term: (share: number, s: number, h: HenryConstant) => number,
-    none: number,
-  ): number {
-    const pairs = solvents[d];
-    let count = 0;
-    let total = 0;
-    for (let k = 0; k < pairs.length; k++) {
-      const { s } = pairs[k];
-      if (T >= criticalK[s]) continue;
-      count += 1;
-      total += x[s];
+  function overSolvents(x: Float64Array, of: Float64Array, none: number, out: Float64Array): void {
+    for (let d = 0; d < dissolved.length; d++) {
+      let count = 0;
+      let total = 0;
+      for (let k = firstPair[d]; k < firstPair[d + 1]; k++) {
+        if (now.T >= criticalK[solvent[k]]) continue;
+        count += 1;
+        total += x[solvent[k]];
+      }
+      let sum = count === 0 ? none : 0;
+      for (let k = firstPair[d]; k < firstPair[d + 1]; k++) {
+        if (now.T >= criticalK[solvent[k]]) continue;
+        const share = total > 0 ? x[solvent[k]] / total : 1 / count;
+        if (share > 0) sum += share * of[k];
+      }
+      out[dissolved[d]] = sum;
     }
-    if (count === 0) return none;
-    let sum = 0;
-    for (let k = 0; k < pairs.length; k++) {
-      const { s, henry } = pairs[k];
-      if (T >= criticalK[s]) continue;
-      const share = total > 0 ? x[s] / total : 1 / count;
-      if (share > 0) sum += term(share, s, henry);
-    }
-    return sum;
   }
-  const lnHenryTerm = (share: number, s: number, h: HenryConstant) =>
-    share * (lnHenry(h, T) + (partialVolume(h, T) * (P - psat[s])) / (R * T));
-  const enthalpyTerm = (share: number, s: number, h: HenryConstant) => {
-    const v = partialVolume(h, T);
-    return (
-      share *
-      (-R * T * T * lnHenrySlope(h, T) +
-        (v - T * partialVolumeSlope(h, T)) * (P - psat[s]) +
-        T * v * psatSlope[s])
-    );
-  };
-  const volumeTerm = (share: number, _s: number, h: HenryConstant) => share * partialVolume(h, T);
 
   const phase: Omit<LiquidPhase, 'byAmount'> = {
     roles,
     condensables,
+    compositionActs: activity !== null || (condensables.length > 1 && dissolved.length > 0),
     at,
-    mayForm(temperatureK, z) {
-      for (const i of condensables) if (z[i] > 0 && temperatureK < criticalK[i]) return true;
+    mayForm(T, z) {
+      for (let c = 0; c < condensables.length; c++) {
+        const i = condensables[c];
+        if (z[i] > 0 && T < criticalK[i]) return true;
+      }
       return false;
     },
-    isLiquid(temperatureK, x) {
+    isLiquid(T, x) {
       let room = 0;
-      let solvent = 0;
-      for (const i of condensables) {
+      let ofSolvents = 0;
+      for (let c = 0; c < condensables.length; c++) {
+        const i = condensables[c];
         if (x[i] === 0) continue;
-        room += x[i] * (criticalK[i] - temperatureK);
-        solvent += x[i];
+        room += x[i] * (criticalK[i] - T);
+        ofSolvents += x[i];
       }
-      let solute = 0;
-      for (const i of dissolved) solute += x[i];
-      return room > 0 && solvent > solute;
+      let ofSolutes = 0;
+      for (let d = 0; d < dissolved.length; d++) ofSolutes += x[dissolved[d]];
+      return room > 0 && ofSolvents > ofSolutes;
     },
     lnFugacityPerFraction(x, out) {
       out.fill(Number.POSITIVE_INFINITY);
-      if (activity) activity.lnGamma(T, x, lnGamma);
-      for (const i of condensables) out[i] = lnPure[i] + lnGamma[i];
-      for (let d = 0; d < dissolved.length; d++)
-        out[dissolved[d]] = overSolvents(d, x, lnHenryTerm, Number.POSITIVE_INFINITY);
+      if (activity) activity.lnGamma(now.T, x, lnGamma);
+      for (let c = 0; c < condensables.length; c++) {
+        const i = condensables[c];
+        out[i] = lnPure[i] + lnGamma[i];
+      }
+      overSolvents(x, lnHAtP, Number.POSITIVE_INFINITY, out);
     },
     enthalpyOverIdealGas(x, out) {
-      condensableEnthalpies();
+      setEnthalpies();
       out.fill(0);
-      if (activity) activity.lnGammaSlope(T, x, lnGamma);
-      for (const i of condensables) out[i] = enthalpy[i] - R * T * T * lnGamma[i];
-      for (let d = 0; d < dissolved.length; d++) out[dissolved[d]] = overSolvents(d, x, enthalpyTerm, 0);
+      if (activity) activity.lnGammaSlope(now.T, x, lnGamma);
+      for (let c = 0; c < condensables.length; c++) {
+        const i = condensables[c];
+        out[i] = enthalpy[i] - R * now.T * now.T * lnGamma[i];
+      }
+      overSolvents(x, gasEnthalpy, 0, out);
     },
     volumes(x, out) {
       out.fill(0);
-      for (const i of condensables) out[i] = volume[i];
-      for (let d = 0; d < dissolved.length; d++) out[dissolved[d]] = overSolvents(d, x, volumeTerm, 0);
+      for (let c = 0; c < condensables.length; c++) out[condensables[c]] = volume[condensables[c]];
+      overSolvents(x, gasVolume, 0, out);
     },
   };
   return { ...phase, byAmount: createLiquidByAmount(size, condensables, phase) };

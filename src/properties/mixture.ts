@@ -169,7 +169,7 @@ export function createMixture(spec: MixtureSpec): Mixture {
     settle,
     settlePhases,
     settleAtEnthalpy: (stream, enthalpyW) => {
-      solveState(stream, enthalpyW, 'enthalpy', settle, (s) => s.enthalpyW);
+      solveState(stream, enthalpyW, 'enthalpy', settle, enthalpyOf);
       // The temperature is found to rounding; the enthalpy is what was asked for, so that balances close.
       if (total(stream) > 0) stream.enthalpyW = enthalpyW;
     },
@@ -196,6 +196,10 @@ export function createMixture(spec: MixtureSpec): Mixture {
     cautions: (stream) => cautionsOf(stream, components, roles, spec.liquid ?? 'antoine'),
     withCondensables: (condense) => createMixture({ ...spec, condense }),
   };
+}
+
+function enthalpyOf(stream: StreamState): number {
+  return stream.enthalpyW;
 }
 
 /** What gas and liquid are computed with. */

@@ -79,6 +79,7 @@ export function createPhaseSplit(gas: GasModel, liquidPhase: LiquidPhase): Phase
     change.fill(0);
     let sum = 0;
     let shortened = 1;
+    let last = 0;
     // The composition of the drop enters through solvent shares and activities: without them two rounds settle it.
     for (let round = 0; round < MAX_ROUNDS; round++) {
       liquidPhase.lnFugacityPerFraction(drop, lnLiquid);
@@ -102,7 +103,11 @@ export function createPhaseSplit(gas: GasModel, liquidPhase: LiquidPhase): Phase
         if (drop[i] > 0) drop[i] *= Math.exp(shortened * change[i]);
         sum += drop[i];
       }
-      if (moved <= 1e-12) break;
+      // Where composition does not act, the first round was exact.
+      if (moved <= 1e-12 || !liquidPhase.compositionActs) break;
+      // As many steps as are left, each no smaller than this one, would not bring the sum up to 1.
+      if (maybeGas && moved < last && (MAX_ROUNDS - round) * moved < -Math.log(sum)) break;
+      last = moved;
     }
     return (maybeGas && sum <= 1) || !liquidPhase.isLiquid(T, drop);
   }

@@ -17,6 +17,8 @@ const LONGEST_LEAP = 50;
 const LONG = 60;
 /** How far a leap may lead in ln K then, whatever the last step. */
 const LEAP_OUT = 0.1;
+/** A substitution that halves ln K's error at each step, and moves it by less than this, is hastened by secants. */
+const CLOSING = 0.1;
 /** Steps that swing back by more than this share of the last one are shortened. */
 export const SWING = -0.3;
 
@@ -41,10 +43,11 @@ export interface Substitution {
 /**
  * Successive substitution in ln K = ln(f/x)_liquid − ln(φ P). Near a critical point of the mixture the steps
  * shrink by a few per cent each; there the way left is leapt over by the dominant eigenvalue. In a liquid of
- * strong attraction (ammonia and water) they overshoot; there they are shortened by it.
+ * strong attraction (ammonia and water) they overshoot; there they are shortened by it. Where they close in fast
+ * anyway, the last two are combined to the step that would have left least (Anderson's method, one step deep).
  *
  * @source Michelsen & Mollerup, Thermodynamic Models: Fundamentals & Computational Aspects, 2nd ed., ch. 10;
- *   eigenvalue: O. Orbach & C. M. Crowe, Can. J. Chem. Eng. 49 (1971) 509
+ *   eigenvalue: O. Orbach & C. M. Crowe, Can. J. Chem. Eng. 49 (1971) 509; D. G. Anderson, J. ACM 12 (1965) 547
  */
 export function createSubstitution(gas: GasModel, liquidPhase: LiquidPhase): Substitution {
   const size = gas.size;
@@ -56,7 +59,10 @@ export function createSubstitution(gas: GasModel, liquidPhase: LiquidPhase): Sub
   const lnPhi = new Float64Array(size);
   const lnLiquid = new Float64Array(size);
   const lnK = new Float64Array(size);
+  /** what the next K values are off, now and in the step before; the step that was taken then */
+  const offset = new Float64Array(size);
   const change = new Float64Array(size);
+  const taken = new Float64Array(size);
   const share = { V: 0.5, L: 0.5 };
 
   return { z, lnK, x, y, share, run };
@@ -75,7 +81,9 @@ export function createSubstitution(gas: GasModel, liquidPhase: LiquidPhase): Sub
       let moved = 0;
       let along = 0;
       let before = 0;
+      let turned = 0;
       for (let i = 0; i < size; i++) {
+        offset[i] = 0;
         if (z[i] === 0) continue;
         const next = lnLiquid[i] - lnPhi[i] - lnP;
         const off = next === Number.POSITIVE_INFINITY ? 0 : next - lnK[i];
@@ -83,17 +91,35 @@ export function createSubstitution(gas: GasModel, liquidPhase: LiquidPhase): Sub
         moved = Math.max(moved, Math.abs(off));
         along += off * change[i];
         before += change[i] * change[i];
-        change[i] = off;
+        turned += (off - change[i]) * (off - change[i]);
+        offset[i] = off;
       }
-      // The last step was multiplied by `factor`; from that follows the eigenvalue of a plain one.
-      const eigenvalue = before > 0 ? 1 + (along / before - 1) / factor : 0;
-      if (eigenvalue < SWING) shortened = Math.min(shortened, 1 / (1 - eigenvalue));
-      const leaps = step % STEPS_PER_LEAP === STEPS_PER_LEAP - 1 && !single && eigenvalue > 0;
-      factor = leaps ? Math.max(shortened, wholeWay(eigenvalue, moved, step > LONG)) : shortened;
-      for (let i = 0; i < size; i++) lnK[i] += factor * change[i];
-      if (moved <= SETTLED || (moved <= ROUNDING && moved >= last)) return true;
-      if (single && step > SINGLE_STEPS) return true;
-      last = leaps ? Number.POSITIVE_INFINITY : moved;
+      let done = moved <= SETTLED || (moved <= ROUNDING && moved >= last) || (single && step > SINGLE_STEPS);
+      if (!done && !single && last < Number.POSITIVE_INFINITY && moved < CLOSING && moved < 0.5 * last) {
+        // The next step would be shorter again by as much: this one leads to the answer.
+        done = (moved * moved) / last <= SETTLED;
+        let weight = 0;
+        for (let i = 0; i < size; i++) weight += (offset[i] * (offset[i] - change[i])) / turned;
+        for (let i = 0; i < size; i++) taken[i] = offset[i] - weight * (taken[i] + offset[i] - change[i]);
+        factor = Number.NaN;
+      } else {
+        // The last step was multiplied by `factor`; from that follows the eigenvalue of a plain one.
+        const eigenvalue = before > 0 && factor > 0 ? 1 + (along / before - 1) / factor : 0;
+        if (eigenvalue < SWING) shortened = Math.min(shortened, 1 / (1 - eigenvalue));
+        const leaps = step % STEPS_PER_LEAP === STEPS_PER_LEAP - 1 && !single && eigenvalue > 0;
+        factor = leaps ? Math.max(shortened, wholeWay(eigenvalue, moved, step > LONG)) : shortened;
+        for (let i = 0; i < size; i++) taken[i] = factor * offset[i];
+        if (leaps) moved = Number.POSITIVE_INFINITY;
+      }
+      for (let i = 0; i < size; i++) {
+        lnK[i] += taken[i];
+        change[i] = offset[i];
+      }
+      if (done) {
+        if (!single) shareBetweenPhases();
+        return true;
+      }
+      last = moved;
     }
     return false;
   }
@@ -104,8 +130,8 @@ export function createSubstitution(gas: GasModel, liquidPhase: LiquidPhase): Sub
    */
   function shareBetweenPhases(): void {
     for (let i = 0; i < size; i++) {
-      K[i] = Math.exp(lnK[i]);
-      inverseK[i] = Math.exp(-lnK[i]);
+      if (share.L < 0.5) inverseK[i] = Math.exp(-lnK[i]);
+      else K[i] = Math.exp(lnK[i]);
     }
     if (share.L < 0.5) {
       share.L = vapourFraction(z, inverseK, share.L);

@@ -16,8 +16,27 @@ const SECANT_LEAVES = 0.25;
 /** Points closer together than this share of T tell rounding, not the slope. */
 const LEAST_SPAN = 1e-7;
 
-/** What each stream's last search found a mole to take up per kelvin, reaction and condensation included [J/(mol K)]. */
-const heatCapacities = new WeakMap<StreamState, number>();
+/**
+ * One search, kept for the next one of the same stream, so that a pass allocates nothing: numbers are its fields, for a
+ * variable that a closure shares is allocated anew at each change.
+ */
+interface Search {
+  settle: (stream: StreamState) => void;
+  value: (stream: StreamState) => number;
+  wanted: number;
+  tolerance: number;
+  /** where the answer lies: below it `low`, above it `high`, NaN before one is met */
+  low: number;
+  errorLow: number;
+  high: number;
+  errorHigh: number;
+  /** that of the last secant */
+  slope: number;
+  /** what a mole takes up per kelvin, reaction and condensation included, 0 before it is known [J/(mol K)] */
+  heatCapacity: number;
+}
+
+const searches = new WeakMap<StreamState, Search>();
 
 /**
  * Find the temperature at which a state function that rises with temperature (enthalpy or entropy at fixed
@@ -40,40 +59,59 @@ export function solveState(
   settle: (stream: StreamState) => void,
   value: (stream: StreamState) => number,
 ): void {
-  const total = stream.flowsMolPerS.reduce((sum, flow) => sum + flow, 0);
+  const { flowsMolPerS } = stream;
+  let total = 0;
+  for (let i = 0; i < flowsMolPerS.length; i++) total += flowsMolPerS[i];
   if (total === 0) {
     settle(stream);
     return;
   }
-  const errorAt = (T: number): number => {
-    stream.temperatureK = T;
-    settle(stream);
-    return value(stream) - wanted;
-  };
+  const search = searchOf(stream);
+  search.settle = settle;
+  search.value = value;
+  search.wanted = wanted;
   const start = Math.min(Math.max(stream.temperatureK, LOWEST_K), HIGHEST_K);
   // A kelvin of any stream holds at least the heat of a monatomic gas: this is 1e-12 of the temperature.
-  const tolerance = 1e-12 * 2.5 * R * total * (name === 'enthalpy' ? start : 1);
-  const error = errorAt(start);
+  search.tolerance = 1e-12 * 2.5 * R * total * (name === 'enthalpy' ? start : 1);
+  const error = errorAt(stream, search, start);
   if (Number.isNaN(error)) throw outOfReach(name, start);
-  if (Math.abs(error) <= tolerance) return;
+  if (Math.abs(error) <= search.tolerance) return;
   const perHeatCapacity = name === 'enthalpy' ? total : total / start;
-  const slope = (heatCapacities.get(stream) ?? 0) * perHeatCapacity || slopeAt(start, error, errorAt);
-  const search: Search = { low: Number.NaN, errorLow: 0, high: Number.NaN, errorHigh: 0, slope };
+  search.low = Number.NaN;
+  search.high = Number.NaN;
+  search.slope = search.heatCapacity * perHeatCapacity || slopeAt(stream, search, start, error);
   narrow(search, start, error);
-  if (closesBySecants(search, start, error, tolerance, errorAt)) {
-    if (search.slope > 0) heatCapacities.set(stream, search.slope / perHeatCapacity);
+  if (closesBySecants(stream, search, start, error)) {
+    if (search.slope > 0) search.heatCapacity = search.slope / perHeatCapacity;
     return;
   }
-  if (!findsBracket(search, name, tolerance, errorAt)) close(stream, search, tolerance, errorAt);
+  if (!findsBracket(stream, search, name)) close(stream, search);
 }
 
-/** Where the answer lies: below it `low`, above it `high`, NaN before one is met; the slope of the last secant. */
-interface Search {
-  low: number;
-  errorLow: number;
-  high: number;
-  errorHigh: number;
-  slope: number;
+function searchOf(stream: StreamState): Search {
+  const known = searches.get(stream);
+  if (known) return known;
+  const search: Search = {
+    settle: () => {},
+    value: () => Number.NaN,
+    wanted: Number.NaN,
+    tolerance: Number.NaN,
+    low: Number.NaN,
+    errorLow: Number.NaN,
+    high: Number.NaN,
+    errorHigh: Number.NaN,
+    slope: Number.NaN,
+    heatCapacity: 0,
+  };
+  searches.set(stream, search);
+  return search;
+}
+
+/** Settles the stream at a temperature; its value there less the one wanted. */
+function errorAt(stream: StreamState, search: Search, T: number): number {
+  stream.temperatureK = T;
+  search.settle(stream);
+  return search.value(stream) - search.wanted;
 }
 
 function narrow(search: Search, T: number, error: number): void {
@@ -87,19 +125,13 @@ function narrow(search: Search, T: number, error: number): void {
 }
 
 /** The slope over 0.1 K towards the answer. */
-function slopeAt(T: number, error: number, errorAt: (T: number) => number): number {
+function slopeAt(stream: StreamState, search: Search, T: number, error: number): number {
   const probe = error < 0 ? T + 0.1 : T - 0.1;
-  return (errorAt(probe) - error) / (probe - T);
+  return (errorAt(stream, search, probe) - error) / (probe - T);
 }
 
 /** True when the value is met; false leaves what was learnt in `search`. */
-function closesBySecants(
-  search: Search,
-  start: number,
-  errorAtStart: number,
-  tolerance: number,
-  errorAt: (T: number) => number,
-): boolean {
+function closesBySecants(stream: StreamState, search: Search, start: number, errorAtStart: number): boolean {
   let T = start;
   let error = errorAtStart;
   for (let step = 0; step < MAX_SECANTS && search.slope > 0; step++) {
@@ -107,8 +139,8 @@ function closesBySecants(
     const way = Math.min(Math.max(-error / search.slope, -longest), longest);
     const next = Math.min(Math.max(T + way, LOWEST_K), HIGHEST_K);
     if (next <= search.low || next >= search.high) return false;
-    const errorNext = errorAt(next);
-    if (Math.abs(errorNext) <= tolerance) return true;
+    const errorNext = errorAt(stream, search, next);
+    if (Math.abs(errorNext) <= search.tolerance) return true;
     narrow(search, next, errorNext);
     // The first slope may be that of another pressure or composition: the second secant mends it.
     if (!(Math.abs(errorNext) < (step === 0 ? 1 : SECANT_LEAVES) * Math.abs(error))) return false;
@@ -120,12 +152,7 @@ function closesBySecants(
 }
 
 /** Goes on from the known end by growing steps until the other is met; true when a step happens to meet the value. */
-function findsBracket(
-  search: Search,
-  name: 'enthalpy' | 'entropy',
-  tolerance: number,
-  errorAt: (T: number) => number,
-): boolean {
+function findsBracket(stream: StreamState, search: Search, name: 'enthalpy' | 'entropy'): boolean {
   const missing = Number.isNaN(search.high) ? search.errorLow : search.errorHigh;
   const first = 1.02 * Math.abs(missing / search.slope);
   let step = search.slope > 0 ? Math.max(first, 1e-6) : 1;
@@ -134,16 +161,16 @@ function findsBracket(
     const way = Math.min(step, LONGEST_STEP * from);
     const T = Math.min(Math.max(from === search.low ? from + way : from - way, LOWEST_K), HIGHEST_K);
     if (T === from) throw outOfReach(name, T);
-    const error = errorAt(T);
+    const error = errorAt(stream, search, T);
     if (Number.isNaN(error)) throw outOfReach(name, T);
-    if (Math.abs(error) <= tolerance) return true;
+    if (Math.abs(error) <= search.tolerance) return true;
     narrow(search, T, error);
     step *= 2;
   }
   return false;
 }
 
-function close(stream: StreamState, search: Search, tolerance: number, errorAt: (T: number) => number): void {
+function close(stream: StreamState, search: Search): void {
   let { low, errorLow, high, errorHigh } = search;
   let weightLow = errorLow;
   let weightHigh = errorHigh;
@@ -153,8 +180,8 @@ function close(stream: StreamState, search: Search, tolerance: number, errorAt: 
     // Every fourth step halves the bracket, so that a jump is closed in as fast as a slope.
     if (!(T > low && T < high) || step % 4 === 3) T = 0.5 * (low + high);
     if (T === low || T === high) break;
-    const error = errorAt(T);
-    if (Math.abs(error) <= tolerance) return;
+    const error = errorAt(stream, search, T);
+    if (Math.abs(error) <= search.tolerance) return;
     if (error < 0) {
       low = T;
       errorLow = error;
@@ -169,19 +196,19 @@ function close(stream: StreamState, search: Search, tolerance: number, errorAt: 
       stale = 1;
     }
   }
-  mixSides(stream, low, high, errorAt);
+  mixSides(stream, search, low, high);
 }
 
 /**
  * The bracket has shrunk to rounding and the value still jumps across it: find the share of each side. Their
  * errors are taken anew with their states, because in so steep a place the last digit of T decides both.
  */
-function mixSides(stream: StreamState, low: number, high: number, errorAt: (T: number) => number): void {
-  const errorLow = errorAt(low);
+function mixSides(stream: StreamState, search: Search, low: number, high: number): void {
+  const errorLow = errorAt(stream, search, low);
   const cold = stream.liquidMolPerS.slice();
   const coldFraction = stream.vapourFraction;
   const coldEnthalpy = stream.enthalpyW;
-  const errorHigh = errorAt(high);
+  const errorHigh = errorAt(stream, search, high);
   const share = Math.min(Math.max(-errorLow / (errorHigh - errorLow), 0), 1) || 0;
   for (let i = 0; i < cold.length; i++) {
     stream.liquidMolPerS[i] = (1 - share) * cold[i] + share * stream.liquidMolPerS[i];
