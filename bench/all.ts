@@ -2,6 +2,7 @@ import { benchCommand } from './command.ts';
 import { benchKernels } from './kernels.ts';
 import { benchMethods } from './methods.ts';
 import { benchRandomLoops } from './random-loops.ts';
+import { benchScipy } from './scipy.ts';
 
 /**
  * Everything, or the parts named: npm run bench -- methods kernels command.
@@ -11,6 +12,7 @@ const parts: Readonly<Record<string, () => Promise<void>>> = {
   methods: benchMethods,
   loops: benchRandomLoops,
   kernels: benchKernels,
+  scipy: benchScipy,
   command: benchCommand,
 };
 

@@ -3,6 +3,7 @@ import { describe, expect, test } from 'vitest';
 import { closeFixedPoint, type FixedPointProblem } from '../../src/convergence/driver.ts';
 import { methods } from '../../src/convergence/methods.ts';
 import type { MethodName } from '../../src/model/flowsheet.ts';
+import { evaluationsNeeded } from './evaluations.ts';
 import { scaledDistance } from './expectations.ts';
 import { fourFlashProblem, fourFlashSolution, fourFlashStart } from './four-flash.ts';
 import { bank } from './problem-bank.ts';
@@ -41,23 +42,6 @@ test.each([
   expect(passes('anderson')).toBeLessThanOrEqual(anderson);
   expect(passes('auto')).toBeLessThanOrEqual(auto);
 });
-
-/** Evaluations until the largest |G(x) − x| / max(1, |G|) is 1e-8, by the method alone, without the driver's safeguards. */
-function evaluationsNeeded(problem: FixedPointProblem, start: readonly number[], method: MethodName): number {
-  const made = methods[method]();
-  const n = start.length;
-  const [x, g, scale] = [Float64Array.from(start), new Float64Array(n), new Float64Array(n)];
-  const next = new Float64Array(n);
-  made.reset(n);
-  for (let count = 1; count <= 5000; count++) {
-    problem.evaluate(x, g);
-    for (let i = 0; i < n; i++) scale[i] = Math.max(1, Math.abs(g[i]));
-    if (x.every((value, i) => Math.abs(g[i] - value) / scale[i] <= 1e-8)) return count;
-    made.next(x, g, scale, next);
-    x.set(next);
-  }
-  return Infinity;
-}
 
 // Counts derived independently, see problem-bank.ts; ours beside them (2026):
 //              FP-1  FP-2  FP-3  FP-4  FP-5  FP-6  FP-7  FP-8  FP-9

@@ -65,7 +65,7 @@ export const bank: readonly KnownProblem[] = [
     solution: [0.7390851332151607],
     known: 1e-9,
     cannot: {},
-    evaluations: { direct: 46, eigenvalue: 13, broyden: 6, anderson: 6 },
+    evaluations: { direct: 46, wegstein: 6, eigenvalue: 13, broyden: 6, anderson: 6 },
   },
   {
     name: 'FP-2: x = exp(-x)',
@@ -74,7 +74,7 @@ export const bank: readonly KnownProblem[] = [
     solution: [0.5671432904097838],
     known: 1e-9,
     cannot: {},
-    evaluations: { direct: 30, eigenvalue: 9, broyden: 5, anderson: 6 },
+    evaluations: { direct: 30, wegstein: 5, eigenvalue: 9, broyden: 5, anderson: 6 },
   },
   {
     name: 'FP-3: x = 5 exp(-x)',
@@ -83,7 +83,7 @@ export const bank: readonly KnownProblem[] = [
     solution: [1.3267246652422002],
     known: 1e-9,
     cannot: { direct: 'the eigenvalue is -1.33: every pass throws further to the other side' },
-    evaluations: { direct: null, eigenvalue: 21, broyden: 7, anderson: 9 },
+    evaluations: { direct: null, wegstein: 7, eigenvalue: 21, broyden: 7, anderson: 9 },
   },
   {
     name: 'FP-4: x = 1 + 0.99 x - 0.001 x²',
@@ -92,7 +92,7 @@ export const bank: readonly KnownProblem[] = [
     solution: [27.0156211871642],
     known: 1e-9,
     cannot: {},
-    evaluations: { direct: 246, eigenvalue: 21, broyden: 10, anderson: 14 },
+    evaluations: { direct: 246, wegstein: 10, eigenvalue: 21, broyden: 10, anderson: 14 },
   },
   {
     name: 'FP-5: two variables that chase each other (complex eigenvalues, modulus 0.943)',
@@ -104,7 +104,7 @@ export const bank: readonly KnownProblem[] = [
       wegstein: 'each variable is accelerated by itself, and here each answers to the other',
       eigenvalue: 'a leap along one direction cannot follow a pair that turns',
     },
-    evaluations: { direct: 318, eigenvalue: null, broyden: 5, anderson: 4 },
+    evaluations: { direct: 318, wegstein: null, eigenvalue: null, broyden: 5, anderson: 4 },
   },
   {
     name: 'FP-6: methanol loop with fixed conversion',
@@ -113,7 +113,7 @@ export const bank: readonly KnownProblem[] = [
     solution: [245, 250, 80], // closed form: H2 = 60/(1 - 0.95·0.8), N2 = 4/0.05
     known: 1e-9,
     cannot: {},
-    evaluations: { direct: 301, eigenvalue: 57, broyden: 5, anderson: 4 },
+    evaluations: { direct: 301, wegstein: 5, eigenvalue: 57, broyden: 5, anderson: 4 },
   },
   {
     name: 'FP-7: ethylene oxide loop with fixed conversion',
@@ -123,7 +123,7 @@ export const bank: readonly KnownProblem[] = [
     solution: [ethylene, (84.5 - 0.995 * 0.03 * ethylene) / 0.005, (0.03 * 0.06 * ethylene) / 0.97],
     known: 1e-9,
     cannot: {},
-    evaluations: { direct: 2484, eigenvalue: 145, broyden: 7, anderson: 5 },
+    evaluations: { direct: 2484, wegstein: 5, eigenvalue: 145, broyden: 7, anderson: 5 },
   },
   {
     name: 'FP-8: ammonia loop with fixed conversion and condensation',
@@ -132,7 +132,7 @@ export const bank: readonly KnownProblem[] = [
     solution: [92.661824, 277.985472, 43.858907, 24.082934],
     known: 2e-8, // eight digits given
     cannot: {},
-    evaluations: { direct: 635, eigenvalue: 58, broyden: 7, anderson: 5 },
+    evaluations: { direct: 635, wegstein: 5, eigenvalue: 58, broyden: 7, anderson: 5 },
   },
   {
     name: 'FP-9: ammonia loop at equilibrium with a saturated separator',
@@ -141,6 +141,6 @@ export const bank: readonly KnownProblem[] = [
     solution: [67.94947, 203.848409, 50, 8.905136],
     known: 1e-7, // seven digits given
     cannot: {},
-    evaluations: { direct: 719, eigenvalue: 121, broyden: 20, anderson: 9 },
+    evaluations: { direct: 719, wegstein: 31, eigenvalue: 121, broyden: 20, anderson: 9 },
   },
 ];

@@ -1,6 +1,7 @@
 import { ammoniaEquilibrium, ammoniaOverCondensate } from './deviations-ammonia.ts';
 import { bubblePointRows } from './deviations-bubble-points.ts';
 import { chemistryRows } from './deviations-chemistry.ts';
+import { convergenceCounts, tearRow } from './deviations-convergence.ts';
 import { converterRows } from './deviations-converters.ts';
 import { machineRows } from './deviations-machines.ts';
 import { propertyRows } from './deviations-properties.ts';
@@ -28,11 +29,13 @@ export function deviations(): string {
       deviations: recycleDeviations(),
       remark: 'answers printed to three or four digits',
     },
+    tearRow(),
   ]);
   return [
     ammoniaEquilibrium(),
     ammoniaOverCondensate(),
     '**Everything else.** Mean of the sizes and worst value; % of the published value unless another unit stands there.',
     summary,
+    convergenceCounts(),
   ].join('\n\n');
 }
