@@ -9,7 +9,7 @@ import { requiredEntries } from './section.ts';
 import { lowerArticle } from './wording.ts';
 import {
   child,
-  entriesOf,
+  entryOf,
   keyPlaceOfPath,
   nodeAt,
   type Path,
@@ -54,7 +54,8 @@ export function readBlocks(
   if (entries === null) return null;
   return entries.map(({ key, keyPlace }) => {
     const named = checkName(findings, key, keyPlace, 'a block');
-    const feed = entriesOf(child(root, 'feeds')).find((e) => e.key === key);
+    const feeds = child(root, 'feeds');
+    const feed = feeds?.kind === 'mapping' ? entryOf(feeds, key) : undefined;
     if (feed !== undefined) {
       const fault = {
         code: 'duplicate-name',

@@ -1,5 +1,6 @@
 import type { Place } from '../model/place.ts';
 import type { ReadBlock } from './blocks.ts';
+import { bySource } from './by-source.ts';
 import type { Reading } from './findings.ts';
 import type { PlacedStream } from './topology.ts';
 import { keyPlaceOfPath } from './yaml-tree.ts';
@@ -19,9 +20,22 @@ export function checkConnections(
   checkTwice(reading, streams, feeds, blocks);
   if (!complete) return;
   const nextTag = freeTag(streams);
-  for (const feed of feeds) checkFeedUsed(reading, streams, feed, nextTag);
-  for (const block of blocks) checkDangling(reading, streams, block, nextTag);
+  const taken: Taken = {
+    outlets: new Set(streams.map((s) => shown(s.from))),
+    inlets: new Set(streams.flatMap((s) => (s.to === null ? [] : [shown(s.to)]))),
+    fed: new Set(streams.map((s) => s.to?.name)),
+  };
+  for (const feed of feeds) checkFeedUsed(reading, taken, feed, nextTag);
+  for (const block of blocks) checkDangling(reading, taken, block, nextTag);
   checkReached(reading, streams, feeds, blocks);
+}
+
+/** What streams begin at and lead to, as it is shown: purge.bleed, mixer. */
+interface Taken {
+  readonly outlets: ReadonlySet<string>;
+  readonly inlets: ReadonlySet<string>;
+  /** names of the blocks that a stream leads into */
+  readonly fed: ReadonlySet<string | undefined>;
 }
 
 /** Two streams on one port, or out of one feed. */
@@ -32,6 +46,8 @@ function checkTwice(
   blocks: readonly ReadBlock[],
 ): void {
   const seen = new Map<string, { tag: string; place: Place }>();
+  const known = new Map(blocks.map((b) => [b.name, b]));
+  const fromFeed = new Set(feeds);
   const take = (
     key: string,
     tag: string,
@@ -47,7 +63,7 @@ function checkTwice(
     }
   };
   for (const { tag, from, to, fromPlace, toPlace } of streams) {
-    const isFeed = feeds.includes(from.name);
+    const isFeed = fromFeed.has(from.name);
     const source = shown(from);
     take(
       `from ${source}`,
@@ -56,8 +72,9 @@ function checkTwice(
       (other) => `${other} and ${tag} both come out of ${isFeed ? 'the feed ' : ''}${source}.`,
       `divide it with a splitter, or take one of the two out`,
     );
-    const target = blocks.find((b) => b.name === to?.name);
-    if (to === null || target?.ports === null || target?.ports.inlets === 'any') continue;
+    if (to === null) continue;
+    const target = known.get(to.name);
+    if (target?.ports === null || target?.ports.inlets === 'any') continue;
     const mend = `join them in a mixer before ${to.name}, or take one of the two out`;
     take(
       `to ${shown(to)}`,
@@ -69,8 +86,8 @@ function checkTwice(
   }
 }
 
-function checkFeedUsed(reading: Reading, streams: readonly PlacedStream[], feed: string, tag: string): void {
-  if (streams.some((s) => s.from.name === feed)) return;
+function checkFeedUsed(reading: Reading, { outlets }: Taken, feed: string, tag: string): void {
+  if (outlets.has(feed)) return;
   reading.findings.error(keyPlaceOfPath(reading.root, ['feeds', feed]), {
     code: 'unused-feed',
     what: `the feed ${feed} flows nowhere.`,
@@ -79,19 +96,14 @@ function checkFeedUsed(reading: Reading, streams: readonly PlacedStream[], feed:
   });
 }
 
-function checkDangling(
-  reading: Reading,
-  streams: readonly PlacedStream[],
-  block: ReadBlock,
-  tag: string,
-): void {
+function checkDangling(reading: Reading, taken: Taken, block: ReadBlock, tag: string): void {
   const { name, ports } = block;
   if (ports === null) return;
   const where = keyPlaceOfPath(reading.root, ['blocks', name]);
   for (const port of ports.outlets) {
     const wanted = ports.outlets.length === 1 ? null : port;
-    if (streams.some((s) => s.from.name === name && s.from.port === wanted)) continue;
     const end = shown({ name, port: wanted });
+    if (taken.outlets.has(end)) continue;
     const why = 'what leaves there must go somewhere; no stream begins at it';
     const mend = `add to streams: ${tag}: ${end} -> out, or lead it to a block`;
     reading.findings.error(where, {
@@ -103,8 +115,8 @@ function checkDangling(
   }
   const inlets = ports.inlets === 'any' ? [null] : ports.inlets.length === 1 ? [null] : ports.inlets;
   for (const port of inlets) {
-    if (streams.some((s) => s.to?.name === name && (ports.inlets === 'any' || s.to.port === port))) continue;
     const end = shown({ name, port });
+    if (ports.inlets === 'any' ? taken.fed.has(name) : taken.inlets.has(end)) continue;
     const what =
       port === null ? `nothing flows into the block ${name}.` : `the inlet ${end} is not connected.`;
     const mend = `add to streams: ${tag}: SOMETHING -> ${end}${port === null ? ', or take the block out' : ''}`;
@@ -119,17 +131,14 @@ function checkReached(
   feeds: readonly string[],
   blocks: readonly ReadBlock[],
 ): void {
-  const reached = new Set(feeds);
-  for (let grown = true; grown; ) {
-    grown = false;
-    for (const { from, to } of streams) {
-      if (to === null || !reached.has(from.name) || reached.has(to.name)) continue;
-      reached.add(to.name);
-      grown = true;
-    }
-  }
+  const onward = bySource(streams);
+  const reached = new Set<string>(feeds);
+  // A set is walked in the order of its filling, what is added on the way included.
+  for (const name of reached)
+    for (const { to } of onward.get(name) ?? []) if (to !== null) reached.add(to.name);
+  const fed = new Set(streams.map((s) => s.to?.name));
   for (const { name } of blocks) {
-    if (reached.has(name) || !streams.some((s) => s.to?.name === name)) continue;
+    if (reached.has(name) || !fed.has(name)) continue;
     const why =
       'following the streams from the feeds, it is never reached: what flows into it comes from a ring of its own';
     reading.findings.error(keyPlaceOfPath(reading.root, ['blocks', name]), {

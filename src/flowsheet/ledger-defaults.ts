@@ -1,7 +1,9 @@
+import { strongComponents } from '../graph/strong-components.ts';
 import type { Component } from '../model/component.ts';
 import type { LedgerSpec, StreamSpec } from '../model/flowsheet.ts';
 import type { Reaction } from '../model/reaction.ts';
 import type { ReadBlock } from './blocks.ts';
+import { bySource } from './by-source.ts';
 
 /** What the ledger refers to where the file does not say, with a sentence for each; empty where nothing is assumed. */
 export interface LedgerDefaults extends LedgerSpec {
@@ -78,7 +80,8 @@ function productStream(
   blocks: readonly ReadBlock[],
   purge: readonly string[],
 ): string | null {
-  const outletsOf = (name: string) => streams.filter((s) => s.from.name === name);
+  const onward = bySource(streams);
+  const outletsOf = (name: string) => onward.get(name) ?? [];
   const start = blocks.find((b) => b.ports?.outlets.includes('liquid'));
   let stream = start === undefined ? undefined : outletsOf(start.name).find((s) => s.from.port === 'liquid');
   const seen = new Set<string>();
@@ -93,21 +96,18 @@ function productStream(
 }
 
 function recycleStream(streams: readonly StreamSpec[], blocks: readonly ReadBlock[]): string | null {
-  const kinds = new Map(blocks.map((b) => [b.name, b.kind?.kind]));
-  const found = streams.find(
-    (s) =>
-      s.to !== null &&
-      kinds.get(s.to.name) === 'mixer' &&
-      kinds.has(s.from.name) &&
-      reaches(streams, s.to.name, s.from.name),
+  const indexOf = new Map(blocks.map((b, i) => [b.name, i]));
+  const between = streams.flatMap(({ tag, from, to }) => {
+    const [source, target] = [indexOf.get(from.name), to === null ? undefined : indexOf.get(to.name)];
+    return source === undefined || target === undefined ? [] : [{ tag, source, target }];
+  });
+  const { of } = strongComponents(
+    blocks.length,
+    Int32Array.from(between, ({ source }) => source),
+    Int32Array.from(between, ({ target }) => target),
+  );
+  const found = between.find(
+    ({ source, target }) => blocks[target].kind?.kind === 'mixer' && of[source] === of[target],
   );
   return found?.tag ?? null;
-}
-
-function reaches(streams: readonly StreamSpec[], from: string, wanted: string): boolean {
-  const reached = new Set([from]);
-  for (const name of reached) {
-    for (const s of streams) if (s.from.name === name && s.to !== null) reached.add(s.to.name);
-  }
-  return reached.has(wanted);
 }

@@ -28,6 +28,7 @@ export function readStreams(
   const why = 'streams say what flows from one block to the next';
   const entries = requiredEntries(reading, 'streams', why, 'streams: {S1: makeup -> mixer, ...}');
   if (entries === null || feeds === null || blocks === null) return [];
+  const ends: Ends = { feeds: new Set(feeds), blocks: new Map(blocks.map((b) => [b.name, b])) };
   let complete = true;
   const streams = entries.flatMap(({ key, keyPlace, value }): PlacedStream[] => {
     checkName(findings, key, keyPlace, 'a stream');
@@ -42,7 +43,7 @@ export function readStreams(
       complete = false;
       return [];
     }
-    const stream = readStream(reading, key, value, feeds, blocks);
+    const stream = readStream(reading, key, value, ends);
     if (stream === null) complete = false;
     return stream === null ? [] : [stream];
   });
@@ -50,13 +51,7 @@ export function readStreams(
   return streams.map(({ tag, from, to }) => ({ tag, from, to }));
 }
 
-function readStream(
-  reading: Reading,
-  tag: string,
-  node: YamlScalar,
-  feeds: readonly string[],
-  blocks: readonly ReadBlock[],
-): PlacedStream | null {
+function readStream(reading: Reading, tag: string, node: YamlScalar, ends: Ends): PlacedStream | null {
   const parsed = parseStream(node.text);
   const report = (end: StreamEnd | null, fault: Fault): null => {
     const place = end === null ? node.place : placeInside(node, end.offset, end.length);
@@ -67,8 +62,8 @@ function readStream(
     return null;
   };
   if ('fault' in parsed) return report(null, parsed.fault);
-  const from = resolveSource(parsed.from, feeds, blocks);
-  const to = resolveTarget(parsed.to, feeds, blocks);
+  const from = resolveSource(parsed.from, ends);
+  const to = resolveTarget(parsed.to, ends);
   if ('fault' in from) report(parsed.from, from.fault);
   if (to !== null && 'fault' in to) report(parsed.to, to.fault);
   if ('fault' in from || (to !== null && 'fault' in to)) return null;
@@ -85,50 +80,47 @@ function readStream(
   return { tag, from, to, fromPlace: place(parsed.from), toPlace: place(parsed.to) };
 }
 
+/** What a stream can begin at or lead to. */
+interface Ends {
+  readonly feeds: ReadonlySet<string>;
+  readonly blocks: ReadonlyMap<string, ReadBlock>;
+}
+
 type End = { readonly name: string; readonly port: string | null };
 
-function resolveSource(
-  end: StreamEnd,
-  feeds: readonly string[],
-  blocks: readonly ReadBlock[],
-): End | { fault: Fault } {
+function resolveSource(end: StreamEnd, { feeds, blocks }: Ends): End | { fault: Fault } {
   if (end.name === 'out') {
     const why = 'out is where streams leave; what enters is a feed';
     return {
       fault: { code: 'bad-stream', what: 'it comes from out.', why, mend: 'begin it at a feed or a block' },
     };
   }
-  if (feeds.includes(end.name)) {
+  if (feeds.has(end.name)) {
     if (end.port === null) return { name: end.name, port: null };
     const what = `the feed ${end.name} has no port ${end.port}.`;
     return { fault: { code: 'unknown-port', what, why: 'a feed has no ports', mend: `write ${end.name}` } };
   }
-  const block = blocks.find((b) => b.name === end.name);
+  const block = blocks.get(end.name);
   if (block === undefined)
-    return { fault: unknownName(end.name, [...feeds, ...blocks.map((b) => b.name)], 'no feed or block') };
+    return { fault: unknownName(end.name, [...feeds, ...blocks.keys()], 'no feed or block') };
   return resolvePort(end, block, block.ports?.outlets ?? null, 'outlet');
 }
 
-function resolveTarget(
-  end: StreamEnd,
-  feeds: readonly string[],
-  blocks: readonly ReadBlock[],
-): End | null | { fault: Fault } {
+function resolveTarget(end: StreamEnd, { feeds, blocks }: Ends): End | null | { fault: Fault } {
   if (end.name === 'out') {
     if (end.port === null) return null;
     const why = 'the battery limit has no ports';
     return { fault: { code: 'unknown-port', what: `out has no port ${end.port}.`, why, mend: 'write out' } };
   }
-  if (feeds.includes(end.name)) {
+  if (feeds.has(end.name)) {
     const what = `it leads into the feed ${end.name}.`;
     const why = 'a feed comes from outside; nothing flows into it';
     return {
       fault: { code: 'bad-stream', what, why, mend: `lead both ${end.name} and this stream into a mixer` },
     };
   }
-  const block = blocks.find((b) => b.name === end.name);
-  if (block === undefined)
-    return { fault: unknownName(end.name, [...blocks.map((b) => b.name), 'out'], 'no block') };
+  const block = blocks.get(end.name);
+  if (block === undefined) return { fault: unknownName(end.name, [...blocks.keys(), 'out'], 'no block') };
   const inlets = block.ports?.inlets ?? null;
   if (inlets !== 'any') return resolvePort(end, block, inlets, 'inlet');
   if (end.port === null) return { name: end.name, port: null };

@@ -177,17 +177,17 @@ function readCollection(
 ): YamlNode {
   const isList = event.type === EVENT_ID.SEQUENCE;
   const items: YamlNode[] = [];
-  const entries: YamlEntry[] = [];
+  const entries = new Map<string, YamlEntry>();
   while (build.events[build.next].type !== EVENT_ID.POP) {
     if (isList) items.push(readNode(build));
     else readEntry(build, entries);
   }
   build.next++;
   const place = build.places.toLineEnd(event.start);
-  return isList ? { kind: 'list', items, place } : { kind: 'mapping', entries, place };
+  return isList ? { kind: 'list', items, place } : { kind: 'mapping', entries: [...entries.values()], place };
 }
 
-function readEntry(build: Build, entries: YamlEntry[]): void {
+function readEntry(build: Build, entries: Map<string, YamlEntry>): void {
   const key = readNode(build);
   const value = readNode(build);
   if (key.kind !== 'scalar' || key.text === '') {
@@ -215,7 +215,7 @@ function readEntry(build: Build, entries: YamlEntry[]): void {
     );
     return;
   }
-  const first = entries.find((entry) => entry.key === key.text);
+  const first = entries.get(key.text);
   if (first !== undefined) {
     const what = `the key ${key.text} stands here twice.`;
     const why = `line ${first.keyPlace.line} has it already, and only one of the two can count`;
@@ -223,7 +223,7 @@ function readEntry(build: Build, entries: YamlEntry[]): void {
     build.diagnostics.push({ ...found, also: first.keyPlace });
     return;
   }
-  entries.push({ key: key.text, keyPlace: key.place, value });
+  entries.set(key.text, { key: key.text, keyPlace: key.place, value });
 }
 
 function readAlias(build: Build, start: number, end: number): YamlNode {

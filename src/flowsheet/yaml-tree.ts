@@ -35,9 +35,25 @@ export type Path = readonly (string | number)[];
 
 /** The child of a mapping or list; undefined where there is none. */
 export function child(node: YamlNode | undefined, key: string | number): YamlNode | undefined {
-  if (node?.kind === 'mapping') return node.entries.find((entry) => entry.key === String(key))?.value;
+  if (node?.kind === 'mapping') return entryOf(node, String(key))?.value;
   if (node?.kind === 'list') return node.items[Number(key)];
   return undefined;
+}
+
+/** Entries of large mappings by their keys, made when first asked for: a plant has a thousand blocks. */
+const byKey = new WeakMap<YamlMapping, ReadonlyMap<string, YamlEntry>>();
+/** Of a mapping no larger than this, looking through it is as quick. */
+const SMALL = 12;
+
+/** The entry of a mapping with a key; undefined where there is none. */
+export function entryOf(node: YamlMapping, key: string): YamlEntry | undefined {
+  if (node.entries.length <= SMALL) return node.entries.find((entry) => entry.key === key);
+  let index = byKey.get(node);
+  if (index === undefined) {
+    index = new Map(node.entries.map((entry) => [entry.key, entry]));
+    byKey.set(node, index);
+  }
+  return index.get(key);
 }
 
 /** The node at a path; undefined where the path leads nowhere. */
@@ -58,7 +74,7 @@ export function placeOfPath(root: YamlNode, path: Path): Place {
   let node = root;
   let place = root.place;
   for (const key of path) {
-    const entry = node.kind === 'mapping' ? node.entries.find((e) => e.key === String(key)) : undefined;
+    const entry = node.kind === 'mapping' ? entryOf(node, String(key)) : undefined;
     const next = entry?.value ?? child(node, key);
     if (next === undefined) break;
     const empty = next.kind === 'scalar' && next.text === '';
@@ -71,7 +87,7 @@ export function placeOfPath(root: YamlNode, path: Path): Place {
 /** Where the key at the end of a path stands; the nearest enclosing part where there is none. */
 export function keyPlaceOfPath(root: YamlNode, path: Path): Place {
   const parent = nodeAt(root, path.slice(0, -1));
-  const entry = entriesOf(parent).find((e) => e.key === String(path.at(-1)));
+  const entry = parent?.kind === 'mapping' ? entryOf(parent, String(path.at(-1))) : undefined;
   return entry?.keyPlace ?? placeOfPath(root, path);
 }
 

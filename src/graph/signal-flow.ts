@@ -1,3 +1,5 @@
+import { edgesByNode } from './strong-components.ts';
+
 /**
  * The signal-flow graph of a plant: its nodes are streams, and stream a leads to stream b when a ends at the
  * block b leaves. Tearing the fewest streams is cutting the fewest of its nodes, and there the reductions are
@@ -9,21 +11,16 @@ export interface SignalFlow {
   readonly after: Map<number, Set<number>>;
 }
 
-/** Signal-flow graph of the given edges; parallel edges stand beside each other. */
-export function signalFlow(edges: readonly number[], from: Int32Array, to: Int32Array): SignalFlow {
+/** Signal-flow graph of a graph of blocks; parallel edges stand beside each other. */
+export function signalFlow(n: number, from: Int32Array, to: Int32Array): SignalFlow {
   const before = new Map<number, Set<number>>();
   const after = new Map<number, Set<number>>();
-  for (const a of edges) {
+  const { first, edges } = edgesByNode(n, from);
+  for (let a = 0; a < from.length; a++) {
     before.set(a, new Set());
-    after.set(a, new Set());
+    after.set(a, new Set(edges.subarray(first[to[a]], first[to[a] + 1])));
   }
-  for (const a of edges) {
-    for (const b of edges) {
-      if (to[a] !== from[b]) continue;
-      after.get(a)?.add(b);
-      before.get(b)?.add(a);
-    }
-  }
+  for (const [a, followers] of after) for (const b of followers) near(before, b).add(a);
   return { before, after };
 }
 

@@ -1,3 +1,4 @@
+import { exchangeable, orderWithout } from './exchangeable.ts';
 import type { SignalFlow } from './signal-flow.ts';
 import {
   bypassStream,
@@ -43,27 +44,57 @@ export function chooseTears(
   weights?: Float64Array,
   prescribed: Iterable<number> = [],
 ): TearSet {
-  const onCycle = edgesOnCycles(n, from, to);
-  const given = new Set([...prescribed].filter((edge) => onCycle.has(edge)));
-  const open = [...onCycle].filter((edge) => !given.has(edge));
-  const flow = signalFlow(open, from, to);
-  const torn = reduceFlow(flow);
+  const given = new Set<number>();
+  const onCycle = edgesOnCycles(n, from, to, given);
+  const all = new Set(onCycle.flat());
+  for (const edge of prescribed) if (all.has(edge)) given.add(edge);
+  const chosen = [...given];
   let exact = true;
-  for (const part of partsOf(flow)) {
-    const found = searchPart(part);
-    torn.push(...found.torn);
-    exact &&= found.exact;
+  // What has no cycle in common is torn by itself: the cost grows with the tangles, not with the square of the plant.
+  for (const tangle of given.size === 0 ? onCycle : edgesOnCycles(n, from, to, given)) {
+    const part = renumbered(tangle, from, to);
+    const flow = signalFlow(part.nodes, part.from, part.to);
+    const torn = reduceFlow(flow);
+    for (const core of partsOf(flow)) {
+      const found = searchPart(core);
+      torn.push(...found.torn);
+      exact &&= found.exact;
+    }
+    const weightOf = (edge: number): number => weights?.[tangle[edge]] ?? 0;
+    for (const edge of preferred(torn, part, weightOf)) chosen.push(tangle[edge]);
   }
-  const chosen = preferred(torn, open, signalFlow(open, from, to), weights);
-  return { edges: Int32Array.from([...given, ...chosen].sort((a, b) => a - b)), exact };
+  return { edges: Int32Array.from(chosen.sort((a, b) => a - b)), exact };
 }
 
-/** Edges inside a strong component, ascending. */
-function edgesOnCycles(n: number, from: Int32Array, to: Int32Array): Set<number> {
-  const { of } = strongComponents(n, from, to);
-  const edges = new Set<number>();
-  for (let edge = 0; edge < from.length; edge++) if (of[from[edge]] === of[to[edge]]) edges.add(edge);
-  return edges;
+/** Edges inside each strong component that is left without the given ones, ascending. */
+function edgesOnCycles(
+  n: number,
+  from: Int32Array,
+  to: Int32Array,
+  without: ReadonlySet<number>,
+): number[][] {
+  const left = Int32Array.from(from.keys()).filter((edge) => !without.has(edge));
+  const ends = (side: Int32Array) => left.map((edge) => side[edge]);
+  const { count, of } = strongComponents(n, ends(from), ends(to));
+  const inside: number[][] = Array.from({ length: count }, () => []);
+  for (const edge of left) if (of[from[edge]] === of[to[edge]]) inside[of[from[edge]]].push(edge);
+  return inside.filter((edges) => edges.length > 0);
+}
+
+interface Part {
+  /** number of nodes */
+  readonly nodes: number;
+  readonly from: Int32Array;
+  readonly to: Int32Array;
+}
+
+/** Some edges of a graph as a graph of their own. */
+function renumbered(edges: readonly number[], from: Int32Array, to: Int32Array): Part {
+  const number = new Map<number, number>();
+  for (const edge of edges)
+    for (const node of [from[edge], to[edge]]) if (!number.has(node)) number.set(node, number.size);
+  const ends = (side: Int32Array) => Int32Array.from(edges, (edge) => number.get(side[edge]) as number);
+  return { nodes: number.size, from: ends(from), to: ends(to) };
 }
 
 /** Branch and bound on one part: the stream that joins most is torn, or else bypassed. */
@@ -112,57 +143,34 @@ function busiest(flow: SignalFlow): number {
 
 /** Drop what is not needed, then exchange single tears for preferred ones until nothing improves. */
 function preferred(
-  torn: readonly number[],
-  open: readonly number[],
-  flow: SignalFlow,
-  weights: Float64Array | undefined,
+  chosen: readonly number[],
+  { nodes, from, to }: Part,
+  weight: (edge: number) => number,
 ): number[] {
-  const weight = (edge: number): number => weights?.[edge] ?? 0;
-  const ranked = [...open].sort((a, b) => weight(b) - weight(a) || a - b);
-  const rank = new Map(ranked.map((edge, place) => [edge, place]));
-  const chosen = new Set(torn);
-  for (const tear of torn) {
-    chosen.delete(tear);
-    if (!isCutBy(flow, chosen)) chosen.add(tear);
+  const ranked = Int32Array.from(from.keys()).sort((a, b) => weight(b) - weight(a) || a - b);
+  const rank = new Int32Array(from.length);
+  for (const [place, edge] of ranked.entries()) rank[edge] = place;
+  const torn = new Uint8Array(from.length);
+  for (const edge of chosen) torn[edge] = 1;
+  const tears: number[] = [];
+  for (const tear of chosen) {
+    if (exchangeable(nodes, from, to, torn, orderWithout(nodes, from, to, torn), tear) === null)
+      torn[tear] = 0;
+    else tears.push(tear);
   }
   for (let changed = true; changed; ) {
     changed = false;
-    for (const tear of [...chosen]) {
-      chosen.delete(tear);
-      for (const other of ranked) {
-        if (chosen.has(other)) continue;
-        chosen.add(other);
-        if (other === tear || isCutBy(flow, chosen)) {
-          changed ||= other !== tear && (rank.get(other) as number) < (rank.get(tear) as number);
-          break;
-        }
-        chosen.delete(other);
-      }
+    for (const [k, tear] of tears.entries()) {
+      const order = orderWithout(nodes, from, to, torn);
+      let best = tear;
+      for (const other of exchangeable(nodes, from, to, torn, order, tear) ?? [])
+        if (rank[other] < rank[best]) best = other;
+      if (best === tear) continue;
+      torn[tear] = 0;
+      torn[best] = 1;
+      tears[k] = best;
+      changed = true;
     }
   }
-  return [...chosen];
-}
-
-/** Whether no cycle is left without the chosen streams: all others can be put in order. */
-function isCutBy(flow: SignalFlow, chosen: ReadonlySet<number>): boolean {
-  const waiting = new Map<number, number>();
-  const ready: number[] = [];
-  for (const [stream, before] of flow.before) {
-    if (chosen.has(stream)) continue;
-    let count = 0;
-    for (const b of before) if (!chosen.has(b)) count++;
-    waiting.set(stream, count);
-    if (count === 0) ready.push(stream);
-  }
-  let done = 0;
-  for (let stream = ready.pop(); stream !== undefined; stream = ready.pop()) {
-    done++;
-    for (const follower of flow.after.get(stream) ?? []) {
-      const left = waiting.get(follower);
-      if (left === undefined) continue;
-      waiting.set(follower, left - 1);
-      if (left === 1) ready.push(follower);
-    }
-  }
-  return done === waiting.size;
+  return tears;
 }

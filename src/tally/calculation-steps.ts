@@ -58,10 +58,10 @@ export function stepGraph(
       },
     ];
   });
-  const inner = [...fedEarly.values()].flatMap((from) => {
-    const feeding = between.find((edge) => edge.to === from);
+  const feeding = new Map(between.toReversed().map(({ to, stream }) => [to, stream]));
+  const inner = [...fedEarly.values()].map((from) => {
     // What only a feed reaches lies on no cycle: no edge is needed to cut it, only to keep the order.
-    return [{ from, to: steps[from].block, stream: feeding?.stream ?? -1, inner: true }];
+    return { from, to: steps[from].block, stream: feeding.get(from) ?? -1, inner: true };
   });
   const edges = [...between, ...inner];
   return {

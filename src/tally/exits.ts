@@ -10,30 +10,63 @@ import type { Group, Plant } from './plant.ts';
  * @returns one error per loop and component
  */
 export function trappedComponents(plant: Plant): Diagnostic[] {
-  return plant.groups
-    .filter((group) => group.tears.length > 0)
-    .flatMap((group) =>
-      plant.mixture.components.flatMap((_, i) =>
-        isTrapped(plant, group, i) ? [refusal(plant, group, i)] : [],
-      ),
+  const loops = plant.groups.filter((group) => group.tears.length > 0);
+  if (loops.length === 0) return [];
+  const ways = waysOf(plant);
+  return loops.flatMap((loop) => {
+    const inLoop = new Set(loop.blocks);
+    const entering = loop.blocks.flatMap((b) => ways.arriving[b].filter((s) => !inLoop.has(ways.source[s])));
+    return plant.mixture.components.flatMap((_, i) =>
+      isTrapped(plant, ways, { blocks: loop.blocks, inLoop, entering }, i) ? [refusal(plant, loop, i)] : [],
     );
+  });
 }
 
-function isTrapped(plant: Plant, group: Group, component: number): boolean {
-  const inLoop = new Set(group.blocks);
+/** How the streams of a plant join its blocks, found once for all its loops. */
+interface Ways {
+  /** per stream the block that it leaves and the one that it enters; −1 for a feed and the battery limit */
+  readonly source: readonly number[];
+  readonly target: readonly number[];
+  /** per block the streams that enter and leave it */
+  readonly arriving: readonly (readonly number[])[];
+  readonly leaving: readonly (readonly number[])[];
+  /** per component, whether a feed brings it */
+  readonly fed: readonly boolean[];
+}
+
+interface Loop {
+  readonly blocks: readonly number[];
+  readonly inLoop: ReadonlySet<number>;
+  /** the streams that enter it from feeds and from blocks outside */
+  readonly entering: readonly number[];
+}
+
+function waysOf({ flowsheet, blocks, enters, streams, mixture }: Plant): Ways {
+  const indexOf = new Map(blocks.map((b, i) => [b.name, i]));
+  const source = flowsheet.streams.map(({ from }) => indexOf.get(from.name) ?? -1);
+  const target = flowsheet.streams.map(({ to }) => (to === null ? -1 : indexOf.get(to.name)!));
+  const arriving = blocks.map((): number[] => []);
+  const leaving = blocks.map((): number[] => []);
+  for (const [s, block] of source.entries()) if (block >= 0) leaving[block].push(s);
+  for (const [s, block] of target.entries()) if (block >= 0) arriving[block].push(s);
+  const fed = mixture.components.map((_, i) => enters.some((s) => streams[s].flowsMolPerS[i] > 0));
+  return { source, target, arriving, leaving, fed };
+}
+
+function isTrapped(plant: Plant, ways: Ways, { blocks, inLoop, entering }: Loop, component: number): boolean {
   const { streams } = plant.flowsheet;
   // Followed by streams, not by blocks: the two sides of an exchanger have their own ways.
   const reached = new Set([
-    ...streams.flatMap((_, s) => (bringsIn(plant, inLoop, s, component) ? [s] : [])),
-    ...group.blocks
+    ...entering.filter((s) => bringsIn(plant, ways, s, component)),
+    ...blocks
       .filter((b) => reacts(plant, b, component, 1))
-      .flatMap((b) => onward(plant, b, null, component)),
+      .flatMap((b) => onward(plant, ways, b, null, component)),
   ]);
   const queue = [...reached];
   for (let s = queue.pop(); s !== undefined; s = queue.pop()) {
-    const b = blockAt(plant, streams[s].to);
+    const b = ways.target[s];
     if (!inLoop.has(b) || reacts(plant, b, component, -1)) return false;
-    for (const next of onward(plant, b, streams[s].to, component)) {
+    for (const next of onward(plant, ways, b, streams[s].to, component)) {
       if (!reached.has(next)) queue.push(next);
       reached.add(next);
     }
@@ -41,33 +74,26 @@ function isTrapped(plant: Plant, group: Group, component: number): boolean {
   return reached.size > 0;
 }
 
-/** Does a stream bring a component into the loop, from a feed or from a block outside? */
-function bringsIn(plant: Plant, inLoop: ReadonlySet<number>, s: number, component: number): boolean {
-  const { from, to } = plant.flowsheet.streams[s];
-  if (!inLoop.has(blockAt(plant, to))) return false;
-  const source = blockAt(plant, from);
-  if (source < 0) return plant.streams[s].flowsMolPerS[component] > 0;
-  return !inLoop.has(source) && isFed(plant, component) && passes(plant, source, from.port, component);
+/** Does a stream that enters a loop bring a component, from a feed or from a block outside? */
+function bringsIn(plant: Plant, { source, fed }: Ways, s: number, component: number): boolean {
+  if (source[s] < 0) return plant.streams[s].flowsMolPerS[component] > 0;
+  return fed[component] && passes(plant, source[s], plant.flowsheet.streams[s].from.port, component);
 }
 
 /** The streams by which a component that has come in by an inlet (null: is formed inside) leaves a block. */
-function onward(plant: Plant, block: number, inlet: StreamSpec['to'], component: number): number[] {
+function onward(
+  plant: Plant,
+  { leaving }: Ways,
+  block: number,
+  inlet: StreamSpec['to'],
+  component: number,
+): number[] {
   const kind = plant.kinds[block];
-  return plant.flowsheet.streams.flatMap((stream, s) => {
-    if (stream.from.name !== plant.blocks[block].name) return [];
-    const { port } = stream.from;
-    if (inlet?.port && port && kind.through && !kind.through(inlet.port, port)) return [];
-    return passes(plant, block, port, component) ? [s] : [];
+  return leaving[block].filter((s) => {
+    const { port } = plant.flowsheet.streams[s].from;
+    if (inlet?.port && port && kind.through && !kind.through(inlet.port, port)) return false;
+    return passes(plant, block, port, component);
   });
-}
-
-/** The block at an end of a stream; −1 for a feed or the battery limit. */
-function blockAt(plant: Plant, end: { readonly name: string } | null): number {
-  return end === null ? -1 : plant.blocks.findIndex((b) => b.name === end.name);
-}
-
-function isFed(plant: Plant, component: number): boolean {
-  return plant.enters.some((s) => plant.streams[s].flowsMolPerS[component] > 0);
 }
 
 function reacts(plant: Plant, block: number, component: number, sign: 1 | -1): boolean {

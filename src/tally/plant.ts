@@ -93,6 +93,8 @@ export function createPlant(flowsheet: Flowsheet): Plant {
   const seen = streams.map((state, s) => (torn.has(s) ? emptyStream(components.length) : state));
   const inlets = wiring.inlets.map((list) => list.map((s) => seen[s]));
   const outlets = wiring.outlets.map((list) => list.map((s) => streams[s]));
+  const feedNumber = new Map(feeds.map(({ name }, f) => [name, f]));
+  const feedOf = wiring.enters.map((s) => feedNumber.get(flowsheet.streams[s].from.name)!);
   const settings = { blocks, feeds, ids: components.map((c) => c.id) };
 
   return {
@@ -110,8 +112,8 @@ export function createPlant(flowsheet: Flowsheet): Plant {
     enters: wiring.enters,
     leaves: wiring.leaves,
     refreshFeeds() {
-      for (const s of wiring.enters) {
-        const feed = feeds.find((f) => f.name === flowsheet.streams[s].from.name)!;
+      for (const [k, s] of wiring.enters.entries()) {
+        const feed = feeds[feedOf[k]];
         const state = streams[s];
         feedFlows(feed, components, state.flowsMolPerS);
         state.temperatureK = feed.temperatureK;

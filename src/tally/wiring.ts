@@ -21,16 +21,22 @@ export function wire(
   const indexOf = new Map(blocks.map((b, i) => [b.name, i]));
   const at = (end: { readonly name: string; readonly port: string | null }, port: string) =>
     end.port === port || end.port === null;
+  const into = blocks.map((): number[] => []);
+  const outOf = blocks.map((): number[] => []);
+  for (const [i, { from, to }] of streams.entries()) {
+    const source = indexOf.get(from.name);
+    if (source !== undefined) outOf[source].push(i);
+    if (to !== null) into[indexOf.get(to.name)!].push(i);
+  }
   const inlets = blocks.map((block, b) => {
     const { inlets: ports } = kinds[b].ports(block.settings);
-    const arriving = streams.flatMap((s, i) => (s.to?.name === block.name ? [i] : []));
+    const arriving = into[b];
     if (ports === 'any') return arriving;
     return ports.flatMap((port) => arriving.filter((i) => at(streams[i].to!, port)));
   });
   const outlets = blocks.map((block, b) => {
     const { outlets: ports } = kinds[b].ports(block.settings);
-    const leaving = streams.flatMap((s, i) => (s.from.name === block.name ? [i] : []));
-    return ports.flatMap((port) => leaving.filter((i) => at(streams[i].from, port)));
+    return ports.flatMap((port) => outOf[b].filter((i) => at(streams[i].from, port)));
   });
   return {
     inlets,
