@@ -1,5 +1,6 @@
 import { copyStream, emptyStream, type StreamState } from '../model/stream.ts';
 import type { Mixture } from '../properties/mixture.ts';
+import { createStageSlopes } from './machine-stage-slopes.ts';
 
 /** Which ideal path an efficiency is measured against. */
 export type EfficiencyKind = 'isentropic' | 'polytropic';
@@ -10,6 +11,16 @@ export interface MachineStage {
   compress(stream: StreamState, pressurePa: number, efficiency: number, kind: EfficiencyKind): number;
   /** h₂ = h₁ + η (h₂s − h₁); what is returned is negative */
   expand(stream: StreamState, pressurePa: number, efficiency: number): number;
+  /** Suction pressure of the last run [Pa]. */
+  readonly suctionPa: number;
+  /**
+   * Turn the derivatives of the suction of the last run into those of its discharge, in place.
+   *
+   * @param matrix  in the variables of the inlet of the block (see outlet-slopes.ts)
+   * @param pressure  the row of the discharge pressure
+   * @returns false where there are none
+   */
+  carrySlopes(matrix: Float64Array, pressure: Float64Array): boolean;
 }
 
 /** Isentropic efficiencies tried for a polytropic one; four do where T₂/T₁ is below 3. */
@@ -29,9 +40,15 @@ const CLOSE = 1e-11;
  */
 export function createMachineStage(mixture: Mixture): MachineStage {
   const ideal = emptyStream(mixture.size);
+  const from = emptyStream(mixture.size);
+  const to = emptyStream(mixture.size);
+  const slopes = createStageSlopes(mixture);
+  const path = { from, isentropic: ideal, to, workRatio: 1, polytropic: null as number | null };
+  let ran = false;
 
   function isentropicRise(stream: StreamState, pressurePa: number, firstK: number): number {
     const entropy = mixture.entropy(stream);
+    copyStream(stream, from);
     copyStream(stream, ideal);
     ideal.temperatureK = firstK;
     ideal.pressurePa = pressurePa;
@@ -44,6 +61,7 @@ export function createMachineStage(mixture: Mixture): MachineStage {
     const idle = Math.abs(pressurePa - stream.pressurePa) <= 1e-12 * stream.pressurePa;
     if (!idle && mixture.total(stream) > 0) return false;
     stream.pressurePa = pressurePa;
+    ran = false;
     return true;
   }
 
@@ -51,6 +69,8 @@ export function createMachineStage(mixture: Mixture): MachineStage {
     stream.temperatureK = ideal.temperatureK;
     stream.pressurePa = pressurePa;
     mixture.settleAtEnthalpy(stream, stream.enthalpyW + work);
+    copyStream(stream, to);
+    ran = true;
   }
 
   return {
@@ -61,24 +81,32 @@ export function createMachineStage(mixture: Mixture): MachineStage {
       const rise = isentropicRise(stream, pressurePa, firstK);
       const isentropic = kind === 'isentropic' ? efficiency : matched(stream, rise, efficiency);
       const work = rise / isentropic;
+      path.workRatio = 1 / isentropic;
+      path.polytropic = kind === 'polytropic' ? efficiency : null;
       giveWork(stream, pressurePa, work);
       return work;
     },
     expand(stream, pressurePa, efficiency) {
       if (isIdle(stream, pressurePa)) return 0;
+      path.workRatio = efficiency;
+      path.polytropic = null;
       const work = efficiency * isentropicRise(stream, pressurePa, stream.temperatureK);
       giveWork(stream, pressurePa, work);
       return work;
     },
+    get suctionPa() {
+      return from.pressurePa;
+    },
+    carrySlopes: (matrix, pressure) => ran && slopes.carry(path, matrix, pressure),
   };
 
-  /** The isentropic efficiency at which the path from `from` has the polytropic efficiency wanted, by secants. */
-  function matched(from: StreamState, rise: number, wanted: number): number {
-    const s1 = mixture.entropy(from);
+  /** The isentropic efficiency at which the path from `suction` has the polytropic efficiency wanted, by secants. */
+  function matched(suction: StreamState, rise: number, wanted: number): number {
+    const s1 = mixture.entropy(suction);
     const polytropicAt = (isentropic: number): number => {
       const work = rise / isentropic;
-      mixture.settleAtEnthalpy(ideal, from.enthalpyW + work);
-      const T1 = from.temperatureK;
+      mixture.settleAtEnthalpy(ideal, suction.enthalpyW + work);
+      const T1 = suction.temperatureK;
       const T2 = ideal.temperatureK;
       const meanK = Math.abs(T2 - T1) > 1e-6 * T1 ? (T2 - T1) / Math.log(T2 / T1) : T1;
       return 1 - ((mixture.entropy(ideal) - s1) * meanK) / work;

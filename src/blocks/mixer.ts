@@ -1,8 +1,10 @@
 import { z } from 'zod';
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
 import { copyStream } from '../model/stream.ts';
+import { stateSlopes } from '../properties/state-slopes.ts';
 import { quantity } from '../units/schema.ts';
 import type { BlockKind } from './block.ts';
+import { followPressure, keepFlows, keepTemperature, temperatureAt } from './outlet-slopes.ts';
 import { quietReport } from './report.ts';
 
 const settings = z.strictObject({
@@ -27,6 +29,8 @@ export const mixer: BlockKind<Settings> = {
   settings,
   ports: () => ({ inlets: 'any', outlets: ['out'] }),
   create(setting, { mixture }) {
+    const before = stateSlopes(mixture.size);
+    const after = stateSlopes(mixture.size);
     return {
       pass(inlets, outlets) {
         const out = outlets[0];
@@ -53,6 +57,27 @@ export const mixer: BlockKind<Settings> = {
         out.temperatureK = flow > 0 ? flowTimesK / flow : inlets[0].temperatureK;
         if (inlets.length === 1 && inlets[0].pressurePa === pressurePa) copyStream(inlets[0], out);
         else mixture.settleAtEnthalpy(out, enthalpyW);
+      },
+      slopes(inlets, outlets, { of: [matrices] }) {
+        const { size } = mixture;
+        const [out] = outlets;
+        const setsPressure =
+          setting.pressure === undefined
+            ? inlets.findIndex((inlet) => mixture.total(inlet) > 0 && inlet.pressurePa === out.pressurePa)
+            : -1;
+        const unchanged = inlets.length === 1 && inlets[0].pressurePa === out.pressurePa;
+        if (!unchanged && !mixture.slopes(out, 'all', after)) return false;
+        for (let k = 0; k < inlets.length; k++) {
+          keepFlows(matrices[k], size);
+          if (k === setsPressure) followPressure(matrices[k], size);
+          if (unchanged) keepTemperature(matrices[k], size);
+          else if (
+            !mixture.slopes(inlets[k], 'all', before) ||
+            !temperatureAt(after.enthalpy, before.enthalpy, matrices[k])
+          )
+            return false;
+        }
+        return true;
       },
       report(inlets, outlets) {
         const pressurePa = outlets[0].pressurePa;
