@@ -6,9 +6,10 @@ import type { BlockKind, SettingsFault } from './block.ts';
 import { exactlyOne } from './checks.ts';
 import { hotDischarge, type IdleCooler, idleIntercooling, liquidAtSuction } from './compressor-warnings.ts';
 import { createKnockOut } from './knock-out.ts';
-import { createMachineStage } from './machine-stage.ts';
+import { createMachineStage, type MachineStage } from './machine-stage.ts';
 import { quietReport } from './report.ts';
 import { stageRatio } from './stage-ratio.ts';
+import { carryAlongTrain, type Train } from './train-slopes.ts';
 
 const settings = z.strictObject({
   pressure: quantity('pressure', { description: 'discharge pressure' }).optional(),
@@ -83,7 +84,9 @@ export const compressor: BlockKind<Settings> = {
     return outlet === 'condensate' ? role !== 'gas' : role !== 'solid';
   },
   create(setting, { mixture }) {
-    const stage = createMachineStage(mixture);
+    const machines: MachineStage[] = [];
+    /** by stage: is it cooled before it? */
+    const cooled: boolean[] = [];
     const drums = createKnockOut(mixture);
     let shaftW = 0;
     let coolingW = 0;
@@ -91,16 +94,20 @@ export const compressor: BlockKind<Settings> = {
     let wetAtInlet = false;
     let wetBetween = false;
     let idleCooler: IdleCooler | null = null;
+    /** that let the pressure down and cooled nothing */
+    let idleDrop = false;
+    let ratio = 1;
     return {
       pass([inlet], [out, condensate]) {
         const stages = setting.stages ?? 1;
         const target = dischargePressure(setting, inlet!.pressurePa);
         const drop = setting.intercooling === undefined ? 0 : (setting.pressure_drop_per_cooler ?? 0);
-        const ratio = stageRatio(inlet!.pressurePa, target, stages, drop);
+        ratio = stageRatio(inlet!.pressurePa, target, stages, drop);
         shaftW = 0;
         coolingW = 0;
         hottestK = 0;
         idleCooler = null;
+        idleDrop = false;
         wetAtInlet = inlet!.vapourFraction < 1;
         wetBetween = false;
         copyStream(inlet!, out!);
@@ -114,10 +121,21 @@ export const compressor: BlockKind<Settings> = {
             if (k === 2) firstDrumPa = out!.pressurePa;
           }
           const pressurePa = k === stages ? target : out!.pressurePa * ratio;
-          shaftW += compress(out!, pressurePa);
+          shaftW += compress(k, out!, pressurePa);
           hottestK = Math.max(hottestK, out!.temperatureK);
         }
         if (condensate) drums.collect(condensate, setting.intercooling ?? out!.temperatureK, firstDrumPa);
+      },
+      slopes(_, __, { width, of: [[matrix]] }) {
+        if (setting.knock_out || idleDrop) return false;
+        for (let i = 0; i < width; i++) matrix[i * width + i] = 1;
+        const train: Train = {
+          stages: machines.slice(0, setting.stages ?? 1),
+          ratio,
+          pressureSlope: setting.ratio ?? (setting.pressure_rise === undefined ? 0 : 1),
+          cools: (stage) => cooled[stage],
+        };
+        return carryAlongTrain(train, mixture.size, matrix);
       },
       report(_, outlets) {
         const drawnW = shaftW / (setting.drive_efficiency ?? 1);
@@ -154,7 +172,9 @@ export const compressor: BlockKind<Settings> = {
       },
     };
 
-    function compress(stream: StreamState, pressurePa: number): number {
+    function compress(k: number, stream: StreamState, pressurePa: number): number {
+      machines[k - 1] ??= createMachineStage(mixture);
+      const stage = machines[k - 1];
       return setting.polytropic_efficiency === undefined
         ? stage.compress(stream, pressurePa, setting.efficiency ?? EFFICIENCY, 'isentropic')
         : stage.compress(stream, pressurePa, setting.polytropic_efficiency, 'polytropic');
@@ -162,16 +182,18 @@ export const compressor: BlockKind<Settings> = {
 
     /** The cooler before stage k. One set hotter than the discharge it is to cool does nothing. */
     function coolBetween(stream: StreamState, k: number, drop: number): void {
+      cooled[k] = setting.intercooling !== undefined && setting.intercooling < stream.temperatureK;
       if (setting.intercooling === undefined) return;
       const before = stream.enthalpyW;
       stream.pressurePa -= drop;
-      if (setting.intercooling < stream.temperatureK) {
+      if (cooled[k]) {
         stream.temperatureK = setting.intercooling;
         mixture.settle(stream);
         coolingW += stream.enthalpyW - before;
         return;
       }
       if (mixture.total(stream) > 0) idleCooler ??= { behind: k - 1, dischargeK: stream.temperatureK };
+      idleDrop ||= drop > 0;
       if (drop > 0) mixture.settleAtEnthalpy(stream, before);
     }
   },

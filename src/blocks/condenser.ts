@@ -7,8 +7,10 @@ import type { BlockKind, SettingsFault } from './block.ts';
 import { exactlyOne, knownComponents, pressureAfterDrop } from './checks.ts';
 import { coolingSettings, createCoolingSplit } from './cooling.ts';
 import { coolingFaults } from './cooling-faults.ts';
+import { createDutySlopes } from './duty-slopes.ts';
 import { heatCurve } from './heat-curve.ts';
 import { settleWithDuty } from './heat-duty.ts';
+import { partSlopes } from './outlet-slopes.ts';
 import { partPhases } from './phase-outlets.ts';
 import { enthalpyAdded, quietReport } from './report.ts';
 
@@ -55,6 +57,8 @@ export const condenser: BlockKind<Settings> = {
   create(setting, context) {
     const mixture = setting.condense ? context.mixture.withCondensables(setting.condense) : context.mixture;
     const mixed = emptyStream(mixture.size);
+    const mixedSlopes = new Float64Array((mixture.size + 2) ** 2);
+    const duty = createDutySlopes(mixture, context.mixture);
     const cooling = createCoolingSplit(mixture);
     return {
       pass([inlet], [gas, liquid]) {
@@ -67,6 +71,14 @@ export const condenser: BlockKind<Settings> = {
           settleWithDuty(mixture, mixed, inlet!.enthalpyW, setting.duty!);
         }
         partPhases(mixed, gas!, liquid!, mixture);
+      },
+      slopes([inlet], _, { of: [[gas], [liquid]] }) {
+        const temperatureIsSet = setting.temperature !== undefined;
+        mixedSlopes.fill(0);
+        if (!duty.fill(inlet!, mixed, { temperatureIsSet, pressureIsSet: false }, true, mixedSlopes))
+          return false;
+        partSlopes(duty.liquid, mixture.size, mixedSlopes, gas, liquid);
+        return true;
       },
       report(inlets, outlets) {
         const [inlet] = inlets;

@@ -39,6 +39,7 @@ export const expander: BlockKind<Settings> = {
   check: (setting) => exactlyOne(setting, { pressure: 'pressure: 6 bar', ratio: 'ratio: 3' }),
   create(setting, { mixture }) {
     const stage = createMachineStage(mixture);
+    const pressureRow = new Float64Array(mixture.size + 2);
     let shaftW = 0;
     return {
       pass([inlet], [out]) {
@@ -48,6 +49,11 @@ export const expander: BlockKind<Settings> = {
           dischargePressure(setting, inlet!.pressurePa),
           setting.efficiency ?? EFFICIENCY,
         );
+      },
+      slopes([inlet], [out], { width, of: [[matrix]] }) {
+        for (let i = 0; i < width; i++) matrix[i * width + i] = 1;
+        pressureRow[width - 1] = setting.pressure === undefined ? out!.pressurePa / inlet!.pressurePa : 0;
+        return stage.carrySlopes(matrix, pressureRow);
       },
       report([inlet], [out]) {
         const drawnW = shaftW * (setting.drive_efficiency ?? 1);

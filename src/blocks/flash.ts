@@ -4,7 +4,9 @@ import { emptyStream } from '../model/stream.ts';
 import { quantity } from '../units/schema.ts';
 import type { BlockKind } from './block.ts';
 import { exactlyOne } from './checks.ts';
+import { createDutySlopes } from './duty-slopes.ts';
 import { settleWithDuty } from './heat-duty.ts';
+import { partSlopes } from './outlet-slopes.ts';
 import { partPhases } from './phase-outlets.ts';
 import { enthalpyAdded, quietReport } from './report.ts';
 
@@ -37,6 +39,8 @@ export const flash: BlockKind<Settings> = {
     role === 'solid' ? outlet === 'liquid' : outlet === 'gas' || role !== 'gas',
   create(setting, { mixture }) {
     const mixed = emptyStream(mixture.size);
+    const mixedSlopes = new Float64Array((mixture.size + 2) ** 2);
+    const duty = createDutySlopes(mixture);
     let started = false;
     return {
       pass([inlet], [gas, liquid]) {
@@ -53,6 +57,14 @@ export const flash: BlockKind<Settings> = {
           settleWithDuty(mixture, mixed, inlet!.enthalpyW, setting.duty ?? 0);
         }
         partPhases(mixed, gas!, liquid!, mixture);
+      },
+      slopes([inlet], _, { of: [[gas], [liquid]] }) {
+        const temperatureIsSet = setting.temperature !== undefined;
+        mixedSlopes.fill(0);
+        if (!duty.fill(inlet!, mixed, { temperatureIsSet, pressureIsSet: true }, true, mixedSlopes))
+          return false;
+        partSlopes(duty.liquid, mixture.size, mixedSlopes, gas, liquid);
+        return true;
       },
       report(inlets, outlets) {
         return quietReport({

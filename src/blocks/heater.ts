@@ -5,6 +5,7 @@ import type { Mixture } from '../properties/mixture.ts';
 import { fraction, quantity } from '../units/schema.ts';
 import type { BlockKind } from './block.ts';
 import { exactlyOne, pressureAfterDrop } from './checks.ts';
+import { createDutySlopes } from './duty-slopes.ts';
 import { temperatureAlong } from './heat-curve.ts';
 import { settleWithDuty } from './heat-duty.ts';
 import { enthalpyAdded, quietReport } from './report.ts';
@@ -41,6 +42,7 @@ export const heater: BlockKind<Settings> = {
     ...steamFaults(setting.steam),
   ],
   create(setting, { mixture }) {
+    const duty = createDutySlopes(mixture);
     let started = false;
     return {
       pass([inlet], [out]) {
@@ -55,6 +57,11 @@ export const heater: BlockKind<Settings> = {
         started = true;
         if (setting.duty !== undefined) settleWithDuty(mixture, out!, inlet!.enthalpyW, setting.duty);
         else settleAtVapourFraction(out!, setting.vapour_fraction!, mixture);
+      },
+      slopes([inlet], [out], { of }) {
+        if (setting.vapour_fraction !== undefined) return false;
+        const temperatureIsSet = setting.temperature !== undefined;
+        return duty.fill(inlet!, out!, { temperatureIsSet, pressureIsSet: false }, false, of[0][0]);
       },
       report(inlets, outlets) {
         const [inlet] = inlets;

@@ -1,5 +1,6 @@
 import { copyStream, emptyStream, type StreamState } from '../model/stream.ts';
 import type { Mixture } from '../properties/mixture.ts';
+import { createStageSlopes } from './machine-stage-slopes.ts';
 
 /** Which ideal path an efficiency is measured against. */
 export type EfficiencyKind = 'isentropic' | 'polytropic';
@@ -10,6 +11,16 @@ export interface MachineStage {
   compress(stream: StreamState, pressurePa: number, efficiency: number, kind: EfficiencyKind): number;
   /** h₂ = h₁ + η (h₂s − h₁); what is returned is negative */
   expand(stream: StreamState, pressurePa: number, efficiency: number): number;
+  /** Suction pressure of the last run [Pa]. */
+  readonly suctionPa: number;
+  /**
+   * Turn the derivatives of the suction of the last run into those of its discharge, in place.
+   *
+   * @param matrix  in the variables of the inlet of the block (see outlet-slopes.ts)
+   * @param pressure  the row of the discharge pressure
+   * @returns false where there are none
+   */
+  carrySlopes(matrix: Float64Array, pressure: Float64Array): boolean;
 }
 
 /** Isentropic efficiencies tried for a polytropic one; four do where T₂/T₁ is below 3. */
@@ -34,10 +45,16 @@ export function createMachineStage(mixture: Mixture): MachineStage {
    * rise of temperature that was found over the one guessed.
    */
   const last: { exponent: number | null; stretch: number } = { exponent: null, stretch: 1 };
+  const from = emptyStream(mixture.size);
+  const to = emptyStream(mixture.size);
+  const slopes = createStageSlopes(mixture);
+  const path = { from, isentropic: ideal, to, workRatio: 1, polytropic: null as number | null };
+  let ran = false;
 
   function isentropicRise(stream: StreamState, pressurePa: number, firstExponent: number): number {
     const entropy = mixture.entropy(stream);
     const lnRatio = Math.log(pressurePa / stream.pressurePa);
+    copyStream(stream, from);
     copyStream(stream, ideal);
     ideal.temperatureK = stream.temperatureK * Math.exp((last.exponent ?? firstExponent) * lnRatio);
     ideal.pressurePa = pressurePa;
@@ -51,6 +68,7 @@ export function createMachineStage(mixture: Mixture): MachineStage {
     const idle = Math.abs(pressurePa - stream.pressurePa) <= 1e-12 * stream.pressurePa;
     if (!idle && mixture.total(stream) > 0) return false;
     stream.pressurePa = pressurePa;
+    ran = false;
     return true;
   }
 
@@ -60,6 +78,8 @@ export function createMachineStage(mixture: Mixture): MachineStage {
     stream.pressurePa = pressurePa;
     mixture.settleAtEnthalpy(stream, stream.enthalpyW + work);
     last.stretch = within(0.5, (stream.temperatureK - fromK) / guessedRiseK || 1, 2);
+    copyStream(stream, to);
+    ran = true;
   }
 
   return {
@@ -70,6 +90,8 @@ export function createMachineStage(mixture: Mixture): MachineStage {
       const isPolytropic = kind === 'polytropic';
       const isentropic = isPolytropic ? matched(stream, rise, efficiency) : efficiency;
       const work = rise / isentropic;
+      path.workRatio = 1 / isentropic;
+      path.polytropic = isPolytropic ? efficiency : null;
       // Where an efficiency was matched, `ideal` has come to the end of the real path.
       const riseK = ideal.temperatureK - stream.temperatureK;
       giveWork(stream, pressurePa, work, isPolytropic ? riseK : riseK / efficiency);
@@ -77,19 +99,25 @@ export function createMachineStage(mixture: Mixture): MachineStage {
     },
     expand(stream, pressurePa, efficiency) {
       if (isIdle(stream, pressurePa)) return 0;
+      path.workRatio = efficiency;
+      path.polytropic = null;
       const work = efficiency * isentropicRise(stream, pressurePa, 0);
       giveWork(stream, pressurePa, work, efficiency * (ideal.temperatureK - stream.temperatureK));
       return work;
     },
+    get suctionPa() {
+      return from.pressurePa;
+    },
+    carrySlopes: (matrix, pressure) => ran && slopes.carry(path, matrix, pressure),
   };
 
-  /** The isentropic efficiency at which the path from `from` has the polytropic efficiency wanted, by secants. */
-  function matched(from: StreamState, rise: number, wanted: number): number {
-    const s1 = mixture.entropy(from);
+  /** The isentropic efficiency at which the path from `suction` has the polytropic efficiency wanted, by secants. */
+  function matched(suction: StreamState, rise: number, wanted: number): number {
+    const s1 = mixture.entropy(suction);
     const polytropicAt = (isentropic: number): number => {
       const work = rise / isentropic;
-      mixture.settleAtEnthalpy(ideal, from.enthalpyW + work);
-      const T1 = from.temperatureK;
+      mixture.settleAtEnthalpy(ideal, suction.enthalpyW + work);
+      const T1 = suction.temperatureK;
       const T2 = ideal.temperatureK;
       const meanK = Math.abs(T2 - T1) > 1e-6 * T1 ? (T2 - T1) / Math.log(T2 / T1) : T1;
       return 1 - ((mixture.entropy(ideal) - s1) * meanK) / work;

@@ -1,8 +1,10 @@
 import { z } from 'zod';
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
 import { copyStream } from '../model/stream.ts';
+import { stateSlopes } from '../properties/state-slopes.ts';
 import { quantity } from '../units/schema.ts';
 import type { BlockKind } from './block.ts';
+import { followPressure, keepFlows, keepTemperature, temperatureAt } from './outlet-slopes.ts';
 import { quietReport } from './report.ts';
 
 const settings = z.strictObject({
@@ -29,6 +31,8 @@ export const mixer: BlockKind<Settings> = {
   create(setting, { mixture }) {
     /** what mixing adds to the mean temperature of the inlets, from the last pass: next time's first guess [K] */
     const last = { riseK: 0 };
+    const before = stateSlopes(mixture.size);
+    const after = stateSlopes(mixture.size);
     return {
       pass(inlets, outlets) {
         const out = outlets[0];
@@ -61,6 +65,27 @@ export const mixer: BlockKind<Settings> = {
         out.temperatureK = meanK + last.riseK;
         mixture.settleAtEnthalpy(out, enthalpyW);
         last.riseK = out.temperatureK - meanK;
+      },
+      slopes(inlets, outlets, { of: [matrices] }) {
+        const { size } = mixture;
+        const [out] = outlets;
+        const setsPressure =
+          setting.pressure === undefined
+            ? inlets.findIndex((inlet) => mixture.total(inlet) > 0 && inlet.pressurePa === out.pressurePa)
+            : -1;
+        const unchanged = inlets.length === 1 && inlets[0].pressurePa === out.pressurePa;
+        if (!unchanged && !mixture.slopes(out, 'all', after)) return false;
+        for (let k = 0; k < inlets.length; k++) {
+          keepFlows(matrices[k], size);
+          if (k === setsPressure) followPressure(matrices[k], size);
+          if (unchanged) keepTemperature(matrices[k], size);
+          else if (
+            !mixture.slopes(inlets[k], 'all', before) ||
+            !temperatureAt(after.enthalpy, before.enthalpy, matrices[k])
+          )
+            return false;
+        }
+        return true;
       },
       report(inlets, outlets) {
         const pressurePa = outlets[0].pressurePa;

@@ -1,7 +1,10 @@
 import { z } from 'zod';
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
+import { copyStream, emptyStream, type StreamState } from '../model/stream.ts';
+import { stateSlopes } from '../properties/state-slopes.ts';
 import { fraction, quantity } from '../units/schema.ts';
 import type { BlockKind } from './block.ts';
+import { keepFlows, temperatureAt } from './outlet-slopes.ts';
 import { quietReport } from './report.ts';
 
 const settings = z.strictObject({
@@ -12,6 +15,8 @@ type Settings = z.infer<typeof settings>;
 
 /** Efficiency where none is given. @source common practice for centrifugal pumps */
 const EFFICIENCY = 0.7;
+/** Steps of the differences in the volume of a liquid, relative [-]. */
+const STEP = 1e-4;
 
 /**
  * Pump: one liquid inlet, one outlet at a higher pressure.
@@ -26,6 +31,9 @@ export const pump: BlockKind<Settings> = {
   models: () => ['incompressible liquid'],
   ports: () => ({ inlets: ['in'], outlets: ['out'] }),
   create(setting, { mixture }) {
+    const before = stateSlopes(mixture.size);
+    const after = stateSlopes(mixture.size);
+    const beside = emptyStream(mixture.size);
     let powerW = 0;
     let gasAtSuction = false;
     return {
@@ -46,6 +54,13 @@ export const pump: BlockKind<Settings> = {
         out!.pressurePa = setting.pressure;
         out!.temperatureK = inlet!.temperatureK;
         mixture.settleAtEnthalpy(out!, inlet!.enthalpyW + powerW);
+      },
+      slopes([inlet], [out], { of: [[matrix]] }) {
+        if (gasAtSuction || mixture.total(inlet!) === 0) return false;
+        if (!mixture.slopes(inlet!, 'all', before) || !mixture.slopes(out!, 'all', after)) return false;
+        keepFlows(matrix, mixture.size);
+        addPowerSlopes(inlet!, before.enthalpy);
+        return temperatureAt(after.enthalpy, before.enthalpy, matrix);
       },
       report(inlets, outlets) {
         return quietReport({
@@ -69,5 +84,28 @@ export const pump: BlockKind<Settings> = {
         });
       },
     };
+
+    /** Adds the derivatives of the power to those of the enthalpy of the inlet, a liquid. */
+    function addPowerSlopes(inlet: StreamState, enthalpy: Float64Array): void {
+      const { size } = mixture;
+      const perVolume = (setting.pressure - inlet.pressurePa) / (setting.efficiency ?? EFFICIENCY);
+      const total = mixture.total(inlet);
+      const volumeAt = (variable: number, by: number) => {
+        copyStream(inlet, beside);
+        if (variable < size) {
+          beside.flowsMolPerS[variable] += by;
+          beside.liquidMolPerS[variable] += by;
+        } else if (variable === size) beside.temperatureK += by;
+        else beside.pressurePa += by;
+        return mixture.volume(beside);
+      };
+      for (let k = 0; k < size + 2; k++) {
+        const step = STEP * (k < size ? total : k === size ? inlet.temperatureK : inlet.pressurePa);
+        // A component that does not flow can only come.
+        const back = k < size ? Math.min(step, inlet.flowsMolPerS[k]) : step;
+        enthalpy[k] += (perVolume * (volumeAt(k, step) - volumeAt(k, -back))) / (step + back);
+      }
+      enthalpy[size + 1] -= mixture.volume(inlet) / (setting.efficiency ?? EFFICIENCY);
+    }
   },
 };

@@ -3,6 +3,7 @@ import { PassTrouble } from '../diagnostics/diagnostic.ts';
 import { fraction, quantity } from '../units/schema.ts';
 import type { BlockKind, SettingsFault } from './block.ts';
 import { knownComponents } from './checks.ts';
+import { followPressure, keepTemperature } from './outlet-slopes.ts';
 import { portName } from './port-name.ts';
 import { enthalpyAdded, quietReport } from './report.ts';
 
@@ -70,6 +71,16 @@ export const separator: BlockKind<Settings> = {
           mixture.settle(out);
         }
       },
+      slopes(_, outlets, { width, of }) {
+        for (let k = 0; k < outlets.length; k++) {
+          const name = names[k] ?? 'rest';
+          const [matrix] = of[k];
+          for (let i = 0; i < mixture.size; i++) matrix[i * width + i] = shareOf(setting, name, ids[i]);
+          keepTemperature(matrix, mixture.size);
+          if (setting.pressures?.[name] === undefined) followPressure(matrix, mixture.size);
+        }
+        return true;
+      },
       report(inlets, outlets) {
         return quietReport({
           dutyW: enthalpyAdded(inlets, outlets),
@@ -84,6 +95,11 @@ export const separator: BlockKind<Settings> = {
     };
   },
 };
+
+function shareOf(setting: Settings, outlet: string, id: string): number {
+  if (outlet === 'rest') return Math.max(1 - recoveredShare(setting, id), 0);
+  return setting.recover[outlet]?.[id] ?? 0;
+}
 
 function recoveredShare(setting: Settings, id: string): number {
   return Object.values(setting.recover).reduce((sum, shares) => sum + (shares[id] ?? 0), 0);

@@ -6,6 +6,7 @@ import type { Mixture } from '../properties/mixture.ts';
 import { flow, fraction } from '../units/schema.ts';
 import type { BlockKind, SettingsFault } from './block.ts';
 import { exactlyOne } from './checks.ts';
+import { followPressure, keepFlows, keepTemperature } from './outlet-slopes.ts';
 import { portName } from './port-name.ts';
 import { quietReport } from './report.ts';
 
@@ -57,6 +58,27 @@ export const splitter: BlockKind<Settings> = {
           rest.liquidMolPerS[i] = Math.min(rest.liquidMolPerS[i], rest.flowsMolPerS[i]);
         }
       },
+      slopes([inlet], outlets, { width, of }) {
+        const { size } = mixture;
+        const total = mixture.total(inlet!);
+        if (setting.flows && total === 0) return false;
+        const rest = of[names.length][0];
+        keepFlows(rest, size);
+        for (let k = 0; k < outlets.length; k++) {
+          const [matrix] = of[k];
+          keepTemperature(matrix, size);
+          followPressure(matrix, size);
+          if (k === names.length) continue;
+          keepFlows(
+            matrix,
+            size,
+            setting.fractions ? setting.fractions[names[k]] : mixture.total(outlets[k]) / total,
+          );
+          if (setting.flows) keepFlowOf(setting.flows[names[k]].per, inlet!, outlets[k], mixture, matrix);
+          for (let entry = 0; entry < size * width; entry++) rest[entry] -= matrix[entry];
+        }
+        return true;
+      },
       report(inlets, outlets) {
         const total = mixture.total(inlets[0]);
         const shares = Object.fromEntries(
@@ -104,6 +126,24 @@ function partOfFlow(setting: Settings, name: string, inlet: StreamState, mixture
     normalVolume: moles * NORMAL_VOLUME_M3_PER_MOL,
   }[wanted.per];
   return wanted.value / inletFlow;
+}
+
+/** More of a component in the inlet leaves a smaller share of it for an outlet whose flow is set. */
+function keepFlowOf(
+  per: 'molar' | 'mass' | 'normalVolume',
+  inlet: StreamState,
+  outlet: StreamState,
+  mixture: Mixture,
+  matrix: Float64Array,
+): void {
+  const { size, components } = mixture;
+  const whole = per === 'mass' ? mixture.mass(inlet) : mixture.total(inlet);
+  for (let i = 0; i < size; i++) {
+    for (let j = 0; j < size; j++) {
+      const counts = per === 'mass' ? components[j].molarMassKgPerMol : 1;
+      matrix[i * (size + 2) + j] -= (outlet.flowsMolPerS[i] * counts) / whole;
+    }
+  }
 }
 
 function takeShare(from: StreamState, part: number, to: StreamState): void {

@@ -2,6 +2,7 @@ import { z } from 'zod';
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
 import { quantity } from '../units/schema.ts';
 import type { BlockKind } from './block.ts';
+import { createDutySlopes } from './duty-slopes.ts';
 import { quietReport } from './report.ts';
 
 const settings = z.strictObject({
@@ -21,6 +22,7 @@ export const valve: BlockKind<Settings> = {
   settings,
   ports: () => ({ inlets: ['in'], outlets: ['out'] }),
   create(setting, { mixture }) {
+    const duty = createDutySlopes(mixture);
     let started = false;
     return {
       pass([inlet], [out]) {
@@ -38,6 +40,8 @@ export const valve: BlockKind<Settings> = {
         started = true;
         mixture.settleAtEnthalpy(out!, inlet!.enthalpyW);
       },
+      slopes: ([inlet], [out], { of }) =>
+        duty.fill(inlet!, out!, { temperatureIsSet: false, pressureIsSet: true }, false, of[0][0]),
       report(inlets, outlets) {
         return quietReport({
           details: {

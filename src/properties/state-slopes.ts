@@ -32,6 +32,9 @@ const TRACE = 1e-200;
 /** Keeps the logarithm of what is in one phase only finite: it is asked for and then has no weight. */
 const SMALLEST = 1e-300;
 
+/** Two phases whose fugacities differ by more than this are the mixed sides of a jump (see solve-state.ts) [-]. */
+const IN_EQUILIBRIUM = 1e-7;
+
 /** Fill in the derivatives of a settled stream: those of its liquid, or all; false where it has none. */
 export type FillStateSlopes = (stream: StreamState, what: 'liquid' | 'all', slopes: StateSlopes) => boolean;
 
@@ -39,7 +42,8 @@ export type FillStateSlopes = (stream: StreamState, what: 'liquid' | 'all', slop
  * Derivatives of phases, enthalpy and entropy of a stream in equilibrium, on the side of a phase boundary on which
  * it stands: gas alone, liquid alone, or both. With g = n − l and dl of split-slopes.ts,
  *   dH = Σ hᵢ(ideal gas) dnᵢ + Cp dT + d(departure of the gas g) + d(departure of the liquid l),
- * and S in the same way. An empty stream has none, nor has a pure component that boils.
+ * and S in the same way. An empty stream has none, nor has a pure component that boils, or two phases that are
+ * not in equilibrium.
  */
 export function createStateSlopes(
   idealGas: IdealGas,
@@ -52,7 +56,7 @@ export function createStateSlopes(
   const liquid = createLiquidSlopes(liquidPhase);
   const splitSlopes = createSplitSlopes(size);
   const { phases, read } = createPhaseReader(liquidPhase.roles);
-  const { solid, flows, l, y, theta } = phases;
+  const { solid, flows, g, l, y, theta } = phases;
   const ideal = new Float64Array(size);
   // What one more mole of each brings in the gas and in the liquid, above the ideal gas at 1 bar.
   const inGas = new Float64Array(size);
@@ -88,8 +92,9 @@ export function createStateSlopes(
       if (flows[i] === 0) {
         const K = Math.exp(liquid.lnFugacity[i] - gas.lnPhi[i] - lnP);
         theta[i] = phases.L / (phases.L + phases.G * K);
-      } else if (l[i] > 0 && liquid.lnFugacity[i] === Number.POSITIVE_INFINITY) {
-        return false;
+      } else if (l[i] > 0 && g[i] > 0) {
+        const lnRatio = Math.log((l[i] * phases.G) / (g[i] * phases.L));
+        if (!(Math.abs(lnRatio + liquid.lnFugacity[i] - gas.lnPhi[i] - lnP) < IN_EQUILIBRIUM)) return false;
       }
     }
     return splitSlopes(P, phases, gas, liquid, out);
