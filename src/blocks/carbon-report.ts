@@ -1,4 +1,8 @@
-import { carbonFreeWindow, createCarbonActivity } from '../chemistry/carbon-activity.ts';
+import {
+  type CarbonActivityOf,
+  carbonFreeWindow,
+  createCarbonActivity,
+} from '../chemistry/carbon-activity.ts';
 import type { StreamState } from '../model/stream.ts';
 import type { Mixture } from '../properties/mixture.ts';
 import type { BlockReport } from './block.ts';
@@ -28,7 +32,12 @@ export interface CarbonReport {
 const MOST_NAMED = 2;
 
 export function createCarbonReport({ components, gas, spec }: Mixture): CarbonReport {
-  const activityOf = createCarbonActivity(components, gas, spec.basis);
+  let made: CarbonActivityOf | null = null;
+  // Made when first asked: the passes do not need it.
+  const activityOf: CarbonActivityOf = (T, P, amounts) => {
+    made ??= createCarbonActivity(components, gas, spec.basis);
+    return made(T, P, amounts);
+  };
   const activity = ({ temperatureK, pressurePa, flowsMolPerS }: StreamState) =>
     activityOf(temperatureK, pressurePa, flowsMolPerS).largest;
   const window = ({ pressurePa, flowsMolPerS }: StreamState) =>

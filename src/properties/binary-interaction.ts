@@ -137,7 +137,7 @@ function roundedLine(row: InteractionRow): Line {
       // softplus and logistic share their exponential
       const eLow = Math.exp(-Math.abs(low));
       const eHigh = Math.exp(-Math.abs(high));
-      const held = Math.max(low, 0) + Math.log1p(eLow) - Math.max(high, 0) - Math.log1p(eHigh);
+      const held = Math.max(low, 0) - Math.max(high, 0) + Math.log((1 + eLow) / (1 + eHigh));
       values[at] = k0 + k1PerK * (fromK + ROUNDING_K * held - 298.15);
       slopes[at] = k1PerK * ((low > 0 ? 1 : eLow) / (1 + eLow) - (high > 0 ? 1 : eHigh) / (1 + eHigh));
     },

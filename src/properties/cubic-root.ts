@@ -1,8 +1,13 @@
+/** More steps than this are taken only towards a double root, where the closed form is the shorter way. */
+const FEW_STEPS = 10;
+
 /**
  * Largest real root of the compressibility cubic
  *   Z³ + ((u − 1) B − 1) Z² + (A + w B² − u B (B + 1)) Z − (A B + w B² (B + 1)) = 0,  u = δ1 + δ2, w = δ1 δ2,
- * which is the vapour's: closed form (Cardano, trigonometric where there are three real roots), polished by
- * Newton. Where only one real root exists it is returned, whatever the density it stands for.
+ * which is the vapour's. At 1 + B the cubic is not below zero and beyond it has no root; Newton's steps come down from
+ * there to the largest root without passing it as long as the cubic is convex. Where they cannot, the closed form
+ * (Cardano, trigonometric where there are three real roots) is polished by Newton. Where only one real root
+ * exists it is returned, whatever the density it stands for.
  *
  * @param A  aP/(RT)² [-], at least 0
  * @param B  bP/(RT) [-], above 0
@@ -13,6 +18,14 @@ export function vapourRoot(A: number, B: number, u: number, w: number): number {
   const c2 = (u - 1) * B - 1;
   const c1 = A + w * B * B - u * B * (B + 1);
   const c0 = -(A * B + w * B * B * (B + 1));
+  let Z = 1 + B;
+  for (let step = 0; step < FEW_STEPS; step++) {
+    const slope = (3 * Z + 2 * c2) * Z + c1;
+    if (!(slope > 0) || 3 * Z + c2 <= 0) break;
+    const next = Z - (((Z + c2) * Z + c1) * Z + c0) / slope;
+    if (!(next < Z)) return Z;
+    Z = next;
+  }
   return polish(closedForm(c2, c1, c0), c2, c1, c0, B);
 }
 

@@ -146,7 +146,11 @@ export function createCubic(
       a -= 2 * x[m] * x[n] * taken[k];
       aSlope -= 2 * x[m] * x[n] * takenSlope[k];
     }
-    solveState(T, P, a, aSlope, b, c);
+    now.a = a;
+    now.aSlope = aSlope;
+    now.b = b;
+    now.c = c;
+    solveState(T, P);
     keptY.set(y);
     now.memberShare = ofMembers / total;
     now.P = P;
@@ -165,17 +169,19 @@ export function createCubic(
     if (m < 0) return false;
     setTemperature(T);
     now.T = Number.NaN;
-    solveState(T, P, root[m] * root[m], 2 * root[m] * rootSlope[m], covolume[m], shift[m]);
+    now.a = root[m] * root[m];
+    now.aSlope = 2 * root[m] * rootSlope[m];
+    now.b = covolume[m];
+    now.c = shift[m];
+    solveState(T, P);
     return true;
   }
 
-  function solveState(T: number, P: number, a: number, aSlope: number, b: number, c: number): void {
-    const B = (b * P) / (R * T);
-    const Z = rootOf((a * P) / (R * T * R * T), B, u, w);
-    now.a = a;
-    now.aSlope = aSlope;
-    now.b = b;
-    now.c = c;
+  /** Z and L of the attraction and covolume in `now`: handed over as arguments, each would be allocated. */
+  function solveState(T: number, P: number): void {
+    const perRT = 1 / (R * T);
+    const B = now.b * P * perRT;
+    const Z = rootOf(now.a * P * perRT * perRT, B, u, w);
     now.Z = Z;
     now.L = Math.log((Z + delta1 * B) / (Z + delta2 * B)) / (delta1 - delta2);
   }

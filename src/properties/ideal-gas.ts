@@ -164,19 +164,21 @@ function movedByAtct(c: Component): boolean {
 
 /** Coefficients times R, with the divisors of the integration worked in: Horner needs no more divisions. */
 function setCoefficients(
-  interval: Nasa9Interval,
+  { a, b1, b1Atct, b2 }: Nasa9Interval,
   basis: EnthalpyBasis,
   h: Float64Array,
   s: Float64Array,
   cp: Float64Array,
   at: number,
 ): void {
-  const [a1, a2, a3, a4, a5, a6, a7] = interval.a;
-  const b1 = basis === 'atct' && interval.b1Atct !== null ? interval.b1Atct : interval.b1;
-  const times = (n: number) => n * R_NASA;
-  h.set([-a1, a2, a3, a4 / 2, a5 / 3, a6 / 4, a7 / 5, b1].map(times), at);
-  s.set([-a1 / 2, -a2, a3, a4, a5 / 2, a6 / 3, a7 / 4, interval.b2].map(times), at);
-  cp.set([a1, a2, a3, a4, a5, a6, a7, 0].map(times), at);
+  for (let k = 0; k < a.length; k++) {
+    // Cp/R has T to the power k − 2; its integrals over T and ln T have logarithms where the power would be 0.
+    cp[at + k] = a[k] * R_NASA;
+    h[at + k] = (k === 1 ? a[k] : a[k] / (k - 1)) * R_NASA;
+    s[at + k] = (k === 2 ? a[k] : a[k] / (k - 2)) * R_NASA;
+  }
+  h[at + 7] = (basis === 'atct' && b1Atct !== null ? b1Atct : b1) * R_NASA;
+  s[at + 7] = b2 * R_NASA;
 }
 
 function enthalpyAt(h: Float64Array, k: number, T: number, lnT: number): number {

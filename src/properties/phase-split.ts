@@ -90,7 +90,8 @@ export function createPhaseSplit(gas: GasModel, liquidPhase: LiquidPhase): Phase
       for (let i = 0; i < size; i++) {
         if (lnLiquid[i] === Number.POSITIVE_INFINITY) drop[i] = 0;
         if (drop[i] === 0) continue;
-        const off = Math.log(z[i] / drop[i]) + lnPhi[i] + lnP - lnLiquid[i];
+        const apart = round === 0 ? 0 : Math.log(z[i] / drop[i]);
+        const off = apart + lnPhi[i] + lnP - lnLiquid[i];
         moved = Math.max(moved, Math.abs(off));
         along += off * change[i];
         before += change[i] * change[i];

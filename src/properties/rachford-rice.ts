@@ -9,8 +9,15 @@
  * @source Rachford & Rice, J. Pet. Technol. 4(10) (1952), sect. 1, 19; sect. 2, 3
  */
 export function vapourFraction(z: Float64Array, K: Float64Array, start: number): number {
-  if (balance(z, K, 1) >= 0) return 1;
-  if (balance(z, K, 0) <= 0) return 0;
+  let atGas = 1;
+  let atLiquid = -1;
+  for (let i = 0; i < z.length; i++) {
+    if (z[i] === 0) continue;
+    atGas -= z[i] / K[i];
+    atLiquid += z[i] * K[i];
+  }
+  if (atGas >= 0) return 1;
+  if (atLiquid <= 0) return 0;
   let low = 0;
   let high = 1;
   let V = start > 0 && start < 1 ? start : 0.5;
@@ -35,14 +42,4 @@ export function vapourFraction(z: Float64Array, K: Float64Array, start: number):
     V = next;
   }
   return V;
-}
-
-/** The Rachford-Rice sum at V = 0 (Σ zK − 1) or V = 1 (1 − Σ z/K). */
-function balance(z: Float64Array, K: Float64Array, V: 0 | 1): number {
-  let sum = 0;
-  for (let i = 0; i < z.length; i++) {
-    if (z[i] === 0) continue;
-    sum += V === 0 ? z[i] * K[i] : z[i] / K[i];
-  }
-  return V === 0 ? sum - 1 : 1 - sum;
 }
