@@ -5,13 +5,10 @@ import type { Plant } from './plant.ts';
 import { answerText, type Finding, type Recogniser } from './why.ts';
 import { nothingCondenses } from './why-dry.ts';
 import { noRealExit, overfullExit, smallPurge } from './why-exit.ts';
-import { type Facts, gatherFacts } from './why-facts.ts';
+import { DIRECT_PASSES, type Facts, gatherFacts } from './why-facts.ts';
 import { flippingPhases } from './why-flip.ts';
 import { tooFewPasses, trendOnly } from './why-passes.ts';
 import { reactorAtBound, reactorBoundFinding, reactorGoneOut } from './why-reactor.ts';
-
-/** Passes by which the way of direct substitution is seen. */
-const DIRECT_PASSES = 40;
 
 /** Reasons that lie in the flowsheet, in order of certainty: the first whose facts hold is told. */
 const ofTheFlowsheet: readonly Recogniser[] = [
@@ -74,12 +71,14 @@ function guessOrBlock(
 }
 
 function diagnosticOf(finding: Finding, closure: PlantClosure, facts: Facts): Diagnostic {
+  const { directPasses, options } = facts;
+  const state = options.method === 'direct' ? '' : `after ${directPasses} direct passes from the feeds, `;
   return {
     code: finding.code,
     severity: 'error',
     where: finding.where ?? facts.plant.flowsheet.placeOf(`streams.${facts.tag}`),
     what: `The recycle through ${facts.tag} did not close in ${closure.passes} passes (${worstText(closure, facts)}): ${finding.what}.`,
-    why: finding.why,
+    why: finding.isOfDirectPasses ? `${state}${finding.why}` : finding.why,
     mend: finding.mend,
   };
 }

@@ -42,6 +42,7 @@ export function nothingCondenses(facts: Facts): Finding | null {
   const setting = plant.get(path);
   return {
     code: 'nothing-condenses',
+    isOfDirectPasses: true,
     what: `nothing condenses in ${vessel.name}, so ${product.id} has no way out there`,
     why: [
       `${vessel.name} stands at ${degC(temperatureK)} and ${bar(pressurePa)}, and the gas in it (${perCent(share)} ${product.id}) ${dew}; ${left}`,
@@ -69,10 +70,11 @@ function colder(facts: Facts, { name }: Vessel, path: string, dewK: number): str
     const kelvin = Math.floor(dewK - below - 273.15) + 273.15;
     const trial = facts.tryOut([[path, kelvin]]);
     if (trial === null || trial.dry.has(name)) continue;
-    best = { kelvin, trial };
+    if (best === null || trial.recycle < best.trial.recycle) best = { kelvin, trial };
     if (trial.recycle <= SENSIBLE_RECYCLE * facts.fed) break;
   }
   if (best === null) return `set ${path} below ${degC(dewK)}, or raise the pressure of the loop`;
   const { kelvin, trial } = best;
-  return `set ${path} to ${degC(kelvin)}, by which the loop closes in ${trial.passes} passes${method}, ${kmolPerHour(trial.recycle)} going round (tried); or raise the pressure of the loop`;
+  const more = trial.recycle > SENSIBLE_RECYCLE * facts.fed ? '; a larger purge is needed besides' : '';
+  return `set ${path} to ${degC(kelvin)}, by which the loop closes in ${trial.passes} passes${method}, ${kmolPerHour(trial.recycle)} going round (tried); or raise the pressure of the loop${more}`;
 }

@@ -24,6 +24,7 @@ export function noRealExit(facts: Facts): Finding | null {
   if (piling === null) return null;
   return {
     code: 'exit-too-small',
+    isOfDirectPasses: true,
     what: `${piling.id} has no way out to speak of`,
     why: `${supplyText(piling)}, and only ${kmolPerHour(piling.leaves)} leave (${exitsText(piling)}): to leave as fast as it comes, ${kmolPerHour(needed(piling))} of it would have to go round`,
     mend: exitAdvice(facts, piling),
@@ -47,6 +48,7 @@ export function smallPurge(facts: Facts): Finding | null {
   ].filter((text) => text !== '');
   return {
     code: 'small-purge',
+    isOfDirectPasses: true,
     what: `the way out for ${piling.id} is too small for the passes allowed`,
     why: sentences.join('; '),
     mend: [exitAdvice(facts, piling), answerText(facts)].filter((text) => text !== '').join('; '),
@@ -56,7 +58,8 @@ export function smallPurge(facts: Facts): Finding | null {
 
 /** The recycle has grown out of all proportion and closes by no method: an exit that cannot take what comes. */
 export function overfullExit(facts: Facts): Finding | null {
-  const { flows, fed, recycle, answer } = facts;
+  const { fed, answer } = facts;
+  const { flows, recycle } = facts.last;
   if (answer !== null || !(recycle > RUNAWAY * fed)) return null;
   const piling = flows.find(({ round }) => round > MOST_OF_IT * recycle);
   if (piling === undefined || !(supplyOf(piling) > Math.max(piling.leaves, NOTHING * fed))) return null;

@@ -1,7 +1,7 @@
 import type { Closure } from '../convergence/driver.ts';
 import type { FixedPointProblem } from '../convergence/problem.ts';
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
-import type { CloseOptions } from './close-plant.ts';
+import { type CloseOptions, closePlant } from './close-plant.ts';
 import type { Group, Plant } from './plant.ts';
 import { createRecycleProblem } from './recycle-problem.ts';
 import { spectralRadius } from './spectral-radius.ts';
@@ -11,6 +11,9 @@ import { type Phases, phasesIn, vesselsOf } from './why-vessels.ts';
 
 /** Direct passes looked at from the last good pass on. */
 const ONWARD = 24;
+/** Direct passes from the feeds that a loop is looked at after; the first few find start values. */
+export const DIRECT_PASSES = 40;
+const START_PASSES = 4;
 
 /** One direct pass after the last good one. */
 export interface OnwardPass {
@@ -40,16 +43,19 @@ export interface Facts {
   /** tag of the first torn stream */
   readonly tag: string;
   readonly names: readonly string[];
-  /** per component, at the last good pass */
+  /** what the closing came to at its last good pass: every component, and the largest torn stream [mol/s] */
+  readonly last: { readonly flows: readonly ComponentFlows[]; readonly recycle: number };
+  /** every component after direct passes from the feeds, which no guess of a method has led astray */
   readonly flows: readonly ComponentFlows[];
+  /** how many direct passes those were */
+  readonly directPasses: number;
   /** all that enters the loop [mol/s] */
   readonly fed: number;
-  /** all that goes round in the largest torn stream at the last good pass [mol/s] */
-  readonly recycle: number;
   /** spectral radius of a pass there; null where it is not known */
   readonly radius: number | null;
+  /** what comes after those passes by direct substitution */
   readonly onward: readonly OnwardPass[];
-  /** true where a block fails on that way: what stopped the closing was no fault of the method's guesses */
+  /** true where a block fails on that way */
   readonly onwardFails: boolean;
   /** the same settings closed by the automatic method; null where that does not close either */
   readonly answer: Trial | null;
@@ -58,8 +64,8 @@ export interface Facts {
 }
 
 /**
- * Gather what is true of a loop that did not close. Spends passes: one per variable, some direct ones, and one
- * closing by the automatic method. The plant is left at the last good pass of the closure.
+ * Gather what is true of a loop that did not close. Spends passes: direct ones from the feeds and onward, one per
+ * variable, and one closing by the automatic method. The plant is left after the direct passes from the feeds.
  */
 export function gatherFacts(
   plant: Plant,
@@ -70,14 +76,18 @@ export function gatherFacts(
   options: CloseOptions,
 ): Facts {
   const problem = createRecycleProblem(plant, group);
-  const trial = (changes: readonly (readonly [string, number])[]) =>
-    tryOut(plant, group, options.tolerance, changes);
-  const onward = passOnward(plant, group, problem, closure.x);
-  const answer = trial([]);
-  const radius = spectralRadius(problem, closure.x, sizes(problem, closure.x, closure.g));
-  const at = Float64Array.from(closure.x);
-  problem.evaluate(at, new Float64Array(problem.size));
-  const flows = componentFlows(plant, group);
+  const g = new Float64Array(problem.size);
+  const countAt = (x: Float64Array) => {
+    problem.evaluate(x, g);
+    const recycle = Math.max(...group.tears.map((s) => plant.mixture.total(plant.seen[s])));
+    return { flows: componentFlows(plant, group), recycle };
+  };
+  const last = countAt(closure.x);
+  const direct = directFromFeeds(plant, group, closure, options);
+  const onward = passOnward(plant, group, problem, direct.x);
+  const answer = tryOut(plant, group, options.tolerance, []);
+  const radius = spectralRadius(problem, direct.x, sizes(problem, direct.x, direct.g));
+  const { flows } = countAt(direct.x);
   return {
     plant,
     group,
@@ -86,19 +96,33 @@ export function gatherFacts(
     passes,
     tag: plant.flowsheet.streams[group.tears[0]].tag,
     names,
+    last,
     flows,
+    directPasses: direct.passes,
     fed: flows.reduce((sum, { enters }) => sum + enters, 0),
-    recycle: Math.max(...group.tears.map((s) => plant.mixture.total(plant.seen[s]))),
     radius,
     onward,
     onwardFails: onward.length < ONWARD,
     answer,
     tryOut: (changes) => {
-      const found = trial(changes);
-      problem.evaluate(at, new Float64Array(problem.size));
+      const found = tryOut(plant, group, options.tolerance, changes);
+      problem.evaluate(direct.x, g);
       return found;
     },
   };
+}
+
+/** The closing itself where it was made by direct passes enough; else such passes, or it where they fail. */
+function directFromFeeds(plant: Plant, group: Group, closure: Closure, options: CloseOptions): Closure {
+  if (closure.method === 'direct' && closure.passes >= DIRECT_PASSES - START_PASSES) return closure;
+  const { failure } = closePlant(plant, {
+    ...options,
+    method: 'direct',
+    maxPasses: DIRECT_PASSES,
+    warm: false,
+  });
+  const found = failure?.group === group && !failure.trouble ? failure.closure : null;
+  return found ?? closure;
 }
 
 function sizes(problem: FixedPointProblem, x: Float64Array, g: Float64Array): Float64Array {

@@ -1,7 +1,8 @@
 /** A number to three figures: plain where that reads well, else with an exponent. */
 export function figure(value: number): string {
   const size = Math.abs(value);
-  if (size !== 0 && (size < 1e-4 || size >= 1e7)) return value.toExponential(2).replace('e+', 'e');
+  if (size !== 0 && (size < 1e-4 || size >= 1e7))
+    return Number(value.toPrecision(3)).toExponential().replace('e+', 'e');
   return String(Number(value.toPrecision(3)));
 }
 

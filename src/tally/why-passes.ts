@@ -37,7 +37,9 @@ export function trendOnly(facts: Facts): Finding {
   const told = (what: string, why: string, mend: string): Finding => ({
     code: 'not-closed',
     what,
-    why: mode === '' ? why : `${why}; ${mode}`,
+    why: [why, mode, 'as it is, --method auto does not close it either']
+      .filter((text) => text !== '')
+      .join('; '),
     mend,
   });
   switch (reading.trend) {
@@ -57,19 +59,21 @@ export function trendOnly(facts: Facts): Finding {
       return told(
         `${variable} swings from pass to pass`,
         'guess and answer change sides from pass to pass',
-        'use --method auto or newton, or set temperatures instead of duties',
+        'set temperatures instead of duties, or use --method newton',
       );
     case 'converging':
       return told(
         'it was stopped on the way',
-        `it gets better by a factor of ${figure(reading.rate ?? 1)} per pass, about ${reading.passesToGo ?? 'many'} more passes to go`,
-        'raise --max-passes (or solve: max_passes in the file), or use --method auto',
+        options.method === 'direct'
+          ? `it gets better by a factor of ${figure(reading.rate ?? 1)} per pass, about ${reading.passesToGo ?? 'many'} more passes to go`
+          : `the passes of ${options.method} make it better, but not enough of them were allowed`,
+        'raise --max-passes (or solve: max_passes in the file)',
       );
     case 'diverging':
       return told(
         `${variable} runs away`,
         `the residual gets worse by a factor of ${(reading.rate ?? 1).toPrecision(4)} per pass`,
-        'use --method auto, or check settings that feed more back than they take out (splits, recoveries, ratios, duties)',
+        'check settings that feed more back than they take out (splits, recoveries, ratios, duties)',
       );
     default:
       return told(

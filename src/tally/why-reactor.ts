@@ -67,6 +67,7 @@ export function reactorGoneOut({ plant, group, answer, radius }: Facts): Finding
   const inlet = plant.inlets[b][0];
   return {
     code: 'reactor-gone-out',
+    isOfDirectPasses: true,
     what: `next to nothing reacts in ${plant.blocks[b].name}, so what comes into the loop goes round`,
     why: `it takes ${perCent(share)} of the ${id} in a pass: ${kmolPerHour(plant.mixture.total(inlet))} enter it at ${degC(inlet.temperatureK)} and ${bar(inlet.pressurePa)}`,
     mend: `a hotter inlet of ${plant.blocks[b].name}, more catalyst, or a larger purge that keeps the recycle small`,

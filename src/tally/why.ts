@@ -9,6 +9,8 @@ export interface Finding {
   readonly what: string;
   readonly why: string;
   readonly mend: string;
+  /** true where `why` begins with what is found after direct passes from the feeds */
+  readonly isOfDirectPasses?: boolean;
   /** left out: the torn stream */
   readonly where?: Place;
 }
