@@ -37,7 +37,9 @@ export function nothingCondenses(facts: Facts): Finding | null {
     .filter(({ flow }) => flow > 0)
     .map(({ tag, flow }) => `${kmolPerHour(flow)} by ${tag}`);
   const left =
-    others.length === 0 ? 'nothing of it leaves' : `it leaves by other ways only (${others.join(', ')})`;
+    others.length === 0
+      ? `no ${product.id} leaves`
+      : `${product.id} leaves by other ways only (${others.join(', ')})`;
   const path = `${vessel.name}.temperature`;
   const setting = plant.get(path);
   return {

@@ -49,7 +49,7 @@ export function reactorBoundFinding(
   const inLoop = group.tears.length > 0;
   return {
     code: 'reactor-at-bound',
-    what: `${name} ${isHot ? 'would leave hotter than 3500 K' : 'would leave colder than 20 K'}`,
+    what: `${name}: the outlet would be ${isHot ? 'hotter than 3500 K' : 'colder than 20 K'}.`,
     why: `${kmolPerHour(plant.mixture.total(inlet))} enter it at ${degC(inlet.temperatureK)} and ${bar(inlet.pressurePa)}, and ${own}no outlet temperature between 20 and 3500 K closes its heat balance${duties.length > 0 ? `; heat is set in ${inLoop ? 'the loop' : 'it'} by ${duties.join(', ')}` : ''}`,
     mend: isHot
       ? `give the heat a way out: ${duties.length > 0 ? 'less duty, ' : ''}a temperature for ${name}, or a cooler set to a temperature ${inLoop ? 'in the recycle' : 'before it'}`
