@@ -8,6 +8,8 @@ import { figure, kmolPerHour, perCent } from './why-format.ts';
 const NO_EXIT = 1e-6;
 /** A smaller share than this that leaves makes the loop slow and its recycle huge. */
 const SMALL_EXIT = 1e-3;
+/** The same where the loop closes by no method: what mostly stays in it is then why. */
+const OPEN_EXIT = 2e-2;
 /** What comes into the loop and stays in it is of no account below this share of all that enters. */
 const NOTHING = 1e-9;
 /** What makes up more than this of a recycle is what it has grown by. */
@@ -34,7 +36,7 @@ export function noRealExit(facts: Facts): Finding | null {
 
 /** A purge by which the loop closes in principle, after very many passes and with a huge recycle. */
 export function smallPurge(facts: Facts): Finding | null {
-  const piling = pilingUp(facts, NO_EXIT, SMALL_EXIT);
+  const piling = pilingUp(facts, NO_EXIT, facts.answer === null ? OPEN_EXIT : SMALL_EXIT);
   if (piling === null) return null;
   const { answer } = facts;
   const there =
