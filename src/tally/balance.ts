@@ -51,7 +51,8 @@ export function balancePlant(plant: Plant, options: BalanceOptions = {}): Balanc
       : closeWithAims(plant, close);
   const reports = reportsOf(plant);
   const read = { aims, reports, curves: options.curves ?? true };
-  if (!closure.converged) return { result: tally(plant, closure, read), diagnosis: diagnose(plant, closure) };
+  if (!closure.converged)
+    return { result: tally(plant, closure, read), diagnosis: diagnose(plant, closure, close) };
   // Streams that agree with one another are no answer where a block could not do as it was told.
   const [fault = null] = faultDiagnostics(plant, reports);
   return { result: tally(plant, { ...closure, converged: fault === null }, read), diagnosis: fault };

@@ -1,32 +1,100 @@
 import type { BlockReport } from '../blocks/block.ts';
-import { diagnose as readTrend } from '../convergence/diagnosis.ts';
-import type { Closure } from '../convergence/driver.ts';
 import type { Diagnostic, PassTrouble } from '../diagnostics/diagnostic.ts';
-import type { PlantClosure } from './close-plant.ts';
-import type { Group, Plant } from './plant.ts';
+import { type CloseOptions, closePlant, type PlantClosure } from './close-plant.ts';
+import type { Plant } from './plant.ts';
+import { answerText, type Finding, type Recogniser } from './why.ts';
+import { nothingCondenses } from './why-dry.ts';
+import { noRealExit, overfullExit, smallPurge } from './why-exit.ts';
+import { DIRECT_PASSES, type Facts, gatherFacts } from './why-facts.ts';
+import { flippingPhases } from './why-flip.ts';
+import { tooFewPasses, trendOnly } from './why-passes.ts';
+import { reactorAtBound, reactorBoundFinding, reactorGoneOut } from './why-reactor.ts';
 
-/** Say why a plant did not close: the block that cannot be evaluated, or the worst variable and its trend. */
-export function diagnose(plant: Plant, closure: PlantClosure): Diagnostic {
+/** Reasons that lie in the flowsheet, in order of certainty: the first whose facts hold is told. */
+const ofTheFlowsheet: readonly Recogniser[] = [
+  nothingCondenses,
+  overfullExit,
+  noRealExit,
+  flippingPhases,
+  smallPurge,
+  reactorGoneOut,
+];
+/** Reasons that lie in the way it was to be closed come after those. */
+const recognisers: readonly Recogniser[] = [...ofTheFlowsheet, tooFewPasses];
+
+/**
+ * Say why a plant did not close: the block that cannot be evaluated, or what is true of the loop as the last pass left
+ * it. Trials with other settings are made for the advice; settings and streams are put back.
+ */
+export function diagnose(plant: Plant, closure: PlantClosure, options: CloseOptions): Diagnostic {
   const failure = closure.failure;
   if (!failure) throw new Error('a plant that did not close names the group that failed');
-  if (failure.trouble) return troubleDiagnostic(plant, failure.trouble);
-  const tag = plant.flowsheet.streams[failure.group.tears[0]].tag;
-  const where = plant.flowsheet.placeOf(`streams.${tag}`);
-  const reading = readTrend(failure.closure ?? { history: [] }, plant.flowsheet.solve.tolerance);
-  const variable = failure.names[reading.worst] ?? `${tag} as a whole`;
-  const size = closure.residual.toExponential(1);
-  const advice =
-    runawayAdvice(plant, failure.group) ??
-    limitAdvice(closure, failure.closure?.reason) ??
-    adviceOn(reading, variable, plant);
+  const { trouble } = failure;
+  if (trouble) {
+    // Before anything else passes through the plant: the blocks still stand where the pass failed.
+    const told = troubleDiagnostic(plant, trouble, failure.group);
+    return guessOrBlock(plant, closure, options, told);
+  }
+  if (!failure.closure) throw new Error('a group without trouble has a closure');
+  const facts = gatherFacts(plant, failure.group, failure.closure, failure.names, closure.passes, options);
+  const finding = firstOf(recognisers, facts) ?? trendOnly(facts);
+  return diagnosticOf(finding, closure, facts);
+}
+
+/**
+ * A block that failed at a guess of the method, and not on the way that direct substitution takes from the feeds: then
+ * what is true of the loop on that way is told, or how it closes.
+ *
+ * @param told  what the block says
+ */
+function guessOrBlock(
+  plant: Plant,
+  closure: PlantClosure,
+  options: CloseOptions,
+  told: Diagnostic,
+): Diagnostic {
+  if (closure.failure!.group.tears.length === 0) return told;
+  const direct = closePlant(plant, { ...options, method: 'direct', maxPasses: DIRECT_PASSES, warm: false });
+  const why = `${told.why}; ${options.method} came there by a guess`;
+  if (direct.converged)
+    return {
+      ...told,
+      why,
+      mend: `use --method direct, by which the loop closes in ${direct.passes} passes (tried)`,
+    };
+  const { failure } = direct;
+  if (!failure?.closure || failure.trouble) return told;
+  const facts = gatherFacts(plant, failure.group, failure.closure, failure.names, closure.passes, options);
+  const finding = firstOf(ofTheFlowsheet, facts);
+  if (finding) return diagnosticOf(finding, closure, facts);
+  return facts.answer ? { ...told, why, mend: answerText(facts) } : told;
+}
+
+function diagnosticOf(finding: Finding, closure: PlantClosure, facts: Facts): Diagnostic {
+  const { directPasses, options } = facts;
+  const state = options.method === 'direct' ? '' : `after ${directPasses} direct passes from the feeds, `;
   return {
-    code: 'not-closed',
+    code: finding.code,
     severity: 'error',
-    where,
-    what: `The recycle through ${tag} did not close in ${closure.passes} passes; the worst variable is ${variable}, ${size} off.`,
-    why: advice.why,
-    mend: advice.mend,
+    where: finding.where ?? facts.plant.flowsheet.placeOf(`streams.${facts.tag}`),
+    what: `The recycle through ${facts.tag} did not close in ${closure.passes} passes (${worstText(closure, facts)}): ${finding.what}.`,
+    why: finding.isOfDirectPasses ? `${state}${finding.why}` : finding.why,
+    mend: finding.mend,
   };
+}
+
+function firstOf(list: readonly Recogniser[], facts: Facts): Finding | null {
+  for (const recognise of list) {
+    const finding = recognise(facts);
+    if (finding) return finding;
+  }
+  return null;
+}
+
+function worstText(closure: PlantClosure, { closure: { history }, names }: Facts): string {
+  const last = history.findLast(({ residual }) => Number.isFinite(residual));
+  const size = `${closure.residual.toExponential(1)} off`;
+  return last === undefined ? size : `${names[last.worst]} is ${size}`;
 }
 
 /** What keeps the blocks of a plant whose streams have closed from doing what their settings ask for. */
@@ -43,91 +111,19 @@ export function faultDiagnostics(plant: Plant, reports: readonly BlockReport[]):
   );
 }
 
-/** A recycle this many times the feed has run away rather than not yet closed. */
-const RUNAWAY = 1000;
-
-/** A recycle grown out of all proportion: what piles up in it has too small a way out. */
-function runawayAdvice(plant: Plant, group: Group): Advice | null {
-  const sum = (flows: Float64Array) => flows.reduce((all, flow) => all + flow, 0);
-  const fed = plant.enters.reduce((all, s) => all + sum(plant.streams[s].flowsMolPerS), 0);
-  const largest = group.tears
-    .map((s) => plant.seen[s].flowsMolPerS)
-    .reduce((most, flows) => (sum(flows) > sum(most) ? flows : most));
-  if (!(fed > 0) || !(sum(largest) > RUNAWAY * fed)) return null;
-  const piling = plant.mixture.components
-    .map((c, i) => ({ id: c.id, share: largest[i] / sum(largest) }))
-    .filter(({ share }) => share > 0.02)
-    .sort((a, b) => b.share - a.share)
-    .map(({ id, share }) => `${id} ${(100 * share).toFixed(0)} %`);
-  return {
-    why: `the recycle has grown to ${(sum(largest) * 3.6).toPrecision(3)} kmol/h, ${(sum(largest) / fed).toPrecision(3)} times the feed: ${piling.join(', ')} of it pile up, for they leave the loop more slowly than they enter`,
-    mend: 'give them a way out: a purge (a splitter in the recycle) or a larger one, a feed with less of them, or a feed closer to the stoichiometric ratio',
-  };
-}
-
-function limitAdvice(closure: PlantClosure, reason: Closure['reason'] | undefined): Advice | null {
-  if (reason !== 'max-passes' || closure.passes > 25) return null;
-  return {
-    why: `it was stopped after the ${closure.passes} passes that were allowed`,
-    mend: 'raise --max-passes (or solve: max_passes in the file)',
-  };
-}
-
-interface Advice {
-  readonly why: string;
-  readonly mend: string;
-}
-
-function adviceOn(
-  reading: ReturnType<typeof readTrend>,
-  variable: string,
-  plant: Plant,
-): { readonly why: string; readonly mend: string } {
-  const id = variable.split('.')[1];
-  const isFlow = plant.mixture.components.some((c) => c.id === id);
-  switch (reading.trend) {
-    case 'accumulating':
-      return {
-        why: isFlow
-          ? `it gains ${(reading.gain * 3.6).toPrecision(3)} kmol/h in every pass: more ${id} enters the loop than leaves it`
-          : 'it gains about the same in every pass',
-        mend: isFlow
-          ? `give ${id} a way out: a larger purge, a feed closer to the stoichiometric ratio, or less ${id} in the feed`
-          : 'check the heat balance of the loop: something adds more heat than the coolers take out',
-      };
-    case 'oscillating':
-      return {
-        why: 'guess and answer change sides from pass to pass, as when a block has one phase on one side and two on the other',
-        mend: 'move the temperature or pressure of the condenser or flash away from the dew point, or use --method anderson',
-      };
-    case 'converging':
-      return {
-        why: `it gets better by a factor of ${(reading.rate ?? 1).toPrecision(4)} per pass, about ${reading.passesToGo ?? 'many'} more passes to go`,
-        mend: 'raise --max-passes (or solve: max_passes in the file), or use --method auto',
-      };
-    case 'diverging':
-      return {
-        why: `it gets worse by a factor of ${(reading.rate ?? 1).toPrecision(4)} per pass`,
-        mend: 'use --method auto, or check settings that feed more back than they take out (splits, recoveries, ratios)',
-      };
-    default:
-      return {
-        why: 'the last passes made it neither better nor worse',
-        mend: 'look at --trace; use --method auto, or move the settings away from a phase or temperature limit',
-      };
-  }
-}
-
 function placeOfTrouble({ block, setting }: PassTrouble): string {
   if (block === null) return '';
   return setting === null ? `blocks.${block}` : `blocks.${block}.${setting}`;
 }
 
-function troubleDiagnostic(plant: Plant, trouble: PassTrouble): Diagnostic {
+function troubleDiagnostic(plant: Plant, trouble: PassTrouble, group: Facts['group']): Diagnostic {
+  const where = plant.flowsheet.placeOf(placeOfTrouble(trouble));
+  const atBound = reactorAtBound(plant, trouble.code, trouble.block);
+  if (atBound) return { severity: 'error', where, ...reactorBoundFinding(plant, group, atBound) };
   return {
     code: trouble.code,
     severity: 'error',
-    where: plant.flowsheet.placeOf(placeOfTrouble(trouble)),
+    where,
     what: trouble.block ? `${trouble.block}: ${trouble.message}` : trouble.message,
     why: trouble.why,
     mend: trouble.mend,

@@ -91,5 +91,5 @@ test('a loop that does not close has no levers, exit code 3 and the reason', () 
   expect(code).toBe(3);
   const json = JSON.parse(out) as LeversJson & { diagnostics: { code: string }[] };
   expect(json.settings).toEqual({});
-  expect(json.diagnostics.map((diagnostic) => diagnostic.code)).toEqual(['not-closed']);
+  expect(json.diagnostics.map((diagnostic) => diagnostic.code)).toEqual(['too-few-passes']);
 });
