@@ -27,7 +27,8 @@ export function reachTogether(
   aimTolerance: number,
 ): TogetherEnd {
   const { plant, low, high, aims } = task;
-  const settingsAt = (u: Float64Array) => u.map((share, a) => low[a] + share * (high[a] - low[a]));
+  const settingsAt = (u: Float64Array) =>
+    u.map((share, a) => (share >= 1 ? high[a] : low[a] + share * (high[a] - low[a])));
   const names = [...recycleNames(plant), ...aims.map((aim) => `aim ${aim.name}`)];
   try {
     const { x, scale, pass, solve, passes } = linearise(plant);

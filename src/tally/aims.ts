@@ -1,6 +1,6 @@
-import { type AimsOutcome, reachAims } from '../convergence/aims.ts';
-import type { Aim } from '../model/flowsheet.ts';
+import { reachAims } from '../convergence/aims.ts';
 import type { AimResult } from '../model/result.ts';
+import { notesOf } from './aim-notes.ts';
 import { createAimTask } from './aim-task.ts';
 import { reachTogether } from './aims-together.ts';
 import type { CloseOptions, PlantClosure } from './close-plant.ts';
@@ -49,6 +49,8 @@ export function closeWithAims(
   );
   const last = task.closeAt(outcome.values, 'the best settings found');
   const scope = last.converged ? scopeOf(plant) : null;
+  const achieved = aims.map((aim) => (scope ? aim.until.evaluate(scope) : Number.NaN));
+  const notes = notesOf(outcome, task, achieved);
   return {
     closure: { ...last, passes: task.passes, history: task.history },
     last,
@@ -56,14 +58,14 @@ export function closeWithAims(
       aims.map((aim, a) => [
         aim.name,
         {
-          reached: outcome.reached,
+          reached: isReached(outcome.residuals[a]),
           setting: aim.move,
           value: outcome.values[a],
           unit: aim.unit,
           target: aim.target,
           until: aim.until.text === '' ? '' : `${aim.until.text} = ${aim.wanted}`,
-          achieved: scope ? aim.until.evaluate(scope) : Number.NaN,
-          note: noteOf(outcome, a, aims),
+          achieved: achieved[a],
+          note: isReached(outcome.residuals[a]) ? null : notes(a),
         },
       ]),
     ),
@@ -71,22 +73,9 @@ export function closeWithAims(
 }
 
 function reached(residuals: Float64Array): boolean {
-  return residuals.every((value) => Math.abs(value) <= TOLERANCE);
+  return residuals.every(isReached);
 }
 
-/** Why an aim was not reached, in one sentence; null when it was. */
-function noteOf(outcome: AimsOutcome, a: number, aims: readonly Aim[]): string | null {
-  if (outcome.reached) return null;
-  if (outcome.singular) {
-    const [one, other] = outcome.singular;
-    return one === other
-      ? `no setting moves ${aims[one].until.text}`
-      : `it cannot be told apart from the aim ${aims[a === one ? other : one].name}: the settings move both alike`;
-  }
-  if (outcome.limit >= 0) {
-    const limiting = aims[outcome.limit];
-    return `stopped at the ${outcome.limitSide === 'low' ? 'lower' : 'upper'} bound of ${limiting.move}`;
-  }
-  if (outcome.trouble) return `the loop does not close on the way: ${outcome.trouble.message}`;
-  return `no setting between the bounds was found in ${outcome.evaluations} tries`;
+function isReached(residual: number): boolean {
+  return Math.abs(residual) <= TOLERANCE;
 }
