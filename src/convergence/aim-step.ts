@@ -20,27 +20,30 @@ export interface AimStep {
  * met by the settings left; they go on toward their targets.
  *
  * @param damping  relative to the largest singular value
+ * @param aside  1 for an aim that is not gone for
  */
 export function aimStep(
   J: readonly Float64Array[],
   u: Float64Array,
   f: Float64Array,
   damping: number,
+  aside: Uint8Array,
 ): AimStep {
   const n = u.length;
   const held = new Int8Array(n);
-  const given = new Uint8Array(n);
+  const given = aside.slice();
   const du = new Float64Array(n);
   for (let round = 0; round <= n; round++) {
     const aims = kept(given);
     const free = kept(held);
+    du.fill(0);
+    if (aims.length === 0) break;
     const part = aims.map((i) => Float64Array.from(free, (j) => J[i][j]));
     const found = damped(
       part,
       aims.map((i) => f[i]),
       damping,
     );
-    du.fill(0);
     free.forEach((j, k) => {
       du[j] = found[k];
     });
@@ -79,7 +82,6 @@ function kept(marks: ArrayLike<number>): number[] {
 /** −Σ v σ (w·f)/(σ² + λ²) over the combinations that can be told apart. */
 function damped(J: readonly Float64Array[], f: readonly number[], damping: number): Float64Array {
   const du = new Float64Array(J[0]?.length ?? 0);
-  if (J.length === 0) return du;
   const { sigma, w, v } = singularValues(J);
   const lambda = damping * sigma[0];
   const usable = J.length - undecided(J);

@@ -5,7 +5,10 @@ import { fightingAims } from './fighting-aims.ts';
 /** Step of the finite differences, as a share of the way between the bounds; loops close far tighter than that. */
 const DIFFERENCE = 1e-3;
 /** Dampings of a step that makes things worse: none, then relative to the largest singular value. */
-const DAMPINGS = [0, 1e-3, 1e-2, 0.1, 0.5, 2, 10, 100] as const;
+const DAMPINGS = [0, 1e-3, 1e-2, 0.05, 0.2, 0.5, 1, 3, 10, 100] as const;
+/** A step that brings less than this share of what was foreseen asks for more damping, one that brings so much for less. */
+const POOR = 0.25;
+const FORESEEN = 0.75;
 /** What a step has to improve by for the Broyden update to be trusted further. */
 const PROGRESS = 0.5;
 /** Steps that improve by less than this share, so many in succession, have come as near as it gets. */
@@ -40,40 +43,51 @@ export function reachSeveralAims(search: AimsSearch): AimsOutcome {
 
   let J = jacobian(tryAt, at);
   let fresh = true;
-  let slow = 0;
-  let step: AimStep | null = null;
-  const renew = () => {
+  let level = 0;
+  const renew = (): void => {
     J = jacobian(tryAt, at);
     fresh = true;
   };
-  while (J !== null && search.left() > 0) {
-    step = aimStep(J, at.u, at.f, 0);
-    if (miss(at.f, step.given) <= 1) break;
-    const found = dampedTry(J, at);
-    if (found === null) {
-      if (fresh) break;
-      renew();
-      continue;
-    }
-    const gain = found.after / found.before;
-    const moved = Math.max(...found.to.u.map((value, j) => Math.abs(value - at.u[j])));
-    if (gain <= PROGRESS || fresh) broydenUpdate(J, at, found.to);
-    at = found.to;
-    step = found.step;
-    fresh = false;
-    slow = gain > 1 - SLOW ? slow + 1 : 0;
-    if (slow >= SLOW_STEPS || (gain > PROGRESS && moved < SHORTEST)) break;
-    if (gain > PROGRESS && miss(at.f, step.given) > 1) renew();
-  }
+  const none = new Uint8Array(u.length);
+  let held = goToward(none);
   if (miss(at.f) <= 1) return search.outcome();
   if (!fresh) renew();
-  const limit = step?.held.findIndex((side) => side !== 0) ?? -1;
+  const singular = J === null ? null : fightingAims(J);
+  const fighters = none.map((_, i) => (singular?.includes(i) ? 1 : 0));
+  if (miss(at.f, fighters) > 1 && fighters.includes(1)) held = goToward(fighters);
+  const limit = held.findIndex((side) => side !== 0);
   return search.outcome({
     at: { values: settingsAt(at.u), residuals: at.f },
     limit,
-    side: limit < 0 ? null : step!.held[limit] < 0 ? 'low' : 'high',
-    singular: J === null ? null : fightingAims(J),
+    side: limit < 0 ? null : held[limit] < 0 ? 'low' : 'high',
+    singular,
   });
+
+  /** Move on until the aims are met but for those left aside and those given up; the settings held at bounds. */
+  function goToward(aside: Uint8Array): Int8Array {
+    let slow = 0;
+    let step: AimStep | null = null;
+    while (J !== null && search.left() > 0) {
+      step = aimStep(J, at.u, at.f, 0, aside);
+      if (miss(at.f, step.given) <= 1) break;
+      const found = dampedTry(J, at, aside);
+      if (found === null) {
+        if (fresh) break;
+        renew();
+        continue;
+      }
+      const gain = found.after / found.before;
+      const moved = Math.max(...found.to.u.map((value, j) => Math.abs(value - at.u[j])));
+      if (gain <= PROGRESS || fresh) broydenUpdate(J, at, found.to);
+      at = found.to;
+      step = found.step;
+      fresh = false;
+      slow = gain > 1 - SLOW ? slow + 1 : 0;
+      if (slow >= SLOW_STEPS || (gain > PROGRESS && moved < SHORTEST)) break;
+      if (gain > PROGRESS && miss(at.f, step.given) > 1) renew();
+    }
+    return step?.held ?? new Int8Array(u.length);
+  }
 
   /** Largest residual in units of its tolerance, without the aims given up. */
   function miss(residuals: Float64Array, given?: Uint8Array): number {
@@ -84,19 +98,28 @@ export function reachSeveralAims(search: AimsSearch): AimsOutcome {
   }
 
   /** Steps with more and more damping, clipped at the bounds, until one lessens what it goes for; null when none does. */
-  function dampedTry(matrix: readonly Float64Array[], from: Place) {
-    for (const damping of DAMPINGS) {
-      const planned = aimStep(matrix, from.u, from.f, damping);
+  function dampedTry(matrix: readonly Float64Array[], from: Place, aside: Uint8Array) {
+    for (; level < DAMPINGS.length; level++) {
+      const planned = aimStep(matrix, from.u, from.f, DAMPINGS[level], aside);
       const to = from.u.map((value, j) => Math.min(Math.max(value + planned.du[j], 0), 1));
-      if (to.every((value, j) => value === from.u[j])) return null;
+      if (to.every((value, j) => value === from.u[j])) break;
       const found = tryAt(to);
       if (found !== null) {
         const before = squares(from.f, planned.given);
         const after = squares(found, planned.given);
-        if (after < before) return { to: { u: to, f: found }, step: planned, before, after };
+        if (after < before) {
+          const linear = from.f.map((value, i) =>
+            to.reduce((sum, share, j) => sum + matrix[i][j] * (share - from.u[j]), value),
+          );
+          const share = (before ** 2 - after ** 2) / (before ** 2 - squares(linear, planned.given) ** 2);
+          if (share < POOR) level = Math.min(level + 1, DAMPINGS.length - 1);
+          else if (share > FORESEEN) level = Math.max(level - 1, 0);
+          return { to: { u: to, f: found }, step: planned, before, after };
+        }
       }
-      if (search.left() <= 0) return null;
+      if (search.left() <= 0) break;
     }
+    level = 0;
     return null;
   }
 

@@ -58,7 +58,7 @@ const GROW = 2;
 const LOSE = 0.7;
 /** A step goes so far toward a bound of a setting, so often in succession before the bound counts as in the way. */
 const TOWARD_BOUND = 0.9;
-const AT_BOUND = 1;
+const AT_BOUND = 2;
 /** A step that has to be cut to less than this share leads nowhere. */
 const SHORTEST = 0.02;
 /** Rows scaled to one, pivots below this leave the aims undecided: differences are good to some 1e-6. */
