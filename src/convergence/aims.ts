@@ -12,7 +12,7 @@ export type AimResiduals = (settings: Float64Array) => Float64Array;
 export interface AimsOutcome {
   /** every residual is within its tolerance */
   readonly reached: boolean;
-  /** the best settings found */
+  /** the best settings found: where not all aims are reached, as many as bounds and contradictions allow */
   readonly values: Float64Array;
   /** residuals there; NaN when no settings could be evaluated */
   readonly residuals: Float64Array;
@@ -20,10 +20,18 @@ export interface AimsOutcome {
   readonly limit: number;
   readonly limitSide: 'low' | 'high' | null;
   readonly evaluations: number;
-  /** two aims that ask for the same thing (or one, twice, that no setting moves); null when the aims can be told apart */
-  readonly singular: readonly [number, number] | null;
+  /** aims that ask contradictory things of settings that move them alike, or one that no setting moves; null for none */
+  readonly singular: readonly number[] | null;
   /** the last trouble met on the way, for the account when the aims are not reached */
   readonly trouble: PassTrouble | null;
+}
+
+/** Where and why a search ended. */
+export interface AimsEnd {
+  readonly at?: { readonly values: Float64Array; readonly residuals: Float64Array };
+  readonly limit?: number;
+  readonly side?: 'low' | 'high' | null;
+  readonly singular?: readonly number[] | null;
 }
 
 export interface AimsOptions {
@@ -41,12 +49,8 @@ export interface AimsSearch {
   tryAt(settings: Float64Array): Float64Array | null;
   /** evaluations left */
   left(): number;
-  /** the outcome at the best settings tried so far */
-  outcome(
-    limit?: number,
-    side?: 'low' | 'high' | null,
-    singular?: readonly [number, number] | null,
-  ): AimsOutcome;
+  /** the outcome at the place given, or at the one tried where the largest residual was least */
+  outcome(end?: AimsEnd): AimsOutcome;
 }
 
 /**
@@ -122,12 +126,11 @@ function createSearch(
       }
       return found;
     },
-    outcome(limit = -1, side = null, singular = null) {
-      const reached = bestMerit <= 1;
+    outcome({ at = { values, residuals }, limit = -1, side = null, singular = null } = {}) {
+      const reached = aimsMerit(at.residuals, tolerances) <= 1;
       return {
         reached,
-        values,
-        residuals,
+        ...at,
         limit: reached ? -1 : limit,
         limitSide: reached ? null : side,
         evaluations,

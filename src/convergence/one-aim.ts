@@ -1,4 +1,5 @@
 import type { AimsOutcome, AimsSearch } from './aims.ts';
+import { DEAD } from './fighting-aims.ts';
 
 /** First step, as a share of the way between the bounds. */
 const FIRST_STEP = 0.02;
@@ -8,28 +9,74 @@ const LONGEST = 8;
 const BEYOND = 1.05;
 /** Steps shorter than this share of the way between the bounds lead nowhere. */
 const SHORTEST = 1e-9;
+/** The nearest place between the bounds is found to this share of the way: the figure is flat there. */
+const NEAREST = 1e-3;
+/** Golden section. */
+const GOLDEN = (3 - Math.sqrt(5)) / 2;
 
 /**
  * One aim: secants from the start until the residual changes sign or a bound is met, then the bracket is
  * narrowed by interpolation on points of opposite sign (Illinois: the end that stays put counts half), by
- * halves whenever that is slow.
+ * halves whenever that is slow. Where there is no change of sign the nearest place is closed in on.
  *
  * @source M. Dowell, P. Jarratt, BIT 11 (1971) 168-174 (Illinois algorithm, from memory)
  */
 export function reachOneAim(search: AimsSearch): AimsOutcome {
   const low = search.low[0];
   const high = search.high[0];
-  const at = (value: number): number => search.tryAt(Float64Array.of(value))?.[0] ?? NaN;
+  const tried: Place[] = [];
+  const at = (value: number): number => {
+    const f = search.tryAt(Float64Array.of(value))?.[0] ?? NaN;
+    if (!Number.isNaN(f)) tried.push({ value, f });
+    return f;
+  };
   const start = firstPlace(search.start[0], low, high, at);
-  if (start === null) return search.outcome();
-  if (Math.abs(start.f) <= search.tolerances[0]) return search.outcome();
+  if (start === null || Math.abs(start.f) <= search.tolerances[0]) return search.outcome();
 
   const walk = walkToBracket(search, start, at);
-  if (walk.bracket !== null) {
-    narrow(search, walk.bracket, at);
+  if (walk.limit !== null) return search.outcome({ limit: 0, side: walk.limit, singular: dead(tried) });
+  const bracket = walk.bracket ?? closeIn(search, tried, at);
+  if (bracket !== null) {
+    narrow(search, bracket, at);
     return search.outcome();
   }
-  return search.outcome(walk.limit === null ? -1 : 0, walk.limit);
+  const { value } = tried.reduce((best, place) => (Math.abs(place.f) < Math.abs(best.f) ? place : best));
+  const side = value === low ? 'low' : value === high ? 'high' : null;
+  return search.outcome({ limit: side === null ? -1 : 0, side, singular: dead(tried) });
+}
+
+/** The aim, where nothing tried has moved its figure. */
+function dead(tried: readonly Place[]): readonly number[] | null {
+  const all = tried.map((place) => place.f);
+  return Math.max(...all) - Math.min(...all) <= DEAD ? [0] : null;
+}
+
+/** The nearest place between its neighbours, by golden sections; two places when the residual changes sign after all. */
+function closeIn(
+  search: AimsSearch,
+  tried: readonly Place[],
+  at: (value: number) => number,
+): readonly [Place, Place] | null {
+  const places = tried.toSorted((a, b) => a.value - b.value);
+  const sizes = places.map((place) => Math.abs(place.f));
+  const b = sizes.indexOf(Math.min(...sizes));
+  if (b === 0 || b === places.length - 1) return null;
+  let [left, middle, right] = places.slice(b - 1, b + 2);
+  const width = NEAREST * (search.high[0] - search.low[0]);
+  while (right.value - left.value > width && search.left() > 0) {
+    const far = right.value - middle.value > middle.value - left.value ? right : left;
+    const value = middle.value + GOLDEN * (far.value - middle.value);
+    const place = { value, f: at(value) };
+    if (Number.isNaN(place.f)) return null;
+    if (place.f * middle.f <= 0) return [middle, place];
+    const better = Math.abs(place.f) < Math.abs(middle.f);
+    // the worse of the two becomes the end on its side
+    const worse = better ? middle : place;
+    if ((far === right) === better) left = worse;
+    else right = worse;
+    if (better) middle = place;
+  }
+  return null;
 }
 
 interface Place {

@@ -3,9 +3,9 @@ import type { Phase } from './stream.ts';
 /** One pass of the solver, for `--trace`. */
 export interface TraceEntry {
   readonly pass: number;
-  /** scaled residual of the tears after this pass */
+  /** scaled residual of the tears after this pass; of method aims the largest of what tears and aims leave open */
   readonly residual: number;
-  /** name of the worst tear variable, e.g. S8.Ar */
+  /** name of the worst tear variable, e.g. S8.Ar, or of the aim */
   readonly worst: string;
   /** the method that made the guess of this pass */
   readonly method: string;
@@ -98,6 +98,7 @@ export interface Result {
   readonly convergence: {
     readonly converged: boolean;
     readonly method: string;
+    /** all that were made, for aims as well; with several recycles those of the one that took most */
     readonly passes: number;
     readonly residual: number;
     readonly tears: readonly string[];

@@ -45,15 +45,18 @@ export function balancePlant(plant: Plant, options: BalanceOptions = {}): Balanc
     tolerance: options.tolerance ?? flowsheet.solve.tolerance,
     maxPasses: options.maxPasses ?? flowsheet.solve.maxPasses,
   };
-  const { closure, aims } =
-    flowsheet.aims.length === 0
-      ? { closure: closePlant(plant, close), aims: {} }
-      : closeWithAims(plant, close);
+  const { closure, last, aims } =
+    flowsheet.aims.length === 0 ? closed(plant, close) : closeWithAims(plant, close);
   const reports = reportsOf(plant);
   const read = { aims, reports, curves: options.curves ?? true };
   if (!closure.converged)
-    return { result: tally(plant, closure, read), diagnosis: diagnose(plant, closure, close) };
+    return { result: tally(plant, closure, read), diagnosis: diagnose(plant, last, close) };
   // Streams that agree with one another are no answer where a block could not do as it was told.
   const [fault = null] = faultDiagnostics(plant, reports);
   return { result: tally(plant, { ...closure, converged: fault === null }, read), diagnosis: fault };
+}
+
+function closed(plant: Plant, options: CloseOptions) {
+  const closure = closePlant(plant, options);
+  return { closure, last: closure, aims: {} };
 }

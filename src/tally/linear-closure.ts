@@ -17,6 +17,8 @@ export interface LinearClosure {
   readonly x: Float64Array;
   /** sizes of the tear variables, to measure steps against; > 0 */
   readonly scale: Float64Array;
+  /** passes that linearising took, of the recycle that took most */
+  readonly passes: number;
   /** one pass of the whole plant from these tears, all groups in calculation order; @throws PassTrouble */
   pass(x: Float64Array, g: Float64Array): void;
   /** turn a residual r into the step (I − A)⁻¹ r, each group by itself; false where a group is singular */
@@ -45,11 +47,13 @@ export function linearise(plant: Plant): LinearClosure {
     group.tears.length === 0 ? null : createRecycleProblem(plant, group),
   );
   let size = 0;
+  let widest = 0;
   for (const problem of problems) {
     if (problem === null) continue;
     const rows = Array.from({ length: problem.size }, () => new Float64Array(problem.size));
     parts.push({ problem, from: size, rows });
     size += problem.size;
+    widest = Math.max(widest, problem.size);
   }
   const x = new Float64Array(size);
   const scale = new Float64Array(size);
@@ -82,14 +86,17 @@ export function linearise(plant: Plant): LinearClosure {
   pass(x, g);
   sizes(plant, x, scale);
   for (const part of parts) differentiate(part, x, scale);
+  // one to begin with and one to end with; where something goes round, a base before and after two for each variable
+  let passes = widest === 0 ? 2 : 2 * widest + 4;
   for (let k = 0; k < POLISH; k++) {
     pass(x, g);
+    passes++;
     const r = g.map((value, i) => value - x[i]);
     if (!solve(r)) break;
     for (let i = 0; i < size; i++) x[i] = Math.max(x[i] + r[i], 0);
   }
   pass(x, g);
-  return { size, x, scale, pass, solve };
+  return { size, x, scale, passes, pass, solve };
 }
 
 /** The size of every tear variable: its own, or a trace of its stream. */

@@ -62,9 +62,12 @@ export function createPassSlopes(plant: Plant, group: Group): PassSlopes {
     const outlets = plant.outlets[step.block];
     const inlets = plant.inlets[step.block];
     const slopes = room.get(step.block)!;
-    for (const row of slopes.of) for (const one of row) one.fill(0);
+    clear(slopes);
     const own = step.ahead === null && plant.units[step.block].slopes?.(inlets, outlets, slopes);
-    if (!own) differences(step, slopes);
+    if (!own) {
+      clear(slopes);
+      differences(step, slopes);
+    }
     const only = step.ahead === null ? -1 : portOf(plant, step.block, step.ahead);
     outlets.forEach((outlet, o) => {
       if (only >= 0 && o !== only) return;
@@ -151,6 +154,10 @@ export function createPassSlopes(plant: Plant, group: Group): PassSlopes {
       return true;
     },
   };
+}
+
+function clear(slopes: BlockSlopes): void {
+  for (const row of slopes.of) for (const one of row) one.fill(0);
 }
 
 /** A variable of a stream: flows [mol/s], then temperature [K], then pressure [Pa]. */

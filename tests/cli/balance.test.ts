@@ -126,7 +126,7 @@ describe('balance', () => {
     expect(JSON.parse(json.out).diagnostics).toHaveLength(1);
   });
 
-  test('an aim out of reach ends with exit code 4, one in reach with 0', () => {
+  test('an aim out of reach ends with exit code 4, as two that fight do, one in reach with 0', () => {
     const text = readFileSync(join(folder(), 'ammonia.yaml'), 'utf8');
     const aim = (wanted: string) =>
       `${text}\naims:\n  inert cap: {move: purge.fractions.bleed, between: [1 %, 6 %], until: streams.S2.y.Ar + streams.S2.y.CH4 = ${wanted}}\n`;
@@ -139,6 +139,14 @@ describe('balance', () => {
     const far = run(['balance', 'far.yaml']);
     expect(far.code).toBe(4);
     expect(far.out).toContain('NOT REACHED');
+    const second =
+      '  other: {move: condenser.temperature, between: [-20 degC, 10 degC], until: streams.S2.y.Ar + streams.S2.y.CH4 = 9 %}\n';
+    writeFileSync(join(folder(), 'fight.yaml'), aim('8 %') + second);
+    const fight = run(['balance', 'fight.yaml']);
+    expect(fight.code).toBe(4);
+    expect(fight.out.replace(/\s+/g, ' ')).toContain(
+      'it cannot be met along with the aim other (which has 0.08',
+    );
   });
 
   test('faults of a file go to standard error with their lines, exit code 2, also as JSON', () => {

@@ -148,7 +148,7 @@ test('two aims that ask for the same thing are told', () => {
 
 test('an aim that no setting moves is told', () => {
   const found = several((x) => [x[0] + x[1] - 3, 0.5], [1, 1], [0, 0], [5, 5]);
-  expect(found).toMatchObject({ reached: false, singular: [1, 1] });
+  expect(found).toMatchObject({ reached: false, singular: [1] });
 });
 
 test('of two aims out of reach the bound in the way is named', () => {
@@ -169,4 +169,83 @@ test('two aims step back from settings at which the loop does not close', () => 
   );
   expect(found.reached).toBe(true);
   expect(Math.abs(found.values[1] - 2)).toBeLessThan(1e-6);
+});
+
+test('two aims that want different things of one figure meet half-way, both named', () => {
+  // least squares of a − 3 and a − 4: a = 3.5
+  const found = several((x) => [x[0] + 2 * x[1] - 3, x[0] + 2 * x[1] - 4], [1, 1], [0, 0], [5, 5]);
+  expect(found).toMatchObject({ reached: false, singular: [0, 1], limit: -1 });
+  expect(found.values[0] + 2 * found.values[1]).toBeCloseTo(3.5, 6);
+  expect(found.evaluations).toBeLessThan(60);
+});
+
+test('of three aims of which two fight the third is met and has no part in it', () => {
+  const figures = (x: Float64Array) => [
+    x[0] + x[1] - 3,
+    x[1] * x[2] - 2,
+    2 * (x[0] + x[1]) - 7 + 0.01 * (x[0] - 1) ** 2,
+  ];
+  const found = several(figures, [1, 1, 1], [0, 0, 0], [5, 5, 5]);
+  expect(found.reached).toBe(false);
+  expect(found.singular).toEqual([0, 2]);
+  const ratio = Math.abs(found.residuals[1]) / Math.abs(found.residuals[0]);
+  expect(ratio).toBeLessThan(1e-3);
+});
+
+test('aims that become parallel only where they are met are met', () => {
+  // x + y = 2 and x y = 1 touch at (1, 1)
+  const found = several((x) => [x[0] + x[1] - 2, x[0] * x[1] - 1], [0.4, 1.2], [0, 0], [3, 3], 1e-8);
+  expect(found).toMatchObject({ reached: true, singular: null });
+  expect(found.values[0]).toBeCloseTo(1, 3);
+});
+
+test('aims that can be told apart at the start and fight where the search ends are named', () => {
+  // x + y = 2 allows x y = 1 at most
+  const found = several((x) => [x[0] + x[1] - 2, x[0] * x[1] - 1.2], [0.4, 1.2], [0, 0], [3, 3]);
+  expect(found).toMatchObject({ reached: false, singular: [0, 1], limit: -1 });
+  // by symmetry x = y; least squares: 4 (2x − 2) + 4x (x² − 1.2) = 0, x³ + 0.8 x − 2 = 0
+  const [x, y] = found.values;
+  expect(Math.abs(x - y)).toBeLessThan(0.02);
+  expect(Math.abs(x ** 3 + 0.8 * x - 2)).toBeLessThan(0.01);
+  expect(found.evaluations).toBeLessThanOrEqual(120);
+});
+
+test('noise of closings hides no fight', () => {
+  let k = 0;
+  const noise = () => 1e-10 * Math.sin(7 * ++k);
+  const figures = (x: Float64Array) => {
+    const inert = x[0] * Math.exp(0.3 * x[1]);
+    return [inert / 2 - 1 + noise(), inert / 2.2 - 1 + noise()];
+  };
+  const found = several(figures, [1, 1], [0, 0], [5, 5], 1e-8);
+  expect(found).toMatchObject({ reached: false, singular: [0, 1] });
+});
+
+test('an aim that its bound keeps away, at either side, lets the other be met', () => {
+  const figures = (first: number) => (x: Float64Array) => [x[0] + 0.3 * x[1] - first, x[1] - 0.2 * x[0] - 2];
+  const high = several(figures(9), [1, 1], [0, 0], [5, 5]);
+  expect(high).toMatchObject({ reached: false, limit: 0, limitSide: 'high', singular: null });
+  expect(Array.from(high.values)).toEqual([5, expect.closeTo(3, 8)]);
+  const low = several(figures(-2), [1, 1], [0, 0], [5, 5]);
+  expect(low).toMatchObject({ reached: false, limit: 0, limitSide: 'low', singular: null });
+  expect(Array.from(low.values)).toEqual([0, expect.closeTo(2, 8)]);
+});
+
+test('where each setting moves the figure of the other aim, the one that can still be met is met', () => {
+  // x₁, the setting of the second aim, is what moves the first figure
+  const found = several((x) => [x[1] - 9, x[0] - 2], [1, 1], [0, 0], [5, 5]);
+  expect(found).toMatchObject({ reached: false, limit: 1, limitSide: 'high' });
+  expect(Array.from(found.values)).toEqual([expect.closeTo(2, 8), 5]);
+});
+
+test('the nearest place between the bounds is found where the figure turns back', () => {
+  const found = one((x) => -0.5 - (x - 4.3) ** 2, 2, 0, 10);
+  expect(found).toMatchObject({ reached: false, limit: -1, singular: null });
+  expect(Math.abs(found.values[0] - 4.3)).toBeLessThan(0.01);
+  // and where it turns back just behind the target, it is met
+  expect(one((x) => 1e-3 - (x - 4.3) ** 2, 2, 0, 10).reached).toBe(true);
+});
+
+test('a single aim that its setting does not move is told', () => {
+  expect(one(() => 0.4, 2, 0, 10)).toMatchObject({ reached: false, singular: [0] });
 });
