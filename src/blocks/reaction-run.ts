@@ -5,6 +5,7 @@ import { holdBackEquilibria } from '../chemistry/held-equilibria.ts';
 import type { Component } from '../model/component.ts';
 import type { Reaction } from '../model/reaction.ts';
 import type { BlockContext, BlockReport } from './block.ts';
+import { createReactionSlopes } from './reaction-slopes.ts';
 
 /** How far an equilibrium is reached: by a temperature approach, or as a share of the whole way. */
 export interface EquilibriumReach {
@@ -31,6 +32,12 @@ export interface ReactionRun {
    * @throws PassTrouble
    */
   react(T: number, P: number, feed: Float64Array, product: Float64Array): void;
+  /**
+   * Derivatives of the last `react`, asked with its T and P.
+   * @param product  written: rows of the flows, in their columns the feed, then T and P
+   * @returns false where there are none
+   */
+  slopes(T: number, P: number, product: Float64Array): boolean;
   /** What the last `react` is worth saying. @param T  outlet temperature [K] */
   report(T: number): Pick<BlockReport, 'details' | 'warnings' | 'assumptions'>;
 }
@@ -82,6 +89,7 @@ export function createReactionRun(
   const conversionExtents = new Float64Array(conversions.length);
   const equilibriumExtents = new Float64Array(equilibria.length);
   const converted = new Float64Array(mixture.size);
+  const slopes = createReactionSlopes(mixture.size, solver, setConversions, heldEquilibria);
 
   function extents(): Record<string, number> {
     const of = (list: readonly Reaction[], values: Float64Array) =>
@@ -105,6 +113,7 @@ export function createReactionRun(
       equilibriumExtents.set(solver.extents);
       holdBackEquilibria(heldEquilibria, components, product, equilibriumExtents);
     },
+    slopes,
     report(T) {
       const ran = extents();
       const byName = <V>(of: (name: string) => V | undefined) =>

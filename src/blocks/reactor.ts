@@ -85,6 +85,7 @@ function createReactor(setting: Settings, context: BlockContext): Unit {
   const run = createReactionRun(setting.reactions, context);
   const carbon = createCarbonReport(mixture);
   const feed = emptyStream(mixture.size);
+  const reacted = new Float64Array(mixture.size * (mixture.size + 2));
   let started = false;
 
   /** Outlet composition, phases and enthalpy at the outlet's temperature. */
@@ -109,6 +110,15 @@ function createReactor(setting: Settings, context: BlockContext): Unit {
       solveState(out!, wantedW, 'enthalpy', reactAndSettle, (state) => state.enthalpyW);
       // As in Mixture.settleAtEnthalpy: the balance closes exactly, and nothing holds no enthalpy.
       if (mixture.total(out!) > 0) out!.enthalpyW = wantedW;
+    },
+    slopes(_inlets, [out], { width, of }) {
+      if (setting.temperature === undefined) return false;
+      if (!run.slopes(out!.temperatureK, out!.pressurePa, reacted)) return false;
+      const target = of[0]![0]!;
+      target.set(reacted);
+      for (let i = 0; i < mixture.size; i++) target[i * width + width - 2] = 0;
+      target[width * width - 1] = 1;
+      return true;
     },
     report(inlets, outlets) {
       const inlet = inlets[0];

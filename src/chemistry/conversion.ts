@@ -55,6 +55,33 @@ export function applyConversions(
   }
 }
 
+/**
+ * Derivatives of what `applyConversions` makes of a feed: it is linear, as every extent is a share of amounts.
+ * @param product written: ∂product_i/∂feed_j, row by row
+ * @param extents written: the same, one row per reaction
+ */
+export function conversionSlopes(
+  reactions: readonly ConversionReaction[],
+  size: number,
+  product: Float64Array,
+  extents: Float64Array,
+): void {
+  product.fill(0);
+  extents.fill(0);
+  for (let i = 0; i < size; i++) product[i * size + i] = 1;
+  for (let r = 0; r < reactions.length; r++) {
+    const { coefficients, conversion, of: key } = reactions[r];
+    const share = conversion / -coefficients[key];
+    for (let j = 0; j < size; j++) {
+      let base = j === key ? 1 : 0;
+      for (let k = 0; k < r; k++) base += Math.max(0, reactions[k].coefficients[key]) * extents[k * size + j];
+      const extent = share * base;
+      extents[r * size + j] = extent;
+      for (let i = 0; i < size; i++) product[i * size + j] += coefficients[i] * extent;
+    }
+  }
+}
+
 function usedUp(
   reaction: ConversionReaction,
   components: readonly Component[],

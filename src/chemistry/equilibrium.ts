@@ -1,6 +1,7 @@
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
 import type { Component } from '../model/component.ts';
 import type { GasModel } from '../properties/gas-model.ts';
+import { createEquilibriumSlopes } from './equilibrium-slopes.ts';
 import { createGasActivity } from './gas-activity.ts';
 import type { GasEquilibrium } from './gas-equilibrium.ts';
 import { createGasEquilibrium } from './gas-equilibrium.ts';
@@ -28,6 +29,22 @@ export interface EquilibriumSolver {
    * @throws PassTrouble `equilibrium` when it does not settle
    */
   solve(T: number, P: number, feed: Float64Array, product: Float64Array): number;
+  /**
+   * Derivatives at the last solve, asked with its T and P; in the columns the feed, then T and P.
+   * @param product written: components rows of (components + 2) columns
+   * @param extents written: the same, one row per reaction
+   * @returns false where there are none: a reaction cannot run because the feed lacks something
+   */
+  slopes(T: number, P: number, product: Float64Array, extents: Float64Array): boolean;
+}
+
+/** The reactions with some of the solids absent. */
+interface Branch {
+  readonly gas: GasEquilibrium;
+  /** of each absent solid from the gas */
+  readonly formation: readonly Float64Array[];
+  /** the absent solids */
+  readonly absent: readonly number[];
 }
 
 /** A solid may exceed unit activity by this much in ln a before it is taken to form. */
@@ -66,7 +83,7 @@ export function createEquilibriumSolver(
   const constants = used.map(createConstant);
   const moleChange = used.map((r) => gasMoleChange(r.coefficients, components));
   const solids = solidsOf(used, components);
-  const byAbsence = new Map<number, { gas: GasEquilibrium; formation: Float64Array[] }>();
+  const byAbsence = new Map<number, Branch>();
 
   const lnK = new Float64Array(count);
   const from = new Float64Array(size);
@@ -75,7 +92,11 @@ export function createEquilibriumSolver(
   const sum = new Float64Array(count);
   const lnPhi = new Float64Array(size);
   const extents = new Float64Array(reactions.length);
-  const state = { extents, solve };
+  const sensitivities = createEquilibriumSlopes(rows, activity);
+  const lnKPerKelvin = new Float64Array(count);
+  const lnKPerPascal = new Float64Array(count);
+  const usedSlopes = new Float64Array(count * (size + 2));
+  const state = { extents, solve, slopes };
   /** bit s set: solid s is taken to be absent */
   let absence = 0;
 
@@ -111,6 +132,23 @@ export function createEquilibriumSolver(
     return steps;
   }
 
+  function slopes(T: number, P: number, product: Float64Array, ofExtents: Float64Array): boolean {
+    const { gas: last, absent } = branchOf(absence);
+    if (last.closed > 0) return false;
+    for (let r = 0; r < count; r++) {
+      lnKPerKelvin[r] = lnKSlope(used[r], T);
+      lnKPerPascal[r] = -moleChange[r] / P;
+    }
+    if (!sensitivities.at(T, P, amounts, absent, lnKPerKelvin, lnKPerPascal, product, usedSlopes))
+      return false;
+    const width = size + 2;
+    ofExtents.fill(0);
+    for (let r = 0; r < count; r++) {
+      for (let k = 0; k < width; k++) ofExtents[place[r] * width + k] = usedSlopes[r * width + k];
+    }
+    return true;
+  }
+
   /** A solid that is fed starts present; one that is not keeps the state of the last solve. */
   function restart(feed: Float64Array): void {
     from.set(feed);
@@ -118,7 +156,7 @@ export function createEquilibriumSolver(
     for (let s = 0; s < solids.length; s++) if (feed[solids[s]] > 0) absence &= ~(1 << s);
   }
 
-  function branchOf(mask: number): { gas: GasEquilibrium; formation: Float64Array[] } {
+  function branchOf(mask: number): Branch {
     let branch = byAbsence.get(mask);
     if (branch === undefined) {
       const absent = solids.filter((_, s) => (mask & (1 << s)) !== 0);
@@ -130,7 +168,7 @@ export function createEquilibriumSolver(
         return r < 0 ? new Float64Array(rows.width) : values.slice(r * rows.width, (r + 1) * rows.width);
       });
       const open = values.slice(closed * rows.width);
-      branch = { gas: createGasEquilibrium(open, count - closed, count, activity), formation };
+      branch = { gas: createGasEquilibrium(open, count - closed, count, activity), formation, absent };
       byAbsence.set(mask, branch);
     }
     return branch;
@@ -207,6 +245,14 @@ export function lnKAtApproach(reaction: Pick<EquilibriumReaction, 'lnK' | 'appro
   if (reaction.approachK === 0) return reaction.lnK(T);
   const falls = reaction.lnK(T + 0.5) < reaction.lnK(T - 0.5);
   return reaction.lnK(falls ? T + reaction.approachK : T - reaction.approachK);
+}
+
+/** Half the span of the difference that gives the slope of ln K [K]: neither rounding nor curvature shows in ten digits. */
+const lnKSpan = 0.05;
+
+/** ∂ ln K/∂T with the approach held [1/K]. */
+function lnKSlope(reaction: EquilibriumReaction, T: number): number {
+  return (lnKAtApproach(reaction, T + lnKSpan) - lnKAtApproach(reaction, T - lnKSpan)) / (2 * lnKSpan);
 }
 
 function gasMoleChange(coefficients: Float64Array, components: readonly Component[]): number {

@@ -10,6 +10,18 @@ export interface GasActivity {
   total(amounts: Float64Array): number;
   /** ln φ written into `out`, solids 0 */
   lnPhi(T: number, P: number, amounts: Float64Array, total: number, out: Float64Array): void;
+  /**
+   * Slopes of ln φ, solids 0: total · ∂ln φ_i/∂n_j by rows, ∂ln φ_i/∂T [1/K] and ∂ln φ_i/∂P [1/Pa].
+   */
+  lnPhiSlopes(
+    T: number,
+    P: number,
+    amounts: Float64Array,
+    total: number,
+    byAmount: Float64Array,
+    perKelvin: Float64Array,
+    perPascal: Float64Array,
+  ): void;
 }
 
 export function createGasActivity(gas: GasModel, solids: readonly boolean[]): GasActivity {
@@ -17,6 +29,11 @@ export function createGasActivity(gas: GasModel, solids: readonly boolean[]): Ga
   const inGas = Uint8Array.from(solids, (solid) => (solid ? 0 : 1));
   const y = new Float64Array(size);
   const real = gas.name !== 'ideal';
+
+  function setFractions(amounts: Float64Array, total: number): void {
+    for (let i = 0; i < size; i++) y[i] = inGas[i] === 1 ? amounts[i] / total : 0;
+  }
+
   return {
     real,
     inGas,
@@ -30,8 +47,13 @@ export function createGasActivity(gas: GasModel, solids: readonly boolean[]): Ga
         out.fill(0);
         return;
       }
-      for (let i = 0; i < size; i++) y[i] = inGas[i] === 1 ? amounts[i] / total : 0;
+      setFractions(amounts, total);
       gas.lnPhi(T, P, y, out);
+    },
+    lnPhiSlopes(T, P, amounts, total, byAmount, perKelvin, perPascal) {
+      setFractions(amounts, total);
+      gas.lnPhiSlopes(T, P, y, perKelvin, perPascal);
+      gas.lnPhiByAmount(T, P, y, byAmount);
     },
   };
 }

@@ -8,6 +8,8 @@ import { createSingleEquilibrium } from './single-equilibrium.ts';
 export interface GasEquilibrium {
   /** steps of the last solve */
   readonly steps: number;
+  /** rows that could not run at the last solve, for want of a species that nothing makes */
+  readonly closed: number;
   /**
    * @param feed amounts, not negative
    * @param lnK per original reaction, standard pressure folded in
@@ -57,7 +59,7 @@ export function createGasEquilibrium(
   for (let r = 0; r < count; r++) {
     for (let i = 0; i < size; i++) if (rows[r * width + i] !== 0 && inGas[i] === 1) touched[i] = 1;
   }
-  const state = { steps: 0, solve };
+  const state = { steps: 0, closed: 0, solve };
 
   function solve(
     T: number,
@@ -114,6 +116,7 @@ export function createGasEquilibrium(
     const work = Float64Array.from(rows);
     const closed = eliminate(work, width, count, Int32Array.from(never), never.length, pivots);
     openCount = count - closed;
+    state.closed = closed;
     open.set(work.subarray(closed * width));
     position = 0;
     together.warm = false;

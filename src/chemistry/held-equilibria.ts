@@ -48,6 +48,27 @@ export function holdBackEquilibria(
   }
 }
 
+/**
+ * The same of derivatives: of the amounts and extents at equilibrium, one row of `columns` for each.
+ * @param amounts  rewritten
+ */
+export function holdBackSlopes(
+  reactions: readonly HeldEquilibrium[],
+  columns: number,
+  amounts: Float64Array,
+  extents: Float64Array,
+): void {
+  for (let r = 0; r < reactions.length; r++) {
+    const { coefficients, fraction } = reactions[r];
+    if (fraction === 1) continue;
+    for (let i = 0; i < coefficients.length; i++) {
+      const share = coefficients[i] * (1 - fraction);
+      if (share === 0) continue;
+      for (let k = 0; k < columns; k++) amounts[i * columns + k] -= share * extents[r * columns + k];
+    }
+  }
+}
+
 function lessThanNothing(reactions: readonly HeldEquilibrium[], id: string, i: number): PassTrouble {
   const names = reactions.filter((one) => one.coefficients[i] !== 0).map((one) => one.name);
   return new PassTrouble(

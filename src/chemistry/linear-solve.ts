@@ -1,6 +1,10 @@
-/** Gaussian elimination with partial pivoting on [A | b], the answer in the last column. */
-export function solveLinear(a: Float64Array, m: number): boolean {
-  const w = m + 1;
+/**
+ * Gaussian elimination with partial pivoting on [A | b ...], the answers in the last columns.
+ * @param a m rows of m + `sides` columns, rewritten @param sides number of right-hand sides
+ * @returns false when A is singular
+ */
+export function solveLinear(a: Float64Array, m: number, sides = 1): boolean {
+  const w = m + sides;
   for (let k = 0; k < m; k++) {
     let p = k;
     for (let r = k + 1; r < m; r++) if (Math.abs(a[r * w + k]) > Math.abs(a[p * w + k])) p = r;
@@ -17,10 +21,12 @@ export function solveLinear(a: Float64Array, m: number): boolean {
       for (let j = k; j < w; j++) a[r * w + j] = a[r * w + j] - factor * a[k * w + j];
     }
   }
-  for (let k = m - 1; k >= 0; k--) {
-    let sum = a[k * w + m];
-    for (let j = k + 1; j < m; j++) sum -= a[k * w + j] * a[j * w + m];
-    a[k * w + m] = sum / a[k * w + k];
+  for (let b = m; b < w; b++) {
+    for (let k = m - 1; k >= 0; k--) {
+      let sum = a[k * w + b];
+      for (let j = k + 1; j < m; j++) sum -= a[k * w + j] * a[j * w + b];
+      a[k * w + b] = sum / a[k * w + k];
+    }
   }
   return true;
 }
