@@ -1,6 +1,7 @@
 import { copyStream, emptyStream, type StreamState } from '../model/stream.ts';
 import { solveState } from '../properties/solve-state.ts';
 import { type BedSettings, shotPort } from './bed-settings.ts';
+import { createBedSlopes } from './bed-slopes.ts';
 import type { BlockContext, BlockReport, Unit } from './block.ts';
 import { createCarbonReport } from './carbon-report.ts';
 import { pressureAfterDrop } from './checks.ts';
@@ -47,6 +48,7 @@ export function createConverterBeds(setting: BedsSetting, context: BlockContext)
     (name) => context.reactions.find((r) => r.name === name)!,
   );
   const keys = [...new Set(running.map((one) => keyReactant(one, mixture)))];
+  const slopes = createBedSlopes(mixture, beds);
   let started = false;
 
   /** Bring what leaves `before` to the inlet of a bed. */
@@ -101,6 +103,7 @@ export function createConverterBeds(setting: BedsSetting, context: BlockContext)
       started = true;
       copyStream(last.out, outlets[0]);
     },
+    slopes: (inlets, _outlets, room) => slopes(inlets, room),
     report(inlets, outlets) {
       const exchanges = beds.some(({ setting: own }) => (own.inlet_temperature ?? own.duty) !== undefined);
       return quietReport({

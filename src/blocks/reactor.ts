@@ -7,6 +7,7 @@ import type { BlockContext, BlockKind, SettingsFault, Unit } from './block.ts';
 import { createCarbonReport } from './carbon-report.ts';
 import { exactlyOne, pressureAfterDrop } from './checks.ts';
 import { createConverterBeds } from './converter-beds.ts';
+import { createEnthalpySlopes } from './enthalpy-slopes.ts';
 import { createReactionRun } from './reaction-run.ts';
 import { reactionFaults } from './reactor-checks.ts';
 import { liquidWarnings } from './reactor-warnings.ts';
@@ -85,7 +86,7 @@ function createReactor(setting: Settings, context: BlockContext): Unit {
   const run = createReactionRun(setting.reactions, context);
   const carbon = createCarbonReport(mixture);
   const feed = emptyStream(mixture.size);
-  const reacted = new Float64Array(mixture.size * (mixture.size + 2));
+  const carrying = createEnthalpySlopes(mixture);
   let started = false;
 
   /** Outlet composition, phases and enthalpy at the outlet's temperature. */
@@ -111,13 +112,14 @@ function createReactor(setting: Settings, context: BlockContext): Unit {
       // As in Mixture.settleAtEnthalpy: the balance closes exactly, and nothing holds no enthalpy.
       if (mixture.total(out!) > 0) out!.enthalpyW = wantedW;
     },
-    slopes(_inlets, [out], { width, of }) {
-      if (setting.temperature === undefined) return false;
-      if (!run.slopes(out!.temperatureK, out!.pressurePa, reacted)) return false;
-      const target = of[0]![0]!;
-      target.set(reacted);
-      for (let i = 0; i < mixture.size; i++) target[i * width + width - 2] = 0;
-      target[width * width - 1] = 1;
+    slopes([inlet], [out], { width, of }) {
+      const [matrix] = of[0];
+      if (setting.temperature === undefined) {
+        return carrying.enter(inlet!, matrix) && carrying.reactAndLeave(run, out!, of[0]);
+      }
+      if (!run.slopes(out!.temperatureK, out!.pressurePa, matrix)) return false;
+      for (let i = 0; i < mixture.size; i++) matrix[i * width + mixture.size] = 0;
+      matrix[width * width - 1] = 1;
       return true;
     },
     report(inlets, outlets) {

@@ -1,26 +1,52 @@
+import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
+import * as anyBlock from './block-cases.ts';
 import { components, mixtureOf, reaction, streamOf, trial } from './helpers.ts';
 import { compareWithDifferences, slopesOf } from './slope-checks.ts';
 
 const KELVIN_SIZE = 100;
 const PASCAL_SIZE = 1e7;
 
+describe.each(anyBlock.cases)(
+  '$name',
+  ({ kind, raw, inlets = 1, step = 11, meantFor = (value) => value }) => {
+    test('has slopes that agree with differences of its passes, or none', () => {
+      const { mixture, reactions, feed, feedsOf, scaledTo10 } = anyBlock;
+      let able = false;
+      let columns = 0;
+      fc.assert(
+        fc.property(feed, (value) => {
+          const from = feedsOf(mixture, inlets, meantFor(scaledTo10(value)), step);
+          const t = trial(kind, raw, mixture, from, reactions);
+          if (t.unit.slopes) able = true;
+          const slopes = slopesOf(t, mixture);
+          const flow = Math.min(...from.map(mixture.total));
+          const sizes = { flow, kelvin: KELVIN_SIZE, pascal: PASCAL_SIZE };
+          if (slopes) columns += compareWithDifferences(t, mixture, slopes, sizes).columns;
+        }),
+        { numRuns: 25 },
+      );
+      // temperature and pressure at least, at more than half of the points
+      if (able) expect(columns).toBeGreaterThan(25);
+    });
+  },
+);
+
 function expectSlopes(
   raw: Record<string, unknown>,
   ids: readonly string[],
   equations: Readonly<Record<string, string>>,
-  inlet: Parameters<typeof streamOf>[1],
-  kind = 'reactor',
+  ...streams: Parameters<typeof streamOf>[1][]
 ) {
   const list = components(...ids);
   const reactions = Object.entries(equations).map(([name, equation]) => reaction(name, equation, list));
   const mixture = mixtureOf(ids, { reactions });
-  const feed = streamOf(mixture, inlet);
-  const t = trial(kind, raw, mixture, [feed], reactions);
+  const feeds = streams.map((stream) => streamOf(mixture, stream));
+  const t = trial('reactor', raw, mixture, feeds, reactions);
   const slopes = slopesOf(t, mixture);
   expect(slopes).not.toBeNull();
   const { columns } = compareWithDifferences(t, mixture, slopes!, {
-    flow: mixture.total(feed),
+    flow: mixture.total(feeds[0]!),
     kelvin: KELVIN_SIZE,
     pascal: PASCAL_SIZE,
   });
@@ -44,6 +70,28 @@ describe('the slopes of a reactor agree with differences of its passes', () => {
       ['H2', 'N2', 'NH3', 'Ar'],
       ammonia,
       loopGas,
+    );
+  });
+
+  test.each([
+    ['adiabatic', { adiabatic: true, pressure_drop: '2 bar' }],
+    ['cooled', { duty: '-300 kW' }],
+    ['of beds with coolers', { beds: [{}, { inlet_temperature: '400 degC' }, { duty: '-50 kW' }] }],
+  ])('ammonia, %s', (_, way) => {
+    expectSlopes({ reactions: { synthesis: {} }, ...way }, ['H2', 'N2', 'NH3', 'Ar'], ammonia, loopGas);
+  });
+
+  test.each([190, 199, 205])('ammonia, quenched with gas of %d bar', (bar) => {
+    expectSlopes(
+      {
+        reactions: { synthesis: {} },
+        beds: [{ pressure_drop: '1 bar' }, { quench: true }, { quench: true }],
+      },
+      ['H2', 'N2', 'NH3', 'Ar'],
+      ammonia,
+      { ...loopGas, celsius: 370 },
+      { celsius: 160, bar, flows: { H2: 12, N2: 4, NH3: 0.6, Ar: 1 } },
+      { celsius: 140, bar: 198, flows: { H2: 6, N2: 2, NH3: 0.3, Ar: 0.6 } },
     );
   });
 
