@@ -95,6 +95,16 @@ describe('the slopes of a reactor agree with differences of its passes', () => {
     );
   });
 
+  test('a quench at the very pressure of the gas has half a say in the pressure', () => {
+    const list = ['H2', 'N2', 'NH3', 'Ar'];
+    const reactions = [reaction('synthesis', ammonia.synthesis, components(...list))];
+    const mixture = mixtureOf(list, { reactions });
+    const feeds = [loopGas, { ...loopGas, celsius: 150 }].map((stream) => streamOf(mixture, stream));
+    const raw = { reactions: { synthesis: {} }, beds: [{}, { quench: true }] };
+    const slopes = slopesOf(trial('reactor', raw, mixture, feeds, reactions), mixture)!;
+    expect(slopes.of[0]!.map((matrix) => matrix.at(-1))).toEqual([0.5, 0.5]);
+  });
+
   test('methanol, two reactions at once', () => {
     expectSlopes(
       { reactions: { fromCO: { approach: '5 K' }, fromCO2: {} }, temperature: '250 degC' },
