@@ -7,10 +7,11 @@ import { createGasModel } from '../properties/gas-models.ts';
 import type { IdealGas } from '../properties/ideal-gas.ts';
 import { createIdealGas, enthalpyBasisFor } from '../properties/ideal-gas.ts';
 import { lnVapourPressure, vapourPressureRange } from '../properties/vapour-pressure.ts';
+import { lnKAtApproach } from './approach.ts';
 import type { CarbonActivity } from './carbon-activity.ts';
 import { createCarbonActivity } from './carbon-activity.ts';
 import type { EquilibriumSolver } from './equilibrium.ts';
-import { createEquilibriumSolver, lnKAtApproach } from './equilibrium.ts';
+import { createEquilibriumSolver } from './equilibrium.ts';
 import { createLnK, createReactionEnthalpy } from './equilibrium-constant.ts';
 import { dependentReactions } from './reaction-rows.ts';
 

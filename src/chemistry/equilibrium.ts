@@ -1,6 +1,7 @@
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
 import type { Component } from '../model/component.ts';
 import type { GasModel } from '../properties/gas-model.ts';
+import { createConstant, lnKSlope } from './approach.ts';
 import { createEquilibriumSlopes } from './equilibrium-slopes.ts';
 import { createGasActivity } from './gas-activity.ts';
 import type { GasEquilibrium } from './gas-equilibrium.ts';
@@ -223,36 +224,6 @@ export function createEquilibriumSolver(
   }
 
   return state;
-}
-
-/** ln K with approach, remembered for the temperature of the last call. */
-function createConstant(reaction: EquilibriumReaction): (T: number) => number {
-  let lastT = Number.NaN;
-  let lastApproach = Number.NaN;
-  let value = Number.NaN;
-  return (T) => {
-    if (T !== lastT || reaction.approachK !== lastApproach) {
-      value = lnKAtApproach(reaction, T);
-      lastT = T;
-      lastApproach = reaction.approachK;
-    }
-    return value;
-  };
-}
-
-/** ln K taken `approachK` to the side where K is smaller; the side by the slope of ln K at T. */
-export function lnKAtApproach(reaction: Pick<EquilibriumReaction, 'lnK' | 'approachK'>, T: number): number {
-  if (reaction.approachK === 0) return reaction.lnK(T);
-  const falls = reaction.lnK(T + 0.5) < reaction.lnK(T - 0.5);
-  return reaction.lnK(falls ? T + reaction.approachK : T - reaction.approachK);
-}
-
-/** Half the span of the difference that gives the slope of ln K [K]: neither rounding nor curvature shows in ten digits. */
-const lnKSpan = 0.05;
-
-/** ∂ ln K/∂T with the approach held [1/K]. */
-function lnKSlope(reaction: EquilibriumReaction, T: number): number {
-  return (lnKAtApproach(reaction, T + lnKSpan) - lnKAtApproach(reaction, T - lnKSpan)) / (2 * lnKSpan);
 }
 
 function gasMoleChange(coefficients: Float64Array, components: readonly Component[]): number {

@@ -63,8 +63,15 @@ export function compareWithDifferences(
       const [far, near, nearUp, farUp] = points as Float64Array[][];
       const scaled = (from: Float64Array, to: Float64Array, i: number, span: number) =>
         (((to[i]! - from[i]!) / span) * sizeOf(k)) / sizeOf(i);
+      // By how much the differences to both sides disagree: a smooth curve halves it with the step, a kink does not.
+      const gap = (down: Float64Array, here: Float64Array, up: Float64Array, i: number, span: number) =>
+        scaled(down, here, i, span) - scaled(here, up, i, span);
       const sides = base.map((here, o) =>
-        here.map((_, i) => Math.abs(scaled(far![o]!, here, i, step) - scaled(here, farUp![o]!, i, step))),
+        here.map((_, i) => {
+          const wide = gap(far![o]!, here, farUp![o]!, i, step);
+          const close = gap(near![o]!, here, nearUp![o]!, i, 0.5 * step);
+          return Math.max(Math.abs(wide) * (tolerance / 1e-2), 2 * Math.abs(2 * close - wide));
+        }),
       );
       const wanted = base.map((here, o) =>
         here.map((_, i) => {
@@ -72,7 +79,7 @@ export function compareWithDifferences(
           return (4 * scaled(near![o]!, nearUp![o]!, i, step) - wide) / 3;
         }),
       );
-      if (sides.some((one) => one.some((gap) => gap > 1e-2))) {
+      if (sides.some((out) => out.some((one) => one > tolerance))) {
         compared.kinks++;
         continue;
       }

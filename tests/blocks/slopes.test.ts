@@ -7,18 +7,27 @@ import { compareWithDifferences, slopesOf } from './slope-checks.ts';
 const KELVIN_SIZE = 100;
 const PASCAL_SIZE = 1e7;
 
+/** Blocks whose derivatives are taken by differences of their passes. */
+const without = [
+  'adiabatic kinetic bed',
+  'cooled kinetic bed',
+  'compressor with knock-out',
+  'exchanger by cold temperature',
+  'exchanger by approach',
+];
+
 describe.each(anyBlock.cases)(
   '$name',
-  ({ kind, raw, inlets = 1, step = 11, meantFor = (value) => value }) => {
+  ({ name, kind, raw, inlets = 1, step = 11, meantFor = (value) => value }) => {
     test('has slopes that agree with differences of its passes, or none', () => {
       const { mixture, reactions, feed, feedsOf, scaledTo10 } = anyBlock;
-      let able = false;
       let columns = 0;
       fc.assert(
         fc.property(feed, (value) => {
+          // The heat of liquid water has a kink just above 0 degC, where its data begin: slopes there are a mean of both sides.
+          fc.pre(Math.abs(value.celsius) > 1);
           const from = feedsOf(mixture, inlets, meantFor(scaledTo10(value)), step);
           const t = trial(kind, raw, mixture, from, reactions);
-          if (t.unit.slopes) able = true;
           const slopes = slopesOf(t, mixture);
           const flow = Math.min(...from.map(mixture.total));
           const sizes = { flow, kelvin: KELVIN_SIZE, pascal: PASCAL_SIZE };
@@ -26,8 +35,8 @@ describe.each(anyBlock.cases)(
         }),
         { numRuns: 25 },
       );
-      // temperature and pressure at least, at more than half of the points
-      if (able) expect(columns).toBeGreaterThan(25);
+      // a column or more at every point, most of them
+      if (!without.includes(name)) expect(columns).toBeGreaterThan(25);
     });
   },
 );
@@ -93,6 +102,16 @@ describe('the slopes of a reactor agree with differences of its passes', () => {
       { celsius: 160, bar, flows: { H2: 12, N2: 4, NH3: 0.6, Ar: 1 } },
       { celsius: 140, bar: 198, flows: { H2: 6, N2: 2, NH3: 0.3, Ar: 0.6 } },
     );
+  });
+
+  test('a quench at the very pressure of the gas has half a say in the pressure', () => {
+    const list = ['H2', 'N2', 'NH3', 'Ar'];
+    const reactions = [reaction('synthesis', ammonia.synthesis, components(...list))];
+    const mixture = mixtureOf(list, { reactions });
+    const feeds = [loopGas, { ...loopGas, celsius: 150 }].map((stream) => streamOf(mixture, stream));
+    const raw = { reactions: { synthesis: {} }, beds: [{}, { quench: true }] };
+    const slopes = slopesOf(trial('reactor', raw, mixture, feeds, reactions), mixture)!;
+    expect(slopes.of[0]!.map((matrix) => matrix.at(-1))).toEqual([0.5, 0.5]);
   });
 
   test('methanol, two reactions at once', () => {

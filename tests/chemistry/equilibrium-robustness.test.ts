@@ -166,6 +166,36 @@ test('extents account for every change of amount', () => {
   );
 });
 
+test('derivatives keep the atoms and grow with the feed, whatever is missing or used up', () => {
+  const columns = size + 2;
+  const slopes = new Float64Array(size * columns);
+  let able = 0;
+  fc.assert(
+    fc.property(setsFrom([...bank, ...withCarbon], 4), feeds, (reactions, feed) => {
+      const solver = createEquilibriumSolver(reactions, gas, loopGas);
+      const product = new Float64Array(size);
+      solver.solve(500, P, feed, product);
+      if (!solver.slopes(500, P, slopes, new Float64Array(reactions.length * columns))) return;
+      able++;
+      const total = feed.reduce((x, y) => x + y, 0);
+      for (const element of elements) {
+        const atoms = loopGas.map((c) => c.elements[element] ?? 0);
+        for (let k = 0; k < columns; k++) {
+          const held = atoms.reduce((sum, one, i) => sum + one * slopes[i * columns + k]!, 0);
+          expect(Math.abs(held - (atoms[k] ?? 0))).toBeLessThanOrEqual(1e-9);
+        }
+      }
+      // twice the feed is twice the product
+      for (let i = 0; i < size; i++) {
+        const grown = feed.reduce((sum, one, k) => sum + one * slopes[i * columns + k]!, 0);
+        expect(Math.abs(grown - product[i]!)).toBeLessThanOrEqual(1e-9 * total);
+      }
+    }),
+    { numRuns: 1000 },
+  );
+  expect(able).toBeGreaterThan(500);
+});
+
 // found by random search: the affinity of a large amount, all rounding, outweighed that of an amount of 1e-93
 test('an amount far below the rounding of the others is still brought to its equilibrium', () => {
   const reactions = [
