@@ -1,6 +1,7 @@
+import type { NumericSetting } from '../flowsheet/numeric-settings.ts';
 import type { LinearClosure } from './linear-closure.ts';
-import type { Probe } from './probe.ts';
-import { CLOSER, type Steps } from './tangent.ts';
+import { type Probe, probeAlong } from './probe.ts';
+import type { Along, Linearised } from './tangent.ts';
 
 /** Slopes to both sides that differ by more than this share of the larger are those of a kink [-]. */
 const KINK = 0.02;
@@ -9,17 +10,24 @@ const NOISE = 1e-10;
 /** A figure below this is measured against it: a duty of nothing but rounding has no kink. */
 const SMALL = 0.01;
 
-/** Do the slopes of figures or tears to both sides differ, or a stream's phases? */
+/** A second step so many times smaller tells a kink from a curve. */
+const CLOSER = 2;
+
+/** Do the slopes of figures or tears to both sides differ, or a stream's phases? @throws PassTrouble */
 export function isKinked(
-  closure: LinearClosure,
-  { far, near }: Steps,
-  base: ReadonlyMap<string, number>,
+  { plant, closure, response: { base } }: Linearised,
+  setting: NumericSetting,
+  { tangent, probe: far }: Pick<Along, 'tangent' | 'probe'>,
 ): boolean {
+  if (far.side !== 'both') return false;
   if (far.phases) return true;
+  const seenFar = threePoints(far, closure, base);
+  if (!seenFar.some(bends)) return false;
   // At a kink the second difference falls with the step, in a curve with its square.
   const between = (1 / CLOSER + 1 / CLOSER ** 2) / 2;
+  const near = probeAlong(plant, closure, setting, tangent, far.h / CLOSER, 'both');
   const seenNear = threePoints(near, closure, base);
-  return threePoints(far, closure, base).some((points, i) => {
+  return seenFar.some((points, i) => {
     const narrow = secondDifference(seenNear[i]!);
     return bends(points) && narrow > NOISE * points.size && narrow > between * secondDifference(points);
   });

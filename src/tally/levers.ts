@@ -3,12 +3,12 @@ import { type NumericSetting, numericSettings } from '../flowsheet/numeric-setti
 import type { Flowsheet } from '../model/flowsheet.ts';
 import { type Balance, type BalanceOptions, balancePlant } from './balance.ts';
 import { figureLeaves } from './figure-leaves.ts';
-import { isKinked } from './kink.ts';
-import { type LinearClosure, linearise } from './linear-closure.ts';
+import { figureResponse } from './figure-slopes.ts';
+import { linearise } from './linear-closure.ts';
 import { createPlant, type Plant } from './plant.ts';
-import { type Probe, quotient, sideOf } from './probe.ts';
+import { sideOf } from './probe.ts';
 import { figuresOf } from './tally.ts';
-import { alongBothSides, alongOneSide, extrapolated, type Steps } from './tangent.ts';
+import { type Along, along, alongOneSide, type Linearised } from './tangent.ts';
 
 /** What a setting does to the figures of a closed plant. */
 export interface Lever {
@@ -56,90 +56,68 @@ export function levers(flowsheet: Flowsheet, options: LeversOptions = {}): Lever
 }
 
 function leversOf(plant: Plant, settings: readonly NumericSetting[]): Lever[] {
-  let closure: LinearClosure;
+  let linearised: Linearised;
   try {
-    closure = linearise(plant);
+    const closure = linearise(plant);
+    linearised = { plant, closure, response: figureResponse(plant, closure) };
   } catch (trouble) {
     if (!(trouble instanceof PassTrouble)) throw trouble;
     return settings.map((setting) => unknown(setting, noSlope(trouble)));
   }
-  const base = figureLeaves(figuresOf(plant));
-  return settings.map((setting) => leverOf(plant, closure, setting, base));
+  const found = settings.map((setting) => leverOf(linearised, setting));
+  passAgain(linearised);
+  return found;
 }
 
-/** A change below this share of a figure is rounding [-]. */
-const ROUNDING = 1e-13;
+/** Leave the plant as it was closed. */
+function passAgain({ closure }: Linearised): void {
+  closure.pass(closure.x, new Float64Array(closure.size));
+}
 
-function leverOf(
-  plant: Plant,
-  closure: LinearClosure,
-  setting: NumericSetting,
-  base: ReadonlyMap<string, number>,
-): Lever {
-  const scaled = (slopes: ReadonlyMap<string, number>): Record<string, number> =>
+function leverOf(linearised: Linearised, setting: NumericSetting): Lever {
+  const scaled = ({ slopes }: Along): Record<string, number> =>
     Object.fromEntries([...slopes].map(([name, slope]) => [name, slope * setting.unitSI]));
+  const { plant } = linearised;
   try {
     const side = sideOf(setting);
-    if (side !== 'both') {
-      const slopes = slopesOf(alongOneSide(plant, closure, setting, side), base);
-      return { setting, figures: scaled(slopes), sides: null, note: AT_BOUND[side] };
+    const found = along(linearised, setting, side);
+    if (!found.kinked) {
+      const unsure = found.gap > UNSURE ? CLOSE_BY : null;
+      return {
+        setting,
+        figures: scaled(found),
+        sides: null,
+        note: side === 'both' ? unsure : AT_BOUND[side],
+      };
     }
-    const both = alongBothSides(plant, closure, setting);
-    if (!isKinked(closure, both, base))
-      return { setting, figures: scaled(slopesOf(both, base)), sides: null, note: null };
-    const more = slopesOf(alongOneSide(plant, closure, setting, 'up'), base);
-    const less = slopesOf(alongOneSide(plant, closure, setting, 'down'), base);
-    const mean = new Map([...more].map(([name, slope]) => [name, (slope + (less.get(name) ?? slope)) / 2]));
+    const more = scaled(alongOneSide(linearised, setting, 'up'));
+    const less = scaled(alongOneSide(linearised, setting, 'down'));
     return {
       setting,
-      figures: scaled(mean),
-      sides: { more: scaled(more), less: scaled(less) },
-      note: both.far.phases
+      figures: Object.fromEntries(Object.keys(more).map((name) => [name, (more[name]! + less[name]!) / 2])),
+      sides: { more, less },
+      note: found.probe.phases
         ? `a stream changes its phase here: ${TWO_SIDES}`
         : `a kink, as where a mixer takes the lower of two equal pressures: ${TWO_SIDES}`,
     };
   } catch (trouble) {
     if (!(trouble instanceof PassTrouble)) throw trouble;
+    plant.set(setting.path, setting.value);
+    passAgain(linearised);
     return unknown(setting, noSlope(trouble));
   } finally {
     plant.set(setting.path, setting.value);
-    closure.pass(closure.x, new Float64Array(closure.size));
   }
 }
 
+/** Slopes further apart than so many times what counts as agreed are told [-]. */
+const UNSURE = 5;
+const CLOSE_BY = 'the slopes of two steps differ by more than 1e-5 of them: something changes close by';
 const TWO_SIDES = 'more of it does something else than less; the numbers are the mean of both';
 const AT_BOUND = {
   up: 'at its lower bound: taken upwards only',
   down: 'at its upper bound: taken downwards only',
 } as const;
-
-/** Slopes of the figures: those of two steps extrapolated to none. */
-function slopesOf({ far, near }: Steps, base: ReadonlyMap<string, number>): Map<string, number> {
-  const wide = slopesAt(far, base);
-  return new Map(
-    [...slopesAt(near, base)].map(([name, slope]) => [name, extrapolated(wide.get(name)!, slope)]),
-  );
-}
-
-function slopesAt(probe: Probe, base: ReadonlyMap<string, number>): Map<string, number> {
-  const slopes = new Map<string, number>();
-  for (const [name, f0] of base) {
-    // A duty or power of nothing is left out of the figures.
-    const one = probe.figures[0].get(name) ?? 0;
-    const other = probe.figures[1].get(name) ?? 0;
-    const slope = quotient(probe.side, f0, one, other, probe.h);
-    // A slope that is no more than rounding is none; duties are differences of the heat that flows about.
-    const size = Math.max(Math.abs(f0), /^(duty|power)_kW/.test(name) ? largestHeat(base) : 0);
-    slopes.set(name, Math.abs(slope) * probe.h <= ROUNDING * size ? 0 : slope);
-  }
-  return slopes;
-}
-
-function largestHeat(base: ReadonlyMap<string, number>): number {
-  let most = 0;
-  for (const [name, value] of base) if (name.startsWith('duty_kW')) most = Math.max(most, Math.abs(value));
-  return most;
-}
 
 function noSlope(trouble: PassTrouble): string {
   return `no slope was found: ${trouble.message}`;

@@ -1,79 +1,94 @@
 import { closeFixedPoint } from '../convergence/driver.ts';
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
 import type { NumericSetting } from '../flowsheet/numeric-settings.ts';
+import { type FigureResponse, slopesOf } from './figure-slopes.ts';
+import { isKinked } from './kink.ts';
 import type { LinearClosure } from './linear-closure.ts';
 import type { Plant } from './plant.ts';
-import { largest, type Probe, probeAlong, type Side, sizeOf, stepAlong } from './probe.ts';
+import { type Probe, probeAlong, type Side, sizeOf, stepAlong } from './probe.ts';
 
-/** The tangent is right when a pass along it leaves this share of it [-]. */
-const TANGENT = 1e-7;
-/** ... or less than the noise of a pass, per relative change of the setting [-]. */
-const STILL = 1e-9;
-/** A correction that leaves more than this share of what was open does not pay [-]. */
-const GAIN = 0.3;
-const CORRECTIONS = 8;
-/** A second step so many times smaller tells a kink from a curve, and a slope from its curvature. */
-export const CLOSER = 2;
+/** The slopes of two steps agree to this share of them [-] ... */
+const AGREED = 2e-6;
+/** ... or to this share of the figure: the noise of a pass [-]. */
+const NOISE = 2e-12;
+/** Steps are halved so many times at most. */
+const HALVINGS = 6;
 
-/** Two steps along the tangent, the near one so many times smaller. */
-export interface Steps {
-  readonly far: Probe;
-  readonly near: Probe;
+/** A plant made ready for the slopes of its figures. */
+export interface Linearised {
+  readonly plant: Plant;
+  readonly closure: LinearClosure;
+  readonly response: FigureResponse;
 }
 
-/** Along the tangent of the closed tears by the linearised recycles, made good by passes along it: two steps. */
-export function alongBothSides(plant: Plant, closure: LinearClosure, setting: NumericSetting): Steps {
-  const tangent = new Float64Array(closure.size);
-  let steps = stepsAlong(plant, closure, setting, tangent, 'both');
-  let before = Infinity;
-  for (let k = 0; k < CORRECTIONS; k++) {
-    const residual = residualOf(steps, tangent);
-    const open = largest(residual, closure.scale);
-    const moves = largest(tangent, closure.scale);
-    const still = TANGENT * moves + STILL / sizeOf(setting);
-    if (k > 0 && (open <= still || open > GAIN * before)) break;
-    before = open;
-    if (!closure.solve(residual)) throw noTangent();
-    for (let i = 0; i < tangent.length; i++) tangent[i] += residual[i];
-    steps = stepsAlong(plant, closure, setting, tangent, 'both');
-  }
-  return steps;
-}
-
-function stepsAlong(
-  plant: Plant,
-  closure: LinearClosure,
-  setting: NumericSetting,
-  tangent: Float64Array,
-  side: Side,
-): Steps {
-  const h = stepAlong(closure, setting, tangent);
-  return {
-    far: probeAlong(plant, closure, setting, tangent, h, side),
-    near: probeAlong(plant, closure, setting, tangent, h / CLOSER, side),
-  };
-}
-
-/** What the passes leave of a tangent. */
-function residualOf({ far, near }: Steps, tangent: Float64Array): Float64Array {
-  return tangent.map((value, i) => extrapolated(far.slope[i], near.slope[i]) - value);
-}
-
-/** Slopes of a far and a near step extrapolated to none. */
-export function extrapolated(far: number, near: number): number {
-  return near + (near - far) / (CLOSER ** 2 - 1);
+/** What moving along a tangent of the closed tears found. */
+export interface Along {
+  /** by figure, per SI unit of the setting */
+  readonly slopes: ReadonlyMap<string, number>;
+  /** d tear/d setting */
+  readonly tangent: Float64Array;
+  /** the step the slopes come from */
+  readonly probe: Probe;
+  /** largest difference from the slopes of a step twice as wide, 1 where they agree */
+  readonly gap: number;
+  /** more of the setting does something else than less */
+  readonly kinked: boolean;
 }
 
 /**
- * The same to one side, where the recycles linearised to both sides are a guide only: the tangent is the fixed
- * point of passing along it.
+ * Slopes by the linearised recycles: a step with the tears held gives their tangent, a step of half the size along
+ * it gives the slopes and what is wrong with the tangent, which is made good; and so on until two steps agree. They
+ * do at once unless something changes between the two, as where a range of validity ends close by.
+ *
+ * @param tangent  where to start, the tears held when left out
+ * @throws PassTrouble
  */
-export function alongOneSide(
-  plant: Plant,
-  closure: LinearClosure,
+export function along(
+  linearised: Linearised,
   setting: NumericSetting,
-  side: 'up' | 'down',
-): Steps {
+  side: Side,
+  tangent: Float64Array = new Float64Array(linearised.closure.size),
+): Along {
+  const { plant, closure, response } = linearised;
+  let best: Along | null = null;
+  let before: ReadonlyMap<string, number> | null = null;
+  let at = tangent;
+  for (let k = 0; k <= HALVINGS; k++) {
+    const h = stepAlong(closure, setting, at) / 2 ** k;
+    const probe = probeAlong(plant, closure, setting, at, h, side);
+    const more = probe.slope.map((value, i) => value - at[i]);
+    if (!closure.solve(more)) throw noTangent();
+    const slopes = slopesOf(probe, response, more);
+    const gap = before === null ? Infinity : gapBetween(before, slopes, response, h);
+    if (best === null || gap < best.gap) best = { slopes, tangent: at, probe, gap, kinked: false };
+    if (gap <= 1 || k > 1) best = { ...best, kinked: isKinked(linearised, setting, best) };
+    if (gap <= 1 || best.kinked) break;
+    before = slopes;
+    at = at.map((value, i) => value + more[i]);
+  }
+  return best!;
+}
+
+function gapBetween(
+  before: ReadonlyMap<string, number>,
+  slopes: ReadonlyMap<string, number>,
+  { size }: FigureResponse,
+  h: number,
+): number {
+  let gap = 0;
+  for (const [name, slope] of slopes) {
+    const apart = Math.abs(slope - before.get(name)!);
+    if (apart > 0) gap = Math.max(gap, apart / (AGREED * Math.abs(slope) + (NOISE * size(name)) / h));
+  }
+  return gap;
+}
+
+/**
+ * The same to one side of a kink, where the recycles linearised to both sides are a guide only: the tangent is the
+ * fixed point of passing along it.
+ */
+export function alongOneSide(linearised: Linearised, setting: NumericSetting, side: 'up' | 'down'): Along {
+  const { plant, closure } = linearised;
   const size = sizeOf(setting);
   const tangentOf = (u: Float64Array) => u.map((value, i) => (value * closure.scale[i]) / size);
   const found = closeFixedPoint(
@@ -82,9 +97,11 @@ export function alongOneSide(
       lower: new Float64Array(closure.size).fill(-Infinity),
       evaluate(u, next) {
         const tangent = tangentOf(u);
-        const residual = residualOf(stepsAlong(plant, closure, setting, tangent, side), tangent);
-        if (!closure.solve(residual)) throw noTangent();
-        for (let i = 0; i < u.length; i++) next[i] = u[i] + (residual[i] * size) / closure.scale[i];
+        const h = stepAlong(closure, setting, tangent);
+        const { slope } = probeAlong(plant, closure, setting, tangent, h, side);
+        const more = slope.map((value, i) => value - tangent[i]);
+        if (!closure.solve(more)) throw noTangent();
+        for (let i = 0; i < u.length; i++) next[i] = u[i] + (more[i] * size) / closure.scale[i];
       },
       scale: (u, next, out) => {
         let most = 1e-3;
@@ -96,7 +113,7 @@ export function alongOneSide(
     { method: 'anderson', tolerance: 1e-6, maxPasses: 40 },
   );
   if (!found.converged) throw noTangent();
-  return stepsAlong(plant, closure, setting, tangentOf(found.g), side);
+  return along(linearised, setting, side, tangentOf(found.g));
 }
 
 function noTangent(): PassTrouble {
