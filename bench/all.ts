@@ -2,15 +2,17 @@ import { benchCommand } from './command.ts';
 import { benchKernels } from './kernels.ts';
 import { benchMethods } from './methods.ts';
 import { benchRandomLoops } from './random-loops.ts';
+import { benchScale } from './scale.ts';
 
 /**
- * Everything, or the parts named: npm run bench -- methods kernels command.
+ * Everything, or the parts named: npm run bench -- methods kernels scale command.
  * Times are of this machine at this moment; the ratios are what to compare between two runs.
  */
 const parts: Readonly<Record<string, () => Promise<void>>> = {
   methods: benchMethods,
   loops: benchRandomLoops,
   kernels: benchKernels,
+  scale: benchScale,
   command: benchCommand,
 };
 
