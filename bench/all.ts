@@ -3,9 +3,10 @@ import { benchKernels } from './kernels.ts';
 import { benchMethods } from './methods.ts';
 import { benchRandomLoops } from './random-loops.ts';
 import { benchScipy } from './scipy.ts';
+import { benchScale } from './scale.ts';
 
 /**
- * Everything, or the parts named: npm run bench -- methods kernels command.
+ * Everything, or the parts named: npm run bench -- methods kernels scale command.
  * Times are of this machine at this moment; the ratios are what to compare between two runs.
  */
 const parts: Readonly<Record<string, () => Promise<void>>> = {
@@ -13,6 +14,7 @@ const parts: Readonly<Record<string, () => Promise<void>>> = {
   loops: benchRandomLoops,
   kernels: benchKernels,
   scipy: benchScipy,
+  scale: benchScale,
   command: benchCommand,
 };
 

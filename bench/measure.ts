@@ -11,6 +11,19 @@ export function timeMs(run: () => void): number {
   return performance.now() - start;
 }
 
+/** Milliseconds of processor time that one call takes: a busy machine makes it wait, but not work longer. */
+export function cpuMs(run: () => void): number {
+  const start = process.cpuUsage();
+  run();
+  return cpuSince(start);
+}
+
+/** Milliseconds of processor time since `process.cpuUsage()` gave `start`. */
+export function cpuSince(start: NodeJS.CpuUsage): number {
+  const { user, system } = process.cpuUsage(start);
+  return (user + system) / 1e3;
+}
+
 /**
  * Times of several runs in rounds, so that a busy machine troubles all alike: every run has its turn in each
  * round. `ratio` is to the first run of the same round.

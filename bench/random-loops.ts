@@ -2,6 +2,7 @@ import { readFlowsheet } from '../src/flowsheet/read.ts';
 import type { MethodName } from '../src/model/flowsheet.ts';
 import { balance } from '../src/tally/balance.ts';
 import { column, title } from './measure.ts';
+import { randomNumbers } from './random-numbers.ts';
 
 const LOOPS = 2000;
 const SEED = 20_260_101;
@@ -85,15 +86,4 @@ streams:
   S8: circulator -> mixer
 ledger: {product: NH3 in S5, reactant: H2, purge: [S6], recycle: S8}
 `;
-}
-
-/** Even numbers in [0, 1), the same in every run (a 32-bit mixing generator). */
-function randomNumbers(seed: number): () => number {
-  let state = seed >>> 0;
-  return () => {
-    state = (state + 0x6d2b79f5) >>> 0;
-    let t = Math.imul(state ^ (state >>> 15), state | 1);
-    t ^= t + Math.imul(t ^ (t >>> 7), t | 61);
-    return ((t ^ (t >>> 14)) >>> 0) / 4294967296;
-  };
 }

@@ -1,9 +1,9 @@
-import { strongComponents } from '../graph/strong-components.ts';
 import type { Component } from '../model/component.ts';
 import type { LedgerSpec, StreamSpec } from '../model/flowsheet.ts';
 import type { Reaction } from '../model/reaction.ts';
 import type { ReadBlock } from './blocks.ts';
 import { bySource } from './by-source.ts';
+import { streamsInLoops } from './loops.ts';
 
 /** What the ledger refers to where the file does not say, with a sentence for each; empty where nothing is assumed. */
 export interface LedgerDefaults extends LedgerSpec {
@@ -96,18 +96,8 @@ function productStream(
 }
 
 function recycleStream(streams: readonly StreamSpec[], blocks: readonly ReadBlock[]): string | null {
-  const indexOf = new Map(blocks.map((b, i) => [b.name, i]));
-  const between = streams.flatMap(({ tag, from, to }) => {
-    const [source, target] = [indexOf.get(from.name), to === null ? undefined : indexOf.get(to.name)];
-    return source === undefined || target === undefined ? [] : [{ tag, source, target }];
-  });
-  const { of } = strongComponents(
-    blocks.length,
-    Int32Array.from(between, ({ source }) => source),
-    Int32Array.from(between, ({ target }) => target),
-  );
-  const found = between.find(
-    ({ source, target }) => blocks[target].kind?.kind === 'mixer' && of[source] === of[target],
-  );
+  const mixers = new Set(blocks.flatMap((b) => (b.kind?.kind === 'mixer' ? [b.name] : [])));
+  const inLoops = streamsInLoops(streams);
+  const found = streams.find((s) => s.to !== null && mixers.has(s.to.name) && inLoops.has(s.tag));
   return found?.tag ?? null;
 }

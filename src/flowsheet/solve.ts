@@ -2,6 +2,7 @@ import { nearest } from '../diagnostics/nearest.ts';
 import type { SolveSpec, StreamSpec } from '../model/flowsheet.ts';
 import type { Reading } from './findings.ts';
 import { checkPart } from './issues.ts';
+import { streamsInLoops } from './loops.ts';
 import { solveSchema } from './schema.ts';
 import { child, nodeAt, type Path, placeOfPath, scalarsOf } from './yaml-tree.ts';
 
@@ -11,9 +12,12 @@ export function readSolve(reading: Reading, streams: readonly StreamSpec[] | nul
   const entry = written === undefined ? {} : checkPart(reading, solveSchema, ['solve']);
   const tearNode = nodeAt(reading.root, ['solve', 'tear']);
   const tags = tearNode === undefined ? [] : [...scalarsOf(tearNode)].map((node) => node.text);
-  for (const [i, tag] of tags.entries()) {
-    if (streams !== null)
-      checkTear(reading, tag, tearNode?.kind === 'list' ? ['solve', 'tear', i] : ['solve', 'tear'], streams);
+  if (streams !== null && tags.length > 0) {
+    const inLoops = streamsInLoops(streams);
+    for (const [i, tag] of tags.entries()) {
+      const path = tearNode?.kind === 'list' ? ['solve', 'tear', i] : ['solve', 'tear'];
+      checkTear(reading, tag, path, streams, inLoops);
+    }
   }
   if (entry === undefined) return null;
   return {
@@ -29,6 +33,7 @@ function checkTear(
   tag: string,
   path: Path,
   streams: readonly StreamSpec[],
+  inLoops: ReadonlySet<string>,
 ): void {
   const where = placeOfPath(root, path);
   const stream = streams.find((s) => s.tag === tag);
@@ -50,6 +55,18 @@ function checkTear(
       what: `solve.tear: ${tag} leaves the plant.`,
       why,
       mend: 'take it out, or name a stream of the loop',
+    });
+  } else if (!inLoops.has(tag)) {
+    const why = 'nothing that flows through it comes back to it, so there is nothing to guess';
+    const known = [...inLoops].slice(0, 12).join(', ');
+    findings.error(where, {
+      code: 'bad-tear',
+      what: `solve.tear: ${tag} lies in no loop.`,
+      why: known === '' ? 'there is no loop in this flowsheet' : why,
+      mend:
+        known === ''
+          ? 'take it out'
+          : `take it out, or name a stream of a loop: ${known}${inLoops.size > 12 ? ', ...' : ''}`,
     });
   }
 }

@@ -26,7 +26,7 @@ export function checkText(flowsheet: Flowsheet, plan: Plan, options: SheetOption
     ...wrapped(plan.order.map(plainText).join(' -> '), WIDTH, '  ', '    '),
     '',
     paint.head('Loops'),
-    ...loopLines(plan),
+    ...loopLines(flowsheet, plan),
     '',
     paint.head('Degrees of freedom'),
     ...freedomLines(flowsheet),
@@ -74,9 +74,12 @@ function contents(flowsheet: Flowsheet): string[][] {
     ]);
 }
 
-function loopLines(plan: Plan): string[] {
+function loopLines({ solve }: Flowsheet, plan: Plan): string[] {
   if (plan.loops.length === 0) return ['  none: one pass through the blocks gives the answer'];
   const guesses = `  the solver guesses ${plan.unknowns} numbers: flows, temperature and pressure of each tear`;
+  const { tears, smallest } = plan;
+  const given = solve.tear.length === 0 ? '' : ', those of solve.tear among them';
+  const number = `  ${tears.length} ${tears.length === 1 ? 'tear' : 'tears'}, ${smallest ? 'the smallest number that breaks every loop' : 'a small number (not proven smallest)'}${given}`;
   const loops = plan.loops.flatMap(({ blocks, tears }, index) =>
     wrapped(
       `${blocks.map(plainText).join(', ')}; torn at ${tears.map(plainText).join(', ')}`,
@@ -85,7 +88,7 @@ function loopLines(plan: Plan): string[] {
       '     ',
     ),
   );
-  return [...loops, guesses];
+  return [...loops, number, guesses];
 }
 
 function freedomLines(flowsheet: Flowsheet): string[] {

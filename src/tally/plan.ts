@@ -10,6 +10,8 @@ export interface Plan {
   readonly blocks: readonly { readonly name: string; readonly kind: string }[];
   readonly loops: readonly { readonly blocks: readonly string[]; readonly tears: readonly string[] }[];
   readonly tears: readonly string[];
+  /** true when no smaller number of tears would do, those of `solve: tear` among them; false where that is not proven */
+  readonly smallest: boolean;
   /** blocks, and outlets of blocks that are calculated ahead of the rest (exchanger.cold) */
   readonly order: readonly string[];
   /** settings moved by aims, one wanted value each: what is free and what fixes it */
@@ -35,6 +37,7 @@ export function planFlowsheet(flowsheet: Flowsheet): Plan {
       .filter((group) => group.tears.length > 0)
       .map((group) => ({ blocks: group.blocks.map(name), tears: group.tears.map(tag) })),
     tears,
+    smallest: plant.smallestTears,
     order: plant.groups.flatMap((group) =>
       group.steps.map(({ block, ahead }) => (ahead === null ? name(block) : `${name(block)}.${ahead}`)),
     ),

@@ -36,6 +36,8 @@ export interface Plant {
   readonly inlets: readonly (readonly StreamState[])[];
   readonly outlets: readonly (readonly StreamState[])[];
   readonly groups: readonly Group[];
+  /** true when no smaller number of tears would do, those that the file names among them */
+  readonly smallestTears: boolean;
   /** feeds, with the settings that were moved */
   readonly feeds: readonly Feed[];
   /** indices of the streams that enter and leave across the battery limit */
@@ -70,7 +72,7 @@ export function createPlant(flowsheet: Flowsheet): Plant {
   const units = blocks.map((b, i) => kinds[i].create(b.settings, { name: b.name, mixture, reactions }));
   const wiring = wire(flowsheet, blocks, kinds);
   const graph = stepGraph(flowsheet, blocks, kinds);
-  const groups = planCalculation(
+  const plan = planCalculation(
     graph.steps.length,
     graph.edgeFrom,
     graph.edgeTo,
@@ -80,7 +82,8 @@ export function createPlant(flowsheet: Flowsheet): Plant {
       if (graph.inner[edge]) return 0;
       return flowsheet.streams[s].tag === flowsheet.ledger.recycle ? 2 : 1;
     }),
-  ).groups.map((group): Group => {
+  );
+  const groups = plan.groups.map((group): Group => {
     const steps = Array.from(group.nodes, (node) => graph.steps[node]);
     return {
       steps,
@@ -108,6 +111,7 @@ export function createPlant(flowsheet: Flowsheet): Plant {
     inlets,
     outlets,
     groups,
+    smallestTears: plan.exact,
     feeds,
     enters: wiring.enters,
     leaves: wiring.leaves,

@@ -115,17 +115,23 @@ test('weights choose among equally small sets but never enlarge one', () => {
   );
 });
 
-test('a tangle beyond the exact search is still torn, the same way each time, and says that it may not be the least', () => {
-  let seed = 7;
-  const next = (n: number): number => {
-    seed = (seed * 1103515245 + 12345) % 2147483648;
-    return Math.floor((seed / 2147483648) * n);
-  };
-  const n = 40;
-  const from = Int32Array.from({ length: 200 }, () => next(n));
-  const to = Int32Array.from({ length: 200 }, () => next(n));
-  const once = chooseTears(n, from, to);
-  expect(once.exact).toBe(false);
-  expect(hasCycle(n, from, to, new Set(once.edges))).toBe(false);
-  expect(chooseTears(n, from, to)).toEqual(once);
-});
+test.each([
+  [40, 200, 7],
+  [60, 300, 1],
+  [60, 300, 2],
+])(
+  'a tangle of %i blocks and %i streams is beyond the exact search, is still torn, the same way each time, and says so',
+  (n, streams, first) => {
+    let seed = first;
+    const next = (n: number): number => {
+      seed = (seed * 1103515245 + 12345) % 2147483648;
+      return Math.floor((seed / 2147483648) * n);
+    };
+    const from = Int32Array.from({ length: streams }, () => next(n));
+    const to = Int32Array.from({ length: streams }, () => next(n));
+    const once = chooseTears(n, from, to);
+    expect(once.exact).toBe(false);
+    expect(hasCycle(n, from, to, new Set(once.edges))).toBe(false);
+    expect(chooseTears(n, from, to)).toEqual(once);
+  },
+);

@@ -26,6 +26,7 @@ const flowsheet = {
   ],
   aims: [{ name: 'cap' }],
   cases: ['cold'],
+  solve: { tear: [] },
 } as unknown as Flowsheet;
 
 const plan: Plan = {
@@ -35,6 +36,7 @@ const plan: Plan = {
   ],
   loops: [{ blocks: ['mixer', 'divider'], tears: ['S4'] }],
   tears: ['S4'],
+  smallest: true,
   order: ['mixer', 'divider'],
   aims: [{ name: 'cap', moves: 'divider.fractions.bleed', until: 'streams.S2.y.N2 = 0.2' }],
   unknowns: 5,
@@ -73,6 +75,7 @@ Order of calculation
 
 Loops
   1. mixer, divider; torn at S4
+  1 tear, the smallest number that breaks every loop
   the solver guesses 5 numbers: flows, temperature and pressure of each tear
 
 Degrees of freedom
@@ -95,6 +98,16 @@ Sources
 Assumptions
   - Everything is ideal.
 `);
+  });
+
+  test('says where the number of tears is not proven to be the smallest, and where some are those of the file', () => {
+    expect(checkText(flowsheet, { ...plan, smallest: false })).toContain(
+      '\n  1 tear, a small number (not proven smallest)\n',
+    );
+    const given = { ...flowsheet, solve: { ...flowsheet.solve, tear: ['S4'] } };
+    expect(checkText(given, plan)).toContain(
+      '\n  1 tear, the smallest number that breaks every loop, those of solve.tear among them\n',
+    );
   });
 
   test('counts a stream of a feed as given and every other as an outlet of a block', () => {
