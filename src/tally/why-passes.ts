@@ -37,7 +37,7 @@ export function trendOnly(facts: Facts): Finding {
   const told = (what: string, why: string, mend: string): Finding => ({
     code: 'not-closed',
     what,
-    why: [why, mode, 'a trial by --method auto did not close it either']
+    why: [why, mode, 'a trial by --method auto gave no answer of use either']
       .filter((text) => text !== '')
       .join('; '),
     mend,

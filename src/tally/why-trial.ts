@@ -9,6 +9,9 @@ const TRIAL_PASSES = 250;
 /** A change is worth advising where the recycle is no more than so many times the feed. */
 export const SENSIBLE_RECYCLE = 20;
 
+/** Beyond so many times the feed it is rounding that decides whether a recycle closes: no answer to rely on. */
+const LARGEST_RECYCLE = 1e5;
+
 /** What a loop does where it closes. */
 export interface Trial {
   readonly passes: number;
@@ -24,7 +27,7 @@ export interface Trial {
  * remember of their last pass is not.
  *
  * @param changes  values in SI by path
- * @returns null where it does not close
+ * @returns null where it does not close, or only with a recycle beyond all use
  */
 export function tryOut(
   plant: Plant,
@@ -45,6 +48,8 @@ export function tryOut(
     if (!closure.converged) return null;
     const largest = largestTear(plant, group);
     const recycle = plant.mixture.total(plant.streams[largest]);
+    const fed = plant.enters.reduce((sum, s) => sum + plant.mixture.total(plant.streams[s]), 0);
+    if (recycle > LARGEST_RECYCLE * fed) return null;
     return {
       passes: closure.passes,
       recycle,
