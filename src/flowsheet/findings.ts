@@ -26,17 +26,20 @@ export interface Findings {
 
 export function createFindings(): Findings {
   const list: Diagnostic[] = [];
+  const said = new Set<string>();
+  const isNew = ({ line, column }: Place, what: string): boolean => {
+    const before = said.size;
+    return said.add(`${line}:${column} ${what}`).size > before;
+  };
   return {
     list,
     error(where, fault, also) {
       const { code, what, why, mend } = fault;
       const second = also === undefined ? {} : { also };
-      const twin = list.some(
-        (d) => d.what === what && d.where.line === where.line && d.where.column === where.column,
-      );
-      if (!twin) list.push({ code, severity: 'error', where, what, why, mend, ...second });
+      if (isNew(where, what)) list.push({ code, severity: 'error', where, what, why, mend, ...second });
     },
     warning(where, { code, what, why, mend }) {
+      isNew(where, what);
       list.push({ code, severity: 'warning', where, what, why, mend });
     },
   };
