@@ -2,8 +2,8 @@ import { benchCommand } from './command.ts';
 import { benchKernels } from './kernels.ts';
 import { benchMethods } from './methods.ts';
 import { benchRandomLoops } from './random-loops.ts';
-import { benchScipy } from './scipy.ts';
 import { benchScale } from './scale.ts';
+import { benchScipy } from './scipy.ts';
 
 /**
  * Everything, or the parts named: npm run bench -- methods kernels scale command.
