@@ -3,8 +3,10 @@ import type { MethodName } from '../model/flowsheet.ts';
 import { evaluateSafely } from './attempt.ts';
 import { keepWithinBounds } from './bounds.ts';
 import { createErrorEstimate } from './error-estimate.ts';
+import { createJacobian } from './jacobian.ts';
 import { methods } from './methods.ts';
 import type { FixedPointProblem } from './problem.ts';
+import { largestShare } from './vectors.ts';
 
 export type { FixedPointProblem } from './problem.ts';
 
@@ -113,7 +115,16 @@ export function createCloser(problem: FixedPointProblem, name: MethodName): Clos
   const gGood = new Float64Array(n);
   const xNext = new Float64Array(n);
   const scale = new Float64Array(n);
+  const jacobian = createJacobian(n);
+  const left = new Float64Array(n);
   return { method: name, close };
+
+  /** Distance from the fixed point by the map's derivatives at its last guess; 0 where it has none, Infinity where they are singular. */
+  function verified(x: Float64Array, g: Float64Array): number {
+    if (!jacobian.read(problem.derivatives ?? null, scale)) return 0;
+    if (!jacobian.correction(x, g, left)) return Infinity;
+    return largestShare(left, scale);
+  }
 
   function close(start: Float64Array, options: ClosureOptions): Closure {
     const tolerance = options.tolerance ?? 1e-9;
@@ -180,10 +191,15 @@ export function createCloser(problem: FixedPointProblem, name: MethodName): Clos
       const worst = worstVariable(x, g, scale);
       residual = n === 0 ? 0 : Math.abs(g[worst] - x[worst]) / scale[worst];
       const extraError = problem.extraError?.() ?? 0;
-      error = distance.next(x, g, scale, residual, method.distance?.(x, g, scale) ?? NaN);
+      const known = method.distance?.(x, g, scale) ?? NaN;
+      error = distance.next(x, g, scale, residual, known);
       log({ residual, worst, error, guess: x[worst], answer: g[worst], extraError }, note);
 
-      if (residual <= tolerance && error <= tolerance && extraError <= tolerance) return stop('closed');
+      if (residual <= tolerance && error <= tolerance && extraError <= tolerance) {
+        // An estimate from the last passes may swing; what the map itself knows has the last word.
+        if (Number.isNaN(known)) error = Math.max(error, verified(x, g));
+        if (error <= tolerance) return stop('closed');
+      }
       const merit = Math.max(residual, extraError);
       if (merit < STALL_SHARE * best) {
         best = merit;

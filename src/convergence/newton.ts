@@ -1,6 +1,7 @@
-import { solveInPlace } from './linear-solve.ts';
+import { createJacobian, type Jacobian } from './jacobian.ts';
 import type { FixedPointMethod } from './method.ts';
 import type { Derivatives } from './problem.ts';
+import { largestShare, takenBack } from './vectors.ts';
 
 /** Length of a probe relative to the size of its variable: passes are good to some 1e-12. */
 const PROBE = 1e-6;
@@ -12,8 +13,6 @@ const FAR = 0.5;
 const DIRECT_STEPS = 3;
 /** Guess and answer this near to one another are equal. */
 const SETTLED = 1e-13;
-/** Pivots smaller than this, in scaled variables, make the derivatives singular; behind a purge of 0.01 % they are 1e-4. */
-const SINGULAR = 1e-14;
 /** With derivatives brought up to date by steps, what a step may leave over beside it before they are taken afresh. */
 const CHORD = 1.5;
 /** The same where derivatives cost no more than a pass. */
@@ -48,26 +47,19 @@ const FREE_TURNS = 1;
 export function createNewton(): FixedPointMethod {
   let n = 0;
   let derivatives: Derivatives | null = null;
-  /** ∂G/∂x as the map gives it, row by row */
-  let given = new Float64Array(0);
-  /** the point a probe or step starts from, and the sizes its derivatives are scaled with */
+  let jacobian: Jacobian = createJacobian(0);
+  /** the point a probe or step starts from */
   let xBase = new Float64Array(0);
   let gBase = new Float64Array(0);
-  let size = new Float64Array(0);
   /** the whole step from the base; what is left over where it led */
   let step = new Float64Array(0);
   let left = new Float64Array(0);
-  let moved = new Float64Array(0);
   /** the way from the last base to this one */
   let came = new Float64Array(0);
   /** steps that took the last one back */
   let turns = 0;
   let settled = new Uint8Array(0);
   let order: number[] = [];
-  let J: Float64Array[] = [];
-  let work: Float64Array[] = [];
-  let spare: Float64Array[] = [];
-  let spareSize = new Float64Array(0);
   let base: { readonly x: Float64Array; readonly g: Float64Array } = { x: xBase, g: gBase };
   let directSteps = 0;
   let probe = 0;
@@ -77,6 +69,8 @@ export function createNewton(): FixedPointMethod {
   /** the derivatives are of the base itself, not brought up to date from elsewhere */
   let fresh = false;
   let taken = 1;
+  /** what the derivatives are has been said in the trace */
+  let said = false;
   let note = '';
 
   /** Take the derivatives at the point handed in, and the step or the first probe into xNext. */
@@ -88,17 +82,16 @@ export function createNewton(): FixedPointMethod {
     most = 1,
   ): void {
     rebase(x, g);
-    if (readDerivatives(scale)) {
+    if (jacobian.read(derivatives, scale)) {
+      if (!said) note = aboutDerivatives();
       fresh = true;
       stepFromBase(scale, xNext, most);
       return;
     }
-    size.set(scale);
+    jacobian.begin(scale);
     order.sort((a, b) => Math.abs(g[b] - x[b]) / scale[b] - Math.abs(g[a] - x[a]) / scale[a] || a - b);
     for (let i = 0; i < n; i++) {
       settled[i] = Math.abs(g[i] - x[i]) <= SETTLED * scale[i] ? 1 : 0;
-      J[i].fill(0);
-      J[i][i] = -1;
     }
     probe = -1;
     phase = 'probe';
@@ -112,14 +105,16 @@ export function createNewton(): FixedPointMethod {
     gBase.set(g);
   }
 
-  /** J and the sizes from the derivatives that the map has at the last guess; false where it has none. */
-  function readDerivatives(scale: Float64Array): boolean {
-    if (!derivatives?.at(given) || !allFinite(given)) return false;
-    size.set(scale);
-    for (let i = 0; i < n; i++) {
-      for (let j = 0; j < n; j++) J[i][j] = (given[i * n + j] * size[j]) / size[i] - (i === j ? 1 : 0);
-    }
-    return true;
+  /** For the trace: what direct substitution would be up against. */
+  function aboutDerivatives(): string {
+    said = true;
+    const radius = jacobian.radius();
+    const how = derivatives?.propagated
+      ? 'carried through the pass'
+      : 'carried through the pass, some by differences';
+    return Number.isNaN(radius)
+      ? `derivatives ${how}`
+      : `derivatives ${how}; spectral radius ${radius.toFixed(4)}`;
   }
 
   /** The same at the base, which is not the point handed in: a map gives derivatives of its last pass only. */
@@ -139,7 +134,7 @@ export function createNewton(): FixedPointMethod {
       const j = order[probe];
       xNext.set(xBase);
       // toward the answer, where the block is more likely to work
-      xNext[j] += (gBase[j] < xBase[j] ? -PROBE : PROBE) * size[j];
+      xNext[j] += (gBase[j] < xBase[j] ? -PROBE : PROBE) * jacobian.size[j];
       return;
     }
     fresh = true;
@@ -148,35 +143,23 @@ export function createNewton(): FixedPointMethod {
 
   function readProbe(x: Float64Array, g: Float64Array): void {
     const j = order[probe];
-    const h = (x[j] - xBase[j]) / size[j];
+    const h = (x[j] - xBase[j]) / jacobian.size[j];
     if (h === 0) return;
     for (let i = 0; i < n; i++) {
-      const change = g[i] - gBase[i];
-      if (Math.abs(change) > SETTLED * size[i]) settled[i] = 0;
-      J[i][j] = change / (h * size[i]) - (i === j ? 1 : 0);
+      if (Math.abs(g[i] - gBase[i]) > SETTLED * jacobian.size[i]) settled[i] = 0;
     }
-  }
-
-  /** Correction −J⁻¹ f in units of the variables; false when the derivatives are singular. */
-  function correction(x: Float64Array, g: Float64Array, out: Float64Array): boolean {
-    for (let i = 0; i < n; i++) {
-      work[i].set(J[i]);
-      out[i] = (x[i] - g[i]) / size[i];
-    }
-    if (!solveInPlace(work, out, SINGULAR)) return false;
-    for (let i = 0; i < n; i++) out[i] = out[i] * size[i];
-    return true;
+    jacobian.setColumn(j, h, gBase, g);
   }
 
   /** `left` at the point handed in; false when the derivatives are singular. */
   function knowLeft(x: Float64Array, g: Float64Array): boolean {
-    if (leftKnown === 0) leftKnown = correction(x, g, left) ? 1 : -1;
+    if (leftKnown === 0) leftKnown = jacobian.correction(x, g, left) ? 1 : -1;
     return leftKnown === 1;
   }
 
   /** Solve for the step and go along it by the share given at most; a direct step when it cannot be solved for. */
   function stepFromBase(scale: Float64Array, xNext: Float64Array, most: number): void {
-    if (!correction(xBase, gBase, step)) {
+    if (!jacobian.correction(xBase, gBase, step)) {
       note = 'the derivatives are singular: the direct step';
       phase = 'begin';
       xNext.set(gBase);
@@ -200,38 +183,19 @@ export function createNewton(): FixedPointMethod {
     for (let i = 0; i < n; i++) xNext[i] = xBase[i] + share * step[i];
   }
 
-  /** Broyden's good update with the step from the base to x. */
-  function update(x: Float64Array, g: Float64Array): void {
-    let whole = 0;
-    for (let i = 0; i < n; i++) {
-      moved[i] = (x[i] - xBase[i]) / size[i];
-      whole += moved[i] * moved[i];
-    }
-    if (!(whole > 0)) return;
-    for (let i = 0; i < n; i++) {
-      let unforeseen = (g[i] - x[i] - (gBase[i] - xBase[i])) / size[i];
-      for (let j = 0; j < n; j++) unforeseen -= J[i][j] * moved[j];
-      for (let j = 0; j < n; j++) J[i][j] += (unforeseen * moved[j]) / whole;
-    }
-  }
-
   /**
    * Is the point handed in nearer to the answer by its own derivatives than the base was? Then it is the base, and they are
    * kept; else nothing is changed. Across a kink (a condenser that has begun to condense) the old ones tell nothing.
    */
   function otherSide(x: Float64Array, g: Float64Array, scale: Float64Array, before: number): boolean {
-    for (let i = 0; i < n; i++) spare[i].set(J[i]);
-    spareSize.set(size);
-    if (!readDerivatives(scale)) return false;
-    let now = 0;
-    if (correction(x, g, left)) for (let i = 0; i < n; i++) now = Math.max(now, Math.abs(left[i]) / scale[i]);
-    else now = Infinity;
+    jacobian.keep();
+    if (!jacobian.read(derivatives, scale)) return false;
+    const now = jacobian.correction(x, g, left) ? largestShare(left, scale) : Infinity;
     if (now < before) {
       rebase(x, g);
       return true;
     }
-    for (let i = 0; i < n; i++) J[i].set(spare[i]);
-    size.set(spareSize);
+    jacobian.restore();
     return false;
   }
 
@@ -241,12 +205,10 @@ export function createNewton(): FixedPointMethod {
       takeDerivatives(x, g, scale, xNext);
       return;
     }
-    let before = 0;
-    let after = 0;
+    const before = largestShare(step, scale);
+    const after = largestShare(left, scale);
     let unforeseen = 0;
     for (let i = 0; i < n; i++) {
-      before = Math.max(before, Math.abs(step[i]) / scale[i]);
-      after = Math.max(after, Math.abs(left[i]) / scale[i]);
       unforeseen = Math.max(unforeseen, Math.abs(left[i] - (1 - taken) * step[i]) / scale[i]);
     }
     const propagated = derivatives?.propagated === true;
@@ -271,7 +233,7 @@ export function createNewton(): FixedPointMethod {
       note = 'slow progress: derivatives afresh';
       takeDerivatives(x, g, scale, xNext);
     } else {
-      update(x, g);
+      jacobian.update(xBase, gBase, x, g);
       rebase(x, g);
       fresh = false;
       stepFromBase(scale, xNext, share);
@@ -286,7 +248,7 @@ export function createNewton(): FixedPointMethod {
     reset(variables, ofMap = null) {
       if (variables !== n) makeRoom(variables);
       derivatives = ofMap;
-      if (derivatives !== null && given.length !== n * n) given = new Float64Array(n * n);
+      said = false;
       directSteps = 0;
       turns = 0;
       came.fill(0);
@@ -307,9 +269,7 @@ export function createNewton(): FixedPointMethod {
       leftKnown = 0;
       if (phase !== 'step' && phase !== 'kept') return NaN;
       if (!knowLeft(x, g)) return Infinity;
-      let most = 0;
-      for (let i = 0; i < n; i++) most = Math.max(most, Math.abs(left[i]) / scale[i]);
-      return most;
+      return largestShare(left, scale);
     },
     next(x, g, scale, xNext) {
       note = '';
@@ -343,37 +303,16 @@ export function createNewton(): FixedPointMethod {
     xBase = new Float64Array(n);
     gBase = new Float64Array(n);
     base = { x: xBase, g: gBase };
-    size = new Float64Array(n);
     step = new Float64Array(n);
     left = new Float64Array(n);
-    moved = new Float64Array(n);
     came = new Float64Array(n);
     settled = new Uint8Array(n);
     order = Array.from({ length: n }, (_, i) => i);
-    J = order.map(() => new Float64Array(n));
-    work = order.map(() => new Float64Array(n));
-    spare = order.map(() => new Float64Array(n));
-    spareSize = new Float64Array(n);
+    jacobian = createJacobian(n);
   }
-}
-
-function allFinite(values: Float64Array): boolean {
-  for (let i = 0; i < values.length; i++) if (!Number.isFinite(values[i])) return false;
-  return true;
 }
 
 function isFar(x: Float64Array, g: Float64Array, scale: Float64Array): boolean {
   for (let i = 0; i < x.length; i++) if (Math.abs(g[i] - x[i]) > FAR * scale[i]) return true;
   return false;
-}
-
-/** The share of `step` that the correction left over takes back again; negative when it goes on. */
-function takenBack(left: Float64Array, step: Float64Array, scale: Float64Array): number {
-  let along = 0;
-  let whole = 0;
-  for (let i = 0; i < step.length; i++) {
-    along += (left[i] * step[i]) / (scale[i] * scale[i]);
-    whole += (step[i] / scale[i]) ** 2;
-  }
-  return whole > 0 ? -along / whole : 0;
 }

@@ -1,10 +1,10 @@
 import type { Closure } from '../convergence/driver.ts';
 import type { FixedPointProblem } from '../convergence/problem.ts';
+import { spectralRadius } from '../convergence/spectral-radius.ts';
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
 import { type CloseOptions, closePlant } from './close-plant.ts';
 import type { Group, Plant } from './plant.ts';
 import { createRecycleProblem } from './recycle-problem.ts';
-import { spectralRadius } from './spectral-radius.ts';
 import { type ComponentFlows, componentFlows } from './why-flows.ts';
 import { type Trial, tryOut } from './why-trial.ts';
 import { type Phases, phasesIn, vesselsOf } from './why-vessels.ts';

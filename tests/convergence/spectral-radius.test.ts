@@ -1,5 +1,5 @@
 import { expect, test } from 'vitest';
-import { spectralRadius } from '../../src/tally/spectral-radius.ts';
+import { spectralRadius } from '../../src/convergence/spectral-radius.ts';
 
 /** A linear pass g = A x. */
 const linear = (rows: readonly (readonly number[])[]) => ({
