@@ -81,13 +81,12 @@ export function createAuto(): FixedPointMethod {
     note = '';
   }
 
-  function changeOver(n: number, residual: number): void {
-    const waited = patience(n);
+  function changeOver(n: number, residual: number, why = `no progress in ${patience(n)} passes`): void {
     sinceProgress = 0;
     if (leading > 0) {
       leading = 0;
       mixing.fill(1);
-      note = `no progress in ${waited} passes: no more leads`;
+      note = `${why}: no more leads`;
       return;
     }
     const from = stages[stage];
@@ -97,7 +96,7 @@ export function createAuto(): FixedPointMethod {
     newton.reset(n, derivatives);
     best = Infinity;
     fromBest = residual > MUCH_WORSE * least;
-    note = `no progress in ${waited} passes: from ${from} to ${stages[stage]}${fromBest ? ', from the best pass on' : ''}`;
+    note = `${why}: from ${from} to ${stages[stage]}${fromBest ? ', from the best pass on' : ''}`;
   }
 
   return {
@@ -147,6 +146,7 @@ export function createAuto(): FixedPointMethod {
         if (leading > 0 || residual > BETTER * last) sinceProgress++;
         if (sinceProgress >= patience(n)) changeOver(n, residual);
       }
+      if (stages[stage] === 'newton' && newton.isStuck) changeOver(n, residual, 'singular derivatives');
       last = residual;
       if (passes === 1) {
         xFirst.set(xSeen);

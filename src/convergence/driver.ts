@@ -44,7 +44,9 @@ export interface PassRecord {
 export interface Closure {
   readonly converged: boolean;
   /** why it stopped */
-  readonly reason: 'closed' | 'max-passes' | 'not-finite' | 'trouble' | 'stalled';
+  readonly reason: 'closed' | 'max-passes' | 'not-finite' | 'trouble' | 'stalled' | 'undetermined';
+  /** index of the variable that nothing holds, where that is why it stopped; −1 otherwise */
+  readonly loose: number;
   readonly method: MethodName;
   /** evaluations made, failed ones included */
   readonly passes: number;
@@ -153,6 +155,7 @@ export function createCloser(problem: FixedPointProblem, name: MethodName): Clos
       error,
       history,
       trouble,
+      loose: reason === 'undetermined' ? jacobian.loosest() : -1,
       x: xGood.slice(),
       g: gGood.slice(),
     });
@@ -199,6 +202,7 @@ export function createCloser(problem: FixedPointProblem, name: MethodName): Clos
         // An estimate from the last passes may swing; what the map itself knows has the last word.
         if (Number.isNaN(known)) error = Math.max(error, verified(x, g));
         if (error <= tolerance) return stop('closed');
+        if (error === Infinity) return stop('undetermined');
       }
       const merit = Math.max(residual, extraError);
       if (merit < STALL_SHARE * best) {

@@ -6,6 +6,8 @@ import { radiusOf } from './spectral-radius.ts';
 const SINGULAR = 1e-14;
 /** Guess and answer this near to one another are equal; derivatives this small are none. */
 const SETTLED = 1e-13;
+/** What is taken off the diagonal of singular derivatives to be able to solve with them. */
+const NEXT_TO = 1e-8;
 /** Squarings for a spectral radius to four digits, and variables up to which it is worth its n³. */
 const SQUARINGS = 12;
 const MOST_VARIABLES = 60;
@@ -30,6 +32,8 @@ export interface Jacobian {
   restore(): void;
   /** Spectral radius of ∂G/∂x as the map gave it last; NaN where there are too many variables. Spoils nothing. */
   radius(): number;
+  /** Index of the variable that moves most where the derivatives are singular. */
+  loosest(): number;
   /** what variable i is measured with */
   readonly size: Float64Array;
 }
@@ -98,6 +102,20 @@ export function createJacobian(n: number): Jacobian {
     restore() {
       for (let i = 0; i < n; i++) J[i].set(kept[i]);
       size.set(keptSize);
+    },
+    loosest() {
+      // Inverse iteration: next to singular, a right side is answered by what the derivatives hold least.
+      const answer = Float64Array.from({ length: n }, (_, i) => 1 + i / n);
+      for (let round = 0; round < 2; round++) {
+        for (let i = 0; i < n; i++) {
+          work[i].set(J[i]);
+          work[i][i] -= isNil(work[i]) ? 1 : NEXT_TO;
+        }
+        solveInPlace(work, answer, 0);
+      }
+      let most = 0;
+      for (let i = 1; i < n; i++) if (Math.abs(answer[i]) > Math.abs(answer[most])) most = i;
+      return most;
     },
     radius: () => (n > MOST_VARIABLES || given.length === 0 ? NaN : radiusOf(given.slice(), n, SQUARINGS)),
   };

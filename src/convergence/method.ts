@@ -34,6 +34,8 @@ export interface FixedPointMethod {
    * none, Infinity where they are singular.
    */
   distance?(x: Float64Array, g: Float64Array, scale: Float64Array): number;
+  /** It cannot do more than direct steps here. */
+  readonly isStuck?: boolean;
   /** What it did in the last call and why; empty when nothing is worth saying. */
   note(): string;
 }

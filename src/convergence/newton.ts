@@ -31,6 +31,8 @@ const LEAST_SHARE = 0.1;
 /** A step that takes this share of the way before it back again turns; so many times it may. */
 const TURNED_BACK = 0.5;
 const FREE_TURNS = 1;
+/** Derivatives singular so many times: another method is better. */
+const SINGULAR_TIMES = 3;
 
 /**
  * Newton's method on f(x) = G(x) − x. The derivatives are those that the map carries through its passes, or finite
@@ -58,6 +60,8 @@ export function createNewton(): FixedPointMethod {
   let came = new Float64Array(0);
   /** steps that took the last one back */
   let turns = 0;
+  /** times that the derivatives were singular */
+  let singular = 0;
   let settled = new Uint8Array(0);
   let order: number[] = [];
   let base: { readonly x: Float64Array; readonly g: Float64Array } = { x: xBase, g: gBase };
@@ -161,6 +165,7 @@ export function createNewton(): FixedPointMethod {
   function stepFromBase(scale: Float64Array, xNext: Float64Array, most: number): void {
     if (!jacobian.correction(xBase, gBase, step)) {
       note = 'the derivatives are singular: the direct step';
+      singular++;
       phase = 'begin';
       xNext.set(gBase);
       return;
@@ -249,12 +254,16 @@ export function createNewton(): FixedPointMethod {
       if (variables !== n) makeRoom(variables);
       derivatives = ofMap;
       said = false;
+      singular = 0;
       directSteps = 0;
       turns = 0;
       came.fill(0);
       leftKnown = 0;
       phase = 'begin';
       note = '';
+    },
+    get isStuck() {
+      return singular >= SINGULAR_TIMES;
     },
     resume() {
       if (phase !== 'step') return false;

@@ -100,6 +100,7 @@ export const codes: Readonly<Record<string, string>> = {
   'reactor-at-bound': 'a reactor whose outlet temperature runs out of all bounds',
   'reactor-gone-out': 'a reactor in which next to nothing reacts any more',
   'small-purge': 'a purge so small that the loop takes very many passes',
+  undetermined: 'nothing decides how much of a component goes round',
   'too-few-passes': 'the loop closes, but not by this method in so few passes',
   'phase-split': 'gas and liquid could not be told apart',
   'pressure-drop': 'a pressure drop leaves no pressure',

@@ -7,7 +7,7 @@ import { nothingCondenses } from './why-dry.ts';
 import { noRealExit, overfullExit, smallPurge } from './why-exit.ts';
 import { DIRECT_PASSES, type Facts, gatherFacts } from './why-facts.ts';
 import { flippingPhases } from './why-flip.ts';
-import { tooFewPasses, trendOnly } from './why-passes.ts';
+import { tooFewPasses, trendOnly, undetermined } from './why-passes.ts';
 import { reactorAtBound, reactorBoundFinding, reactorGoneOut } from './why-reactor.ts';
 
 /** Reasons that lie in the flowsheet, in order of certainty: the first whose facts hold is told. */
@@ -20,7 +20,7 @@ const ofTheFlowsheet: readonly Recogniser[] = [
   reactorGoneOut,
 ];
 /** Reasons that lie in the way it was to be closed come after those. */
-const recognisers: readonly Recogniser[] = [...ofTheFlowsheet, tooFewPasses];
+const recognisers: readonly Recogniser[] = [undetermined, ...ofTheFlowsheet, tooFewPasses];
 
 /**
  * Say why a plant did not close: the block that cannot be evaluated, or what is true of the loop as the last pass left

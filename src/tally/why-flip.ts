@@ -1,5 +1,5 @@
 import { dewPointK } from './dew-point.ts';
-import { answerText, type Finding, slowestModeText } from './why.ts';
+import { answerText, type Finding } from './why.ts';
 import type { Facts, OnwardPass } from './why-facts.ts';
 import { bar, degC } from './why-format.ts';
 import { vesselsOf } from './why-vessels.ts';
@@ -26,13 +26,12 @@ export function flippingPhases(facts: Facts): Finding | null {
       const dew = dewK === null ? 'no dew point' : `a dew point of ${degC(dewK)}`;
       return `${degC(state.temperatureK)} and ${bar(pressurePa)} with ${dew}`;
     };
-    const mode = slowestModeText(facts);
     const setting = ['temperature', 'duty', 'pressure'].find((key) => key in plant.blocks[block].settings);
     const path = setting === undefined ? name : `${name}.${setting}`;
     return {
       code: 'phases-flip',
       what: `${name} changes between one phase and two from pass to pass`,
-      why: `in ${changes.length} of ${seen.length - 1} further passes it changed: ${one.phases} only at ${stateText(one)}, gas and liquid at ${stateText(two)}; each makes the next pass the other${mode === '' ? '' : `; ${mode}`}`,
+      why: `in ${changes.length} of ${seen.length - 1} further passes it changed: ${one.phases} only at ${stateText(one)}, gas and liquid at ${stateText(two)}; each makes the next pass the other`,
       mend: [
         `move ${path} so that ${name} stands well off the dew point`,
         answerText(facts) || 'or use --method newton',

@@ -3,6 +3,19 @@ import { answerText, type Finding, slowestModeText } from './why.ts';
 import type { Facts } from './why-facts.ts';
 import { figure } from './why-format.ts';
 
+/** Streams agree, but any amount of one component going round would do: nothing in the loop decides how much. */
+export function undetermined({ closure, names }: Facts): Finding | null {
+  if (closure.reason !== 'undetermined') return null;
+  const variable = names[closure.loose];
+  const id = variable.split('.')[1];
+  return {
+    code: 'undetermined',
+    what: `nothing decides how much ${id} goes round`,
+    why: `the streams agree with one another at this ${variable} and at any other (the linearised recycle is singular): as much ${id} is used up or leaves as comes in, however much goes round`,
+    mend: `give ${id} a way out that grows with what goes round (a purge, a leak, a solubility), or set what is left open`,
+  };
+}
+
 /** The loop closes as it is: what failed is the method or the number of passes. */
 export function tooFewPasses(facts: Facts): Finding | null {
   const { answer, closure, options, passes } = facts;

@@ -25,7 +25,8 @@ export function slowestModeText({ radius, options }: Facts): string {
   if (Math.abs(missing) < 1e-9) return 'all of a deviation comes back in every pass (spectral radius 1)';
   if (radius > 1)
     return `a deviation grows by a factor of ${figure(radius)} in every pass (spectral radius ${figure(radius)})`;
-  const decimals = missing < 0.1 ? Math.ceil(-Math.log10(missing)) + 2 : 3;
+  // Rounded first: 1e-5 less a hair must not count as another decade.
+  const decimals = missing < 0.1 ? Math.ceil(-Math.log10(Number(missing.toPrecision(3)))) + 2 : 3;
   return (
     `${figure(100 * missing)} % of a deviation goes out in a pass and the rest comes back (spectral radius ` +
     `${radius.toFixed(decimals)}): by direct substitution about ` +

@@ -59,7 +59,7 @@ describe('a way out that is none', () => {
       'exit-too-small 12',
       'The recycle through S7 did not close in 40 passes (#): CH4 has no way out to speak of.',
       '25 kmol/h of CH4 are formed in every pass, and only 2.2e-5 kmol/h leave (2.2e-5 kmol/h by S6, 0 kmol/h by S4): to leave as fast as it comes, 2.5e9 kmol/h of it would have to go round',
-      'raise membrane.recover.product.CH4 from 1e-6 % to 3 %, by which the loop closes in # passes with --method auto, 912 kmol/h going round with 88.6 % CH4 (tried); or a block that takes CH4 out of the recycle',
+      'raise membrane.recover.product.CH4, now 1e-6 %, or a block that takes CH4 out of the recycle',
     ]);
   });
 });
@@ -120,7 +120,7 @@ test('a vessel that flips between one phase and two', async () => {
   expect(await failureOf(flippingVessel('1000 degC'))).toEqual([
     'phases-flip 8',
     'The recycle through S7 did not close in 40 passes (#): cooler changes between one phase and two from pass to pass.',
-    'in 23 of 23 further passes it changed: gas only at 32.7 degC and 20 bar with a dew point of -4.3 degC, gas and liquid at -28.4 degC and 20 bar with a dew point of -12.9 degC; each makes the next pass the other; a deviation grows by a factor of 1.23 in every pass (spectral radius 1.23)',
+    'in 23 of 23 further passes it changed: gas only at 32.7 degC and 20 bar with a dew point of -4.3 degC, gas and liquid at -28.4 degC and 20 bar with a dew point of -12.9 degC; each makes the next pass the other',
     'move cooler.duty so that cooler stands well off the dew point; as it is, the loop closes in # passes with --method auto (tried)',
   ]);
 });
@@ -161,4 +161,18 @@ test('the settings that were tried for the advice are put back', async () => {
   const again = balance(flowsheet, direct);
   expect(again.diagnosis).toEqual(once.diagnosis);
   expect(again.result.streams['S6'].flow_kmol_h).toBe(once.result.streams['S6'].flow_kmol_h);
+});
+
+test('an inventory that nothing decides: fed in the ratio in which it reacts, and no way out but the reaction', async () => {
+  const found = await failureOf(methaneLoop('3 %'), { method: 'auto' });
+  expect(found[1].replace(/in \d+ passes/, 'in # passes')).toBe(
+    'The recycle through S7 did not close in # passes (#): nothing decides how much H2 goes round.',
+  );
+  expect(found[2].replace(/S7.H2 and/, '# and')).toBe(
+    'the streams agree with one another at this # and at any other (the linearised recycle is singular): as much H2 is used up or leaves as comes in, however much goes round',
+  );
+  expect(found[0]).toMatch(/^undetermined /);
+  expect(found[3]).toBe(
+    'give H2 a way out that grows with what goes round (a purge, a leak, a solubility), or set what is left open',
+  );
 });
