@@ -15,10 +15,8 @@ const DIRECT_STEPS = 3;
 const SETTLED = 1e-13;
 /** With derivatives brought up to date by steps, what a step may leave over beside it before they are taken afresh. */
 const CHORD = 1.5;
-/** The same where derivatives cost no more than a pass. */
-const CHORD_PROPAGATED = 0.1;
-/** What a step may leave unforeseen of itself for derivatives that cost a pass to be brought up to date rather than taken. */
-const FORESEEN = 0.02;
+/** Where derivatives cost no more than a pass, they are brought up to date by a step only this near to the answer. */
+const FINE = 1e-7;
 /** A correction that takes this share of the step back again shows derivatives of the other side of a kink. */
 const OVERSHOT = 0.8;
 /** Share of a step at which the derivatives are to blame rather than its length. */
@@ -232,7 +230,7 @@ export function createNewton(): FixedPointMethod {
     } else if (takenBack(left, step, scale) > OVERSHOT * taken) {
       note = 'the step went too far: derivatives afresh';
       takeDerivatives(x, g, scale, xNext);
-    } else if (propagated && (fresh ? unforeseen > FORESEEN * before : after > CHORD_PROPAGATED * before)) {
+    } else if (propagated && after > FINE) {
       takeDerivatives(x, g, scale, xNext, share);
     } else if (!fresh && after - (1 - taken) * before > before) {
       note = 'slow progress: derivatives afresh';
