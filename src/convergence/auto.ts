@@ -146,7 +146,8 @@ export function createAuto(): FixedPointMethod {
         if (leading > 0 || residual > BETTER * last) sinceProgress++;
         if (sinceProgress >= patience(n)) changeOver(n, residual);
       }
-      if (stages[stage] === 'newton' && newton.isStuck) changeOver(n, residual, 'singular derivatives');
+      if (derivatives !== null && stages[stage] === 'newton' && newton.isStuck)
+        changeOver(n, residual, 'singular derivatives');
       last = residual;
       if (passes === 1) {
         xFirst.set(xSeen);

@@ -4,7 +4,7 @@ import { radiusOf } from './spectral-radius.ts';
 
 /** Pivots smaller than this, in scaled variables, make the derivatives singular; behind a purge of 0.01 % they are 1e-4. */
 const SINGULAR = 1e-14;
-/** Guess and answer this near to one another are equal; derivatives this small are none. */
+/** Guess and answer this near to one another are equal. */
 const SETTLED = 1e-13;
 /** What is taken off the diagonal of singular derivatives to be able to solve with them. */
 const NEXT_TO = 1e-8;
@@ -21,8 +21,8 @@ export interface Jacobian {
   /** Column j from a probe: what a step h of variable j, in units of its size, did to G. */
   setColumn(j: number, h: number, gBase: Float64Array, g: Float64Array): void;
   /**
-   * Correction −J⁻¹ f in units of the variables; false when the derivatives are singular. A variable that comes back as it
-   * went, whatever it is (a pressure that a mixer may take from the recycle as well as from the feed), stays as it is.
+   * Correction −J⁻¹ f in units of the variables; false when the derivatives are singular. A variable that may
+   * float (a pressure that a mixer may take from the recycle as well as from the feed) stays as it is where nothing holds it.
    */
   correction(x: Float64Array, g: Float64Array, out: Float64Array): boolean;
   /** Broyden's good update with the step from one point to another. */
@@ -49,11 +49,13 @@ export function createJacobian(n: number): Jacobian {
   const moved = new Float64Array(n);
   /** ∂G/∂x as the map gives it, row by row; made when a map has any */
   let given = new Float64Array(0);
+  let mayFloat = (_variable: number): boolean => false;
 
   return {
     size,
     read(derivatives, scale) {
       if (derivatives === null) return false;
+      if (derivatives.mayFloat) mayFloat = derivatives.mayFloat;
       if (given.length !== n * n) given = new Float64Array(n * n);
       if (!derivatives.at(given) || !allFinite(given)) return false;
       size.set(scale);
@@ -76,9 +78,8 @@ export function createJacobian(n: number): Jacobian {
       for (let i = 0; i < n; i++) {
         work[i].set(J[i]);
         out[i] = (x[i] - g[i]) / size[i];
-        if (Math.abs(out[i]) <= SETTLED && isNil(work[i])) work[i][i] = -1;
       }
-      if (!solveInPlace(work, out, SINGULAR)) return false;
+      if (!solveInPlace(work, out, SINGULAR, mayFloat, SETTLED)) return false;
       for (let i = 0; i < n; i++) out[i] = out[i] * size[i];
       return true;
     },
@@ -109,7 +110,7 @@ export function createJacobian(n: number): Jacobian {
       for (let round = 0; round < 2; round++) {
         for (let i = 0; i < n; i++) {
           work[i].set(J[i]);
-          work[i][i] -= isNil(work[i]) ? 1 : NEXT_TO;
+          work[i][i] -= mayFloat(i) ? 1 : NEXT_TO;
         }
         solveInPlace(work, answer, 0);
       }
@@ -119,11 +120,6 @@ export function createJacobian(n: number): Jacobian {
     },
     radius: () => (n > MOST_VARIABLES || given.length === 0 ? NaN : radiusOf(given.slice(), n, SQUARINGS)),
   };
-}
-
-function isNil(row: Float64Array): boolean {
-  for (let j = 0; j < row.length; j++) if (Math.abs(row[j]) > SETTLED) return false;
-  return true;
 }
 
 function allFinite(values: Float64Array): boolean {

@@ -20,6 +20,8 @@ export interface FixedPointProblem {
 export interface Derivatives {
   /** they cost about as much as a pass, not one pass for each variable */
   readonly propagated: boolean;
+  /** May a variable stay as it is where nothing in the map decides it? None may when left out. */
+  mayFloat?(variable: number): boolean;
   /**
    * @param out  written: ∂gᵢ/∂xⱼ row by row, size² numbers
    * @returns false where there are none at this guess; the map then is as the last evaluation left it

@@ -53,6 +53,8 @@ export function createRecycleProblem(plant: Plant, group: Group): RecycleProblem
     lower,
     derivatives: {
       propagated: slopes.propagated,
+      // Where all pressures are equal, a mixer may take its own from the recycle as well as from the feed.
+      mayFloat: (i) => i % width === width - 1,
       at(out) {
         if (!slopes.at(out)) return false;
         for (let i = 0; i < size; i++) {
