@@ -7,8 +7,11 @@ import { dot, largest } from './vectors.ts';
 export interface TogetherProblem {
   /** sizes of the variables of the recycle, > 0; as many as variables */
   readonly scale: Float64Array;
-  /** One pass: writes G(x, u) and the residuals of the aims; may throw PassTrouble. */
-  evaluate(x: Float64Array, u: Float64Array, g: Float64Array, f: Float64Array): void;
+  /**
+   * One pass: writes G(x, u); may throw PassTrouble.
+   * @returns what writes the residuals of the aims after this pass, to be called before the next one if at all
+   */
+  evaluate(x: Float64Array, u: Float64Array, g: Float64Array): (f: Float64Array) => void;
   /** Turn a residual r of the recycle into (I − dG/dx)⁻¹ r, in place; false where that is singular. */
   correct(r: Float64Array): boolean;
 }
@@ -28,7 +31,7 @@ export interface TogetherPoint {
   readonly u: Float64Array;
   /** what the recycle is from closed, scaled: (I − A)⁻¹(G − x) */
   readonly open: Float64Array;
-  /** residuals of the aims */
+  /** residuals of the aims; NaN after a pass that only corrected the recycle */
   readonly f: Float64Array;
 }
 
@@ -121,20 +124,29 @@ export function solveTogether(
   }
   return stop('steps do not help');
 
-  /** A pass; null where it fails. */
-  function tryAt(x: Float64Array, u: Float64Array): TogetherPoint | null {
-    const open = new Float64Array(n);
-    const f = new Float64Array(m);
+  /**
+   * A pass, its aims judged where they are asked for: that takes about as long. Null where it fails.
+   * @param isJudged  by what the recycle is open by, scaled
+   */
+  function tryAt(
+    x: Float64Array,
+    u: Float64Array,
+    isJudged: (open: Float64Array) => boolean = () => true,
+  ): TogetherPoint | null {
+    const g = new Float64Array(n);
+    const f = new Float64Array(m).fill(Number.NaN);
     passes++;
     try {
-      problem.evaluate(x, u, open, f);
+      const judge = problem.evaluate(x, u, g);
+      const open = g.map((value, i) => value - x[i]);
+      if (!open.every(Number.isFinite) || !correction.apply(open)) return null;
+      if (!isJudged(open)) return { x, u, open, f };
+      judge(f);
+      return f.every(Number.isFinite) ? { x, u, open, f } : null;
     } catch (trouble) {
       if (!(trouble instanceof PassTrouble)) throw trouble;
       return null;
     }
-    for (let i = 0; i < n; i++) open[i] -= x[i];
-    const good = open.every(Number.isFinite) && f.every(Number.isFinite) && correction.apply(open);
-    return good ? { x, u, open, f } : null;
   }
 
   /** Pass until the recycle is open by no more than so much; null where it does not get there. */
@@ -143,7 +155,7 @@ export function solveTogether(
     for (let k = 0; k < CORRECTIONS; k++) {
       const before = largest(here.open);
       if (before <= most) return here;
-      const next = tryAt(moved(here.x, here.open, 1), here.u);
+      const next = tryAt(moved(here.x, here.open, 1), here.u, (open) => largest(open) <= most);
       if (next === null) return null;
       correction.learn(here.open, next.open);
       options.onPass?.(next, 'the recycle corrected');
@@ -185,16 +197,14 @@ export function solveTogether(
       const h = sign * Math.min(STEP, size > 0 ? RECYCLE_STEP / size : STEP);
       const u = from.u.slice();
       u[a] += h;
-      const beside = tryAt(moved(from.x, t, h), u);
+      const isLast = (open: Float64Array) =>
+        k === TANGENT_PASSES - 1 ||
+        open.every((value, i) => Math.abs((value - from.open[i]) / h) <= TANGENT * size);
+      const beside = tryAt(moved(from.x, t, h), u, isLast);
       if (beside === null) return false;
-      let change = 0;
       for (let i = 0; i < m; i++) r[i] = (beside.f[i] - from.f[i]) / h;
-      for (let i = 0; i < n; i++) {
-        const missing = (beside.open[i] - from.open[i]) / h;
-        t[i] += missing;
-        change = Math.max(change, Math.abs(missing));
-      }
-      if (change <= TANGENT * size) break;
+      for (let i = 0; i < n; i++) t[i] += (beside.open[i] - from.open[i]) / h;
+      if (isLast(beside.open)) break;
     }
     T.push(t);
     R.push(r);

@@ -38,14 +38,14 @@ export function reachTogether(
       note: 'linearised, to move settings and recycles together',
     });
     let unsaid = 0;
-    const evaluate: TogetherProblem['evaluate'] = (tears, u, g, f) => {
+    const evaluate: TogetherProblem['evaluate'] = (tears, u, g) => {
       unsaid++;
       task.set(settingsAt(u));
       pass(tears, g);
-      f.set(task.residuals());
+      return (f) => f.set(task.residuals());
     };
     const onPass = ({ open, f }: TogetherPoint, note: string) => {
-      task.spend(unsaid, { ...worstOf([...open, ...f], names), note });
+      task.spend(unsaid, { ...worstOf([...open, ...f.filter(Number.isFinite)], names), note });
       unsaid = 0;
     };
     const { best, stopped } = solveTogether(
@@ -57,7 +57,7 @@ export function reachTogether(
     if (best === null) return { stopped, settings: start };
     const settings = settingsAt(best.u);
     if (stopped !== null) {
-      evaluate(best.x, best.u, new Float64Array(x.length), new Float64Array(aims.length));
+      evaluate(best.x, best.u, new Float64Array(x.length));
       onPass(best, `back to the best so far: ${stopped}`);
     }
     return { stopped, settings };

@@ -39,11 +39,17 @@ export function figureResponse(plant: Plant, closure: LinearClosure): FigureResp
     for (const [name, f0] of base)
       byTear.get(name)![j] = quotient(side, f0, of(one, name), of(other, name), h);
   }
-  // Duties are differences of the heat that flows about, and as noisy.
+  // Duties and powers are differences of the heat that flows about, and as noisy.
   let heat = 0;
   for (const [name, value] of base) if (name.startsWith('duty_kW')) heat = Math.max(heat, Math.abs(value));
-  const size = (name: string) => Math.max(Math.abs(base.get(name)!), isHeat(name) ? heat : 0);
-  return { base, size, byTear };
+  const perTonne = heat * Math.abs(of(base, 'specific_power_kWh_t') / of(base, 'power_kW.total')) || 0;
+  const sizes = new Map(
+    [...base].map(([name, value]) => {
+      const noisy = isHeat(name) ? heat : name === 'specific_power_kWh_t' ? perTonne : 0;
+      return [name, Math.max(Math.abs(value), noisy)];
+    }),
+  );
+  return { base, size: (name) => sizes.get(name)!, byTear };
 }
 
 /** Slopes of the figures by a probe, with what moving the tears by `more` per unit of the setting adds. */

@@ -23,6 +23,8 @@ export interface LinearClosure {
   pass(x: Float64Array, g: Float64Array): void;
   /** turn a residual r into the step (I − A)⁻¹ r, each group by itself; false where a group is singular */
   solve(r: Float64Array): boolean;
+  /** `solve` with A as it is at the last pass; as it was where there are no derivatives or they are singular */
+  solveHere(): (r: Float64Array) => boolean;
 }
 
 interface Part {
@@ -33,8 +35,9 @@ interface Part {
 }
 
 /**
- * Linearise the recycles of a closed plant by one pass each side of every tear variable of its group, then close
- * the plant to the last digits with what was found.
+ * Linearise the recycles of a closed plant by the derivatives that its blocks carry through a pass, or, where a block
+ * fails beside it, by one pass each side of every tear variable; then close the plant to the last digits with what was
+ * found.
  *
  * How one group moves those behind it is no part of A: it comes in by the passes of the whole plant.
  *
@@ -47,13 +50,11 @@ export function linearise(plant: Plant): LinearClosure {
     group.tears.length === 0 ? null : createRecycleProblem(plant, group),
   );
   let size = 0;
-  let widest = 0;
   for (const problem of problems) {
     if (problem === null) continue;
     const rows = Array.from({ length: problem.size }, () => new Float64Array(problem.size));
     parts.push({ problem, from: size, rows });
     size += problem.size;
-    widest = Math.max(widest, problem.size);
   }
   const x = new Float64Array(size);
   const scale = new Float64Array(size);
@@ -72,22 +73,25 @@ export function linearise(plant: Plant): LinearClosure {
     });
   }
 
-  function solve(r: Float64Array): boolean {
-    return parts.every(({ problem, from, rows }) =>
-      solveInPlace(
-        rows.map((row) => row.slice()),
-        r.subarray(from, from + problem.size),
-        1e-14,
-      ),
-    );
+  function solveWith(list: readonly Part[]): (r: Float64Array) => boolean {
+    return (r) =>
+      list.every(({ problem, from, rows }) => solveRows(rows, r.subarray(from, from + problem.size)));
+  }
+  const solve = solveWith(parts);
+
+  function solveHere(): (r: Float64Array) => boolean {
+    const here = parts.map((part) => ({
+      ...part,
+      rows: part.rows.map((row) => new Float64Array(row.length)),
+    }));
+    return here.every(readDerivatives) ? solveWith(here) : solve;
   }
 
   const g = new Float64Array(size);
   pass(x, g);
   sizes(plant, x, scale);
-  for (const part of parts) differentiate(part, x, scale);
-  // one to begin with and one to end with; where something goes round, a base before and after two for each variable
-  let passes = widest === 0 ? 2 : 2 * widest + 4;
+  // one to begin with and one to end with
+  let passes = 2 + Math.max(0, ...parts.map((part) => linearisePart(part, x, scale)));
   for (let k = 0; k < POLISH; k++) {
     pass(x, g);
     passes++;
@@ -96,7 +100,7 @@ export function linearise(plant: Plant): LinearClosure {
     for (let i = 0; i < size; i++) x[i] = Math.max(x[i] + r[i], 0);
   }
   pass(x, g);
-  return { size, x, scale, passes, pass, solve };
+  return { size, x, scale, passes, pass, solve, solveHere };
 }
 
 /** The size of every tear variable: its own, or a trace of its stream. */
@@ -110,7 +114,36 @@ function sizes(plant: Plant, x: Float64Array, scale: Float64Array): void {
   }
 }
 
-/** Write I − A of one group; where a flow is too small for a step down, both steps go up. */
+/** Write I − A of one group at its last pass; returns the passes of all blocks it took. */
+function linearisePart(part: Part, x: Float64Array, scale: Float64Array): number {
+  // Of a kink they are those of one side, and that may leave a pressure undetermined: differences see both.
+  if (readDerivatives(part)) return 0;
+  differentiate(part, x, scale);
+  // a base before and after two for each variable
+  return 2 * part.problem.size + 2;
+}
+
+/** I − A from the derivatives of the last pass; false where there are none or they are singular. */
+function readDerivatives({ problem, rows }: Part): boolean {
+  const n = problem.size;
+  const given = new Float64Array(n * n);
+  if (!problem.derivatives.at(given)) return false;
+  rows.forEach((row, i) => {
+    for (let j = 0; j < n; j++) row[j] = (i === j ? 1 : 0) - given[i * n + j];
+  });
+  return solveRows(rows, new Float64Array(n));
+}
+
+/** Solve with a copy of the rows, r → the answer; false where they are singular. */
+function solveRows(rows: readonly Float64Array[], r: Float64Array): boolean {
+  return solveInPlace(
+    rows.map((row) => row.slice()),
+    r,
+    1e-14,
+  );
+}
+
+/** Write I − A of one group by differences; where a flow is too small for a step down, both steps go up. */
 function differentiate({ problem, from, rows }: Part, x: Float64Array, scale: Float64Array): void {
   const n = problem.size;
   const at = x.slice(from, from + n);

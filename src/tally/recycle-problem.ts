@@ -13,6 +13,8 @@ const TRACE = 1e-6;
 export interface RecycleProblem extends FixedPointProblem {
   /** e.g. S8.Ar, S8.temperature */
   readonly names: readonly string[];
+  /** those of a pass, carried through its blocks */
+  readonly derivatives: NonNullable<FixedPointProblem['derivatives']>;
   /** write the states of the torn streams as their sources left them into x */
   read(x: Float64Array): void;
 }

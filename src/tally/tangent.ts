@@ -13,6 +13,8 @@ const AGREED = 2e-6;
 const NOISE = 2e-12;
 /** Steps are halved so many times at most. */
 const HALVINGS = 6;
+/** Two steps further apart than this are looked at for a kink at once, in units of what counts as agreed. */
+const FAR_APART = 1e4;
 
 /** A plant made ready for the slopes of its figures. */
 export interface Linearised {
@@ -40,28 +42,40 @@ export interface Along {
  * it gives the slopes and what is wrong with the tangent, which is made good; and so on until two steps agree. They
  * do at once unless something changes between the two, as where a range of validity ends close by.
  *
- * @param tangent  where to start, the tears held when left out
+ * @param known  a tangent to start from and the step along it, made before; the tears held when left out
  * @throws PassTrouble
  */
 export function along(
   linearised: Linearised,
   setting: NumericSetting,
   side: Side,
-  tangent: Float64Array = new Float64Array(linearised.closure.size),
+  known: Pick<Along, 'tangent' | 'probe'> | null = null,
 ): Along {
   const { plant, closure, response } = linearised;
   let best: Along | null = null;
+  let least = Infinity;
+  let widest = 0;
   let before: ReadonlyMap<string, number> | null = null;
-  let at = tangent;
+  let at = known?.tangent ?? new Float64Array(closure.size);
   for (let k = 0; k <= HALVINGS; k++) {
-    const h = stepAlong(closure, setting, at) / 2 ** k;
-    const probe = probeAlong(plant, closure, setting, at, h, side);
+    const probe =
+      k === 0 && known !== null
+        ? known.probe
+        : probeAlong(plant, closure, setting, at, stepAlong(closure, setting, at) / 2 ** k, side);
+    const { h } = probe;
+    widest = Math.max(widest, h);
     const more = probe.slope.map((value, i) => value - at[i]);
     if (!closure.solve(more)) throw noTangent();
     const slopes = slopesOf(probe, response, more);
     const gap = before === null ? Infinity : gapBetween(before, slopes, response, h);
-    if (best === null || gap < best.gap) best = { slopes, tangent: at, probe, gap, kinked: false };
-    if (gap <= 1 || k > 1) best = { ...best, kinked: isKinked(linearised, setting, best) };
+    // A shorter step is no better where it is but the noise that two steps differ by.
+    const apart = before === null ? Infinity : gapBetween(before, slopes, response, widest);
+    if (best === null || apart < least) {
+      best = { slopes, tangent: at, probe, gap, kinked: false };
+      least = apart;
+    }
+    if (gap <= 1 || k > 1 || (k === 1 && gap > FAR_APART))
+      best = { ...best, kinked: isKinked(linearised, setting, best) };
     if (gap <= 1 || best.kinked) break;
     before = slopes;
     at = at.map((value, i) => value + more[i]);
@@ -84,12 +98,14 @@ function gapBetween(
 }
 
 /**
- * The same to one side of a kink, where the recycles linearised to both sides are a guide only: the tangent is the
- * fixed point of passing along it.
+ * The same to one side of a kink: the tangent is the fixed point of passing along it. The recycles are linearised on
+ * that side, and again in every pass, as it depends on the tangent which side that is.
  */
 export function alongOneSide(linearised: Linearised, setting: NumericSetting, side: 'up' | 'down'): Along {
   const { plant, closure } = linearised;
   const size = sizeOf(setting);
+  let { solve } = closure;
+  let last: Pick<Along, 'tangent' | 'probe'> | null = null;
   const tangentOf = (u: Float64Array) => u.map((value, i) => (value * closure.scale[i]) / size);
   const found = closeFixedPoint(
     {
@@ -98,9 +114,11 @@ export function alongOneSide(linearised: Linearised, setting: NumericSetting, si
       evaluate(u, next) {
         const tangent = tangentOf(u);
         const h = stepAlong(closure, setting, tangent);
-        const { slope } = probeAlong(plant, closure, setting, tangent, h, side);
-        const more = slope.map((value, i) => value - tangent[i]);
-        if (!closure.solve(more)) throw noTangent();
+        const probe = probeAlong(plant, closure, setting, tangent, h, side);
+        last = { tangent, probe };
+        const more = probe.slope.map((value, i) => value - tangent[i]);
+        solve = closure.solveHere();
+        if (!solve(more)) throw noTangent();
         for (let i = 0; i < u.length; i++) next[i] = u[i] + (more[i] * size) / closure.scale[i];
       },
       scale: (u, next, out) => {
@@ -113,7 +131,7 @@ export function alongOneSide(linearised: Linearised, setting: NumericSetting, si
     { method: 'anderson', tolerance: 1e-6, maxPasses: 40 },
   );
   if (!found.converged) throw noTangent();
-  return along(linearised, setting, side, tangentOf(found.g));
+  return along({ ...linearised, closure: { ...closure, solve } }, setting, side, last);
 }
 
 function noTangent(): PassTrouble {

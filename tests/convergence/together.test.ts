@@ -1,5 +1,5 @@
 import fc from 'fast-check';
-import { expect, test } from 'vitest';
+import { expect, test, vi } from 'vitest';
 import { solveInPlace } from '../../src/convergence/linear-solve.ts';
 import { solveTogether } from '../../src/convergence/together.ts';
 import { PassTrouble } from '../../src/diagnostics/diagnostic.ts';
@@ -11,11 +11,13 @@ function inertLoop(target: number, most = Infinity) {
   const back = (u: number) => 1 - u / 5;
   return {
     scale: Float64Array.of(0.1, 1),
-    evaluate(x: Float64Array, u: Float64Array, g: Float64Array, f: Float64Array) {
+    evaluate(x: Float64Array, u: Float64Array, g: Float64Array) {
       if (u[0] > most) throw new PassTrouble('dry', 'Nothing condenses.', 'Too warm.', 'Cool.');
       g[0] = back(u[0]) * (x[0] + 0.01);
       g[1] = 0.5 * back(u[0]) * (x[1] + 1);
-      f[0] = g[0] / (g[0] + g[1]) / target - 1;
+      return (f: Float64Array) => {
+        f[0] = g[0] / (g[0] + g[1]) / target - 1;
+      };
     },
     /** at the start u = 0.2 */
     correct(r: Float64Array) {
@@ -33,12 +35,33 @@ test('inert of a loop with a slow purge is brought to its level in less passes t
   expect(stopped).toBeNull();
   const g = new Float64Array(2);
   const f = new Float64Array(1);
-  loop.evaluate(best!.x, best!.u, g, f);
+  loop.evaluate(best!.x, best!.u, g)(f);
   expect(Math.abs(f[0])).toBeLessThan(1e-9);
   expect(Math.abs(g[0] - best!.x[0])).toBeLessThan(1e-10);
   expect(Math.abs(g[1] - best!.x[1])).toBeLessThan(1e-9);
   // direct passes at 4 % purge: ln(1e-10)/ln(0.96) = 564
   expect(passes).toBeLessThan(25);
+});
+
+test('aims are judged only where the recycle is closed well enough for that', () => {
+  const loop = inertLoop(0.1);
+  let judged = 0;
+  const counting = {
+    ...loop,
+    evaluate(x: Float64Array, u: Float64Array, g: Float64Array) {
+      const judge = loop.evaluate(x, u, g);
+      return (f: Float64Array) => {
+        judged++;
+        judge(f);
+      };
+    },
+  };
+  const onPass = vi.fn();
+  const { stopped, passes } = solveTogether(counting, ...loop.start, { ...OPTIONS, onPass });
+  expect(stopped).toBeNull();
+  expect(judged).toBeLessThan(passes);
+  const corrected = onPass.mock.calls.filter(([, note]) => note === 'the recycle corrected');
+  expect(corrected.some(([{ f }]) => Number.isNaN(f[0]))).toBe(true);
 });
 
 test('a bound in the way ends it, with the settings inside', () => {
@@ -63,10 +86,9 @@ test('aims that settings move alike are left to the search around closings', () 
   const { stopped } = solveTogether(
     {
       scale: Float64Array.of(1),
-      evaluate(x, u, g, f) {
+      evaluate(x, u, g) {
         g[0] = 0.5 * x[0] + u[0] + u[1];
-        f[0] = g[0] - 1;
-        f[1] = g[0] - 1.2;
+        return (f) => f.set([g[0] - 1, g[0] - 1.2]);
       },
       correct(r) {
         r[0] *= 2;
@@ -108,11 +130,13 @@ test('linear recycles with linear aims are solved, whatever they are, as far as 
       const { stopped, best } = solveTogether(
         {
           scale: Float64Array.of(3, 3, 3),
-          evaluate(x, u, g, f) {
+          evaluate(x, u, g) {
             const feed = fed(u);
             for (let i = 0; i < 3; i++)
               g[i] = feed[i] + A[3 * i] * x[0] + A[3 * i + 1] * x[1] + A[3 * i + 2] * x[2];
-            for (let a = 0; a < 2; a++) f[a] = 2 * (u[a] - answer[a]) + 0.2 * (g[a] - wanted[a]);
+            return (f) => {
+              for (let a = 0; a < 2; a++) f[a] = 2 * (u[a] - answer[a]) + 0.2 * (g[a] - wanted[a]);
+            };
           },
           correct: inverse,
         },
