@@ -2,15 +2,16 @@ import type { Component } from '../model/component.ts';
 import { hydrogenAlpha, soaveSlope, squareRootAlpha } from './cubic-alpha.ts';
 import { type InteractionRow, interactionRows } from './data/kij.ts';
 
-/** kᵢⱼ(T) of one pair, i < j: value [-] and slope [1/K]; the row it comes from. */
+/** kᵢⱼ(T) of one pair, i < j: value [-], slope [1/K] and curvature [1/K²]; the row it comes from. */
 export interface BinaryInteraction {
   readonly i: number;
   readonly j: number;
   readonly row: InteractionRow;
   value(T: number): number;
   slope(T: number): number;
-  /** both, written into place `at` (see AlphaRoot.write) */
-  write(T: number, at: number, values: Float64Array, slopes: Float64Array): void;
+  curvature(T: number): number;
+  /** all three, written into place `at` (see AlphaRoot.write) */
+  write(T: number, at: number, values: Float64Array, slopes: Float64Array, curvatures: Float64Array): void;
 }
 
 /** [K] over which a line in temperature goes over into its constant end */
@@ -71,8 +72,8 @@ function pairsOf(
   return found;
 }
 
-/** kᵢⱼ(T) and its slope. */
-type Line = Pick<BinaryInteraction, 'value' | 'slope' | 'write'>;
+/** kᵢⱼ(T) and its derivatives. */
+type Line = Pick<BinaryInteraction, 'value' | 'slope' | 'curvature' | 'write'>;
 
 function carriedOver(line: Line, hydrogen: Component): Line {
   const { temperatureK, acentricFactor } = hydrogen.critical!;
@@ -84,12 +85,21 @@ function carriedOver(line: Line, hydrogen: Component): Line {
     const ratioSlope = (from.slope(T) - ratio * to.slope(T)) / to.value(T);
     return line.slope(T) * ratio - (1 - line.value(T)) * ratioSlope;
   };
+  const curvature = (T: number) => {
+    const ratio = from.value(T) / to.value(T);
+    const ratioSlope = (from.slope(T) - ratio * to.slope(T)) / to.value(T);
+    const ratioCurvature =
+      (from.curvature(T) - 2 * ratioSlope * to.slope(T) - ratio * to.curvature(T)) / to.value(T);
+    return line.curvature(T) * ratio + 2 * line.slope(T) * ratioSlope - (1 - line.value(T)) * ratioCurvature;
+  };
   return {
     value,
     slope,
-    write(T, at, values, slopes) {
+    curvature,
+    write(T, at, values, slopes, curvatures) {
       values[at] = value(T);
       slopes[at] = slope(T);
+      curvatures[at] = curvature(T);
     },
   };
 }
@@ -131,7 +141,8 @@ function roundedLine(row: InteractionRow): Line {
   return {
     value: (T) => k0 + k1PerK * (heldWithin(T, fromK, toK) - 298.15),
     slope: (T) => k1PerK * (logistic((T - fromK) / ROUNDING_K) - logistic((T - toK) / ROUNDING_K)),
-    write(T, at, values, slopes) {
+    curvature: (T) => (k1PerK / ROUNDING_K) * (bend((T - fromK) / ROUNDING_K) - bend((T - toK) / ROUNDING_K)),
+    write(T, at, values, slopes, curvatures) {
       const low = (T - fromK) / ROUNDING_K;
       const high = (T - toK) / ROUNDING_K;
       // softplus and logistic share their exponential
@@ -140,6 +151,7 @@ function roundedLine(row: InteractionRow): Line {
       const held = Math.max(low, 0) - Math.max(high, 0) + Math.log((1 + eLow) / (1 + eHigh));
       values[at] = k0 + k1PerK * (fromK + ROUNDING_K * held - 298.15);
       slopes[at] = k1PerK * ((low > 0 ? 1 : eLow) / (1 + eLow) - (high > 0 ? 1 : eHigh) / (1 + eHigh));
+      curvatures[at] = (k1PerK / ROUNDING_K) * (eLow / (1 + eLow) ** 2 - eHigh / (1 + eHigh) ** 2);
     },
   };
 }
@@ -148,9 +160,11 @@ function constantLine(k0: number): Line {
   return {
     value: () => k0,
     slope: () => 0,
-    write(_T, at, values, slopes) {
+    curvature: () => 0,
+    write(_T, at, values, slopes, curvatures) {
       values[at] = k0;
       slopes[at] = 0;
+      curvatures[at] = 0;
     },
   };
 }
@@ -165,4 +179,10 @@ function softplus(z: number): number {
 
 function logistic(z: number): number {
   return 1 / (1 + Math.exp(-z));
+}
+
+/** Slope of the logistic function. */
+function bend(z: number): number {
+  const e = Math.exp(-Math.abs(z));
+  return e / (1 + e) ** 2;
 }

@@ -1,16 +1,22 @@
 /**
- * The temperature function of the attraction, a(T) = a(Tc) α(T), as its root: value √α [-] and slope
- * d√α/dT [1/K]. Every form is positive and never rises with temperature, however far above critical.
+ * The temperature function of the attraction, a(T) = a(Tc) α(T), as its root: value √α [-], slope d√α/dT [1/K] and
+ * curvature d²√α/dT² [1/K²]. Every form is positive and never rises with temperature, however far above critical.
  */
 export interface AlphaRoot {
   value(T: number): number;
   slope(T: number): number;
-  /** Both, written into place `at`: numbers handed back one by one would each be allocated. */
-  write(T: number, at: number, values: Float64Array, slopes: Float64Array): void;
+  curvature(T: number): number;
+  /** All three, written into place `at`: numbers handed back one by one would each be allocated. */
+  write(T: number, at: number, values: Float64Array, slopes: Float64Array, curvatures: Float64Array): void;
 }
 
 /** √α below which the square-root form is continued by an exponential: N2 near 900 K, CH4 near 1500 K */
 const CONTINUED_BELOW = 0.1;
+
+/** Where `write` leaves what is asked for by itself. */
+const oneValue = new Float64Array(1);
+const oneSlope = new Float64Array(1);
+const oneCurvature = new Float64Array(1);
 
 /**
  * √α = 1 + m (1 − √Tr). The straight line in √Tr falls through zero far above critical (N2 near 1030 K) and
@@ -25,23 +31,34 @@ export function squareRootAlpha(criticalK: number, m: number): AlphaRoot {
   const slope = Math.max(m, 0);
   const jointRootTr = slope === 0 ? Number.POSITIVE_INFINITY : 1 + (1 - CONTINUED_BELOW) / slope;
   const rate = slope / CONTINUED_BELOW;
-  function value(T: number): number {
+  function write(
+    T: number,
+    at: number,
+    v: Float64Array,
+    slopes: Float64Array,
+    curvatures: Float64Array,
+  ): void {
     const rootTr = Math.sqrt(T / criticalK);
-    if (rootTr <= jointRootTr) return 1 + slope * (1 - rootTr);
-    return CONTINUED_BELOW * Math.exp(-rate * (rootTr - jointRootTr));
+    const rootSlope = rootTr / (2 * T);
+    if (rootTr <= jointRootTr) {
+      v[at] = 1 + slope * (1 - rootTr);
+      slopes[at] = -slope * rootSlope;
+      curvatures[at] = -slopes[at] / (2 * T);
+      return;
+    }
+    v[at] = CONTINUED_BELOW * Math.exp(-rate * (rootTr - jointRootTr));
+    slopes[at] = -rate * v[at] * rootSlope;
+    curvatures[at] = -slopes[at] * (rate * rootSlope + 1 / (2 * T));
   }
-  function slopeAt(T: number): number {
-    const rootTr = Math.sqrt(T / criticalK);
-    const perRootTr = rootTr <= jointRootTr ? -slope : -slope * Math.exp(-rate * (rootTr - jointRootTr));
-    return perRootTr / (2 * Math.sqrt(T * criticalK));
+  function written(T: number, which: Float64Array): number {
+    write(T, 0, oneValue, oneSlope, oneCurvature);
+    return which[0];
   }
   return {
-    value,
-    slope: slopeAt,
-    write(T, at, values, slopes) {
-      values[at] = value(T);
-      slopes[at] = slopeAt(T);
-    },
+    value: (T) => written(T, oneValue),
+    slope: (T) => written(T, oneSlope),
+    curvature: (T) => written(T, oneCurvature),
+    write,
   };
 }
 
@@ -52,13 +69,16 @@ export function squareRootAlpha(criticalK: number, m: number): AlphaRoot {
  */
 export function hydrogenAlpha(criticalK: number): AlphaRoot {
   const rate = 0.30288 / (2 * criticalK);
-  const value = (T: number): number => Math.sqrt(1.202) * Math.exp(-rate * T);
+  const atZero = Math.sqrt(1.202);
+  const value = (T: number): number => atZero * Math.exp(-rate * T);
   return {
     value,
     slope: (T) => -rate * value(T),
-    write(T, at, values, slopes) {
+    curvature: (T) => rate * rate * value(T),
+    write(T, at, values, slopes, curvatures) {
       values[at] = value(T);
       slopes[at] = -rate * values[at];
+      curvatures[at] = -rate * slopes[at];
     },
   };
 }

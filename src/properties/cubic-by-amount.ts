@@ -1,4 +1,5 @@
 import { R } from './constants.ts';
+import type { Attractions } from './cubic-attractions.ts';
 import { slopeOfRoot } from './cubic-root.ts';
 
 /** What a cubic equation of state knows of its latest mixture; arrays by member unless said otherwise. */
@@ -8,20 +9,23 @@ export interface CubicState {
   /** component index of each member */
   readonly members: Int32Array;
   readonly covolume: Float64Array;
-  /** √aᵢ at the temperature */
-  readonly root: Float64Array;
+  /** fractions among the members */
+  readonly x: Float64Array;
   /** Σ xⱼ aᵢⱼ */
   readonly rowSum: Float64Array;
-  /** by pair with a kᵢⱼ: its members, and kᵢⱼ √(aᵢ aⱼ) */
+  /** members of each pair with a kᵢⱼ */
   readonly first: Int32Array;
   readonly second: Int32Array;
-  readonly taken: Float64Array;
+  /** at the temperature */
+  readonly attractions: Attractions;
   readonly now: {
     readonly T: number;
     readonly P: number;
     readonly memberShare: number;
     readonly a: number;
+    readonly aSlope: number;
     readonly b: number;
+    readonly c: number;
     readonly Z: number;
     readonly L: number;
   };
@@ -35,7 +39,8 @@ export interface CubicState {
  * on composition.
  */
 export function fillLnPhiByAmount(state: CubicState, size: number, out: Float64Array): void {
-  const { delta1, delta2, members, covolume, root, rowSum, first, second, taken } = state;
+  const { delta1, delta2, members, covolume, rowSum, first, second } = state;
+  const { root, taken } = state.attractions;
   const { T, P, memberShare, a, b, Z, L } = state.now;
   const count = members.length;
   const RT = R * T;

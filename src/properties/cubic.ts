@@ -2,7 +2,9 @@ import type { GasModelName } from '../model/flowsheet.ts';
 import type { BinaryInteraction } from './binary-interaction.ts';
 import { R } from './constants.ts';
 import type { AlphaRoot } from './cubic-alpha.ts';
+import { createAttractions } from './cubic-attractions.ts';
 import { fillLnPhiByAmount } from './cubic-by-amount.ts';
+import { fillDepartureSlopes } from './cubic-departure.ts';
 import { liquidRoot, slopeOfRoot, vapourRoot } from './cubic-root.ts';
 import type { GasModel } from './gas-model.ts';
 
@@ -40,7 +42,7 @@ export interface CubicForm {
  * A component without an entry (null) is an ideal gas mixed ideally with the others: its ln φ is 0 and those
  * of the others follow from their fractions among themselves. That keeps one Gibbs energy for the whole.
  *
- * The attractions of the latest temperature are kept, since callers try many compositions at one; so is the state
+ * The attractions of the last temperatures are kept, since callers try many compositions at one; so is the state
  * of the latest mixture, since they ask for its fugacities, enthalpy and entropy in turn.
  *
  * @param entries  per component in declared order, null for solids and components without critical data
@@ -74,14 +76,8 @@ export function createCubic(
   const first = Int32Array.from(pairs, ({ i }) => memberOf[i]);
   const second = Int32Array.from(pairs, ({ j }) => memberOf[j]);
 
-  // kept for the latest temperature: √aᵢ, its slope, and per pair kᵢⱼ √(aᵢ aⱼ) and its slope
-  const kept = { T: Number.NaN };
-  const root = new Float64Array(count);
-  const rootSlope = new Float64Array(count);
-  const taken = new Float64Array(pairs.length);
-  const takenSlope = new Float64Array(pairs.length);
-  const kij = new Float64Array(pairs.length);
-  const kijSlope = new Float64Array(pairs.length);
+  const attractionsAt = createAttractions(criticalRoot, alphas, pairs, first, second);
+  let at = attractionsAt(298.15);
 
   // of the latest mixture; x are fractions among the members
   const keptY = new Float64Array(size);
@@ -91,25 +87,7 @@ export function createCubic(
   // Fields, not variables: a number kept in a variable of the closure is allocated anew at each change.
   const now = { T: Number.NaN, P: Number.NaN, memberShare: 0, a: 0, aSlope: 0, b: 0, c: 0, Z: 1, L: 0 };
 
-  const state = { delta1, delta2, members, covolume, root, rowSum, first, second, taken, now };
-
-  function setTemperature(T: number): void {
-    if (T === kept.T) return;
-    for (let m = 0; m < count; m++) {
-      alphas[m].write(T, m, root, rootSlope);
-      root[m] *= criticalRoot[m];
-      rootSlope[m] *= criticalRoot[m];
-    }
-    for (let k = 0; k < pairs.length; k++) {
-      pairs[k].write(T, k, kij, kijSlope);
-      const m = first[k];
-      const n = second[k];
-      taken[k] = kij[k] * root[m] * root[n];
-      takenSlope[k] =
-        kij[k] * (rootSlope[m] * root[n] + root[m] * rootSlope[n]) + kijSlope[k] * root[m] * root[n];
-    }
-    kept.T = T;
-  }
+  const state = { delta1, delta2, members, covolume, x, rowSum, first, second, now, attractions: at };
 
   /** Solves the state of the members of a mixture; false where it has none. Asked again, it has the answer. */
   function setMixture(T: number, P: number, y: Float64Array): boolean {
@@ -121,7 +99,8 @@ export function createCubic(
       if (memberOf[i] >= 0) ofMembers += y[i];
     }
     if (!(ofMembers > 0)) return false;
-    setTemperature(T);
+    at = attractionsAt(T);
+    const { root, rootSlope, taken, takenSlope } = at;
     let b = 0;
     let c = 0;
     let sum = 0;
@@ -167,10 +146,10 @@ export function createCubic(
   function setPure(i: number, T: number, P: number): boolean {
     const m = memberOf[i];
     if (m < 0) return false;
-    setTemperature(T);
+    at = attractionsAt(T);
     now.T = Number.NaN;
-    now.a = root[m] * root[m];
-    now.aSlope = 2 * root[m] * rootSlope[m];
+    now.a = at.root[m] * at.root[m];
+    now.aSlope = 2 * at.root[m] * at.rootSlope[m];
     now.b = covolume[m];
     now.c = shift[m];
     solveState(T, P);
@@ -219,6 +198,7 @@ export function createCubic(
 
   /** ∂(Σ xⱼ aᵢⱼ)/∂T of the latest mixture. */
   function setRowSlopes(): void {
+    const { root, rootSlope, takenSlope } = at;
     let sum = 0;
     let slopeSum = 0;
     for (let m = 0; m < count; m++) {
@@ -275,7 +255,9 @@ export function createCubic(
     },
     lnPhiByAmount(T, P, y, out) {
       out.fill(0);
-      if (setMixture(T, P, y)) fillLnPhiByAmount(state, size, out);
+      if (!setMixture(T, P, y)) return;
+      state.attractions = at;
+      fillLnPhiByAmount(state, size, out);
     },
     compressibility(T, P, y) {
       if (!setMixture(T, P, y)) return 1;
@@ -290,6 +272,15 @@ export function createCubic(
     },
     enthalpyDeparture(T, P, y) {
       return setMixture(T, P, y) ? now.memberShare * enthalpyNow(T, P) : 0;
+    },
+    enthalpyDepartureSlopes(T, P, y, out) {
+      if (setMixture(T, P, y)) {
+        state.attractions = at;
+        fillDepartureSlopes(state, out);
+      } else {
+        out.perKelvin = 0;
+        out.perPascal = 0;
+      }
     },
     entropyDeparture(T, P, y) {
       if (!setMixture(T, P, y)) return 0;

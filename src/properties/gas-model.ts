@@ -1,5 +1,11 @@
 import type { GasModelName } from '../model/flowsheet.ts';
 
+/** Derivatives of an enthalpy departure [J/(mol K)], [J/(mol Pa)]. */
+export interface DepartureSlopes {
+  perKelvin: number;
+  perPascal: number;
+}
+
 /**
  * Vapour-phase model of a fixed list of components. Every method takes T [K], P [Pa] and mole fractions of
  * the gas in component order (solids 0), allocates nothing and always takes the vapour root.
@@ -22,6 +28,8 @@ export interface GasModel {
   isLiquidLike(T: number, P: number, y: Float64Array): boolean;
   /** H − H(ideal gas) at the same T, P, y [J/mol] */
   enthalpyDeparture(T: number, P: number, y: Float64Array): number;
+  /** ∂/∂T [J/(mol K)] and ∂/∂P [J/(mol Pa)] of that, written into `out` */
+  enthalpyDepartureSlopes(T: number, P: number, y: Float64Array, out: DepartureSlopes): void;
   /** S − S(ideal gas) at the same T, P, y [J/(mol K)] */
   entropyDeparture(T: number, P: number, y: Float64Array): number;
   /** the same for a pure component, by index */

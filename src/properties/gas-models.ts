@@ -152,6 +152,10 @@ function createIdealGasModel(size: number): GasModel {
     compressibility: () => 1,
     isLiquidLike: () => false,
     enthalpyDeparture: () => 0,
+    enthalpyDepartureSlopes: (_T, _P, _y, out) => {
+      out.perKelvin = 0;
+      out.perPascal = 0;
+    },
     entropyDeparture: () => 0,
     pureLnPhi: () => 0,
     pureCompressibility: () => 1,

@@ -40,6 +40,20 @@ describe.each(forms)('the attraction of $name', ({ alpha }) => {
   });
 });
 
+test.each(forms)('the curvature of $name is the slope of its slope', ({ alpha }) => {
+  fc.assert(
+    fc.property(fc.double({ min: 60, max: 2500, noNaN: true }), (T) => {
+      const h = 1e-4 * T;
+      // the joint of the continuation is the one place with a step in the curvature
+      if (alpha.value(T - h) > 0.1 && alpha.value(T + h) < 0.1) return;
+      const difference = (alpha.slope(T + h) - alpha.slope(T - h)) / (2 * h);
+      expect(Math.abs(difference - alpha.curvature(T))).toBeLessThan(
+        1e-5 * Math.abs(alpha.curvature(T)) + 1e-15,
+      );
+    }),
+  );
+});
+
 test('at the critical temperature the square-root form is 1', () => {
   expect(squareRootAlpha(405.56, soaveSlope(0.25569)).value(405.56)).toBe(1);
 });
