@@ -53,7 +53,7 @@ function fillLatin(points: Float64Array, count: number, dimensions: number, rand
  * Values of every spread, row by row: points of the unit cube, made to move together where `factor` says so, and carried over
  * by the quantiles of the distributions.
  *
- * @param factor  of correlate.ts; null where all are independent
+ * @param factor  of flowsheet/correlation-matrix.ts; null where all are independent
  */
 export function valuesAt(
   points: Float64Array,
