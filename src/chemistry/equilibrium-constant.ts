@@ -18,7 +18,7 @@ export interface LnK {
 }
 
 /**
- * The equilibrium constant of a reaction:
+ * The equilibrium constant of a reaction, times the factor that a study has moved (`reaction.moved`):
  *   Gibbs:      ln K = Σ ν (S°/R − H°/(R T))
  *   published:  factor × the published ln K, factor −1 for the reverse reaction and so on
  *   formula:    as the user wrote it
@@ -26,6 +26,12 @@ export interface LnK {
  * @throws Error when a published constant does not fit the reaction: check with `matchPublished` on reading
  */
 export function createLnK(reaction: Reaction, idealGas: IdealGas): LnK {
+  const { moved } = reaction;
+  const plain = asTheSourceSays(reaction, idealGas);
+  return moved === undefined ? plain : { ...plain, lnK: (T) => plain.lnK(T) + moved.lnFactor };
+}
+
+function asTheSourceSays(reaction: Reaction, idealGas: IdealGas): LnK {
   const { constant } = reaction;
   switch (constant.kind) {
     case 'gibbs':

@@ -73,6 +73,8 @@ export const codes: Readonly<Record<string, string>> = {
 
   // Ledger, aims, cases, figures, solver, changes
   'bad-aim': 'an aim that cannot be pursued',
+  'bad-correlation': 'a correlation that cannot be, by itself or beside the others',
+  'bad-spread': 'a spread that cannot be drawn from',
   'bad-ledger': 'an entry of the ledger that does not fit',
   'bad-set': 'a change that is not written PATH=VALUE',
   'set-and-aimed': 'a setting is set by --set or a case and moved by an aim',

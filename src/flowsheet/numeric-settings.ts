@@ -2,7 +2,8 @@ import { z } from 'zod';
 import { blockKinds } from '../blocks/registry.ts';
 import type { BlockSpec, Feed, Flowsheet } from '../model/flowsheet.ts';
 import { type Dimension, dimensions } from '../units/dimension.ts';
-import { dimensionOfSchema } from '../units/schema.ts';
+import type { Limits } from '../units/quantity.ts';
+import { dimensionOfSchema, limitsOfSchema } from '../units/schema.ts';
 import { unitFactor } from '../units/unit-table.ts';
 
 /** A setting that is one number and has a value, e.g. `condenser.temperature`. */
@@ -15,13 +16,17 @@ export interface NumericSetting {
   readonly unitSI: number;
   /** the natural unit: K, bar, %, kmol/h, ... */
   readonly unit: string;
+  /** SI; infinite where there is none. A value on a bound may still be refused, as a pressure of nothing is. */
+  readonly bounds: { readonly low: number; readonly high: number };
 }
 
 /**
  * Every setting of blocks and feeds that is a number with a value, in the order of the file. Counts (stages)
  * and settings left to their defaults are none of them.
  */
-export function numericSettings(flowsheet: Flowsheet): readonly NumericSetting[] {
+export function numericSettings(
+  flowsheet: Pick<Flowsheet, 'blocks' | 'components' | 'feeds'>,
+): readonly NumericSetting[] {
   const ids = flowsheet.components.map((c) => c.id);
   return [
     ...flowsheet.feeds.flatMap((feed) => ofFeed(feed, ids)),
@@ -34,7 +39,8 @@ function ofFeed({ name, flow, parts, temperatureK, pressurePa }: Feed, ids: read
   const shares = ids.flatMap((id, i): NumericSetting[] => {
     if (parts[i] === 0) return [];
     if (flow === null) return [setting(`${name}.flows.${id}`, 'molarFlow', parts[i])];
-    return [{ ...setting(`${name}.composition.${id}`, 'fraction', parts[i]), unitSI: 0.01 * sum }];
+    const part = setting(`${name}.composition.${id}`, 'fraction', parts[i], { min: 0, max: sum });
+    return [{ ...part, unitSI: 0.01 * sum }];
   });
   return [
     ...(flow === null ? [] : [setting(`${name}.flow`, flowDimensions[flow.per], flow.value)]),
@@ -50,23 +56,18 @@ function ofBlock({ name, kind, settings }: BlockSpec): NumericSetting[] {
 
 function within(path: string, value: unknown, schema: z.ZodType): NumericSetting[] {
   if (typeof value === 'number') {
-    const dimension = leafDimension(schema);
-    return dimension === undefined ? [] : [setting(path, dimension, value)];
+    const leaf = alternatives(schema).find((one) => dimensionOfSchema(one) !== undefined);
+    return leaf === undefined ? [] : [setting(path, dimensionOfSchema(leaf)!, value, limitsOfSchema(leaf))];
   }
   if (typeof value !== 'object' || value === null) return [];
-  if (isFlow(value)) return [setting(path, flowDimensions[value.per], value.value)];
+  if (isFlow(value)) {
+    const limits = Object.assign({}, ...alternatives(schema).map(limitsOfSchema)) as Limits;
+    return [setting(path, flowDimensions[value.per], value.value, limits)];
+  }
   return Object.entries(value).flatMap(([key, part]) => {
     const inner = child(schema, key);
     return inner === undefined ? [] : within(`${path}.${key}`, part, inner);
   });
-}
-
-function leafDimension(schema: z.ZodType): Dimension | undefined {
-  for (const one of alternatives(schema)) {
-    const dimension = dimensionOfSchema(one);
-    if (dimension !== undefined) return dimension;
-  }
-  return undefined;
 }
 
 function child(schema: z.ZodType, key: string): z.ZodType | undefined {
@@ -89,10 +90,22 @@ function alternatives(schema: z.ZodType): z.ZodType[] {
   return [schema];
 }
 
-function setting(path: string, dimension: Dimension, value: number): NumericSetting {
-  const { shown } = dimensions[dimension];
+function setting(path: string, dimension: Dimension, value: number, limits: Limits = {}): NumericSetting {
+  const { shown, min, above } = dimensions[dimension];
   const unit = dimension === 'temperature' ? 'K' : shown || '1';
-  return { path, dimension, value, unit, unitSI: unitFactor(shown, dimension)?.factor ?? 1 };
+  const lows = [min, above, limits.min, limits.above].filter((one) => one !== undefined);
+  const highs = [limits.max, limits.below].filter((one) => one !== undefined);
+  return {
+    path,
+    dimension,
+    value,
+    unit,
+    unitSI: unitFactor(shown, dimension)?.factor ?? 1,
+    bounds: {
+      low: Math.max(Number.NEGATIVE_INFINITY, ...lows),
+      high: Math.min(Number.POSITIVE_INFINITY, ...highs),
+    },
+  };
 }
 
 const flowDimensions = {

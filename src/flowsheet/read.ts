@@ -8,6 +8,7 @@ import { type Declared, type ReadBlock, readBlocks } from './blocks.ts';
 import { checkCases, chosenCase } from './cases.ts';
 import { applyChanges, type Change, readSetChanges, SET_FILE } from './changes.ts';
 import { readComponents, undeclaredGraphite } from './components.ts';
+import { readCorrelations } from './correlations.ts';
 import { readFeeds } from './feeds.ts';
 import { readFigures } from './figures.ts';
 import { createFindings, type Fault, inOrder, type Reading } from './findings.ts';
@@ -18,6 +19,7 @@ import { createPlaceOf } from './place-of.ts';
 import { readReactions } from './reactions.ts';
 import { fileKeys } from './schema.ts';
 import { readSolve } from './solve.ts';
+import { readSpreads, spreadableSettings } from './spreads.ts';
 import { readStreams } from './topology.ts';
 import { readYaml } from './yaml-document.ts';
 import { child, entriesOf, scalarsOf, type YamlNode } from './yaml-tree.ts';
@@ -99,6 +101,24 @@ function readTree(
   const figures = readFigures(reading, world);
   const ownFigures = entriesOf(child(root, 'figures')).map((e) => e.key);
   const aims = readAims(reading, world === null ? null : { ...world, figures: ownFigures }, settings);
+  // What depends on a part that is at fault would be told of a second time.
+  const whole =
+    components !== null &&
+    failed.size === 0 &&
+    blocks !== null &&
+    feeds.feeds.length === feeds.names?.length &&
+    blocks.every((block) => block.settings !== null);
+  const spreadable = whole
+    ? spreadableSettings({
+        components,
+        reactions,
+        feeds: feeds.feeds,
+        blocks: blocks.map(specOf),
+        liquid: header?.values.liquid ?? 'antoine',
+      })
+    : null;
+  const spreads = readSpreads(reading, spreadable, aims);
+  const correlations = readCorrelations(reading, spreads);
   const solve = readSolve(reading, named ? streams : null);
   if (
     !sound ||
@@ -126,6 +146,8 @@ function readTree(
     aims,
     cases,
     figures,
+    spreads: spreads.spreads,
+    correlations,
     solve,
     assumptions: [
       ...changes

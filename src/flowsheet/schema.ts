@@ -93,6 +93,34 @@ export const figureSchema = z.strictObject({
   unit: z.string().max(20).optional(),
 });
 
+/** A value in the unit of the setting that is spread. */
+const spreadValue = z.union([z.string(), z.number()]);
+const middle = spreadValue.optional().meta({ description: 'the value in the file if left out' });
+/** The shapes of a spread by their kind. */
+export const spreadSchemas = {
+  normal: z.strictObject({ kind: z.literal('normal'), mean: middle, sd: spreadValue }),
+  uniform: z.strictObject({ kind: z.literal('uniform'), low: spreadValue, high: spreadValue }),
+  triangular: z.strictObject({
+    kind: z.literal('triangular'),
+    low: spreadValue,
+    mode: middle,
+    high: spreadValue,
+  }),
+  'log-normal': z.strictObject({
+    kind: z.literal('log-normal'),
+    median: middle,
+    factor: plainNumber({
+      above: 1,
+      description: 'one standard deviation up is so many times the median, one down so much less',
+    }),
+  }),
+};
+
+export const correlationSchema = z.strictObject({
+  between: z.tuple([z.string(), z.string()]).meta({ description: 'two paths under spreads' }),
+  value: plainNumber({ above: -1, below: 1, description: 'correlation of the ranks (Spearman)' }),
+});
+
 export const solveSchema = z.strictObject({
   method: z.enum(['auto', 'direct', 'wegstein', 'eigenvalue', 'anderson', 'broyden', 'newton']).optional(),
   tolerance: plainNumber({ above: 0, max: 0.01, description: 'relative' }).optional(),
@@ -128,6 +156,19 @@ export const fileSchema = z.strictObject({
   aims: z.record(z.string(), aimSchema).optional(),
   cases: z.record(z.string(), z.record(z.string(), z.unknown())).optional(),
   figures: z.record(z.string(), figureSchema).optional(),
+  spreads: z
+    .record(
+      z.string(),
+      z.union([
+        spreadSchemas.normal,
+        spreadSchemas.uniform,
+        spreadSchemas.triangular,
+        spreadSchemas['log-normal'],
+      ]),
+    )
+    .optional()
+    .meta({ description: 'what is not known for sure, by the path of a setting or constant' }),
+  correlations: z.array(correlationSchema).optional(),
   solve: solveSchema.optional(),
 });
 

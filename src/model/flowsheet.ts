@@ -1,6 +1,7 @@
 import type { Component } from './component.ts';
 import type { Place } from './place.ts';
 import type { Reaction } from './reaction.ts';
+import type { Correlation, Spread } from './spread.ts';
 
 export type GasModelName = 'ideal' | 'srk' | 'pr';
 export type LiquidModelName = 'antoine' | 'eos';
@@ -104,6 +105,8 @@ export interface Flowsheet {
   readonly aims: readonly Aim[];
   readonly cases: readonly string[];
   readonly figures: readonly UserFigure[];
+  readonly spreads: readonly Spread[];
+  readonly correlations: readonly Correlation[];
   readonly solve: SolveSpec;
   /** defaults that were filled in while reading, in plain sentences */
   readonly assumptions: readonly string[];

@@ -20,4 +20,6 @@ export interface Reaction {
   /** stoichiometric coefficients in component order, products positive */
   readonly coefficients: Float64Array;
   readonly constant: ConstantSource;
+  /** moved by studies of a plant of their own: ln of a factor on K; left out where K is as the source says */
+  readonly moved?: { lnFactor: number };
 }

@@ -46,6 +46,14 @@ export interface LiquidPhase {
   volumes(x: Float64Array, out: Float64Array): void;
 }
 
+/** Factors on the vapour pressures that a study moves. */
+export interface MovedVapourPressures {
+  /** ln of the factor of every component, 0 as the data say */
+  readonly lnFactors: Float64Array;
+  /** how often they were moved; what was worked out before the last move no longer holds */
+  moves: number;
+}
+
 /**
  * The liquid of `liquid: antoine`:
  *   condensable:  fᵢ = xᵢ γᵢ Psatᵢ φsatᵢ exp(vᵢ (P − Psatᵢ)/RT)
@@ -61,6 +69,7 @@ export interface LiquidPhase {
  * of vaporisation is right rather than consistent with the error of the gas model.
  *
  * @param gas  vapour model, for φsat and the volume of the saturated vapour
+ * @param moved  factors on the vapour pressures; being constants they leave the heat of vaporisation as it is
  * @source Krichevsky & Kasarnovsky, J. Am. Chem. Soc. 57 (1935) 2168; Prausnitz, Lichtenthaler & Azevedo,
  *   Molecular Thermodynamics of Fluid-Phase Equilibria, 3rd ed., ch. 3 and 10; mixed solvents:
  *   J. P. O'Connell & J. M. Prausnitz, Ind. Eng. Chem. Fundam. 3 (1964) 347; critical temperature of a
@@ -70,6 +79,7 @@ export function createLiquidPhase(
   components: readonly Component[],
   roles: readonly Role[],
   gas: GasModel,
+  moved: MovedVapourPressures | null = null,
 ): LiquidPhase {
   const size = components.length;
   // Typed arrays and fields instead of lists, closures and variables: a pass asks for all this some twenty times.
@@ -103,9 +113,13 @@ export function createLiquidPhase(
   const lnHAtP = new Float64Array(pairs.length);
   const gasVolume = new Float64Array(pairs.length);
   const gasEnthalpy = new Float64Array(pairs.length);
-  const now = { T: Number.NaN, P: Number.NaN, enthalpiesKnown: false };
+  const now = { T: Number.NaN, P: Number.NaN, enthalpiesKnown: false, moves: 0 };
 
   function at(T: number, P: number): void {
+    if (moved !== null && moved.moves !== now.moves) {
+      now.moves = moved.moves;
+      now.T = Number.NaN;
+    }
     if (T === now.T && P === now.P) return;
     if (T !== now.T) setTemperature(T);
     now.T = T;
@@ -123,7 +137,7 @@ export function createLiquidPhase(
   function setTemperature(T: number): void {
     for (let c = 0; c < condensables.length; c++) {
       const i = condensables[c];
-      const lnPsat = lnVapourPressure(components[i], T);
+      const lnPsat = lnVapourPressure(components[i], T) + (moved === null ? 0 : moved.lnFactors[i]);
       psat[i] = Math.exp(lnPsat);
       const v = liquidVolume(components[i], T);
       // A user's component may come without any: then pressure does not act on its liquid.

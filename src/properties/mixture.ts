@@ -11,7 +11,7 @@ import type { GasModel } from './gas-model.ts';
 import { createCubicPhases, createGasModel } from './gas-models.ts';
 import type { EnthalpyBasis, IdealGas } from './ideal-gas.ts';
 import { createIdealGas } from './ideal-gas.ts';
-import { createLiquidPhase, type LiquidPhase } from './liquid-phase.ts';
+import { createLiquidPhase, type LiquidPhase, type MovedVapourPressures } from './liquid-phase.ts';
 import { createPhaseSplit, type PhaseSplit } from './phase-split.ts';
 import { solveState } from './solve-state.ts';
 import { createStateSlopes, type FillStateSlopes } from './state-slopes.ts';
@@ -25,6 +25,8 @@ export interface MixtureSpec {
   readonly basis: EnthalpyBasis;
   /** ids that the user declared condensable; null for the rule of component-roles.ts */
   readonly condense?: readonly string[] | null;
+  /** factors on the vapour pressures of `liquid: antoine`, shared with every mixture made from this one */
+  readonly moved?: MovedVapourPressures;
 }
 
 /**
@@ -210,10 +212,10 @@ interface PhaseModels {
   readonly phases: PhaseSplit;
 }
 
-function twoModels({ components, gas: name, dissolvedGases, condense }: MixtureSpec): PhaseModels {
+function twoModels({ components, gas: name, dissolvedGases, condense, moved }: MixtureSpec): PhaseModels {
   const gas = createGasModel(name, components);
   const roles = componentRoles(components, dissolvedGases, condense ?? null);
-  const liquidPhase = createLiquidPhase(components, roles, gas);
+  const liquidPhase = createLiquidPhase(components, roles, gas, moved);
   return { gas, roles, liquidPhase, phases: createPhaseSplit(gas, liquidPhase) };
 }
 

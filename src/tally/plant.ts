@@ -50,7 +50,10 @@ export interface Plant {
    * @throws PassTrouble with the block's name
    */
   pass(step: Step): void;
-  /** move a setting by its path, e.g. condenser.temperature; value in SI */
+  /**
+   * move a setting by its path, e.g. condenser.temperature; value in SI. Factors on constants count as settings here:
+   * reactions.synthesis.K, components.NH3.vapour_pressure, 1 as the data say
+   */
   set(path: string, value: number): void;
   /** the number a path stands for, undefined where it is left to its default */
   get(path: string): number | undefined;
@@ -58,13 +61,16 @@ export interface Plant {
 
 /** Wire up a checked flowsheet: property model, units, streams, calculation order. */
 export function createPlant(flowsheet: Flowsheet): Plant {
-  const { components, reactions } = flowsheet;
+  const { components } = flowsheet;
+  const reactions = flowsheet.reactions.map((reaction) => ({ ...reaction, moved: { lnFactor: 0 } }));
+  const vapourPressures = { lnFactors: new Float64Array(components.length), moves: 0 };
   const mixture = createMixture({
     components,
     gas: flowsheet.gas,
     liquid: flowsheet.liquid,
     dissolvedGases: flowsheet.dissolvedGases,
     basis: enthalpyBasisFor(components, reactions),
+    moved: vapourPressures,
   });
   const blocks = flowsheet.blocks.map((b) => ({ ...b, settings: structuredClone(b.settings) }));
   const feeds = flowsheet.feeds.map((feed) => ({ ...feed, parts: feed.parts.slice() }));
@@ -98,7 +104,7 @@ export function createPlant(flowsheet: Flowsheet): Plant {
   const outlets = wiring.outlets.map((list) => list.map((s) => streams[s]));
   const feedNumber = new Map(feeds.map(({ name }, f) => [name, f]));
   const feedOf = wiring.enters.map((s) => feedNumber.get(flowsheet.streams[s].from.name)!);
-  const settings = { blocks, feeds, ids: components.map((c) => c.id) };
+  const settings = { blocks, feeds, ids: components.map((c) => c.id), reactions, vapourPressures };
 
   return {
     flowsheet,

@@ -44,11 +44,19 @@ export function quantity(dimension: Dimension, options: QuantityOptions = {}): Q
       return z.NEVER;
     });
   dimensionOf.set(schema, dimension);
+  limitsOf.set(schema, options);
   return schema;
 }
 
 /** What the quantity schemas stand for. */
 const dimensionOf = new WeakMap<object, Dimension>();
+
+const limitsOf = new WeakMap<object, Limits>();
+
+/** The bounds asked for of a schema made by `quantity`, `fraction`, `plainNumber` or `flow`; those of its dimension apart. */
+export function limitsOfSchema(schema: object): Limits {
+  return limitsOf.get(schema) ?? {};
+}
 
 /** The dimension of a schema made by `quantity`, `fraction` or `plainNumber`; undefined for any other. */
 export function dimensionOfSchema(schema: object): Dimension | undefined {
@@ -88,7 +96,7 @@ export function count(options: QuantityOptions = {}): QuantitySchema {
 
 /** Schema of a flow in moles, mass or normal volume, told apart by its unit. */
 export function flow(options: QuantityOptions = {}): FlowSchema {
-  return z
+  const schema = z
     .unknown()
     .meta({
       type: 'string',
@@ -108,6 +116,8 @@ export function flow(options: QuantityOptions = {}): FlowSchema {
       context.issues.push(issueOf(fault, raw));
       return z.NEVER;
     });
+  limitsOf.set(schema, options);
+  return schema;
 }
 
 const WITH_UNIT = '^\\s*[+-]?(\\d+\\.?\\d*|\\.\\d+)([eE][+-]?\\d+)?\\s*[A-Za-z%°º].*$';
