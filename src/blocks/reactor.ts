@@ -11,7 +11,7 @@ import { createEnthalpySlopes } from './enthalpy-slopes.ts';
 import { createReactionRun } from './reaction-run.ts';
 import { reactionFaults } from './reactor-checks.ts';
 import { liquidWarnings } from './reactor-warnings.ts';
-import { enthalpyAdded, quietReport } from './report.ts';
+import { enthalpyAdded, lazily, quietReport } from './report.ts';
 import { raiseSteam, steamFaults, steamSettings } from './steam-raising.ts';
 
 const settings = z.strictObject({
@@ -125,30 +125,32 @@ function createReactor(setting: Settings, context: BlockContext): Unit {
     report(inlets, outlets) {
       const inlet = inlets[0];
       const outlet = outlets[0];
-      const { details, warnings, assumptions } = run.report(outlet.temperatureK);
+      // Temperatures of equilibrium take many times a pass: worked out when they are asked for.
+      let told: ReturnType<typeof run.report> | null = null;
+      const ofReactions = () => (told ??= run.report(outlet.temperatureK));
       const atInlet = { name: 'inlet', stream: inlet };
       const atOutlet = { name: 'outlet', stream: outlet };
       const dutyW = setting.adiabatic ? 0 : enthalpyAdded(inlets, outlets);
       // The heat of reaction is given off at the temperature that the catalyst is held at.
       const steam = setting.steam && raiseSteam(setting.steam, dutyW, () => outlet.temperatureK);
-      return quietReport({
-        dutyW,
-        details: {
+      const report = quietReport({ dutyW });
+      return Object.defineProperties(report, {
+        details: lazily(() => ({
           inlet_K: inlet.temperatureK,
           outlet_K: outlet.temperatureK,
           outlet_bar: outlet.pressurePa / 1e5,
-          ...details,
+          ...ofReactions().details,
           ...carbon.details(inlet, outlet),
           ...(steam && { steam: steam.details }),
-        },
-        warnings: [
+        })),
+        warnings: lazily(() => [
           ...carbon.warnings([atInlet, atOutlet]),
-          ...warnings,
+          ...ofReactions().warnings,
           ...(steam?.warnings ?? []),
           ...liquidWarnings([atOutlet]),
           ...mixture.cautions(outlet),
-        ],
-        assumptions: [...assumptions, ...(steam?.assumptions ?? [])],
+        ]),
+        assumptions: lazily(() => [...ofReactions().assumptions, ...(steam?.assumptions ?? [])]),
       });
     },
   };

@@ -17,6 +17,16 @@ export function quietReport(said: Partial<BlockReport> = {}): BlockReport {
   };
 }
 
+/** A property that is worked out when it is first read, for what a study of thousands of cases may never ask. */
+export function lazily(work: () => unknown): PropertyDescriptor {
+  let known: { readonly value: unknown } | null = null;
+  const get = (): unknown => {
+    known ??= { value: work() };
+    return known.value;
+  };
+  return { enumerable: true, get };
+}
+
 /** Enthalpy that a block adds to its streams: what leaves less what enters [W]. */
 export function enthalpyAdded(inlets: readonly StreamState[], outlets: readonly StreamState[]): number {
   let sum = 0;

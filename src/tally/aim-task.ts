@@ -35,7 +35,7 @@ export function createAimTask(plant: Plant, options: CloseOptions): AimTask {
   const high = Float64Array.from(aims, (aim) => aim.between[1]);
   const history: TraceEntry[] = [];
   let passes = 0;
-  let warm = false;
+  let warm = options.warm === true;
   let closure: PlantClosure | null = null;
   let closedAt: Float64Array | null = null;
   // A target of zero has no size of its own: the figure's first value gives it one.

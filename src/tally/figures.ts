@@ -6,28 +6,43 @@ import type { Tallied } from './ledger.ts';
 import type { Plant } from './plant.ts';
 import { KMOL_H } from './stream-results.ts';
 
+/** What the key figures are read from; each part is asked for by those that need it. */
+export interface FigureSource {
+  readonly plant: Plant;
+  readonly tallied: () => Tallied;
+  readonly reports: () => readonly BlockReport[];
+}
+
+type KeyFigure = Exclude<keyof Figures, 'user'>;
+
+/** The key figures one by one, so that a study reads those it records and no others. */
+export const figureReaders: { readonly [K in KeyFigure]: (source: FigureSource) => Figures[K] } = {
+  per_pass_conversion: ({ plant }) => perPassConversion(plant),
+  overall_conversion: ({ plant, tallied }) => overallConversion(plant, tallied()),
+  overall_yield: ({ plant, tallied }) => overallYield(plant, tallied()),
+  production_t_d: ({ plant }) => productionTPerD(plant),
+  recycle_ratio: ({ plant, tallied }) =>
+    plant.flowsheet.ledger.recycle
+      ? total(state(plant, plant.flowsheet.ledger.recycle)) / sumOf(tallied().entering)
+      : null,
+  inerts: ({ plant }) => inerts(plant),
+  purge: ({ plant, tallied }) => purge(plant, tallied()),
+  power_kW: ({ plant, reports }) => powers(plant, reports()),
+  specific_power_kWh_t: ({ plant, reports }) => {
+    const production = productionTPerD(plant);
+    return production ? (24 * powers(plant, reports())['total']) / production : null;
+  },
+  duty_kW: ({ plant, reports }) =>
+    Object.fromEntries(
+      plant.blocks.flatMap((b, i) => (reports()[i].dutyW === 0 ? [] : [[b.name, reports()[i].dutyW / 1e3]])),
+    ),
+};
+
 /** The key figures of a closed plant; `user` is left empty. */
 export function keyFigures(plant: Plant, tallied: Tallied, reports: readonly BlockReport[]): Figures {
-  const { flowsheet } = plant;
-  const production = productionTPerD(plant);
-  const power = powers(plant, reports);
-  return {
-    per_pass_conversion: perPassConversion(plant),
-    overall_conversion: overallConversion(plant, tallied),
-    overall_yield: overallYield(plant, tallied),
-    production_t_d: production,
-    recycle_ratio: flowsheet.ledger.recycle
-      ? total(state(plant, flowsheet.ledger.recycle)) / sumOf(tallied.entering)
-      : null,
-    inerts: inerts(plant),
-    purge: purge(plant, tallied),
-    power_kW: power,
-    specific_power_kWh_t: production ? (24 * power['total']) / production : null,
-    duty_kW: Object.fromEntries(
-      plant.blocks.flatMap((b, i) => (reports[i].dutyW === 0 ? [] : [[b.name, reports[i].dutyW / 1e3]])),
-    ),
-    user: {},
-  };
+  const source: FigureSource = { plant, tallied: () => tallied, reports: () => reports };
+  const read = Object.entries(figureReaders).map(([name, reader]) => [name, reader(source)]);
+  return { ...(Object.fromEntries(read) as Omit<Figures, 'user'>), user: {} };
 }
 
 /** The reactions that run in a block, and per component whether it is a reactant of one, or takes no part. */

@@ -1,42 +1,92 @@
-import type { BlockResult, Figures, StreamResult } from '../model/result.ts';
+import type { BlockReport } from '../blocks/block.ts';
+import type { StreamState } from '../model/stream.ts';
+import { figureReaders } from './figures.ts';
+import { count } from './ledger.ts';
+import type { Plant } from './plant.ts';
+import { reportsOf } from './reports.ts';
+import { KMOL_H } from './stream-results.ts';
 
 /**
- * What formulas may name (see flowsheet/formula-scope.ts): streams by tag, blocks by name, figures.
+ * What formulas may name (see flowsheet/formula-scope.ts), read from the plant as it stands when it is asked for:
  *   streams.S2.n.Ar [kmol/h], y, m [kg/h], w, T [K], P [bar], flow [kmol/h], mass [kg/h], enthalpy [kW]
  *   blocks.condenser.duty [kW], power [kW] and the block's details
+ *   figures, the user's own under figures.user
+ *
+ * A formula costs what it names and no more: a study evaluates two or three of them in thousands of cases, and all
+ * that a plant can be asked takes several times the passes of a case.
  */
-export function formulaScope(
-  streams: Readonly<Record<string, StreamResult>>,
-  blocks: Readonly<Record<string, BlockResult>>,
-  figures: Figures,
-  molarMassKgPerMol: Readonly<Record<string, number>>,
-): Record<string, unknown> {
+export interface PlantScope {
+  readonly scope: Readonly<Record<string, unknown>>;
+  readonly reports: () => readonly BlockReport[];
+  /** to be called when the plant has been calculated again */
+  refresh(): void;
+}
+
+/** @param known  what the blocks say, when that has been asked already; good until `refresh` */
+export function createPlantScope(plant: Plant, known?: readonly BlockReport[]): PlantScope {
+  const { flowsheet, mixture } = plant;
+  const forget: (() => void)[] = [];
+  const kept = <T>(work: () => T, first?: T): (() => T) => {
+    let value = first;
+    forget.push(() => {
+      value = undefined;
+    });
+    return () => (value ??= work());
+  };
+  const reports = kept(() => reportsOf(plant), known);
+  const source = { plant, tallied: kept(() => count(plant)), reports };
+  const ids = mixture.components.map((c) => c.id);
+
+  function streamScope(state: StreamState): object {
+    const flows = state.flowsMolPerS;
+    const kgPerH = (i: number) => flows[i]! * KMOL_H * 1e3 * mixture.components[i]!.molarMassKgPerMol;
+    const share = (part: number, whole: number) => (whole > 0 ? part / whole : 0);
+    const byComponent = (value: (i: number) => number) => {
+      const parts = getters(ids.map((id, i) => [id, () => value(i)]));
+      return () => parts;
+    };
+    return getters([
+      ['n', byComponent((i) => flows[i]! * KMOL_H)],
+      ['y', byComponent((i) => share(flows[i]!, mixture.total(state)))],
+      ['m', byComponent(kgPerH)],
+      ['w', byComponent((i) => share(kgPerH(i), mixture.mass(state) * 3600))],
+      ['T', () => state.temperatureK],
+      ['P', () => state.pressurePa / 1e5],
+      ['flow', () => mixture.total(state) * KMOL_H],
+      ['mass', () => mixture.mass(state) * 3600],
+      ['vapour_fraction', () => state.vapourFraction],
+      ['enthalpy', () => state.enthalpyW / 1e3],
+    ]);
+  }
+
+  const blockScope = (b: number) => {
+    const { details, dutyW, powerW } = reports()[b]!;
+    return { ...details, duty: dutyW / 1e3, power: powerW / 1e3 };
+  };
+  const user = getters(flowsheet.figures.map(({ name, formula }) => [name, () => formula.evaluate(scope)]));
+  const scope: Readonly<Record<string, unknown>> = {
+    streams: Object.fromEntries(flowsheet.streams.map(({ tag }, s) => [tag, streamScope(plant.streams[s]!)])),
+    blocks: getters(plant.blocks.map(({ name }, b) => [name, kept(() => blockScope(b))])),
+    figures: getters([
+      ...Object.entries(figureReaders).map(([name, read]): [string, () => unknown] => [
+        name,
+        kept(() => read(source)),
+      ]),
+      ['user', () => user],
+    ]),
+  };
   return {
-    streams: mapValues(streams, (s) => streamScope(s, molarMassKgPerMol)),
-    blocks: mapValues(blocks, (b) => ({ ...b.details, duty: b.duty_kW, power: b.power_kW })),
-    figures,
+    scope,
+    reports,
+    refresh() {
+      for (const drop of forget) drop();
+    },
   };
 }
 
-function streamScope(s: StreamResult, molarMass: Readonly<Record<string, number>>): Record<string, unknown> {
-  const m = mapValues(s.components_kmol_h, (n, id) => n * 1e3 * molarMass[id]);
-  return {
-    n: s.components_kmol_h,
-    y: s.mole_fraction,
-    m,
-    w: mapValues(m, (mass) => (s.mass_kg_h > 0 ? mass / s.mass_kg_h : 0)),
-    T: s.temperature_K,
-    P: s.pressure_bar,
-    flow: s.flow_kmol_h,
-    mass: s.mass_kg_h,
-    vapour_fraction: s.vapour_fraction,
-    enthalpy: s.enthalpy_kW,
-  };
-}
-
-function mapValues<A, B>(
-  record: Readonly<Record<string, A>>,
-  change: (value: A, key: string) => B,
-): Record<string, B> {
-  return Object.fromEntries(Object.entries(record).map(([key, value]) => [key, change(value, key)]));
+/** An object whose entries are worked out when they are read. */
+function getters(entries: readonly (readonly [string, () => unknown])[]): Record<string, unknown> {
+  const object = {};
+  for (const [name, get] of entries) Object.defineProperty(object, name, { get, enumerable: true });
+  return object;
 }

@@ -6,7 +6,7 @@ import { keyFigures } from './figures.ts';
 import { closures, count, ledger } from './ledger.ts';
 import type { Plant } from './plant.ts';
 import { reportsOf } from './reports.ts';
-import { formulaScope } from './scope.ts';
+import { createPlantScope } from './scope.ts';
 import { streamResults } from './stream-results.ts';
 
 /** A closure worse than this is said aloud. */
@@ -29,7 +29,7 @@ export function tally(plant: Plant, closure: PlantClosure, options: TallyOptions
   const blocks = blockResults(plant, reports);
   const plain = keyFigures(plant, tallied, reports);
   if (curves) addCurves(plant, blocks, reports);
-  const figures = { ...plain, user: userFigures(plant, streams, blocks, plain) };
+  const figures = { ...plain, user: userFigures(plant, reports) };
   const closed = closures(plant, tallied, reports);
   return {
     looptally: 1,
@@ -58,15 +58,12 @@ export function tally(plant: Plant, closure: PlantClosure, options: TallyOptions
 export function figuresOf(plant: Plant): Figures {
   const reports = reportsOf(plant);
   const plain = keyFigures(plant, count(plant), reports);
-  const user = userFigures(plant, streamResults(plant), blockResults(plant, reports), plain);
-  return { ...plain, user };
+  return { ...plain, user: userFigures(plant, reports) };
 }
 
 /** The scope in which the user's formulas are evaluated on the plant as it stands. */
-export function scopeOf(plant: Plant): Record<string, unknown> {
-  const reports = reportsOf(plant);
-  const figures = keyFigures(plant, count(plant), reports);
-  return formulaScope(streamResults(plant), blockResults(plant, reports), figures, molarMasses(plant));
+export function scopeOf(plant: Plant): Readonly<Record<string, unknown>> {
+  return createPlantScope(plant).scope;
 }
 
 function blockResults(plant: Plant, reports: readonly BlockReport[]): Record<string, BlockResult> {
@@ -89,24 +86,15 @@ function addCurves(plant: Plant, blocks: Record<string, BlockResult>, reports: r
   });
 }
 
-function userFigures(
-  plant: Plant,
-  streams: Result['streams'],
-  blocks: Result['blocks'],
-  figures: Figures,
-): Record<string, number | null> {
+function userFigures(plant: Plant, reports: readonly BlockReport[]): Record<string, number | null> {
   if (plant.flowsheet.figures.length === 0) return {};
-  const scope = formulaScope(streams, blocks, figures, molarMasses(plant));
+  const { scope } = createPlantScope(plant, reports);
   return Object.fromEntries(
     plant.flowsheet.figures.map(({ name, formula }) => {
       const value = formula.evaluate(scope);
       return [name, Number.isFinite(value) ? value : null];
     }),
   );
-}
-
-function molarMasses(plant: Plant): Record<string, number> {
-  return Object.fromEntries(plant.mixture.components.map((c) => [c.id, c.molarMassKgPerMol]));
 }
 
 function blockWarnings(plant: Plant, reports: readonly BlockReport[]): Warning[] {
