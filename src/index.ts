@@ -32,12 +32,14 @@ export {
   catalogueEntry,
   catalogueList,
 } from './properties/catalogue.ts';
+export { compareText } from './sheets/compare.ts';
 export { type CsvTableName, csvSheet } from './sheets/csv.ts';
 export { leversText } from './sheets/levers.ts';
 export { markdownSheet } from './sheets/markdown.ts';
 export { type Renderer, type RenderOptions, renderers } from './sheets/renderers.ts';
 export type { SheetOptions } from './sheets/sheet.ts';
 export { textSheet } from './sheets/text.ts';
+export { type Compared, type Comparison, compare } from './study/compare.ts';
 export { type Balance, type BalanceOptions, balance } from './tally/balance.ts';
 export { type Lever, type Levers, levers } from './tally/levers.ts';
 export { type Plan, planFlowsheet } from './tally/plan.ts';

@@ -30,6 +30,13 @@ export const commands: ReadonlyMap<string, CommandEntry> = new Map([
     },
   ],
   [
+    'compare',
+    {
+      summary: 'cases or files side by side: settings that differ, then the figures',
+      load: async () => (await import('./compare.ts')).compareCommand(),
+    },
+  ],
+  [
     'sheet',
     {
       summary: 'close the loop and write its sheet to files (.csv, .md)',

@@ -7,17 +7,21 @@ import { diagnosticsJson, tell } from './messages.ts';
 import { readSource } from './read-source.ts';
 import { Refusal, type Source } from './refusal.ts';
 
-/** Read and check a flowsheet as a command was asked to; warnings are told at once, errors refuse it. */
-export async function openFlowsheet(
-  file: string,
-  options: FileOptions,
-): Promise<{
+export interface Opened {
   readonly flowsheet: Flowsheet;
   readonly source: Source;
   readonly warnings: readonly DiagnosticJson[];
-}> {
+}
+
+/** Read and check a flowsheet as a command was asked to; warnings are told at once, errors refuse it. */
+export async function openFlowsheet(file: string, options: FileOptions): Promise<Opened> {
+  return flowsheetIn(await readSource(file), options);
+}
+
+/** The same for a text that has been read already, so that several cases of it can be opened. */
+export async function flowsheetIn(text: Source, options: FileOptions): Promise<Opened> {
   const set = options.set ?? [];
-  const source = { ...(await readSource(file)), also: { [SET_FILE]: setFileText(set) } };
+  const source = { ...text, also: { [SET_FILE]: setFileText(set) } };
   const { flowsheet, diagnostics } = await readFlowsheet(source.text, {
     file: source.name,
     set,

@@ -1,7 +1,7 @@
 import type { NumericSetting } from '../flowsheet/numeric-settings.ts';
 import { holdsOn, leadFigure } from '../tally/lever-ranking.ts';
 import type { Lever, Levers } from '../tally/levers.ts';
-import { percent, significant } from './numbers.ts';
+import { significant, valueText } from './numbers.ts';
 import { plainText, wrapped } from './plain.ts';
 import { noPaint, type SheetOptions } from './sheet.ts';
 import { aligned, columnGroups, pickColumns } from './table.ts';
@@ -208,12 +208,6 @@ function sideWord({ dimension }: NumericSetting, side: 'more' | 'less'): string 
   if (dimension === 'temperature') return side === 'more' ? 'hotter' : 'colder';
   if (dimension === 'pressure') return side === 'more' ? 'higher' : 'lower';
   return side;
-}
-
-function valueText({ dimension, value, unit, unitSI, path }: NumericSetting): string {
-  if (dimension === 'temperature') return `${(value - 273.15).toFixed(1)} degC`;
-  if (dimension === 'fraction' && !path.includes('.composition.')) return percent(value);
-  return `${significant(value / unitSI, 4)} ${unit === '1' ? '' : unit}`.trimEnd();
 }
 
 /** With its sign; what changes the figure by no more than rounding is 0. */

@@ -79,18 +79,18 @@ function blocks(result: Result): string {
 }
 
 /** A pipe table; the first `left` columns and column `alsoLeft` stand to the left, the others to the right. */
-function table(rows: Rows, left = 1, alsoLeft = -1): string {
+export function table(rows: Rows, left = 1, alsoLeft = -1): string {
   const [head, ...body] = rows.map((row) => `| ${row.map(escaped).join(' | ')} |`);
   const marks = rows[0]!.map((_, column) => (column < left || column === alsoLeft ? '---' : '---:'));
   return [head, `| ${marks.join(' | ')} |`, ...body].join('\n');
 }
 
-function list(items: readonly string[]): string {
+export function list(items: readonly string[]): string {
   return items.map((item) => `- ${escaped(item)}`).join('\n');
 }
 
 /** Text of the user's that Markdown must not read as markup. */
-function escaped(text: string): string {
+export function escaped(text: string): string {
   return plainText(text)
     .replace(/[\\`*_[\]|#~]/g, '\\$&')
     .replace(/&/g, '&amp;')

@@ -1,3 +1,5 @@
+import type { NumericSetting } from '../flowsheet/numeric-settings.ts';
+
 const SMALLEST_PLAIN = 1e-4;
 const LARGEST_PLAIN = 1e9;
 
@@ -54,6 +56,13 @@ export function settingText(path: string, value: number, unit: string): string {
     return /fraction|conversion|efficiency|recover/.test(path) ? percent(value) : significant(value);
   }
   return `${significant(value)} ${unit}`;
+}
+
+/** A setting of the file as an engineer reads it: -8.0 degC, 200.0 bar, 2.20 %. */
+export function valueText({ dimension, value, unit, unitSI, path }: NumericSetting): string {
+  if (dimension === 'temperature') return `${(value - 273.15).toFixed(1)} degC`;
+  if (dimension === 'fraction' && !path.includes('.composition.')) return percent(value);
+  return `${significant(value / unitSI, 4)} ${unit === '1' ? '' : unit}`.trimEnd();
 }
 
 function exponent(value: number, digits: number): string {
