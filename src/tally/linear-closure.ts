@@ -73,9 +73,15 @@ export function linearise(plant: Plant): LinearClosure {
     });
   }
 
-  function solveWith(list: readonly Part[]): (r: Float64Array) => boolean {
+  function solveWith(list: readonly Part[], floating = false): (r: Float64Array) => boolean {
     return (r) =>
-      list.every(({ problem, from, rows }) => solveRows(rows, r.subarray(from, from + problem.size)));
+      list.every(({ problem, from, rows }) =>
+        solveRows(
+          rows,
+          r.subarray(from, from + problem.size),
+          floating ? problem.derivatives.mayFloat : undefined,
+        ),
+      );
   }
   const solve = solveWith(parts);
 
@@ -84,7 +90,8 @@ export function linearise(plant: Plant): LinearClosure {
       ...part,
       rows: part.rows.map((row) => new Float64Array(row.length)),
     }));
-    return here.every(readDerivatives) ? solveWith(here) : solve;
+    // To one side of a kink a pressure may be left to itself: it stays where it is.
+    return here.every((part) => readDerivatives(part, true)) ? solveWith(here, true) : solve;
   }
 
   const g = new Float64Array(size);
@@ -124,22 +131,39 @@ function linearisePart(part: Part, x: Float64Array, scale: Float64Array): number
 }
 
 /** I − A from the derivatives of the last pass; false where there are none or they are singular. */
-function readDerivatives({ problem, rows }: Part): boolean {
+function readDerivatives({ problem, rows }: Part, floating = false): boolean {
   const n = problem.size;
   const given = new Float64Array(n * n);
   if (!problem.derivatives.at(given)) return false;
   rows.forEach((row, i) => {
     for (let j = 0; j < n; j++) row[j] = (i === j ? 1 : 0) - given[i * n + j];
   });
-  return solveRows(rows, new Float64Array(n));
+  return solveRows(rows, new Float64Array(n), floating ? problem.derivatives.mayFloat : undefined);
 }
 
-/** Solve with a copy of the rows, r → the answer; false where they are singular. */
-function solveRows(rows: readonly Float64Array[], r: Float64Array): boolean {
+/** Pivots, relative to the largest entry, below which rows are singular [-]. */
+const SINGULAR = 1e-14;
+/** What is left of a residual in an equation that is met [-]. */
+const MET = 1e-9;
+
+/**
+ * Solve with a copy of the rows, r → the answer; false where they are singular.
+ *
+ * @param mayFloat  variables that may stay as they are where nothing decides them, see `Derivatives`
+ */
+function solveRows(
+  rows: readonly Float64Array[],
+  r: Float64Array,
+  mayFloat?: (variable: number) => boolean,
+): boolean {
+  let most = 0;
+  for (let i = 0; i < r.length; i++) most = Math.max(most, Math.abs(r[i]));
   return solveInPlace(
     rows.map((row) => row.slice()),
     r,
-    1e-14,
+    SINGULAR,
+    mayFloat,
+    MET * most,
   );
 }
 
