@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
-import { copyStream } from '../model/stream.ts';
+import { copyStream, type StreamState } from '../model/stream.ts';
 import { stateSlopes } from '../properties/state-slopes.ts';
 import { quantity } from '../units/schema.ts';
 import type { BlockKind } from './block.ts';
@@ -16,6 +16,8 @@ type Settings = z.infer<typeof settings>;
 
 /** An inlet that loses more than this share of its pressure in a mixer is worth a word. @source common practice */
 const THROTTLING_WORTH_A_WORD = 0.02;
+/** Pressures closer than this share of them are equal but for rounding [-]. */
+const SAME_PRESSURE = 1e-12;
 
 /**
  * Mixer: any number of inlets, one outlet, adiabatic.
@@ -69,15 +71,16 @@ export const mixer: BlockKind<Settings> = {
       slopes(inlets, outlets, { of: [matrices] }) {
         const { size } = mixture;
         const [out] = outlets;
-        const setsPressure =
-          setting.pressure === undefined
-            ? inlets.findIndex((inlet) => mixture.total(inlet) > 0 && inlet.pressurePa === out.pressurePa)
-            : -1;
+        const sets = (inlet: StreamState) =>
+          mixture.total(inlet) > 0 && inlet.pressurePa <= out.pressurePa * (1 + SAME_PRESSURE);
+        // Of equal pressures each has its share, the mean of the slopes to both sides: if a recycle's
+        // alone set it, that would be left undetermined.
+        const share = 1 / inlets.filter(sets).length;
         const unchanged = inlets.length === 1 && inlets[0].pressurePa === out.pressurePa;
         if (!unchanged && !mixture.slopes(out, 'all', after)) return false;
         for (let k = 0; k < inlets.length; k++) {
           keepFlows(matrices[k], size);
-          if (k === setsPressure) followPressure(matrices[k], size);
+          if (setting.pressure === undefined && sets(inlets[k])) followPressure(matrices[k], size, share);
           if (unchanged) keepTemperature(matrices[k], size);
           else if (
             !mixture.slopes(inlets[k], 'all', before) ||

@@ -1,6 +1,7 @@
 import type { NumericSetting } from '../flowsheet/numeric-settings.ts';
 import { holdsOn, leadFigure } from '../tally/lever-ranking.ts';
 import type { Lever, Levers } from '../tally/levers.ts';
+import { holdLines, holdsByFigure } from './lever-holds.ts';
 import { significant, valueText } from './numbers.ts';
 import { plainText, wrapped } from './plain.ts';
 import { noPaint, type SheetOptions } from './sheet.ts';
@@ -24,16 +25,18 @@ export function leversText(found: Levers, options: SheetOptions = {}): string {
     closingLine(result),
     ...section('What one unit more of a setting does, the loop closed again', tableLines(found, columns)),
     ...section('In words', wordLines(found, columns)),
-    ...section('What holds the loop most', holdLines(found)),
+    ...section('What holds the loop most', holdLines(found, WIDTH)),
     ...section('Notes', noteLines(found, columns)),
     '',
   ].join('\n');
 }
 
-/** The levers as the result contract hands them out: per natural unit, nested figures by dotted name. */
+/**
+ * The levers as the result contract hands them out: per natural unit, nested figures by dotted name; `holds` has the
+ * settings of every figure by how strongly they hold it.
+ */
 export function leversJson(found: Levers): unknown {
   const { result, levers, figures } = found;
-  const lead = leadFigure(figures);
   return {
     title: result.title,
     case: result.case,
@@ -52,10 +55,7 @@ export function leversJson(found: Levers): unknown {
       ]),
     ),
     figures,
-    holds:
-      lead === null
-        ? null
-        : { figure: lead, settings: holdsOn(lead, levers, figures, Object.keys(result.blocks)) },
+    holds: holdsByFigure(found),
   };
 }
 
@@ -174,21 +174,6 @@ function raisingSide({ figures, sides }: Lever, lead: string): 'more' | 'less' |
   const less = -((sides?.less ?? figures)[lead] ?? 0);
   if (more <= 0 && less <= 0) return null;
   return more >= less ? 'more' : 'less';
-}
-
-function holdLines(found: Levers): string[] {
-  const lead = leadFigure(found.figures);
-  if (lead === null) return [];
-  const holds = holdsOn(lead, found.levers, found.figures, Object.keys(found.result.blocks));
-  const word = lead === 'overall_yield' ? 'yield' : 'production';
-  if (holds.length === 0) return [`  no setting of a block moves the ${word}`];
-  const [first, ...others] = holds.slice(0, 4).map(({ setting, elasticity }) => {
-    const text = significant(elasticity, 3);
-    return `${plainText(setting)} (${elasticity > 0 ? '+' : ''}${text})`.replaceAll(' ', '\u00a0');
-  });
-  const behind = others.length === 0 ? '' : `; then ${others.join(', ')}`;
-  const how = `per cent of the ${word} per per cent of the setting, temperatures from 0 K, pressures absolute`;
-  return wrapped(`${first}${behind}: ${how}`, WIDTH, '  ', '  ');
 }
 
 /** A power of ten in natural units: 1 K, 1 bar or 1 point, less where that is more than a tenth of the setting. */

@@ -2,13 +2,14 @@ import type { BlockReport } from '../blocks/block.ts';
 import type { Diagnostic, PassTrouble } from '../diagnostics/diagnostic.ts';
 import { type CloseOptions, closePlant, type PlantClosure } from './close-plant.ts';
 import type { Plant } from './plant.ts';
-import { answerText, type Finding, type Recogniser } from './why.ts';
+import { answerText, type Finding, type Recogniser, wayText } from './why.ts';
 import { nothingCondenses } from './why-dry.ts';
 import { noRealExit, overfullExit, smallPurge } from './why-exit.ts';
 import { DIRECT_PASSES, type Facts, gatherFacts } from './why-facts.ts';
 import { flippingPhases } from './why-flip.ts';
 import { tooFewPasses, trendOnly, undetermined } from './why-passes.ts';
 import { reactorAtBound, reactorBoundFinding, reactorGoneOut } from './why-reactor.ts';
+import { isOfUse, tryOut } from './why-trial.ts';
 
 /** Reasons that lie in the flowsheet, in order of certainty: the first whose facts hold is told. */
 const ofTheFlowsheet: readonly Recogniser[] = [
@@ -24,7 +25,7 @@ const recognisers: readonly Recogniser[] = [undetermined, ...ofTheFlowsheet, too
 
 /**
  * Say why a plant did not close: the block that cannot be evaluated, or what is true of the loop as the last pass left
- * it. Trials with other settings are made for the advice; settings and streams are put back.
+ * it. Trials with other settings and methods are made for the advice, on plants of their own.
  */
 export function diagnose(plant: Plant, closure: PlantClosure, options: CloseOptions): Diagnostic {
   const failure = closure.failure;
@@ -53,16 +54,18 @@ function guessOrBlock(
   options: CloseOptions,
   told: Diagnostic,
 ): Diagnostic {
-  if (closure.failure!.group.tears.length === 0) return told;
-  const direct = closePlant(plant, { ...options, method: 'direct', maxPasses: DIRECT_PASSES, warm: false });
+  const { group } = closure.failure!;
+  if (group.tears.length === 0) return told;
   const why = `${told.why}; ${options.method} came there by a guess`;
-  if (direct.converged)
-    return {
-      ...told,
-      why,
-      mend: `use --method direct, by which the loop closes in ${direct.passes} passes (tried)`,
-    };
-  const { failure } = direct;
+  const byDirect = tryOut(plant, group, options.tolerance, [], 'direct');
+  if (byDirect !== null && isOfUse(byDirect))
+    return { ...told, why, mend: `as it is, the loop closes ${wayText(byDirect, options)} (tried)` };
+  const { failure } = closePlant(plant, {
+    ...options,
+    method: 'direct',
+    maxPasses: DIRECT_PASSES,
+    warm: false,
+  });
   if (!failure?.closure || failure.trouble) return told;
   const facts = gatherFacts(plant, failure.group, failure.closure, failure.names, closure.passes, options);
   const finding = firstOf(ofTheFlowsheet, facts);

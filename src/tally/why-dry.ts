@@ -1,7 +1,7 @@
 import { dewPointK } from './dew-point.ts';
-import { answerText, type Finding, slowestModeText } from './why.ts';
+import { answerText, type Finding, slowestModeText, wayText } from './why.ts';
 import type { Facts } from './why-facts.ts';
-import { bar, degC, kmolPerHour, perCent } from './why-format.ts';
+import { bar, degC, figure, kmolPerHour, perCent } from './why-format.ts';
 import { SENSIBLE_RECYCLE, type Trial } from './why-trial.ts';
 import { phasesIn, type Vessel, vesselsOf } from './why-vessels.ts';
 
@@ -12,7 +12,7 @@ const SLOW = 0.9;
 
 /** Nothing condenses where the product is to be taken out, so that it goes round. */
 export function nothingCondenses(facts: Facts): Finding | null {
-  const { plant, group, onward, answer, radius, flows } = facts;
+  const { plant, group, onward, answer, beyond, radius, flows } = facts;
   if (answer !== null && (radius === null || radius < SLOW)) return null;
   const vessels = vesselsOf(plant, group).filter((vessel) => plant.mixture.total(vessel.inlet) > 0);
   if (vessels.length === 0 || vessels.some((vessel) => phasesIn(vessel) !== 'gas')) return null;
@@ -40,14 +40,17 @@ export function nothingCondenses(facts: Facts): Finding | null {
     others.length === 0
       ? `no ${product.id} leaves`
       : `${product.id} leaves by other ways only (${others.join(', ')})`;
+  // With a recycle beyond all use it may condense after all: then that is said.
+  const late = beyond !== null && !beyond.dry.has(vessel.name);
   const path = `${vessel.name}.temperature`;
   const setting = plant.get(path);
   return {
     code: 'nothing-condenses',
     isOfDirectPasses: true,
-    what: `nothing condenses in ${vessel.name}, so ${product.id} has no way out there`,
+    what: `nothing condenses in ${vessel.name}${late ? ' before the recycle has grown beyond all use' : ''}, so ${product.id} has no way out there`,
     why: [
       `${vessel.name} stands at ${degC(temperatureK)} and ${bar(pressurePa)}, and the gas in it (${perCent(share)} ${product.id}) ${dew}; ${left}`,
+      answer === null ? whatTrialsSay(facts, late) : '',
       slowestModeText(facts),
     ]
       .filter((text) => text !== '')
@@ -64,9 +67,15 @@ export function nothingCondenses(facts: Facts): Finding | null {
   };
 }
 
+/** What was tried of a loop that closes by no method with a recycle of use. */
+function whatTrialsSay({ beyond, onward }: Facts, late: boolean): string {
+  if (beyond === null) return `nor does anything condense in ${onward.length} further direct passes`;
+  const there = late ? 'and only then something condenses' : 'and even then nothing condenses';
+  return `by --method ${beyond.method} the loop closes with ${figure(beyond.timesFed)} times the feed going round, ${there} (tried)`;
+}
+
 /** A temperature below the dew point by which the loop closes with condensate and, where one does, a small recycle. */
 function colder(facts: Facts, { name }: Vessel, path: string, dewK: number): string {
-  const method = facts.options.method === 'auto' ? '' : ' with --method auto';
   let best: { readonly kelvin: number; readonly trial: Trial } | null = null;
   for (const below of BELOW_DEW_K) {
     const kelvin = Math.floor(dewK - below - 273.15) + 273.15;
@@ -78,5 +87,5 @@ function colder(facts: Facts, { name }: Vessel, path: string, dewK: number): str
   if (best === null) return `set ${path} below ${degC(dewK)}, or raise the pressure of the loop`;
   const { kelvin, trial } = best;
   const more = trial.recycle > SENSIBLE_RECYCLE * facts.fed ? '; a larger purge is needed besides' : '';
-  return `set ${path} to ${degC(kelvin)}, by which the loop closes in ${trial.passes} passes${method}, ${kmolPerHour(trial.recycle)} going round (tried); or raise the pressure of the loop${more}`;
+  return `set ${path} to ${degC(kelvin)}, by which the loop closes ${wayText(trial, facts.options)}, ${kmolPerHour(trial.recycle)} going round (tried); or raise the pressure of the loop${more}`;
 }

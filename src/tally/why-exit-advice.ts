@@ -1,4 +1,4 @@
-import type { Finding } from './why.ts';
+import { type Finding, wayText } from './why.ts';
 import type { Facts } from './why-facts.ts';
 import type { ComponentFlows } from './why-flows.ts';
 import { kmolPerHour, perCent } from './why-format.ts';
@@ -52,13 +52,12 @@ export function exitAdvice(facts: Facts, piling: ComponentFlows): string {
         ? `or less ${piling.id} in the feed`
         : `or a block that takes ${piling.id} out of the recycle`;
   if (exit === null) return `put a splitter with a purge into the recycle, ${other}`;
-  const method = facts.options.method === 'auto' ? '' : ' with --method auto';
   for (const value of SHARES) {
     if (value < 2 * exit.value) continue;
     const trial = facts.tryOut([[exit.path, value]]);
     if (trial === null || trial.recycle > SENSIBLE_RECYCLE * facts.fed) continue;
     return (
-      `raise ${exit.path} from ${perCent(exit.value)} to ${perCent(value)}, by which the loop closes in ${trial.passes} passes${method}, ` +
+      `raise ${exit.path} from ${perCent(exit.value)} to ${perCent(value)}, by which the loop closes ${wayText(trial, facts.options)}, ` +
       `${kmolPerHour(trial.recycle)} going round with ${perCent(trial.fractions[piling.index])} ${piling.id} (tried); ${other}`
     );
   }

@@ -6,7 +6,7 @@ import { type CloseOptions, closePlant } from './close-plant.ts';
 import type { Group, Plant } from './plant.ts';
 import { createRecycleProblem } from './recycle-problem.ts';
 import { type ComponentFlows, componentFlows } from './why-flows.ts';
-import { type Trial, tryOut } from './why-trial.ts';
+import { isOfUse, type Trial, tryOut } from './why-trial.ts';
 import { type Phases, phasesIn, vesselsOf } from './why-vessels.ts';
 
 /** Direct passes looked at from the last good pass on. */
@@ -14,6 +14,8 @@ const ONWARD = 24;
 /** Direct passes from the feeds that a loop is looked at after; the first few find start values. */
 export const DIRECT_PASSES = 40;
 const START_PASSES = 4;
+/** Methods by which a loop is tried as it is, the surest first. */
+const TRIED = ['auto', 'newton', 'anderson'] as const;
 
 /** One direct pass after the last good one. */
 export interface OnwardPass {
@@ -57,15 +59,17 @@ export interface Facts {
   readonly onward: readonly OnwardPass[];
   /** true where a block fails on that way */
   readonly onwardFails: boolean;
-  /** the same settings closed by the automatic method; null where that does not close either */
+  /** the same settings closed by the automatic method, or by another where that fails; null where none gives one of use */
   readonly answer: Trial | null;
-  /** close with settings moved */
+  /** the same where the recycle is beyond all use: rounding decides there; null where nothing closes like that */
+  readonly beyond: Trial | null;
+  /** close with settings moved, by the automatic method; null where it does not, or only with a recycle beyond all use */
   tryOut(changes: readonly (readonly [path: string, value: number])[]): Trial | null;
 }
 
 /**
  * Gather what is true of a loop that did not close. Spends passes: direct ones from the feeds and onward, one per
- * variable, and one closing by the automatic method. The plant is left after the direct passes from the feeds.
+ * variable, and a closing as it is by one method or more. The plant is left after the direct passes from the feeds.
  */
 export function gatherFacts(
   plant: Plant,
@@ -85,7 +89,7 @@ export function gatherFacts(
   const last = countAt(closure.x);
   const direct = directFromFeeds(plant, group, closure, options);
   const onward = passOnward(plant, group, problem, direct.x);
-  const answer = tryOut(plant, group, options.tolerance, []);
+  const closed = closedAsItIs(plant, group, options);
   const radius = spectralRadius(problem, direct.x, sizes(problem, direct.x, direct.g));
   const { flows } = countAt(direct.x);
   return {
@@ -103,13 +107,22 @@ export function gatherFacts(
     radius,
     onward,
     onwardFails: onward.length < ONWARD,
-    answer,
-    tryOut: (changes) => {
+    answer: closed !== null && isOfUse(closed) ? closed : null,
+    beyond: closed !== null && !isOfUse(closed) ? closed : null,
+    tryOut(changes) {
       const found = tryOut(plant, group, options.tolerance, changes);
-      problem.evaluate(direct.x, g);
-      return found;
+      return found !== null && isOfUse(found) ? found : null;
     },
   };
+}
+
+/** The first way by which the loop closes with its settings as they stand. */
+function closedAsItIs(plant: Plant, group: Group, options: CloseOptions): Trial | null {
+  for (const method of TRIED) {
+    const found = tryOut(plant, group, options.tolerance, [], method);
+    if (found !== null) return found;
+  }
+  return null;
 }
 
 /** The closing itself where it was made by direct passes enough; else such passes, or it where they fail. */

@@ -39,6 +39,13 @@ export function tooFewPasses(facts: Facts): Finding | null {
   };
 }
 
+/** What trials as it is came to, none of which gave an answer of use. */
+function triedText({ beyond }: Facts): string {
+  return beyond === null
+    ? 'trials by --method auto, newton and anderson did not close either'
+    : `a trial by --method ${beyond.method} closed with ${figure(beyond.timesFed)} times the feed going round, which is no answer of use`;
+}
+
 /** What the trace tells, where the flowsheet tells nothing. */
 export function trendOnly(facts: Facts): Finding {
   const { closure, options, names, plant } = facts;
@@ -50,9 +57,7 @@ export function trendOnly(facts: Facts): Finding {
   const told = (what: string, why: string, mend: string): Finding => ({
     code: 'not-closed',
     what,
-    why: [why, mode, 'a trial by --method auto gave no answer of use either']
-      .filter((text) => text !== '')
-      .join('; '),
+    why: [why, mode, triedText(facts)].filter((text) => text !== '').join('; '),
     mend,
   });
   switch (reading.trend) {

@@ -1,6 +1,6 @@
-import { copyStream, emptyStream } from '../model/stream.ts';
+import type { MethodName } from '../model/flowsheet.ts';
 import { closePlant } from './close-plant.ts';
-import type { Group, Plant } from './plant.ts';
+import { createPlant, type Group, type Plant } from './plant.ts';
 import { phasesIn, vesselsOf } from './why-vessels.ts';
 
 /** Passes that a trial may take: what closes at all closes well within this. */
@@ -14,60 +14,56 @@ const LARGEST_RECYCLE = 1e5;
 
 /** What a loop does where it closes. */
 export interface Trial {
+  readonly method: MethodName;
   readonly passes: number;
   /** the largest torn stream [mol/s] and its mole fractions */
   readonly recycle: number;
   readonly fractions: Float64Array;
+  /** so many times what enters the flowsheet goes round */
+  readonly timesFed: number;
   /** blocks that part gas from liquid and hold no liquid */
   readonly dry: ReadonlySet<string>;
 }
 
+/** May an answer be relied on, or is its recycle beyond all use? */
+export function isOfUse({ timesFed }: Trial): boolean {
+  return timesFed <= LARGEST_RECYCLE;
+}
+
 /**
- * Close a plant with some settings moved, by the automatic method; settings and streams are put back, what units
- * remember of their last pass is not.
+ * Close a plant with some settings moved. A plant of its own is made for it, with the settings as they stand: what units
+ * remember of other passes has no part in it, and whoever repeats the trial finds the same.
  *
  * @param changes  values in SI by path
- * @returns null where it does not close, or only with a recycle beyond all use
+ * @returns null where it does not close
  */
 export function tryOut(
   plant: Plant,
   group: Group,
   tolerance: number,
   changes: readonly (readonly [path: string, value: number])[],
+  method: MethodName = 'auto',
 ): Trial | null {
-  const before = changes.map(([path]) => plant.get(path));
-  const states = [...new Set([...plant.streams, ...plant.seen])];
-  const kept = states.map((state) => {
-    const copy = emptyStream(plant.mixture.size);
-    copyStream(state, copy);
-    return copy;
-  });
-  for (const [path, value] of changes) plant.set(path, value);
-  try {
-    const closure = closePlant(plant, { method: 'auto', tolerance, maxPasses: TRIAL_PASSES });
-    if (!closure.converged) return null;
-    const largest = largestTear(plant, group);
-    const recycle = plant.mixture.total(plant.streams[largest]);
-    const fed = plant.enters.reduce((sum, s) => sum + plant.mixture.total(plant.streams[s]), 0);
-    if (recycle > LARGEST_RECYCLE * fed) return null;
-    return {
-      passes: closure.passes,
-      recycle,
-      fractions: plant.streams[largest].flowsMolPerS.map((flow) => (recycle > 0 ? flow / recycle : 0)),
-      dry: new Set(
-        vesselsOf(plant, group)
-          .filter((vessel) => phasesIn(vessel) === 'gas')
-          .map(({ name }) => name),
-      ),
-    };
-  } finally {
-    changes.forEach(([path], k) => {
-      plant.set(path, before[k]!);
-    });
-    states.forEach((state, k) => {
-      copyStream(kept[k], state);
-    });
-  }
+  const other = createPlant({ ...plant.flowsheet, blocks: plant.blocks, feeds: plant.feeds });
+  const sameGroup = other.groups[plant.groups.indexOf(group)]!;
+  for (const [path, value] of changes) other.set(path, value);
+  const closure = closePlant(other, { method, tolerance, maxPasses: TRIAL_PASSES });
+  if (!closure.converged) return null;
+  const largest = largestTear(other, sameGroup);
+  const recycle = other.mixture.total(other.streams[largest]);
+  const fed = other.enters.reduce((sum, s) => sum + other.mixture.total(other.streams[s]), 0);
+  return {
+    method,
+    passes: closure.passes,
+    recycle,
+    fractions: other.streams[largest].flowsMolPerS.map((flow) => (recycle > 0 ? flow / recycle : 0)),
+    timesFed: recycle / fed,
+    dry: new Set(
+      vesselsOf(other, sameGroup)
+        .filter((vessel) => phasesIn(vessel) === 'gas')
+        .map(({ name }) => name),
+    ),
+  };
 }
 
 /** Index of the largest torn stream of a group. */

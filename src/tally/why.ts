@@ -1,6 +1,8 @@
 import type { Place } from '../model/place.ts';
+import type { CloseOptions } from './close-plant.ts';
 import type { Facts } from './why-facts.ts';
 import { figure } from './why-format.ts';
+import type { Trial } from './why-trial.ts';
 
 /** What a recogniser has found; a part of a diagnostic. */
 export interface Finding {
@@ -36,8 +38,14 @@ export function slowestModeText({ radius, options }: Facts): string {
 
 /** How the loop would close as it is, in words; '' where it does not. */
 export function answerText({ answer, options }: Facts): string {
-  if (answer === null) return '';
-  const method = options.method === 'auto' ? '' : ' --method auto';
-  const allowed = answer.passes > options.maxPasses ? ` --max-passes ${answer.passes}` : '';
-  return `as it is, the loop closes in ${answer.passes} passes${method || allowed ? ` with${method}${allowed}` : ''} (tried)`;
+  return answer === null ? '' : `as it is, the loop closes ${wayText(answer, options)} (tried)`;
+}
+
+/** e.g. in 31 passes with --method auto --max-passes 31: what is to be given on the command line to see the same. */
+export function wayText({ method, passes }: Trial, options: CloseOptions): string {
+  const flags = [
+    ...(options.method === method ? [] : [`--method ${method}`]),
+    ...(passes > options.maxPasses ? [`--max-passes ${passes}`] : []),
+  ];
+  return `in ${passes} passes${flags.length === 0 ? '' : ` with ${flags.join(' ')}`}`;
 }

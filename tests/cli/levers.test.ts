@@ -11,6 +11,7 @@ interface LeversJson {
     Record<string, { unit: string; value: number; figures: Record<string, number>; note: string | null }>
   >;
   readonly figures: Readonly<Record<string, number>>;
+  readonly holds: Readonly<Record<string, readonly { setting: string; elasticity: number }[]>>;
 }
 
 beforeAll(() => {
@@ -54,6 +55,32 @@ test('the sheet says in words what a step to the better side does, and what hold
   expect(out).toMatch(/\n {2}condenser\.temperature, 1 K colder: \+[\d.]+ points of yield, \+[\d.]+ t\/d/);
   expect(out).toContain('What holds the loop most');
   expect(out.split('\n').every((line) => [...line].length <= 100)).toBe(true);
+});
+
+test('which setting holds a figure most is told for each key figure, and with --json for all', () => {
+  const sheet = run(['levers', 'ammonia.yaml']).out.split('\n');
+  const part = sheet.slice(sheet.indexOf('What holds the loop most') + 1).join('\n');
+  expect(part).toMatch(
+    /^ {2}yield: \S+ \([+-]\S+\), [\s\S]*?\n {2}production: [\s\S]*?\n {2}specific power: [\s\S]*?\n {2}H2 lost in the purge: /,
+  );
+  const { holds, figures, settings } = JSON.parse(
+    run(['levers', 'conversion.yaml', '--json']).out,
+  ) as LeversJson;
+  expect(Object.keys(holds)[0]).toBe('overall_yield');
+  // As the yield is X/D, the purge loses 1 - X/D of the reactants: elasticities by the levers themselves.
+  const lost = 'purge.lost_fraction.H2';
+  for (const { setting, elasticity } of holds[lost]!) {
+    const { value, figures: slopes } = settings[setting]!;
+    expect(elasticity).toBeCloseTo((slopes[lost]! * value) / figures[lost]!, 12);
+  }
+  const D = 1 - 0.75 * 0.96;
+  const byConversion = holds[lost]!.find(({ setting }) => setting.endsWith('.conversion'))!;
+  // d ln(1 - X/D)/d ln X = -(X p/D2)/(1 - X/D)
+  expect(byConversion.elasticity).toBeCloseTo(-((0.25 * 0.04) / D ** 2) / (1 - 0.25 / D), 6);
+  for (const list of Object.values(holds)) {
+    const sizes = list.map(({ elasticity }) => Math.abs(elasticity));
+    expect(sizes).toEqual(sizes.toSorted((a, b) => b - a));
+  }
 });
 
 test('--set and --case move the point at which the levers are taken', () => {

@@ -96,3 +96,22 @@ streams:
   S6: split.rest -> boiler
   S7: boiler -> mixer
 `;
+
+/** A reactor that converts next to nothing, and a small way out for all. */
+export const idleReactor = (conversion: string) => `looptally: 1
+title: idle reactor
+components: [CO, H2, CH4, H2O]
+reactions: {methanation: CO + 3 H2 <=> CH4 + H2O}
+feeds:
+  gas: {flow: 100 kmol/h, temperature: 300 degC, pressure: 20 bar, composition: {H2: 75, CO: 25}}
+blocks:
+  mixer: {kind: mixer}
+  converter: {kind: reactor, reactions: {methanation: {conversion: ${conversion}, of: CO}}, temperature: 300 degC}
+  split: {kind: splitter, fractions: {product: 3 %}}
+streams:
+  S1: gas -> mixer
+  S2: mixer -> converter
+  S3: converter -> split
+  S4: split.product -> out
+  S6: split.rest -> mixer
+`;

@@ -1,6 +1,10 @@
 import { describe, expect, test } from 'vitest';
 import { type BalanceOptions, balance } from '../../src/tally/balance.ts';
-import { flippingVessel, hotLoop, methaneLoop, synthesisLoop } from './failing-loops.ts';
+import { closePlant } from '../../src/tally/close-plant.ts';
+import { createPlant } from '../../src/tally/plant.ts';
+import { nothingCondenses } from '../../src/tally/why-dry.ts';
+import { gatherFacts } from '../../src/tally/why-facts.ts';
+import { flippingVessel, hotLoop, idleReactor, methaneLoop, synthesisLoop } from './failing-loops.ts';
 import { read } from './read.ts';
 
 const direct: BalanceOptions = { method: 'direct', maxPasses: 40 };
@@ -90,10 +94,83 @@ describe('a condenser that stays dry', () => {
     expect(await failureOf(trap)).toEqual([
       'nothing-condenses 11',
       'The recycle through S7 did not close in 40 passes (#): nothing condenses in condenser, so NH3 has no way out there.',
-      'condenser stands at 45.0 degC and 50 bar, and the gas in it (5.53 % NH3) has its dew point at -15.9 degC, below that; NH3 leaves by other ways only (7.23e-6 kmol/h by S6); all of a deviation comes back in every pass (spectral radius 1)',
+      'condenser stands at 45.0 degC and 50 bar, and the gas in it (5.53 % NH3) has its dew point at -15.9 degC, below that; NH3 leaves by other ways only (7.23e-6 kmol/h by S6); by --method auto the loop closes with 9.48e8 times the feed going round, and even then nothing condenses (tried); all of a deviation comes back in every pass (spectral radius 1)',
       'set condenser.temperature to -31.0 degC, by which the loop closes in # passes with --method auto, 17500 kmol/h going round (tried); or raise the pressure of the loop',
     ]);
   });
+});
+
+test('where something condenses after all, with a recycle beyond all use, no more is claimed than that', async () => {
+  const dry = { pressure: '50 bar', reactor: 'temperature: 500 degC', condenser: '-14.8 degC' };
+  const trap = synthesisLoop({ ...dry, purge: '0.00001 %', parts: 'H2: 75, N2: 25' });
+  const plant = createPlant(await read(trap));
+  const options = { method: 'direct', maxPasses: 40, tolerance: 1e-9 } as const;
+  const { failure, passes } = closePlant(plant, options);
+  const facts = gatherFacts(plant, failure!.group, failure!.closure!, failure!.names, passes, options);
+  expect(facts.answer).toBeNull();
+  const beyond = { ...facts.beyond!, timesFed: 2e5 };
+  const told = (names: readonly string[]) =>
+    nothingCondenses({ ...facts, beyond: { ...beyond, dry: new Set(names) } })!;
+  expect(told(['condenser']).what).toBe('nothing condenses in condenser, so NH3 has no way out there');
+  expect(told(['condenser']).why).toContain(
+    '200000 times the feed going round, and even then nothing condenses',
+  );
+  expect(told([]).what).toMatch(
+    /^nothing condenses in condenser before the recycle has grown beyond all use,/,
+  );
+  expect(told([]).why).toContain('200000 times the feed going round, and only then something condenses');
+});
+
+test('a reactor gone out: what comes in goes round until the other exits take it', async () => {
+  expect(await failureOf(idleReactor('0.01 %'))).toEqual([
+    'reactor-gone-out 9',
+    'The recycle through S6 did not close in 40 passes (#): next to nothing reacts in converter, so what comes into the loop goes round.',
+    'it takes 0.01 % of the CO in a pass: 3330 kmol/h enter it at 300.0 degC and 20 bar',
+    'a hotter inlet of converter, more catalyst, or a larger purge that keeps the recycle small',
+  ]);
+});
+
+/** What is advised in `mend` as tried: the changes, and the way by which it closes. */
+function claimsOf(mend: string) {
+  return mend
+    .split(/;| or /)
+    .filter((part) => part.includes('(tried)'))
+    .map((part) => ({
+      passes: Number(part.match(/closes in (\d+) passes/)![1]),
+      method: part.match(/--method (\w+)/)?.[1] as 'auto' | undefined,
+      maxPasses: Number(part.match(/--max-passes (\d+)/)?.[1] ?? 0),
+      set: [...part.matchAll(/(?:raise|set) (\S+)(?: from .*?)? to ([-\w.]+ (?:%|degC))/g)].map(
+        ([, path, value]) => `${path}=${value}`,
+      ),
+    }));
+}
+
+test.each([
+  ['an exit', synthesisLoop({ purge: '0.001 %' }), direct],
+  ['a recovery', methaneLoop('0.000001 %'), direct],
+  [
+    'a dry condenser',
+    synthesisLoop({
+      pressure: '50 bar',
+      reactor: 'temperature: 500 degC',
+      condenser: '45 degC',
+      purge: '0.05 %',
+    }),
+    direct,
+  ],
+  ['phases that flip', flippingVessel('1000 degC'), direct],
+  ['too few passes', synthesisLoop(), { maxPasses: 3 }],
+  ['an idle reactor', idleReactor('0.1 %'), direct],
+] as const)('what was tried is found again: %s', async (_, text, options) => {
+  const { diagnosis } = balance(await read(text), options);
+  for (const { passes, method, maxPasses, set } of claimsOf(diagnosis!.mend)) {
+    const { result } = balance(await read(text, { set }), {
+      ...options,
+      ...(method ? { method } : {}),
+      ...(maxPasses > 0 ? { maxPasses } : {}),
+    });
+    expect(result.convergence).toMatchObject({ converged: true, passes });
+  }
 });
 
 describe('a reactor at its bound', () => {
