@@ -21,6 +21,8 @@ export interface LiquidPhase {
   readonly condensables: readonly number[];
   /** false where fugacities per fraction are the same at every composition */
   readonly compositionActs: boolean;
+  /** index of the one component that a liquid can hold; -1 where there may be several */
+  readonly pureCondensate: number;
   /** set T [K] and P [Pa] */
   at(T: number, P: number): void;
   /** true when z holds a condensable below its critical temperature: a liquid may form */
@@ -207,6 +209,7 @@ export function createLiquidPhase(
   const phase: Omit<LiquidPhase, 'byAmount'> = {
     roles,
     condensables,
+    pureCondensate: condensables.length === 1 && dissolved.length === 0 ? condensables[0] : -1,
     compositionActs: activity !== null || (condensables.length > 1 && dissolved.length > 0),
     at(T, P) {
       now = states(T, P);

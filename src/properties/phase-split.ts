@@ -3,6 +3,7 @@ import type { Role } from './component-roles.ts';
 import type { GasModel } from './gas-model.ts';
 import type { LiquidPhase } from './liquid-phase.ts';
 import { createSubstitution, SWING } from './phase-substitution.ts';
+import { createPureCondensate } from './pure-condensate.ts';
 
 /** Rounds after which the first drop or bubble has its composition well enough to tell which way it goes. */
 const MAX_ROUNDS = 50;
@@ -14,6 +15,9 @@ const NO_BUBBLE = 1e-13;
 const CLEAR = 0.99;
 /** What the temperature may fall by after a split that found clear gas [-]. */
 const CLEAR_SPAN = 1e-6;
+
+/** With less of the one component that condenses than this, what stays in the gas is solved for by itself. */
+const MOSTLY_GAS = 0.9;
 
 /** Shares the fluid of a stream between gas and liquid at given temperature and pressure. */
 export interface PhaseSplit {
@@ -48,6 +52,7 @@ export function createPhaseSplit(gas: GasModel, liquidPhase: LiquidPhase): Phase
   const lnPhi = new Float64Array(size);
   const lnLiquid = new Float64Array(size);
   const change = new Float64Array(size);
+  const gasFraction = createPureCondensate(gas);
   const found = { clear: false };
 
   return {
@@ -63,6 +68,14 @@ export function createPhaseSplit(gas: GasModel, liquidPhase: LiquidPhase): Phase
       if (liquidIsStable(T, P)) {
         liquid.set(flows);
         return 0;
+      }
+      const k = liquidPhase.pureCondensate;
+      if (k >= 0 && maybeGas && z[k] < MOSTLY_GAS) {
+        const left = gasFraction(T, P, z, k, lnLiquid[k] - Math.log(P), lnPhi[k]);
+        if (left < z[k]) {
+          liquid[k] = ((z[k] - left) / (1 - left)) * total;
+          return (1 - z[k]) / (1 - left);
+        }
       }
       startFromDrop();
       if (!substitution.run(T, P)) throw unsettled(T, P);
