@@ -26,6 +26,14 @@ export interface GasEquilibrium {
   ): void;
 }
 
+/** What can run where some species are absent. */
+interface Opening {
+  readonly count: number;
+  readonly rows: Float64Array<ArrayBuffer>;
+  /** sum of the reactions that makes all absent species that can be made */
+  readonly direction: Float64Array<ArrayBuffer>;
+}
+
 /** below this share of the gas an amount counts as absent */
 const absentBelow = 1e-200;
 
@@ -48,10 +56,11 @@ export function createGasEquilibrium(
   const width = size + reactions;
   const single = createSingleEquilibrium(size, activity);
   const together = createSimultaneousEquilibrium(size, reactions, activity, single);
-  const open = new Float64Array(rows.length);
+  const known = new Map<string, Opening>();
   const lacking = new Int8Array(size).fill(-1);
+  let open = new Float64Array(rows.length);
+  let direction = new Float64Array(size);
   const touched = new Uint8Array(size);
-  const direction = new Float64Array(size);
   const start = new Float64Array(size);
   const pivots = new Int32Array(count);
   let openCount = 0;
@@ -71,7 +80,7 @@ export function createGasEquilibrium(
   ): void {
     state.steps = 0;
     const total = activity.total(feed);
-    if (patternChanged(feed, total * absentBelow)) openRows();
+    if (patternChanged(feed, total * absentBelow)) useOpening();
     extents.fill(0);
     amounts.set(feed);
     if (openCount === 0 || !(total > 0)) return;
@@ -101,25 +110,37 @@ export function createGasEquilibrium(
     return changed;
   }
 
+  /** A loop that is closed again and again starts from the same empty recycle: what was found for a pattern is kept. */
+  function useOpening(): void {
+    const pattern = lacking.join('');
+    let opening = known.get(pattern);
+    if (opening === undefined) {
+      opening = openRows();
+      known.set(pattern, opening);
+    }
+    openCount = opening.count;
+    state.closed = count - openCount;
+    open = opening.rows;
+    direction = opening.direction;
+    position = 0;
+    together.warm = false;
+  }
+
   /** The rows that can run when the species marked in `lacking` are absent, and a way into the open. */
-  function openRows(): void {
+  function openRows(): Opening {
     const absent: number[] = [];
     for (let i = 0; i < size; i++) if (lacking[i] === 1) absent.push(i);
     const extentDirection = new Float64Array(count);
     const reachable = new Uint8Array(absent.length);
     reachableSpecies(rows, width, count, absent, extentDirection, reachable);
-    direction.fill(0);
+    const way = new Float64Array(size);
     for (let r = 0; r < count; r++) {
-      for (let i = 0; i < size; i++) direction[i] = direction[i] + extentDirection[r] * rows[r * width + i];
+      for (let i = 0; i < size; i++) way[i] = way[i] + extentDirection[r] * rows[r * width + i];
     }
     const never = absent.filter((_, j) => reachable[j] === 0);
     const work = Float64Array.from(rows);
     const closed = eliminate(work, width, count, Int32Array.from(never), never.length, pivots);
-    openCount = count - closed;
-    state.closed = closed;
-    open.set(work.subarray(closed * width));
-    position = 0;
-    together.warm = false;
+    return { count: count - closed, rows: work.slice(closed * width), direction: way };
   }
 
   /** A point with every reachable species present: the feed, moved a third of the way it can go. */

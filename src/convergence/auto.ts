@@ -43,7 +43,8 @@ export function createAuto(): FixedPointMethod {
   const wegstein = createWegstein();
   const direct = createDirect();
   const newton = createNewton();
-  let secants: Secants;
+  /** made when they are first used: newton alone closes most maps that have derivatives */
+  let secants: Secants | null = null;
   let mixing = new Float64Array(0);
   let xFirst = new Float64Array(0);
   let gFirst = new Float64Array(0);
@@ -91,7 +92,7 @@ export function createAuto(): FixedPointMethod {
     }
     const from = stages[stage];
     stage = (stage + 1) % stages.length;
-    secants.clear();
+    secants?.clear();
     wegstein.reset(n);
     newton.reset(n, derivatives);
     best = Infinity;
@@ -110,12 +111,9 @@ export function createAuto(): FixedPointMethod {
     reset(n, ofMap = null) {
       derivatives = ofMap;
       stages = derivatives ? DERIVED : BY_PASSES;
-      secants = createSecants(n, ANDERSON_MEMORY, ANDERSON_INDEPENDENCE);
-      mixing = new Float64Array(n).fill(1);
-      xFirst = new Float64Array(n);
-      gFirst = new Float64Array(n);
-      xBest = new Float64Array(n);
-      gBest = new Float64Array(n);
+      if (n === mixing.length) secants?.clear();
+      else makeRoom(n);
+      mixing.fill(1);
       wegstein.reset(n);
       newton.reset(n, derivatives);
       begin();
@@ -159,6 +157,7 @@ export function createAuto(): FixedPointMethod {
       const x = fromBest ? xBest : xSeen;
       const g = fromBest ? gBest : gSeen;
       if (stages[stage] === 'anderson') {
+        secants ??= createSecants(n, ANDERSON_MEMORY, ANDERSON_INDEPENDENCE);
         secants.record(x, g);
         secants.step(x, g, scale, mixing, xNext);
         const share = limitStep(x, g, scale, xNext, leading > 0 ? LED_FURTHEST : FURTHEST);
@@ -170,6 +169,15 @@ export function createAuto(): FixedPointMethod {
     },
     note: () => note,
   };
+
+  function makeRoom(n: number): void {
+    secants = null;
+    mixing = new Float64Array(n);
+    xFirst = new Float64Array(n);
+    gFirst = new Float64Array(n);
+    xBest = new Float64Array(n);
+    gBest = new Float64Array(n);
+  }
 
   function tell(remark: string): void {
     note = note === '' || remark === '' ? note + remark : `${note}; ${remark}`;

@@ -35,10 +35,11 @@ export interface Secants {
  * @source D. G. Anderson, J. ACM 12 (1965) 547-560; H. F. Walker, P. Ni, SIAM J. Numer. Anal. 49 (2011) 1715-1735
  */
 export function createSecants(n: number, memory: number, independence: number): Secants {
-  const room = (): Float64Array[] => Array.from({ length: memory }, () => new Float64Array(n));
-  const dx = room();
-  const df = room();
-  const Q = room();
+  // by slot, n numbers each
+  const dx = new Float64Array(memory * n);
+  const df = new Float64Array(memory * n);
+  const Q = new Float64Array(memory * n);
+  const column = new Float64Array(n);
   const R = new Float64Array(memory * memory);
   const slotOf = new Int32Array(memory);
   const gamma = new Float64Array(memory);
@@ -54,8 +55,8 @@ export function createSecants(n: number, memory: number, independence: number): 
       newest = (newest + 1) % memory;
       held = Math.min(held + 1, memory);
       for (let i = 0; i < n; i++) {
-        dx[newest][i] = x[i] - xLast[i];
-        df[newest][i] = g[i] - x[i] - fLast[i];
+        dx[newest * n + i] = x[i] - xLast[i];
+        df[newest * n + i] = g[i] - x[i] - fLast[i];
       }
     }
     for (let i = 0; i < n; i++) {
@@ -70,21 +71,21 @@ export function createSecants(n: number, memory: number, independence: number): 
     let used = 0;
     for (let age = 0; age < held && used < n; age++) {
       const slot = (newest - age + memory) % memory;
-      const q = Q[used];
-      for (let i = 0; i < n; i++) q[i] = df[slot][i] / scale[i];
-      const length = norm(q);
+      const q = column;
+      for (let i = 0; i < n; i++) q[i] = df[slot * n + i] / scale[i];
+      const length = Math.sqrt(dot(q, 0, q));
       if (!(length > 0) || !Number.isFinite(length)) continue;
       for (let k = 0; k < used; k++) R[k * memory + used] = 0;
       for (let round = 0; round < 2; round++) {
         for (let k = 0; k < used; k++) {
-          const along = dot(Q[k], q);
+          const along = dot(Q, k * n, q);
           R[k * memory + used] = R[k * memory + used] + along;
-          for (let i = 0; i < n; i++) q[i] = q[i] - along * Q[k][i];
+          for (let i = 0; i < n; i++) q[i] = q[i] - along * Q[k * n + i];
         }
       }
-      const rest = norm(q);
+      const rest = Math.sqrt(dot(q, 0, q));
       if (rest <= independence * length) continue;
-      for (let i = 0; i < n; i++) q[i] = q[i] / rest;
+      for (let i = 0; i < n; i++) Q[used * n + i] = q[i] / rest;
       R[used * memory + used] = rest;
       slotOf[used] = slot;
       used++;
@@ -102,7 +103,7 @@ export function createSecants(n: number, memory: number, independence: number): 
     const used = factorise(scale);
     for (let i = 0; i < n; i++) f[i] = (g[i] - x[i]) / scale[i];
     for (let k = used - 1; k >= 0; k--) {
-      let sum = dot(Q[k], f);
+      let sum = dot(Q, k * n, f);
       for (let j = k + 1; j < used; j++) sum -= R[k * memory + j] * gamma[j];
       gamma[k] = sum / R[k * memory + k];
     }
@@ -110,8 +111,8 @@ export function createSecants(n: number, memory: number, independence: number): 
       let move = 0;
       let unexplained = g[i] - x[i];
       for (let k = 0; k < used; k++) {
-        move -= gamma[k] * dx[slotOf[k]][i];
-        unexplained -= gamma[k] * df[slotOf[k]][i];
+        move -= gamma[k] * dx[slotOf[k] * n + i];
+        unexplained -= gamma[k] * df[slotOf[k] * n + i];
       }
       out[i] = x[i] + move + mixing[i] * unexplained;
     }
@@ -132,12 +133,9 @@ export function createSecants(n: number, memory: number, independence: number): 
   };
 }
 
-function dot(a: Float64Array, b: Float64Array): number {
+/** Σ a b with a from place `at` on. */
+function dot(a: Float64Array, at: number, b: Float64Array): number {
   let sum = 0;
-  for (let i = 0; i < a.length; i++) sum += a[i] * b[i];
+  for (let i = 0; i < b.length; i++) sum += a[at + i] * b[i];
   return sum;
-}
-
-function norm(a: Float64Array): number {
-  return Math.sqrt(dot(a, a));
 }

@@ -1,5 +1,6 @@
 import type { BinaryInteraction } from './binary-interaction.ts';
 import type { AlphaRoot } from './cubic-alpha.ts';
+import { type Kept, keepRecent } from './recent.ts';
 
 /** Temperatures whose attractions are kept. */
 const KEPT = 8;
@@ -14,16 +15,8 @@ export interface Attractions {
   readonly takenCurvature: Float64Array;
 }
 
-interface KeptAttractions extends Attractions {
-  T: number;
-  /** it was come back to after another temperature */
-  spared: boolean;
-}
-
 /**
- * The attractions of a cubic equation of state by temperature. A pass round a loop comes back to the same few
- * temperatures, with those of a search between them: the last ones are kept, and what was come back to is spared once
- * when room is made (the clock rule). Nothing is allocated after creation.
+ * The attractions of a cubic equation of state by temperature; the last ones are kept (see recent.ts).
  *
  * @param criticalRoot  √aᵢ at the critical temperature, by member
  * @param first,second  members of each pair
@@ -36,16 +29,12 @@ export function createAttractions(
   first: Int32Array,
   second: Int32Array,
 ): (T: number) => Attractions {
-  const kept = Array.from({ length: KEPT }, () => room(criticalRoot.length, pairs.length));
   const kij = new Float64Array(pairs.length);
   const kijSlope = new Float64Array(pairs.length);
   const kijCurvature = new Float64Array(pairs.length);
-  let latest = kept[0];
-  let hand = 0;
 
-  function fill(at: KeptAttractions, T: number): void {
-    const { root, rootSlope, rootCurvature, taken, takenSlope, takenCurvature } = at;
-    at.T = T;
+  function fill(at: Attractions & Kept): void {
+    const { first: T, root, rootSlope, rootCurvature, taken, takenSlope, takenCurvature } = at;
     for (let m = 0; m < root.length; m++) {
       alphas[m].write(T, m, root, rootSlope, rootCurvature);
       root[m] *= criticalRoot[m];
@@ -66,29 +55,15 @@ export function createAttractions(
     }
   }
 
-  return (T) => {
-    if (T === latest.T) return latest;
-    for (let k = 0; k < KEPT; k++) {
-      if (kept[k].T !== T) continue;
-      latest = kept[k];
-      latest.spared = true;
-      return latest;
-    }
-    while (kept[hand].spared) {
-      kept[hand].spared = false;
-      hand = (hand + 1) % KEPT;
-    }
-    latest = kept[hand];
-    hand = (hand + 1) % KEPT;
-    fill(latest, T);
-    return latest;
-  };
+  const recent = keepRecent(KEPT, () => room(criticalRoot.length, pairs.length), fill);
+  return (T) => recent(T, 0);
 }
 
-function room(members: number, pairs: number): KeptAttractions {
+function room(members: number, pairs: number): Attractions & Kept {
   const array = (length: number) => new Float64Array(length);
   return {
-    T: Number.NaN,
+    first: Number.NaN,
+    second: Number.NaN,
     spared: false,
     root: array(members),
     rootSlope: array(members),

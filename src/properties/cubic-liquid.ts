@@ -26,6 +26,7 @@ export function createCubicLiquid(
   return {
     roles,
     condensables: roles.flatMap((role, i) => (role === 'condensable' ? [i] : [])),
+    pureCondensate: -1,
     compositionActs: true,
     at(T, P) {
       now.T = T;

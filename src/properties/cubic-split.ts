@@ -51,6 +51,8 @@ export function createCubicSplit(
   const change = new Float64Array(size);
 
   return {
+    // Its trial phases are settled too loosely to tell how far the dew point is.
+    isClear: () => false,
     split(T, P, flows, liquid) {
       const total = overallFractions(flows, liquidPhase.roles, z);
       putAllInGas(flows, liquidPhase.roles, liquid);

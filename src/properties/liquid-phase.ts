@@ -7,6 +7,7 @@ import type { HenryConstant } from './henry.ts';
 import { henryConstant, lnHenry, lnHenrySlope, partialVolume, partialVolumeSlope } from './henry.ts';
 import { createLiquidByAmount } from './liquid-by-amount.ts';
 import { liquidVolume, liquidVolumeSlope } from './liquid-volume.ts';
+import { type Kept, keepRecent } from './recent.ts';
 import { saturatedGasCompressibility } from './saturated-gas.ts';
 import { lnVapourPressure, lnVapourPressureSlope } from './vapour-pressure.ts';
 
@@ -20,6 +21,8 @@ export interface LiquidPhase {
   readonly condensables: readonly number[];
   /** false where fugacities per fraction are the same at every composition */
   readonly compositionActs: boolean;
+  /** index of the one component that a liquid can hold; -1 where there may be several */
+  readonly pureCondensate: number;
   /** set T [K] and P [Pa] */
   at(T: number, P: number): void;
   /** true when z holds a condensable below its critical temperature: a liquid may form */
@@ -52,6 +55,43 @@ export interface MovedVapourPressures {
   readonly lnFactors: Float64Array;
   /** how often they were moved; what was worked out before the last move no longer holds */
   moves: number;
+}
+
+/** States that are kept: those of a pass, and those beside one that its derivatives are taken from. */
+const KEPT = 8;
+
+/** What a temperature and a pressure make of each condensable and of each Henry constant. */
+interface LiquidState {
+  /** saturation pressure [Pa] and its slope [Pa/K]; of the pure liquid volume, ln f at P, enthalpy over the ideal gas */
+  readonly psat: Float64Array;
+  readonly psatSlope: Float64Array;
+  readonly volume: Float64Array;
+  readonly lnPure: Float64Array;
+  readonly enthalpy: Float64Array;
+  /** ln H at P, partial volume, enthalpy over that of the ideal gas */
+  readonly lnHenryAtP: Float64Array;
+  readonly gasVolume: Float64Array;
+  readonly gasEnthalpy: Float64Array;
+  /** the slopes and enthalpies are filled in */
+  enthalpiesKnown: boolean;
+}
+
+function room(size: number, constants: number): LiquidState & Kept {
+  const array = (length: number) => new Float64Array(length);
+  return {
+    first: Number.NaN,
+    second: Number.NaN,
+    spared: false,
+    psat: array(size),
+    psatSlope: array(size),
+    volume: array(size),
+    lnPure: array(size),
+    enthalpy: array(size),
+    lnHenryAtP: array(constants),
+    gasVolume: array(constants),
+    gasEnthalpy: array(constants),
+    enthalpiesKnown: false,
+  };
 }
 
 /**
@@ -101,40 +141,14 @@ export function createLiquidPhase(
     (c) => c.critical?.temperatureK ?? Number.POSITIVE_INFINITY,
   );
   const lnGamma = new Float64Array(size);
-  // Of each condensable: ln f of the pure liquid at Psat and at P, Psat [Pa], its slope [Pa/K], volume, enthalpy.
-  const lnSaturated = new Float64Array(size);
-  const lnPure = new Float64Array(size);
-  const psat = new Float64Array(size);
-  const psatSlope = new Float64Array(size);
-  const volume = new Float64Array(size);
-  const enthalpy = new Float64Array(size);
-  // Of each Henry constant: ln H at Psat and at P, partial volume, enthalpy over that of the ideal gas.
-  const lnH = new Float64Array(pairs.length);
-  const lnHAtP = new Float64Array(pairs.length);
-  const gasVolume = new Float64Array(pairs.length);
-  const gasEnthalpy = new Float64Array(pairs.length);
-  const now = { T: Number.NaN, P: Number.NaN, enthalpiesKnown: false, moves: 0 };
+  const keep = () => keepRecent(KEPT, () => room(size, pairs.length), setState);
+  let states = keep();
+  let moves = 0;
+  let now = states(298.15, 1e5);
 
-  function at(T: number, P: number): void {
-    if (moved !== null && moved.moves !== now.moves) {
-      now.moves = moved.moves;
-      now.T = Number.NaN;
-    }
-    if (T === now.T && P === now.P) return;
-    if (T !== now.T) setTemperature(T);
-    now.T = T;
-    now.P = P;
-    now.enthalpiesKnown = false;
-    for (let c = 0; c < condensables.length; c++) {
-      const i = condensables[c];
-      lnPure[i] = lnSaturated[i];
-      if (pressureActs) lnPure[i] += (volume[i] * (P - psat[i])) / (R * T);
-    }
-    for (let k = 0; k < pairs.length; k++)
-      lnHAtP[k] = lnH[k] + (gasVolume[k] * (P - psat[solvent[k]])) / (R * T);
-  }
-
-  function setTemperature(T: number): void {
+  function setState(state: LiquidState & Kept): void {
+    const { first: T, second: P, psat, volume, lnPure, lnHenryAtP, gasVolume } = state;
+    state.enthalpiesKnown = false;
     for (let c = 0; c < condensables.length; c++) {
       const i = condensables[c];
       const lnPsat = lnVapourPressure(components[i], T) + (moved === null ? 0 : moved.lnFactors[i]);
@@ -142,19 +156,20 @@ export function createLiquidPhase(
       const v = liquidVolume(components[i], T);
       // A user's component may come without any: then pressure does not act on its liquid.
       volume[i] = Number.isNaN(v) ? 0 : v;
-      lnSaturated[i] = lnPsat + gas.pureLnPhi(i, T, psat[i]);
+      lnPure[i] = lnPsat + gas.pureLnPhi(i, T, psat[i]);
+      if (pressureActs) lnPure[i] += (volume[i] * (P - psat[i])) / (R * T);
     }
     const lnT = Math.log(T);
     for (let k = 0; k < pairs.length; k++) {
-      lnH[k] = lnHenry(pairs[k].henry, T, lnT);
       gasVolume[k] = partialVolume(pairs[k].henry, T);
+      lnHenryAtP[k] = lnHenry(pairs[k].henry, T, lnT) + (gasVolume[k] * (P - psat[solvent[k]])) / (R * T);
     }
   }
 
   function setEnthalpies(): void {
     if (now.enthalpiesKnown) return;
     now.enthalpiesKnown = true;
-    const { T, P } = now;
+    const { first: T, second: P, psat, psatSlope, volume, enthalpy, gasVolume, gasEnthalpy } = now;
     for (let n = 0; n < condensables.length; n++) {
       const i = condensables[n];
       const c = components[i];
@@ -189,13 +204,13 @@ export function createLiquidPhase(
       let count = 0;
       let total = 0;
       for (let k = firstPair[d]; k < firstPair[d + 1]; k++) {
-        if (now.T >= criticalK[solvent[k]]) continue;
+        if (now.first >= criticalK[solvent[k]]) continue;
         count += 1;
         total += x[solvent[k]];
       }
       let sum = count === 0 ? none : 0;
       for (let k = firstPair[d]; k < firstPair[d + 1]; k++) {
-        if (now.T >= criticalK[solvent[k]]) continue;
+        if (now.first >= criticalK[solvent[k]]) continue;
         const share = total > 0 ? x[solvent[k]] / total : 1 / count;
         if (share > 0) sum += share * of[k];
       }
@@ -206,8 +221,15 @@ export function createLiquidPhase(
   const phase: Omit<LiquidPhase, 'byAmount'> = {
     roles,
     condensables,
+    pureCondensate: condensables.length === 1 && dissolved.length === 0 ? condensables[0] : -1,
     compositionActs: activity !== null || (condensables.length > 1 && dissolved.length > 0),
-    at,
+    at(T, P) {
+      if (moved !== null && moved.moves !== moves) {
+        moves = moved.moves;
+        states = keep();
+      }
+      now = states(T, P);
+    },
     mayForm(T, z) {
       for (let c = 0; c < condensables.length; c++) {
         const i = condensables[c];
@@ -230,27 +252,28 @@ export function createLiquidPhase(
     },
     lnFugacityPerFraction(x, out) {
       out.fill(Number.POSITIVE_INFINITY);
-      if (activity) activity.lnGamma(now.T, x, lnGamma);
+      if (activity) activity.lnGamma(now.first, x, lnGamma);
       for (let c = 0; c < condensables.length; c++) {
         const i = condensables[c];
-        out[i] = lnPure[i] + lnGamma[i];
+        out[i] = now.lnPure[i] + lnGamma[i];
       }
-      overSolvents(x, lnHAtP, Number.POSITIVE_INFINITY, out);
+      overSolvents(x, now.lnHenryAtP, Number.POSITIVE_INFINITY, out);
     },
     enthalpyOverIdealGas(x, out) {
       setEnthalpies();
       out.fill(0);
-      if (activity) activity.lnGammaSlope(now.T, x, lnGamma);
+      const T = now.first;
+      if (activity) activity.lnGammaSlope(T, x, lnGamma);
       for (let c = 0; c < condensables.length; c++) {
         const i = condensables[c];
-        out[i] = enthalpy[i] - R * now.T * now.T * lnGamma[i];
+        out[i] = now.enthalpy[i] - R * T * T * lnGamma[i];
       }
-      overSolvents(x, gasEnthalpy, 0, out);
+      overSolvents(x, now.gasEnthalpy, 0, out);
     },
     volumes(x, out) {
       out.fill(0);
-      for (let c = 0; c < condensables.length; c++) out[condensables[c]] = volume[condensables[c]];
-      overSolvents(x, gasVolume, 0, out);
+      for (let c = 0; c < condensables.length; c++) out[condensables[c]] = now.volume[condensables[c]];
+      overSolvents(x, now.gasVolume, 0, out);
     },
   };
   return { ...phase, byAmount: createLiquidByAmount(size, condensables, phase) };

@@ -75,6 +75,7 @@ export function createMixture(spec: MixtureSpec): Mixture {
   const excess = new Float64Array(size);
   const lnLiquid = new Float64Array(size);
   const y = new Float64Array(size);
+  const departure = { perKelvin: 0, perPascal: 0 };
 
   function total(stream: StreamState): number {
     let sum = 0;
@@ -147,6 +148,18 @@ export function createMixture(spec: MixtureSpec): Mixture {
     return sum;
   }
 
+  /** ∂H/∂T of the stream settled last where it is clear gas (see PhaseSplit.isClear) [W/K]; NaN elsewhere. */
+  function clearHeatCapacity(stream: StreamState): number {
+    if (!phases.isClear()) return Number.NaN;
+    const { temperatureK: T, pressurePa: P, flowsMolPerS } = stream;
+    idealGas.heatCapacities(T, ideal);
+    let sum = 0;
+    for (let i = 0; i < size; i++) sum += flowsMolPerS[i] * ideal[i];
+    const gasFlow = gasFractions(stream);
+    gas.enthalpyDepartureSlopes(T, P, y, departure);
+    return sum + gasFlow * departure.perKelvin;
+  }
+
   function settlePhases(stream: StreamState): void {
     stream.enthalpyW = enthalpy(stream);
   }
@@ -171,11 +184,12 @@ export function createMixture(spec: MixtureSpec): Mixture {
     settle,
     settlePhases,
     settleAtEnthalpy: (stream, enthalpyW) => {
-      solveState(stream, enthalpyW, 'enthalpy', settle, enthalpyOf);
+      solveState(stream, enthalpyW, 'enthalpy', settle, enthalpyOf, clearHeatCapacity);
       // The temperature is found to rounding; the enthalpy is what was asked for, so that balances close.
       if (total(stream) > 0) stream.enthalpyW = enthalpyW;
     },
-    settleAtEntropy: (stream, entropyWPerK) => solveState(stream, entropyWPerK, 'entropy', settle, entropy),
+    settleAtEntropy: (stream, entropyWPerK) =>
+      solveState(stream, entropyWPerK, 'entropy', settle, entropy, clearHeatCapacity),
     entropy,
     slopes: createStateSlopes(idealGas, gas, liquidPhase),
     volume: (stream) => {

@@ -3,12 +3,21 @@ import type { Role } from './component-roles.ts';
 import type { GasModel } from './gas-model.ts';
 import type { LiquidPhase } from './liquid-phase.ts';
 import { createSubstitution, SWING } from './phase-substitution.ts';
+import { createPureCondensate } from './pure-condensate.ts';
 
 /** Rounds after which the first drop or bubble has its composition well enough to tell which way it goes. */
 const MAX_ROUNDS = 50;
 
 /** A gas that does not dissolve makes no bubble below this mole fraction: the bubble would be rounding. */
 const NO_BUBBLE = 1e-13;
+
+/** A first drop that adds up to less than this is far from forming: 1e-6 of the temperature move the sum by some 1e-5. */
+const CLEAR = 0.99;
+/** What the temperature may fall by after a split that found clear gas [-]. */
+const CLEAR_SPAN = 1e-6;
+
+/** With less of the one component that condenses than this, what stays in the gas is solved for by itself. */
+const MOSTLY_GAS = 0.9;
 
 /** Shares the fluid of a stream between gas and liquid at given temperature and pressure. */
 export interface PhaseSplit {
@@ -20,6 +29,8 @@ export interface PhaseSplit {
    * @throws PassTrouble when the split does not settle
    */
   split(T: number, P: number, flows: Float64Array, liquid: Float64Array): number;
+  /** The last split found gas alone, so far from its dew point that 1e-6 of the temperature makes no dew. */
+  isClear(): boolean;
 }
 
 /**
@@ -41,11 +52,15 @@ export function createPhaseSplit(gas: GasModel, liquidPhase: LiquidPhase): Phase
   const lnPhi = new Float64Array(size);
   const lnLiquid = new Float64Array(size);
   const change = new Float64Array(size);
+  const gasFraction = createPureCondensate(gas);
+  const found = { clear: false };
 
   return {
+    isClear: () => found.clear,
     split(T, P, flows, liquid) {
       const total = overallFractions(flows, liquidPhase.roles, z);
       putAllInGas(flows, liquidPhase.roles, liquid);
+      found.clear = !liquidPhase.mayForm((1 - CLEAR_SPAN) * T, z);
       if (total === 0 || !liquidPhase.mayForm(T, z)) return 1;
       liquidPhase.at(T, P);
       const maybeGas = !gas.isLiquidLike(T, P, z);
@@ -53,6 +68,14 @@ export function createPhaseSplit(gas: GasModel, liquidPhase: LiquidPhase): Phase
       if (liquidIsStable(T, P)) {
         liquid.set(flows);
         return 0;
+      }
+      const k = liquidPhase.pureCondensate;
+      if (k >= 0 && maybeGas && z[k] < MOSTLY_GAS) {
+        const left = gasFraction(T, P, z, k, lnLiquid[k] - Math.log(P), lnPhi[k]);
+        if (left < z[k]) {
+          liquid[k] = ((z[k] - left) / (1 - left)) * total;
+          return (1 - z[k]) / (1 - left);
+        }
       }
       startFromDrop();
       if (!substitution.run(T, P)) throw unsettled(T, P);
@@ -110,6 +133,7 @@ export function createPhaseSplit(gas: GasModel, liquidPhase: LiquidPhase): Phase
       if (maybeGas && moved < last && (MAX_ROUNDS - round) * moved < -Math.log(sum)) break;
       last = moved;
     }
+    found.clear = maybeGas && sum <= CLEAR;
     return (maybeGas && sum <= 1) || !liquidPhase.isLiquid(T, drop);
   }
 

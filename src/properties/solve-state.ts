@@ -13,6 +13,11 @@ const LONGEST_STEP = 0.2;
 const MAX_SECANTS = 8;
 /** A secant that leaves more of the error than this has met a kink or a jump [-]. */
 const SECANT_LEAVES = 0.25;
+/**
+ * A gas is not settled again after a step of less than this share of T: what the curve of its heat capacity leaves of it
+ * is below the tolerance, even where that changes by a tenth per kelvin.
+ */
+const LAST_STEP = 2e-7;
 /** Points closer together than this share of T tell rounding, not the slope. */
 const LEAST_SPAN = 1e-7;
 
@@ -23,6 +28,8 @@ const LEAST_SPAN = 1e-7;
 interface Search {
   settle: (stream: StreamState) => void;
   value: (stream: StreamState) => number;
+  clearHeatCapacity: (stream: StreamState) => number;
+  isEntropy: boolean;
   wanted: number;
   tolerance: number;
   /** where the answer lies: below it `low`, above it `high`, NaN before one is met */
@@ -40,8 +47,9 @@ const searches = new WeakMap<StreamState, Search>();
 
 /**
  * Find the temperature at which a state function that rises with temperature (enthalpy or entropy at fixed
- * pressure) has a wanted value, starting from the stream's own temperature: by secants while they close in
- * fast, the first with the heat capacity of the stream's last search; otherwise a bracket is found by growing
+ * pressure) has a wanted value, starting from the stream's own temperature: by Newton's steps in a gas whose heat
+ * capacity is known, and by secants elsewhere while they close in fast, the first with the heat capacity of the stream's
+ * last search; otherwise a bracket is found by growing
  * steps and closed by regula falsi with halving of the stale end (Illinois). Where the function jumps (a pure
  * component boils) the two sides are mixed so that the value is met.
  *
@@ -49,6 +57,8 @@ const searches = new WeakMap<StreamState, Search>();
  * @param wanted  value to reach, in the unit of `value`
  * @param settle  from T, P, flows to phases and enthalpy
  * @param value  the state function of a settled stream
+ * @param clearHeatCapacity  heat capacity of the stream settled last [W/K] where it is gas that stays gas 1e-6 of the
+ *   temperature lower, NaN elsewhere; the last step then only moves its temperature and enthalpy
  * @throws PassTrouble when the value lies outside 20–3500 K
  * @source Dowell & Jarratt, BIT 11 (1971) 168–174 (the Illinois rule)
  */
@@ -58,6 +68,7 @@ export function solveState(
   name: 'enthalpy' | 'entropy',
   settle: (stream: StreamState) => void,
   value: (stream: StreamState) => number,
+  clearHeatCapacity: (stream: StreamState) => number = unknown,
 ): void {
   const { flowsMolPerS } = stream;
   let total = 0;
@@ -69,18 +80,23 @@ export function solveState(
   const search = searchOf(stream);
   search.settle = settle;
   search.value = value;
+  search.clearHeatCapacity = clearHeatCapacity;
+  search.isEntropy = name === 'entropy';
   search.wanted = wanted;
   const start = Math.min(Math.max(stream.temperatureK, LOWEST_K), HIGHEST_K);
   // A kelvin of any stream holds at least the heat of a monatomic gas: this is 1e-12 of the temperature.
   search.tolerance = 1e-12 * 2.5 * R * total * (name === 'enthalpy' ? start : 1);
   const error = errorAt(stream, search, start);
   if (Number.isNaN(error)) throw outOfReach(name, start);
-  if (Math.abs(error) <= search.tolerance) return;
+  // The step of a gas costs no settling: it is taken within the tolerance as well.
+  if (takesLastStep(stream, search, start, error) || Math.abs(error) <= search.tolerance) return;
   const perHeatCapacity = name === 'enthalpy' ? total : total / start;
   search.low = Number.NaN;
   search.high = Number.NaN;
-  search.slope = search.heatCapacity * perHeatCapacity || slopeAt(stream, search, start, error);
   narrow(search, start, error);
+  if (Number.isNaN(search.slope)) {
+    search.slope = search.heatCapacity * perHeatCapacity || slopeAt(stream, search, start, error);
+  }
   if (closesBySecants(stream, search, start, error)) {
     if (search.slope > 0) search.heatCapacity = search.slope / perHeatCapacity;
     return;
@@ -93,7 +109,9 @@ function searchOf(stream: StreamState): Search {
   if (known) return known;
   const search: Search = {
     settle: () => {},
-    value: () => Number.NaN,
+    value: unknown,
+    clearHeatCapacity: unknown,
+    isEntropy: false,
     wanted: Number.NaN,
     tolerance: Number.NaN,
     low: Number.NaN,
@@ -105,6 +123,24 @@ function searchOf(stream: StreamState): Search {
   };
   searches.set(stream, search);
   return search;
+}
+
+function unknown(): number {
+  return Number.NaN;
+}
+
+/**
+ * Where the stream just settled is clear gas, takes its slope, and the step along it where no other need follow.
+ * Leaves NaN as the slope elsewhere.
+ */
+function takesLastStep(stream: StreamState, search: Search, T: number, error: number): boolean {
+  const heatCapacity = search.clearHeatCapacity(stream);
+  search.slope = search.isEntropy ? heatCapacity / T : heatCapacity;
+  const way = -error / search.slope;
+  if (!(search.slope > 0 && Math.abs(way) <= LAST_STEP * T)) return false;
+  stream.temperatureK = T + way;
+  stream.enthalpyW += heatCapacity * way;
+  return true;
 }
 
 /** Settles the stream at a temperature; its value there less the one wanted. */
@@ -140,11 +176,15 @@ function closesBySecants(stream: StreamState, search: Search, start: number, err
     const next = Math.min(Math.max(T + way, LOWEST_K), HIGHEST_K);
     if (next <= search.low || next >= search.high) return false;
     const errorNext = errorAt(stream, search, next);
-    if (Math.abs(errorNext) <= search.tolerance) return true;
+    const slope = search.slope;
+    if (takesLastStep(stream, search, next, errorNext) || Math.abs(errorNext) <= search.tolerance)
+      return true;
+    const isKnown = !Number.isNaN(search.slope);
+    if (!isKnown) search.slope = slope;
     narrow(search, next, errorNext);
     // The first slope may be that of another pressure or composition: the second secant mends it.
     if (!(Math.abs(errorNext) < (step === 0 ? 1 : SECANT_LEAVES) * Math.abs(error))) return false;
-    if (Math.abs(next - T) > LEAST_SPAN * T) search.slope = (errorNext - error) / (next - T);
+    if (!isKnown && Math.abs(next - T) > LEAST_SPAN * T) search.slope = (errorNext - error) / (next - T);
     T = next;
     error = errorNext;
   }
