@@ -77,7 +77,7 @@ export const codes: Readonly<Record<string, string>> = {
   'bad-spread': 'a spread that cannot be drawn from',
   'no-spreads': 'an uncertainty is asked for where nothing is spread',
   'too-many-spreads': 'more spreads than the sampling has dimensions',
-  'shares-of-correlated': 'Sobol indices of spreads that move together',
+  'shares-of-correlated': 'shares of the variance are asked for of spreads that move together',
   'bad-ledger': 'an entry of the ledger that does not fit',
   'bad-set': 'a change that is not written PATH=VALUE',
   'set-and-aimed': 'a setting is set by --set or a case and moved by an aim',
