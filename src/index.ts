@@ -15,7 +15,7 @@ export { type FormatOptions, formatDiagnostic, formatDiagnostics } from './diagn
 export { flowsheetJsonSchema } from './flowsheet/json-schema.ts';
 export { type NumericSetting, numericSettings } from './flowsheet/numeric-settings.ts';
 export { readFlowsheet } from './flowsheet/read.ts';
-export type { Flowsheet, GasModelName, MethodName } from './model/flowsheet.ts';
+export type { Flowsheet, Formula, GasModelName, MethodName } from './model/flowsheet.ts';
 export type {
   AimResult,
   BlockResult,
@@ -39,7 +39,10 @@ export { markdownSheet } from './sheets/markdown.ts';
 export { type Renderer, type RenderOptions, renderers } from './sheets/renderers.ts';
 export type { SheetOptions } from './sheets/sheet.ts';
 export { textSheet } from './sheets/text.ts';
+export { uncertaintyText } from './sheets/uncertainty.ts';
 export { type Compared, type Comparison, compare } from './study/compare.ts';
+export { keyFigureFormulas } from './study/key-figures.ts';
+export { type Uncertainty, type UncertaintyOptions, uncertainty } from './study/uncertainty.ts';
 export { type Balance, type BalanceOptions, balance } from './tally/balance.ts';
 export { type Lever, type Levers, levers } from './tally/levers.ts';
 export { type Plan, planFlowsheet } from './tally/plan.ts';

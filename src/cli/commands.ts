@@ -37,6 +37,13 @@ export const commands: ReadonlyMap<string, CommandEntry> = new Map([
     },
   ],
   [
+    'uncertainty',
+    {
+      summary: 'percentiles of the figures from the spreads of the file, and what causes them',
+      load: async () => (await import('./uncertainty.ts')).uncertaintyCommand(),
+    },
+  ],
+  [
     'sheet',
     {
       summary: 'close the loop and write its sheet to files (.csv, .md)',

@@ -1,0 +1,33 @@
+import type { Uncertainty } from '../study/uncertainty.ts';
+import { csvCell } from './csv.ts';
+
+/**
+ * Every case as one line: number, what was drawn in natural units, what was recorded, and how closing went. The cases behind
+ * the samples asked for are those of the Sobol indices.
+ */
+export function uncertaintyCsv({ spreads, figures, table }: Uncertainty): string {
+  const heads = [
+    'sample',
+    ...spreads.map(({ setting: { path, unit } }) => (unit === '1' ? path : `${path} [${unit}]`)),
+    ...figures.map(({ expression }) => expression),
+    'converged',
+    'passes',
+    'note',
+  ];
+  const lines = [heads.map(csvCell).join(',')];
+  for (let row = 0; row < table.rows; row++) {
+    lines.push(
+      [
+        row + 1,
+        ...spreads.map(({ setting }, d) => table.drawn[row * spreads.length + d] / setting.unitSI),
+        ...figures.map((_, r) => table.found[row * figures.length + r]),
+        table.converged[row] === 1 ? 'true' : 'false',
+        table.passes[row],
+        table.notes[row],
+      ]
+        .map(csvCell)
+        .join(','),
+    );
+  }
+  return `${lines.join('\r\n')}\r\n`;
+}

@@ -1,0 +1,217 @@
+import type { Percentile } from '../study/statistics.ts';
+import type { DrawnSpread, FigureSpread, Share, Uncertainty } from '../study/uncertainty.ts';
+import { formatQuantity } from '../units/quantity.ts';
+import { significant } from './numbers.ts';
+import { plainText, wrapped } from './plain.ts';
+import { noPaint, type SheetOptions } from './sheet.ts';
+import { aligned, columnGroups, pickColumns } from './table.ts';
+
+const WIDTH = 100;
+
+/** What the spreads make of the figures: percentiles, how sure they are, what causes them, and what did not close. */
+export function uncertaintyText(found: Uncertainty, options: SheetOptions = {}): string {
+  const paint = options.paint ?? noPaint;
+  const { flowsheet, figures } = found;
+  const name = plainText(flowsheet.title) || 'Untitled flowsheet';
+  const section = (title: string, lines: readonly string[]) =>
+    lines.length === 0 ? [] : ['', paint.head(title), ...lines];
+  const failed = failureLines(found);
+  return [
+    paint.head(name),
+    '='.repeat(Math.min(WIDTH, [...name].length)),
+    `case: ${flowsheet.caseName === null ? 'as in the file' : plainText(flowsheet.caseName)}`,
+    sampleLine(found),
+    ...section('What was spread', spreadLines(found)),
+    ...section('What becomes of the figures', figureLines(figures)),
+    ...section('How far chance may have moved the percentiles, 95 % confidence', rangeLines(figures)),
+    ...section('What each figure follows: rank correlation, and its square as a share', rankLines(figures)),
+    ...(found.extraCases === 0
+      ? []
+      : section(
+          `Sobol indices: share of the variance alone / with others, from ${found.extraCases} extra cases`,
+          sobolLines(figures),
+        )),
+    ...(failed.length === 0
+      ? []
+      : ['', paint.alarm('Did not close, and has no part in the numbers above'), ...failed]),
+    '',
+  ].join('\n');
+}
+
+function sampleLine({ options, failed, extraCases, spreads }: Uncertainty): string {
+  const { samples, method, seed } = options;
+  const closed = failed === 0 ? 'all closed' : `${samples - failed} closed, ${failed} did not`;
+  const extra = extraCases === 0 ? '' : `; ${extraCases} extra cases for the Sobol indices`;
+  const how = method === 'sobol' ? 'Sobol sequence' : 'Latin hypercube';
+  return `${samples} samples of ${spreads.length} ${spreads.length === 1 ? 'spread' : 'spreads'} (${how}, seed ${seed}), ${closed}${extra}`;
+}
+
+function spreadLines({ spreads, flowsheet }: Uncertainty): string[] {
+  const notes = [
+    ...flowsheet.correlations.map(
+      ({ between: [one, other], value }) => `${one} and ${other} move together: rank correlation ${value}.`,
+    ),
+    ...spreads.flatMap(cutNotes),
+    ...(spreads.some(({ setting }) => setting.path.includes('.composition.'))
+      ? [
+          'A part of a composition keeps its drawn share; the parts that are not spread make room in proportion.',
+        ]
+      : []),
+  ];
+  return [
+    ...aligned(
+      spreads.map((one) => [plainText(one.spread.path), one.spread.shape.kind, shapeText(one)]),
+      { left: [0, 1, 2], indent: 2 },
+    ),
+    ...notes.flatMap((note) => wrapped(note, WIDTH, '  ', '  ')),
+  ];
+}
+
+function cutNotes({ spread, setting, distribution }: DrawnSpread): string[] {
+  const { low, high } = setting.bounds;
+  const note = (share: number, side: string, bound: number) =>
+    share < 1e-12
+      ? []
+      : [
+          `${spread.path} is cut off ${side} ${valueText(setting, bound)}: ${significant(100 * share, 2)} % of it lay beyond.`,
+        ];
+  return [...note(distribution.cutBelow, 'below', low), ...note(distribution.cutAbove, 'above', high)];
+}
+
+function shapeText({ spread: { shape }, setting }: DrawnSpread): string {
+  const value = (x: number) => valueText(setting, x);
+  switch (shape.kind) {
+    case 'normal':
+      return `mean ${value(shape.mean)}, sd ${significant(shape.sd / setting.unitSI, 3)}${unitText(setting.unit)}`;
+    case 'uniform':
+      return `${value(shape.low)} to ${value(shape.high)}`;
+    case 'triangular':
+      return `${value(shape.low)}, mostly ${value(shape.mode)}, up to ${value(shape.high)}`;
+    case 'log-normal':
+      return `median ${value(shape.median)}, a factor of ${significant(shape.factor, 4)} for one sd`;
+  }
+}
+
+function valueText({ dimension, unit, unitSI, path }: DrawnSpread['setting'], value: number): string {
+  if (path.includes('.composition.')) return `${Number((value / unitSI).toPrecision(6))} %`;
+  if (dimension === 'temperature') return formatQuantity(value, dimension);
+  return `${Number((value / unitSI).toPrecision(6))}${unitText(unit)}`;
+}
+
+function unitText(unit: string): string {
+  return unit === '1' ? '' : ` ${unit}`;
+}
+
+function shortName(expression: string): string {
+  return plainText(expression).replace(/^figures\.(?=[\w.]+$)/, '');
+}
+
+function figureLines(figures: readonly FigureSpread[]): string[] {
+  const percents = figures.find(({ summary }) => summary !== null)?.summary?.percentiles ?? [];
+  const partial = figures.some(({ summary }) => summary === null || summary.count < mostCounted(figures));
+  const rows = [
+    [
+      'figure',
+      'in the file',
+      'mean',
+      'sd',
+      ...percents.map(({ percent }) => `${percent} %`),
+      ...(partial ? ['cases'] : []),
+    ],
+    ...figures.map(({ expression, asInFile, summary }) => [
+      shortName(expression),
+      significant(asInFile, 4),
+      significant(summary?.mean, 4),
+      significant(summary?.sd, 3),
+      ...percents.map((_, p) => significant(summary?.percentiles[p].value, 4)),
+      ...(partial ? [String(summary?.count ?? 0)] : []),
+    ]),
+  ];
+  return inGroups(rows);
+}
+
+function mostCounted(figures: readonly FigureSpread[]): number {
+  return Math.max(...figures.map(({ summary }) => summary?.count ?? 0));
+}
+
+function rangeLines(figures: readonly FigureSpread[]): string[] {
+  const known = figures.filter(({ summary }) => summary !== null);
+  if (known.length === 0) return [];
+  const rows = [
+    ['figure', ...known[0].summary!.percentiles.map(({ percent }) => `${percent} %`)],
+    ...known.map(({ expression, summary }) => [
+      shortName(expression),
+      ...summary!.percentiles.map(rangeText),
+    ]),
+  ];
+  return inGroups(rows);
+}
+
+/** The wider side of the range of a percentile. */
+function rangeText({ value, low, high }: Percentile): string {
+  return low === null || high === null ? '-' : `± ${significant(Math.max(value - low, high - value), 2)}`;
+}
+
+/** Shares of less than this are told as a rest [-]. */
+const SMALL_SHARE = 0.005;
+
+/** For each figure the spreads that it follows, the strongest first. */
+function rankLines(figures: readonly FigureSpread[]): string[] {
+  return causeLines(
+    figures,
+    ({ rankCorrelation }) => (rankCorrelation ?? 0) ** 2,
+    ({ rankCorrelation }) => {
+      const sign = rankCorrelation! < 0 ? '-' : '+';
+      return `${sign}${Math.abs(rankCorrelation!).toFixed(2)}\u00a0(${(100 * rankCorrelation! ** 2).toFixed(0)}\u00a0%)`;
+    },
+  );
+}
+
+function sobolLines(figures: readonly FigureSpread[]): string[] {
+  return causeLines(
+    figures,
+    ({ sobol }) => Math.max(sobol?.first ?? 0, sobol?.total ?? 0),
+    ({ sobol }) => {
+      const { first, firstError, total, totalError } = sobol!;
+      const share = (value: number, error: number) =>
+        `${(100 * value).toFixed(0)}\u00a0±\u00a0${(100 * error).toFixed(0)}`;
+      return `${share(first, firstError)} / ${share(total, totalError)}\u00a0%`.replaceAll(
+        ' / ',
+        '\u00a0/\u00a0',
+      );
+    },
+  );
+}
+
+function causeLines(
+  all: readonly FigureSpread[],
+  sizeOf: (share: Share) => number,
+  text: (share: Share) => string,
+): string[] {
+  const figures = all.filter(({ summary }) => summary !== null);
+  const names = figures.map(({ expression }) => shortName(expression));
+  const width = Math.min(30, Math.max(...names.map((name) => name.length)));
+  return figures.flatMap(({ shares }, f) => {
+    const large = shares.filter((share) => sizeOf(share) >= SMALL_SHARE);
+    const sorted = large.toSorted((a, b) => sizeOf(b) - sizeOf(a));
+    const list = sorted.map((share) => `${plainText(share.path)}\u00a0${text(share)}`).join(', ');
+    const lead = `  ${names[f].padEnd(width)}  `;
+    return wrapped(list === '' ? 'follows none of them' : list, WIDTH, lead, ' '.repeat(width + 4));
+  });
+}
+
+/** A table broken into tables that fit the width, a blank line between them. */
+function inGroups(rows: readonly (readonly string[])[]): string[] {
+  return columnGroups(rows, WIDTH - 2).flatMap((columns, g) => [
+    ...(g === 0 ? [] : ['']),
+    ...aligned(pickColumns(rows, columns), { indent: 2 }),
+  ]);
+}
+
+function failureLines({ failures, options }: Uncertainty): string[] {
+  return failures.flatMap(({ reason, count, first }) => {
+    const where = first > options.samples ? `extra case ${first - options.samples}` : `sample ${first}`;
+    const lead = `  ${count} x  `;
+    return wrapped(`${plainText(reason)}; first in ${where}`, WIDTH, lead, ' '.repeat(lead.length));
+  });
+}
