@@ -23,6 +23,13 @@ export const commands: ReadonlyMap<string, CommandEntry> = new Map([
     },
   ],
   [
+    'sweep',
+    {
+      summary: 'a table of closed cases over a grid of settings',
+      load: async () => (await import('./sweep.ts')).sweepCommand(),
+    },
+  ],
+  [
     'levers',
     {
       summary: 'what one unit more of each setting does to every key figure',

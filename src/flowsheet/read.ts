@@ -18,6 +18,7 @@ import { createPlaceOf } from './place-of.ts';
 import { readReactions } from './reactions.ts';
 import { fileKeys } from './schema.ts';
 import { readSolve } from './solve.ts';
+import { readStudy } from './study.ts';
 import { readStreams } from './topology.ts';
 import { readYaml } from './yaml-document.ts';
 import { child, entriesOf, scalarsOf, type YamlNode } from './yaml-tree.ts';
@@ -100,6 +101,7 @@ function readTree(
   const ownFigures = entriesOf(child(root, 'figures')).map((e) => e.key);
   const aims = readAims(reading, world === null ? null : { ...world, figures: ownFigures }, settings);
   const solve = readSolve(reading, named ? streams : null);
+  const study = readStudy(reading, world === null ? null : { ...world, figures: ownFigures });
   if (
     !sound ||
     findings.list.length > 0 ||
@@ -127,6 +129,7 @@ function readTree(
     cases,
     figures,
     solve,
+    study,
     assumptions: [
       ...changes
         .filter(({ pathPlace }) => pathPlace.file === SET_FILE)
