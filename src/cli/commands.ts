@@ -30,6 +30,13 @@ export const commands: ReadonlyMap<string, CommandEntry> = new Map([
     },
   ],
   [
+    'gather',
+    {
+      summary: 'join the slices of a sweep that several machines made',
+      load: async () => (await import('./gather.ts')).gatherCommand(),
+    },
+  ],
+  [
     'levers',
     {
       summary: 'what one unit more of each setting does to every key figure',

@@ -248,7 +248,7 @@ function checkPart({ part, of }: Part, { paths, size, pathRows }: Grid): void {
     'bad-part',
     `A grid of ${size} ${size === 1 ? 'point' : 'points'} has no ${of} slices.`,
     `${pathRows} points after one another start from their neighbours and stay together`,
-    `ask for ${paths} slices at most`,
+    paths === 1 ? 'leave --part out' : `ask for ${paths} slices at most`,
     `${part}/${of}`,
   );
 }
