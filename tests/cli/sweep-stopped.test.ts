@@ -94,7 +94,15 @@ describe('a stopped sweep', () => {
       });
     const { status, stderr } = full('');
     expect({ status, made: existsSync(at('full.csv')) }).toEqual({ status: 2, made: false });
-    expect(stderr.replace(/ {3}1 \| .*\n.*\n/, '')).toMatchInlineSnapshot();
+    expect(stderr.replace(/ {3}1 \| .*\n.*\n/, '')).toMatchInlineSnapshot(`
+      "command line:1:131 error cannot-write
+        full.csv.part cannot be written.
+        why:  a file may not grow any larger here; what is done so far is kept
+        mend: make room and repeat the command with --resume
+
+      1 error
+      "
+    `);
     expect(statSync(at('full.csv.part')).size).toBeGreaterThan(50 * 1024);
     expect(full('--resume').status).toBe(2);
     expect(run(sweep('full.csv', '--resume'))).toMatchObject({ code: 0, err: '' });
@@ -135,7 +143,15 @@ describe('a stopped sweep', () => {
     const before = readFileSync(at('again.csv.part'));
     const { code, err } = run(sweep('again.csv'));
     expect(code).toBe(2);
-    expect(shortened(err)).toMatchInlineSnapshot();
+    expect(shortened(err)).toMatchInlineSnapshot(`
+      "command line error unfinished-sweep
+        again.csv.part holds a sweep that was not finished.
+        why:  it would be lost
+        mend: add --resume to go on with it, or delete it to begin anew
+
+      1 error
+      "
+    `);
     expect(readFileSync(at('again.csv.part')).equals(before)).toBe(true);
   });
 
@@ -145,12 +161,28 @@ describe('a stopped sweep', () => {
     const flowsheet = run(sweep('other.csv', '--resume'));
     writeFileSync(at('loop.yaml'), reference);
     expect(flowsheet.code).toBe(2);
-    expect(shortened(flowsheet.err)).toMatchInlineSnapshot();
+    expect(shortened(flowsheet.err)).toMatchInlineSnapshot(`
+      "command line error other-sweep
+        other.csv.part belongs to another sweep.
+        why:  the flowsheet has changed since
+        mend: repeat the command with the flowsheet and options it was begun with, or delete it to begin anew
+
+      1 error
+      "
+    `);
     const options = run(
       sweep('other.csv', '--resume', '--record', 'figures.recycle_ratio', '--set', 'gas=pr'),
     );
     expect(options.code).toBe(2);
-    expect(shortened(options.err)).toMatchInlineSnapshot();
+    expect(shortened(options.err)).toMatchInlineSnapshot(`
+      "command line error other-sweep
+        other.csv.part belongs to another sweep.
+        why:  --set was nothing, and is gas=pr; --record was figures.production_t_d, figures.overall_yield.value, figures.recycle_ratio, figures.purge.fraction_of_makeup, figures.power_kW.total, and is figures.recycle_ratio
+        mend: repeat the command with the flowsheet and options it was begun with, or delete it to begin anew
+
+      1 error
+      "
+    `);
   });
 
   test('whose side file was damaged in the middle loses only what stands behind the damage', () => {
@@ -166,7 +198,15 @@ describe('a stopped sweep', () => {
     writeFileSync(at('strange.csv.part'), 'my own notes\n');
     const { code, err } = run(sweep('strange.csv', '--resume'));
     expect(code).toBe(2);
-    expect(shortened(err)).toMatchInlineSnapshot();
+    expect(shortened(err)).toMatchInlineSnapshot(`
+      "command line error other-sweep
+        strange.csv.part is no unfinished sweep.
+        why:  it does not begin as one
+        mend: delete it, or give --out another name
+
+      1 error
+      "
+    `);
     expect(readFileSync(at('strange.csv.part'), 'utf8')).toBe('my own notes\n');
     rmSync(at('strange.csv.part'));
   });

@@ -191,14 +191,94 @@ describe('slices', () => {
       expect({ code, made: existsSync(at('g.csv')) }).toEqual({ code: 2, made: false });
       return err;
     };
-    expect(said('s1.csv', 's3.csv')).toMatchInlineSnapshot();
-    expect(said('half.csv', 's2.csv', 's3.csv')).toMatchInlineSnapshot();
-    expect(said('s1.csv', 'other.csv', 's3.csv')).toMatchInlineSnapshot();
-    expect(said('s1.csv', 'cut.csv', 's3.csv')).toMatchInlineSnapshot();
-    expect(said('s1.csv', 'hand.csv', 's3.csv')).toMatchInlineSnapshot();
-    expect(said('s1.csv', 'whole.csv')).toMatchInlineSnapshot();
-    expect(said('nowhere.csv')).toMatchInlineSnapshot();
-    expect(said('s1.csv', 's2.ndjson')).toMatchInlineSnapshot();
+    expect(said('s1.csv', 's3.csv')).toMatchInlineSnapshot(`
+      "command line:1:25 error slices-missing
+        No slice holds rows 41 to 80.
+         1 | looptally gather s1.csv s3.csv --out g.csv
+           |                         ^^^^^^
+        why:  a table with a gap would pass for the whole
+        mend: name the slice that holds them, or calculate it
+
+      1 error
+      "
+    `);
+    expect(said('half.csv', 's2.csv', 's3.csv')).toMatchInlineSnapshot(`
+      "command line:1:27 error slices-overlap
+        s2.csv and half.csv overlap.
+         1 | looptally gather half.csv s2.csv s3.csv --out g.csv
+           |                           ^^^^^^
+        why:  rows 41 to 56 are in both
+        mend: leave one of them out
+
+      1 error
+      "
+    `);
+    expect(said('s1.csv', 'other.csv', 's3.csv')).toMatchInlineSnapshot(`
+      "command line:1:25 error other-sweep
+        other.csv and s1.csv are slices of different sweeps.
+         1 | looptally gather s1.csv other.csv s3.csv --out g.csv
+           |                         ^^^^^^^^^
+        why:  they were made from another flowsheet, by other options or by another version
+        mend: calculate them again with one command
+
+      1 error
+      "
+    `);
+    expect(said('s1.csv', 'cut.csv', 's3.csv')).toMatchInlineSnapshot(`
+      "command line:1:25 error no-slice
+        cut.csv is no slice of a sweep, or not all of one.
+         1 | looptally gather s1.csv cut.csv s3.csv --out g.csv
+           |                         ^^^^^^^
+        why:  a slice ends with the rows it holds and the sweep it belongs to; a whole table needs no joining
+        mend: make it with looptally sweep ... --part k/n --out NAME
+
+      1 error
+      "
+    `);
+    expect(said('s1.csv', 'hand.csv', 's3.csv')).toMatchInlineSnapshot(`
+      "command line:1:25 error no-slice
+        hand.csv is not as it was written.
+         1 | looptally gather s1.csv hand.csv s3.csv --out g.csv
+           |                         ^^^^^^^^
+        why:  its rows do not fit its checksum
+        mend: calculate this slice again
+
+      1 error
+      "
+    `);
+    expect(said('s1.csv', 'whole.csv')).toMatchInlineSnapshot(`
+      "command line:1:25 error no-slice
+        whole.csv is no slice of a sweep, or not all of one.
+         1 | looptally gather s1.csv whole.csv --out g.csv
+           |                         ^^^^^^^^^
+        why:  a slice ends with the rows it holds and the sweep it belongs to; a whole table needs no joining
+        mend: make it with looptally sweep ... --part k/n --out NAME
+
+      1 error
+      "
+    `);
+    expect(said('nowhere.csv')).toMatchInlineSnapshot(`
+      "command line:1:18 error cannot-read
+        nowhere.csv cannot be read.
+         1 | looptally gather nowhere.csv --out g.csv
+           |                  ^^^^^^^^^^^
+        why:  there is no such file
+        mend: check its name
+
+      1 error
+      "
+    `);
+    expect(said('s1.csv', 's2.ndjson')).toMatchInlineSnapshot(`
+      "command line:1:25 error bad-output
+        s2.ndjson and g.csv are not of one kind.
+         1 | looptally gather s1.csv s2.ndjson --out g.csv
+           |                         ^^^^^^^^^
+        why:  slices are joined as they are
+        mend: give --out the ending .ndjson
+
+      1 error
+      "
+    `);
   });
 
   test('are made by GNU parallel and joined', ({ skip }) => {
