@@ -42,11 +42,11 @@ const banner = `#!/usr/bin/env node
 import { createRequire as looptallyCreateRequire } from 'node:module';
 const require = looptallyCreateRequire(import.meta.url);`;
 
-/** Bundle the command line into a folder: cli.js and chunks beside it. */
+/** Bundle the command line into a folder: cli.js, the worker of sweeps and chunks beside it. */
 export async function buildCli(folder) {
   const { metafile } = await build({
     ...shared,
-    entryPoints: { cli: 'src/cli/main.ts' },
+    entryPoints: { cli: 'src/cli/main.ts', 'sweep-worker': 'src/cli/sweep-worker.ts' },
     outdir: folder,
     chunkNames: 'chunks/[name]-[hash]',
     banner: { js: banner },

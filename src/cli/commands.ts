@@ -23,6 +23,20 @@ export const commands: ReadonlyMap<string, CommandEntry> = new Map([
     },
   ],
   [
+    'sweep',
+    {
+      summary: 'a table of closed cases over a grid of settings',
+      load: async () => (await import('./sweep.ts')).sweepCommand(),
+    },
+  ],
+  [
+    'gather',
+    {
+      summary: 'join the slices of a sweep that several machines made',
+      load: async () => (await import('./gather.ts')).gatherCommand(),
+    },
+  ],
+  [
     'levers',
     {
       summary: 'what one unit more of each setting does to every key figure',

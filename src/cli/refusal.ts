@@ -53,12 +53,15 @@ export function usageRefusal(
 
 /** The same for several faults at once. */
 export function usageRefusals(faults: readonly UsageFault[], exitCode: number = exitCodes.badInput): Refusal {
-  const diagnostics = faults.map(({ code, what, why, mend, at, offset = 0, length }): Diagnostic => {
-    const place = placeOnCommandLine(at);
-    const where = { ...place, column: place.column + offset, length: length ?? place.length };
-    return { code, severity: 'error', where, what, why, mend };
-  });
-  return new Refusal(diagnostics, commandLine(), exitCode);
+  return new Refusal(faults.map(usageDiagnostic), commandLine(), exitCode);
+}
+
+/** What is wrong with an argument, as a finding in the text of the command line. */
+export function usageDiagnostic(fault: UsageFault): Diagnostic {
+  const { code, what, why, mend, at, offset = 0, length } = fault;
+  const place = placeOnCommandLine(at);
+  const where = { ...place, column: place.column + offset, length: length ?? place.length };
+  return { code, severity: 'error', where, what, why, mend };
 }
 
 /** Run a calculation on a flowsheet; what it says about the user's input is told with the lines of the file. */
@@ -73,7 +76,8 @@ export function aboutSource<T>(source: Source, calculate: () => T): T {
 
 const COMMAND_LINE = 'command line';
 
-function commandLine(): Source {
+/** The command line as it was typed, for messages to point into. */
+export function commandLine(): Source {
   return { name: COMMAND_LINE, text: wordsTyped().map(shown).join(' ') };
 }
 

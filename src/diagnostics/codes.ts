@@ -88,6 +88,17 @@ export const codes: Readonly<Record<string, string>> = {
   'unknown-figure': 'a name of a formula that leads to no number',
   'unknown-setting': 'a path that leads to no setting',
 
+  // Sweeps
+  'bad-note': 'a sentence of a study with a blank that stands for nothing',
+  'bad-part': 'a slice that the grid does not have',
+  'bad-range': 'values of a setting that cannot be read or are none',
+  'grid-too-large': 'a grid of more points than can be meant or calculated',
+  'no-slice': 'a file that is no slice of a sweep, or not all of one',
+  'other-sweep': 'a side file or slice of another flowsheet or other options',
+  'slices-missing': 'rows that no slice holds',
+  'slices-overlap': 'rows that two slices hold',
+  'unfinished-sweep': 'a side file that would be lost',
+
   // While the loop is closed
   'approach-out-of-reach': 'the inlets of an exchanger are closer than the approach it is to keep',
   'adiabatic-outlet': 'no outlet temperature fits the heat balance of a reactor',

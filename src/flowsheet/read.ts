@@ -20,6 +20,7 @@ import { readReactions } from './reactions.ts';
 import { fileKeys } from './schema.ts';
 import { readSolve } from './solve.ts';
 import { readSpreads, spreadableSettings } from './spreads.ts';
+import { readStudy } from './study.ts';
 import { readStreams } from './topology.ts';
 import { readYaml } from './yaml-document.ts';
 import { child, entriesOf, scalarsOf, type YamlNode } from './yaml-tree.ts';
@@ -120,6 +121,7 @@ function readTree(
   const spreads = readSpreads(reading, spreadable, aims);
   const correlations = readCorrelations(reading, spreads);
   const solve = readSolve(reading, named ? streams : null);
+  const study = readStudy(reading, world === null ? null : { ...world, figures: ownFigures });
   if (
     !sound ||
     findings.list.length > 0 ||
@@ -149,6 +151,7 @@ function readTree(
     spreads: spreads.spreads,
     correlations,
     solve,
+    study,
     assumptions: [
       ...changes
         .filter(({ pathPlace }) => pathPlace.file === SET_FILE)

@@ -128,6 +128,18 @@ export const solveSchema = z.strictObject({
   tear: z.union([z.array(z.string()), z.string().transform((tag) => [tag])]).optional(),
 });
 
+export const studySchema = z.strictObject({
+  over: z.record(z.string(), bound).meta({
+    description: 'settings and the values they take, the last one running fastest',
+    examples: [{ 'condenser.temperature': '-25 degC..10 degC:8', 'purge.fractions.bleed': '1 %, 2 %, 5 %' }],
+  }),
+  record: z.array(bound).optional().meta({ description: 'formulas read out of every case' }),
+  note: z
+    .union([z.array(z.string()), z.string().transform((line) => [line])])
+    .optional()
+    .meta({ description: 'printed after the table; {last COLUMN} stands for a number of it' }),
+});
+
 /** The parts of the file that are one value each. */
 export const headerShape = {
   looptally: z.literal(1).meta({ description: 'version of this format' }),
@@ -170,6 +182,7 @@ export const fileSchema = z.strictObject({
     .meta({ description: 'what is not known for sure, by the path of a setting or constant' }),
   correlations: z.array(correlationSchema).optional(),
   solve: solveSchema.optional(),
+  study: studySchema.optional(),
 });
 
 /** Keys of the file in the order they are usually written. */

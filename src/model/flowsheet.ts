@@ -86,6 +86,32 @@ export interface SolveSpec {
   readonly tear: readonly string[];
 }
 
+/** A place in a sentence about a sweep where a number of its table goes. */
+export interface StudyBlank {
+  /** first, last: row of the table; least, most: of the column; ratio: last to first; at least, at most: of another column */
+  readonly which: 'first' | 'last' | 'least' | 'most' | 'ratio' | 'at least' | 'at most';
+  /** path of a setting that is swept, or an expression that is recorded */
+  readonly column: string;
+  /** the other column of `at least` and `at most`, else the same */
+  readonly of: string;
+  /** shown behind the number; % multiplies a fraction by 100 */
+  readonly unit: string;
+}
+
+/** A sweep that is written down in the file. */
+export interface StudySpec {
+  readonly over: readonly {
+    readonly path: string;
+    /** the values as written */
+    readonly text: string;
+    /** where a part of that text stands in the file */
+    readonly placeInside: (offset: number, length: number) => Place;
+  }[];
+  readonly record: readonly Formula[];
+  /** sentences that are printed after the table: text and blanks by turns */
+  readonly note: readonly (readonly (string | StudyBlank)[])[];
+}
+
 /** A checked flowsheet: every name resolved, every value in SI. */
 export interface Flowsheet {
   readonly file: string;
@@ -108,6 +134,8 @@ export interface Flowsheet {
   readonly spreads: readonly Spread[];
   readonly correlations: readonly Correlation[];
   readonly solve: SolveSpec;
+  /** null where the file has no study */
+  readonly study: StudySpec | null;
   /** defaults that were filled in while reading, in plain sentences */
   readonly assumptions: readonly string[];
   /** where a part of the flowsheet stands in the file: `blocks.condenser.temperature`, `streams.S2`, ... */

@@ -9,7 +9,7 @@ import { readTears, tearSize, writeTears } from '../tally/tears.ts';
 import { createPrediction } from './prediction.ts';
 
 /** Passes that a neighbour's answer may take as a start before the case begins again at the feeds. */
-const WARM_PASSES = 40;
+const WARM_PASSES = 20;
 
 export interface CaseRunnerOptions {
   /** paths of the settings that are moved, e.g. condenser.temperature */

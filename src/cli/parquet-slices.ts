@@ -1,0 +1,71 @@
+import { asyncBufferFromFile, type FileMetaData, parquetMetadataAsync, parquetReadObjects } from 'hyparquet';
+import type { PathTable } from '../study/sweep.ts';
+import { createParquetSink, SLICE_KEY } from './parquet-file.ts';
+import { noSlice, type Slice } from './slice-file.ts';
+import { type SliceMark, writeRenamed } from './table-file.ts';
+
+/** Rows that are unpacked at once. */
+const STEP_ROWS = 5000;
+
+/** @throws Refusal where the file is no slice */
+export async function openParquetSlice(path: string): Promise<Slice> {
+  const metadata = await metadataOf(path);
+  const mark = metadata?.key_value_metadata?.find(({ key }) => key === SLICE_KEY)?.value;
+  if (metadata === null || mark === undefined) throw noSlice(path);
+  return {
+    path,
+    mark: JSON.parse(mark) as SliceMark,
+    head: JSON.stringify(headsOf(metadata)),
+    copyRows() {
+      throw new Error('rows of a Parquet slice are not copied');
+    },
+  };
+}
+
+/** Unpack the slices and pack them again as the whole sweep would have been. */
+export async function joinParquet(slices: readonly Slice[], out: string): Promise<void> {
+  await writeRenamed(out, async (write) => {
+    const sink = createParquetSink(JSON.parse(slices[0]!.head), write);
+    for (const { path, mark } of slices) {
+      const file = await asyncBufferFromFile(path);
+      const metadata = await parquetMetadataAsync(file);
+      const rows = mark.last - mark.first + 1;
+      for (let rowStart = 0; rowStart < rows; rowStart += STEP_ROWS) {
+        const rowEnd = Math.min(rowStart + STEP_ROWS, rows);
+        sink.add(tableOf(await parquetReadObjects({ file, metadata, rowStart, rowEnd }), headsOf(metadata)));
+      }
+    }
+    sink.end(null);
+  });
+}
+
+async function metadataOf(path: string): Promise<FileMetaData | null> {
+  const file = await asyncBufferFromFile(path);
+  try {
+    return await parquetMetadataAsync(file);
+  } catch {
+    return null; // no Parquet file, or the beginning of one
+  }
+}
+
+function headsOf({ schema }: FileMetaData): string[] {
+  return schema.slice(1).map(({ name }) => name);
+}
+
+function tableOf(rows: Record<string, unknown>[], heads: readonly string[]): PathTable {
+  const numbers = heads.slice(0, -3);
+  const cells = new Float64Array(rows.length * numbers.length);
+  rows.forEach((row, r) => {
+    numbers.forEach((name, c) => {
+      cells[r * numbers.length + c] = (row[name] as number | null) ?? Number.NaN;
+    });
+  });
+  return {
+    path: 0,
+    rows: rows.length,
+    cells,
+    converged: Uint8Array.from(rows, ({ converged }) => Number(converged)),
+    passes: Int32Array.from(rows, ({ passes }) => Number(passes)),
+    notes: rows.map(({ note }) => String(note)),
+  };
+}

@@ -1,0 +1,99 @@
+import { existsSync } from 'node:fs';
+import { availableParallelism } from 'node:os';
+import { fileURLToPath } from 'node:url';
+import { Worker } from 'node:worker_threads';
+import type { PathTable } from '../study/sweep.ts';
+import { openJob, type SweepJob } from './sweep-job.ts';
+
+/** Without --workers: so long the first paths are made here, and what is left must take so long to start workers [ms]. */
+const ALONE_MS = 400;
+const WORTH_MS = 1500;
+/** Paths that may be finished ahead of the one that is written next, for each worker. */
+const AHEAD = 4;
+
+export interface PathsWanted {
+  /** paths [from, to) */
+  readonly from: number;
+  readonly to: number;
+  /** worker threads; undefined: as many as there are processors, where that is worth it */
+  readonly workers: number | undefined;
+}
+
+/** Make the paths of a job and hand them over in their order, whoever finishes first. */
+export async function makePaths(
+  job: SweepJob,
+  wanted: PathsWanted,
+  take: (table: PathTable) => void,
+): Promise<void> {
+  const { to } = wanted;
+  let next = wanted.from;
+  let workers = wanted.workers ?? Number.POSITIVE_INFINITY;
+  const entry = workerEntry();
+  if (workers === 1 || entry === null || wanted.workers === undefined) {
+    const sweep = await openJob(job);
+    const began = performance.now();
+    while (next < to) {
+      take(sweep(next++));
+      // Signals and the progress bar have their turn between two paths.
+      await new Promise(setImmediate);
+      if (wanted.workers !== undefined || entry === null) continue;
+      const spent = performance.now() - began;
+      if (spent > ALONE_MS && (spent / (next - wanted.from)) * (to - next) > WORTH_MS) break;
+    }
+    workers = availableParallelism();
+  }
+  if (next < to) await withWorkers(job, entry!, next, to, Math.min(workers, to - next), take);
+}
+
+/** The bundled worker lies beside the command line; run from its sources, a sweep works in one thread. */
+function workerEntry(): string | null {
+  const places = ['./sweep-worker.js', '../sweep-worker.js'];
+  return places.map((place) => fileURLToPath(new URL(place, import.meta.url))).find(existsSync) ?? null;
+}
+
+function withWorkers(
+  job: SweepJob,
+  entry: string,
+  from: number,
+  to: number,
+  count: number,
+  take: (table: PathTable) => void,
+): Promise<void> {
+  return new Promise((resolve, reject) => {
+    const waiting = new Map<number, PathTable>();
+    const idle: Worker[] = [];
+    let given = from;
+    let due = from;
+    const workers = Array.from({ length: count }, () => new Worker(entry, { workerData: job }));
+    let ended = false;
+    const end = (finish: () => void) => {
+      ended = true;
+      for (const worker of workers) void worker.terminate();
+      finish();
+    };
+    const giveOut = () => {
+      while (idle.length > 0 && given < to && given < due + AHEAD * count) idle.pop()!.postMessage(given++);
+    };
+    for (const worker of workers) {
+      idle.push(worker);
+      worker.on('error', (error) => end(() => reject(error)));
+      worker.on('message', (table: PathTable) => {
+        if (ended) return;
+        waiting.set(table.path, table);
+        idle.push(worker);
+        try {
+          for (let ready = waiting.get(due); ready !== undefined; ready = waiting.get(due)) {
+            waiting.delete(due++);
+            take(ready);
+          }
+        } catch (error) {
+          end(() => reject(error));
+          return;
+        }
+        if (due === to) end(resolve);
+        else giveOut();
+      });
+    }
+    giveOut();
+  });
+}

@@ -1,0 +1,96 @@
+import type { PathTable } from '../study/sweep.ts';
+import { csvCell } from './csv.ts';
+import { plainText } from './plain.ts';
+import { aligned } from './table.ts';
+
+/** How a table of a sweep is written as text, piece by piece: no piece needs the others. */
+export interface SweepFormat {
+  readonly head: (heads: readonly string[]) => string;
+  readonly rows: (table: PathTable, heads: readonly string[]) => string;
+}
+
+/** Comma-separated, lines ending with CR LF; no value is an empty cell (RFC 4180). */
+export const sweepCsv: SweepFormat = {
+  head: (heads) => csvLine(heads),
+  rows: (table) => {
+    let text = '';
+    for (let row = 0; row < table.rows; row++) {
+      const line = [...numbersOf(table, row), closedOf(table, row), table.passes[row]!, table.notes[row]!];
+      text += csvLine(line);
+    }
+    return text;
+  },
+};
+
+/** One JSON object a line, its keys the heads of the table; no value is null. */
+export const sweepNdjson: SweepFormat = {
+  head: () => '',
+  rows: (table, heads) => {
+    const keys = heads.map((head) => JSON.stringify(head));
+    let text = '';
+    for (let row = 0; row < table.rows; row++) {
+      const cells = jsonCells(table, row);
+      text += `{${cells.map((cell, c) => `${keys[c]}:${cell}`).join(',')}}\n`;
+    }
+    return text;
+  },
+};
+
+/** The rows of `--json`: arrays in the order of the columns, with a comma between them and a line each. */
+export const sweepJsonRows = (table: PathTable): string[] =>
+  Array.from({ length: table.rows }, (_, row) => `[${jsonCells(table, row).join(', ')}]`);
+
+const NUMBER_WIDTH = 11;
+
+/** For reading: aligned columns of six digits, as wide for the first path as for the last. */
+export const sweepText: SweepFormat = {
+  head: (heads) => textLines([heads.map(plainText)], heads),
+  rows: (table, heads) =>
+    textLines(
+      Array.from({ length: table.rows }, (_, row) => [
+        ...numbersOf(table, row).map(shortNumber),
+        table.converged[row] === 1 ? 'yes' : 'no',
+        String(table.passes[row]),
+        plainText(table.notes[row]!),
+      ]),
+      heads,
+    ),
+};
+
+function textLines(rows: readonly (readonly string[])[], heads: readonly string[]): string {
+  const note = heads.length - 1;
+  // A row as wide as anything that may come, to hold the columns; the note stands last and needs no width.
+  const widest = heads.map((head, c) =>
+    c === note ? '' : 'x'.repeat(Math.max(plainText(head).length, c < note - 2 ? NUMBER_WIDTH : 6)),
+  );
+  return aligned([widest, ...rows], { left: [note] })
+    .slice(1)
+    .map((line) => `${line}\n`)
+    .join('');
+}
+
+function csvLine(cells: readonly (string | number)[]): string {
+  return `${cells.map(csvCell).join(',')}\r\n`;
+}
+
+function numbersOf({ cells, rows }: PathTable, row: number): number[] {
+  const width = cells.length / rows;
+  return Array.from(cells.subarray(row * width, (row + 1) * width));
+}
+
+function closedOf({ converged }: PathTable, row: number): string {
+  return converged[row] === 1 ? 'true' : 'false';
+}
+
+function jsonCells(table: PathTable, row: number): string[] {
+  return [
+    ...numbersOf(table, row).map((value) => JSON.stringify(value === 0 ? 0 : value)),
+    closedOf(table, row),
+    String(table.passes[row]),
+    JSON.stringify(plainText(table.notes[row]!)),
+  ];
+}
+
+function shortNumber(value: number): string {
+  return Number.isNaN(value) ? '-' : String(Number(value.toPrecision(6)));
+}
