@@ -52,6 +52,7 @@ export const codes: Readonly<Record<string, string>> = {
   'unbalanced-reaction': 'atoms of the two sides differ',
   'bad-feed': 'the feed of a command cannot be read',
   'empty-feed': 'a feed of nothing',
+  'composition-sum': 'a composition in per cent that does not add up to 100 %',
   'mixed-parts': 'a composition mixes bare parts with per cent',
 
   // Blocks and streams

@@ -11,6 +11,9 @@ import { feedSchema } from './schema.ts';
 import { requiredEntries } from './section.ts';
 import { entriesOf, keyPlaceOfPath, nodeAt, type Path } from './yaml-tree.ts';
 
+/** Per cent may be off by so much of rounding [%]. */
+const PER_CENT_OFF = 0.5;
+
 export type FeedEntry = z.infer<typeof feedSchema>;
 
 export interface ReadFeeds {
@@ -52,6 +55,7 @@ export function readFeeds(
       continue;
     }
     if (entry.flows === undefined && !isWholeSum(sum)) {
+      warnOfPerCent(reading, key, path, sum);
       const unit = entry.basis === 'mass' ? 'mass' : 'mole';
       assumptions.push(
         `The composition of feed ${key} adds up to ${Number(sum.toPrecision(6))} parts by ${unit} and is normalised.`,
@@ -126,6 +130,19 @@ function mixesPerCent(reading: Reading, name: string, path: Path, basis: string)
     perCent.value.place,
   );
   return true;
+}
+
+/** Shares written in per cent that are no whole by more than rounding: a slip, or a component left out. */
+function warnOfPerCent({ root, findings }: Reading, name: string, path: Path, sum: number): void {
+  const written = entriesOf(nodeAt(root, [...path, 'composition']));
+  const inPerCent = written.some(({ value }) => value.kind === 'scalar' && value.text.includes('%'));
+  if (!inPerCent || Math.abs(100 * sum - 100) <= PER_CENT_OFF) return;
+  findings.warning(keyPlaceOfPath(root, [...path, 'composition']), {
+    code: 'composition-sum',
+    what: `the composition of feed ${name} adds up to ${Number((100 * sum).toPrecision(5))} %, not to 100 %.`,
+    why: 'it is normalised: every share is divided by the sum',
+    mend: 'correct the shares, or write bare numbers where parts are meant',
+  });
 }
 
 function knowsComponents(

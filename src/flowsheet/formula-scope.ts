@@ -5,14 +5,15 @@ import type { Fault } from './findings.ts';
 /** Names a formula may begin with. */
 export const formulaRoots: readonly string[] = ['streams', 'blocks', 'figures'];
 
-/** What there is in a flowsheet for formulas to name. */
+/** What there is in a flowsheet for formulas to name; made once, and asked of every formula. */
 export interface FormulaWorld {
-  readonly tags: readonly string[];
-  readonly blocks: readonly string[];
-  readonly components: readonly string[];
+  readonly tree: Tree;
   /** the user's own figures that stand above */
   readonly figures: readonly string[];
 }
+
+/** A number, a branch with known names, or a branch whose names only the result knows. */
+type Tree = 'number' | 'details' | { readonly [name: string]: Tree };
 
 /**
  * Check the names of a formula:
@@ -29,18 +30,23 @@ export function misnamed(
   names: readonly FormulaName[],
   world: FormulaWorld,
 ): { readonly name: FormulaName; readonly fault: Fault } | null {
-  const tree = treeOf(world);
   for (const name of names) {
-    const fault = follow(name.parts, tree);
+    const fault = follow(name.parts, world);
     if (fault !== null) return { name, fault };
   }
   return null;
 }
 
-/** A number, a branch with known names, or a branch whose names only the result knows. */
-type Tree = 'number' | 'details' | { readonly [name: string]: Tree };
-
-function treeOf({ tags, blocks, components, figures }: FormulaWorld): Tree {
+/** The names there are in a flowsheet, its own figures aside. */
+export function formulaWorld({
+  tags,
+  blocks,
+  components,
+}: {
+  readonly tags: readonly string[];
+  readonly blocks: readonly string[];
+  readonly components: readonly string[];
+}): FormulaWorld {
   const byComponent = each(components, 'number');
   const stream: Tree = {
     n: byComponent,
@@ -54,7 +60,7 @@ function treeOf({ tags, blocks, components, figures }: FormulaWorld): Tree {
     vapour_fraction: 'number',
     enthalpy: 'number',
   };
-  return {
+  const tree: Tree = {
     streams: each(tags, stream),
     blocks: each(blocks, 'details'),
     figures: {
@@ -74,18 +80,21 @@ function treeOf({ tags, blocks, components, figures }: FormulaWorld): Tree {
       power_kW: each([...blocks, 'refrigeration', 'total'], 'number'),
       specific_power_kWh_t: 'number',
       duty_kW: each(blocks, 'number'),
-      user: each(figures, 'number'),
+      user: {},
     },
   };
+  return { tree, figures: [] };
 }
 
 function each(names: readonly string[], tree: Tree): Tree {
   return Object.fromEntries(names.map((name) => [name, tree]));
 }
 
-function follow(parts: readonly string[], root: Tree): Fault | null {
+function follow(parts: readonly string[], { tree: root, figures }: FormulaWorld): Fault | null {
   let tree = root;
   for (const [i, part] of parts.entries()) {
+    // The user's own figures come and go from formula to formula.
+    if (i === 2 && parts[0] === 'figures' && parts[1] === 'user') tree = each(figures, 'number');
     const path = parts.slice(0, i).join('.');
     if (tree === 'number') {
       const why = `${path} is one number and has no parts`;
@@ -108,6 +117,7 @@ function follow(parts: readonly string[], root: Tree): Fault | null {
     };
   }
   if (tree === 'number') return null;
+  if (parts.join('.') === 'figures.user') tree = each(figures, 'number');
   const known = tree === 'details' ? ['duty', 'power'] : Object.keys(tree);
   return {
     code: 'unknown-figure',

@@ -12,6 +12,7 @@ import { readCorrelations } from './correlations.ts';
 import { readFeeds } from './feeds.ts';
 import { readFigures } from './figures.ts';
 import { createFindings, type Fault, inOrder, type Reading } from './findings.ts';
+import { formulaWorld } from './formula-scope.ts';
 import { readHeader } from './header.ts';
 import { readLedger } from './ledger.ts';
 import { ledgerDefaults } from './ledger-defaults.ts';
@@ -60,6 +61,10 @@ export async function readFlowsheet(text: string, options: ReadOptions): Promise
   return { flowsheet: sound ? flowsheet : null, diagnostics };
 }
 
+function hasErrors({ list }: Reading['findings']): boolean {
+  return list.some(({ severity }) => severity === 'error');
+}
+
 /** @param written  the file before any change to it */
 function readTree(
   reading: Reading,
@@ -81,7 +86,7 @@ function readTree(
   const declared: Declared = { components, reactions, failedIds, failedReactions: failed };
   const blocks = readBlocks(reading, blockKinds, declared);
   const streams = readStreams(reading, feeds.names, blocks);
-  const sound = components !== null && findings.list.length === 0;
+  const sound = components !== null && !hasErrors(findings);
   const defaults = ledgerDefaults(components ?? [], reactions, streams, blocks ?? []);
   // The ledger, formulas and tears name streams and components: they are judged where those could be read.
   const named =
@@ -90,12 +95,11 @@ function readTree(
     streams.length === entriesOf(child(root, 'streams')).length;
   const ledger = named ? readLedger(reading, components, streams, defaults) : null;
   const world = named
-    ? {
+    ? formulaWorld({
         tags: streams.map((s) => s.tag),
         blocks: blocks?.map((b) => b.name) ?? [],
         components: components.map((c) => c.id),
-        figures: [],
-      }
+      })
     : null;
   const settings = { kinds: blockKinds, declared };
   const cases = checkCases({ root: written, findings }, settings);
@@ -124,7 +128,7 @@ function readTree(
   const study = readStudy(reading, world === null ? null : { ...world, figures: ownFigures });
   if (
     !sound ||
-    findings.list.length > 0 ||
+    hasErrors(findings) ||
     blocks === null ||
     header === null ||
     ledger === null ||

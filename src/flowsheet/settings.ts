@@ -60,7 +60,7 @@ export function trySetting(
   return valueAt({ root, findings: createFindings() }, world, target.path);
 }
 
-/** The findings of one block, feed or section. */
+/** The errors of one block, feed or section. */
 function faultsOf(root: YamlNode, world: SettingsWorld, owner: Path) {
   const findings = createFindings();
   const reading: Reading = { root, findings };
@@ -72,7 +72,7 @@ function faultsOf(root: YamlNode, world: SettingsWorld, owner: Path) {
   } else if (section === 'solve') checkPart(reading, solveSchema, ['solve']);
   else if (section === 'ledger') checkPart(reading, ledgerSchema, ['ledger']);
   else checkPart<unknown>(reading, headerShape[section as keyof typeof headerShape], [section]);
-  return findings;
+  return { list: findings.list.filter(({ severity }) => severity === 'error') };
 }
 
 /** The reading with one feed alone. */

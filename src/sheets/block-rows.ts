@@ -43,10 +43,24 @@ export function blockDetails(details: Readonly<Record<string, unknown>>): string
   for (const [key, value] of Object.entries(details)) {
     const parts = severalParts(key, value);
     if (parts === null) alone[key] = value;
-    else for (const [name, part] of parts) groups.push(`${name}: ${flat(part, '', null).join(', ')}`);
+    else if (!isToldAlready(parts, details))
+      for (const [name, part] of parts) groups.push(`${name}: ${flat(part, '', null).join(', ')}`);
   }
   const first = flat(alone, '', null).join(', ');
   return first === '' ? groups : [first, ...groups];
+}
+
+/** Is there one part only, every number of which stands alone as well (a condenser with one evaporator)? */
+function isToldAlready(
+  parts: readonly [string, unknown][],
+  details: Readonly<Record<string, unknown>>,
+): boolean {
+  const [first, ...more] = parts;
+  if (first === undefined || more.length > 0) return false;
+  const told = Object.values(details).filter((value) => typeof value === 'number');
+  return Object.values(first[1] as object).every((value) =>
+    told.some((one) => Math.abs(one - value) <= 1e-9 * Math.abs(value)),
+  );
 }
 
 /** The parts of a detail that holds several things of one kind, by name; null for any other. */

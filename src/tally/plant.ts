@@ -43,6 +43,8 @@ export interface Plant {
   /** indices of the streams that enter and leave across the battery limit */
   readonly enters: readonly number[];
   readonly leaves: readonly number[];
+  /** all feeds together as they were written last: flows, and the sizes of their enthalpies */
+  readonly entering: { readonly flowsMolPerS: Float64Array; readonly enthalpyW: number };
   /** write the feeds' flows and states into their streams */
   refreshFeeds(): void;
   /**
@@ -105,6 +107,7 @@ export function createPlant(flowsheet: Flowsheet): Plant {
   const feedNumber = new Map(feeds.map(({ name }, f) => [name, f]));
   const feedOf = wiring.enters.map((s) => feedNumber.get(flowsheet.streams[s].from.name)!);
   const settings = { blocks, feeds, ids: components.map((c) => c.id), reactions, vapourPressures };
+  const entering = { flowsMolPerS: new Float64Array(components.length), enthalpyW: 0 };
 
   return {
     flowsheet,
@@ -121,7 +124,10 @@ export function createPlant(flowsheet: Flowsheet): Plant {
     feeds,
     enters: wiring.enters,
     leaves: wiring.leaves,
+    entering,
     refreshFeeds() {
+      entering.flowsMolPerS.fill(0);
+      entering.enthalpyW = 0;
       for (const [k, s] of wiring.enters.entries()) {
         const feed = feeds[feedOf[k]];
         const state = streams[s];
@@ -129,6 +135,8 @@ export function createPlant(flowsheet: Flowsheet): Plant {
         state.temperatureK = feed.temperatureK;
         state.pressurePa = feed.pressurePa;
         mixture.settle(state);
+        for (let i = 0; i < components.length; i++) entering.flowsMolPerS[i] += state.flowsMolPerS[i];
+        entering.enthalpyW += Math.abs(state.enthalpyW);
       }
     },
     pass({ block, ahead }) {

@@ -115,8 +115,7 @@ export function createRecycleProblem(plant: Plant, group: Group): RecycleProblem
     for (let i = 0; i < mixture.size; i++) {
       let open = 0;
       for (const s of group.tears) open += streams[s].flowsMolPerS[i] - seen[s].flowsMolPerS[i];
-      let entering = Math.max(formed[i], 0);
-      for (const s of plant.enters) entering += streams[s].flowsMolPerS[i];
+      const entering = Math.max(formed[i], 0) + plant.entering.flowsMolPerS[i];
       if (entering > 0) worst = Math.max(worst, Math.abs(open) / entering);
     }
     return worst;
@@ -129,8 +128,7 @@ export function createRecycleProblem(plant: Plant, group: Group): RecycleProblem
   function energyError(): number {
     let open = 0;
     for (const s of group.tears) open += streams[s].enthalpyW - seen[s].enthalpyW;
-    let exchanged = 0;
-    for (const s of plant.enters) exchanged += Math.abs(streams[s].enthalpyW);
+    let exchanged = plant.entering.enthalpyW;
     for (const block of group.blocks) {
       let added = 0;
       for (const state of plant.outlets[block]) added += state.enthalpyW;

@@ -159,3 +159,24 @@ test('small aliases are read, each as its own', async () => {
     .replace('compressor, pressure: 200 bar', 'compressor, pressure: *loop');
   expect((await read(changed)).blocks[4].settings).toMatchObject({ pressure: 2e7 });
 });
+
+test.each([
+  ['H2: 74 %, N2: 24 %', 'the composition of feed makeup adds up to 98 %, not to 100 %.'],
+  ['H2: 74 %, N2: 26.6 %', 'the composition of feed makeup adds up to 100.6 %, not to 100 %.'],
+  ['H2: 74 %, N2: 25.6 %', null],
+  ['H2: 74 %, N2: 259500 ppm, Ar: 500 ppm', null],
+  ['H2: 74, N2: 24', null],
+])('a composition in per cent that is no whole is warned of with its sum: {%s}', async (parts, what) => {
+  const { flowsheet, diagnostics } = await readFlowsheet(
+    `looptally: 1
+components: [H2, N2, Ar]
+feeds: {makeup: {flow: 1 kmol/h, temperature: 20 degC, pressure: 1 bar, composition: {${parts}}}}
+blocks: {mixer: {kind: mixer}}
+streams: {S1: makeup -> mixer, S2: mixer -> out}
+`,
+    { file: 'feed.yaml' },
+  );
+  expect(flowsheet).not.toBeNull();
+  const told = diagnostics.map((d) => `${d.severity} ${d.code} ${d.where.line}: ${d.what}`);
+  expect(told).toEqual(what === null ? [] : [`warning composition-sum 3: ${what}`]);
+});
