@@ -7,7 +7,8 @@ so that both sides solve one and the same problem) and writes JSON to standard o
 
 Plain, and meant to be fair: numpy arrays for the components, brentq for the extent and for what stays in the gas,
 Newton for the cubic, because numpy.roots would take several times as long. What does not change from pass to pass
-is worked out once. The compressor is left out, because its power does not act on the flows.
+is worked out once. Temperatures of mixer and compressor, power and duties are left out, because they do not act on
+the flows: that favours scipy, as the other side works them out in every pass.
 scipy_loop_tuned.py has the same loop tuned by hand.
 """
 

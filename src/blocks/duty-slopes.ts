@@ -31,8 +31,8 @@ export function createDutySlopes(mixture: Mixture, upstream = mixture): DutySlop
       if (!how.pressureIsSet) followPressure(matrix, size);
       if (how.temperatureIsSet) return !parted || mixture.slopes(stream, 'liquid', after);
       return (
-        upstream.slopes(inlet, 'all', before) &&
-        mixture.slopes(stream, 'all', after) &&
+        upstream.slopes(inlet, 'enthalpy', before) &&
+        mixture.slopes(stream, 'enthalpy', after) &&
         temperatureAt(after.enthalpy, before.enthalpy, matrix)
       );
     },

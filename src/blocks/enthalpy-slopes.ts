@@ -61,7 +61,7 @@ export function createEnthalpySlopes(mixture: Mixture): EnthalpySlopes {
     leaves: boolean,
   ): boolean {
     if (!run.slopes(out.temperatureK, out.pressurePa, reacted)) return false;
-    if (!mixture.slopes(out, 'all', state)) return false;
+    if (!mixture.slopes(out, 'enthalpy', state)) return false;
     setHeld();
     if (!(held[size] > 0)) return false;
     for (const matrix of matrices) carry(matrix, leaves);
@@ -70,7 +70,7 @@ export function createEnthalpySlopes(mixture: Mixture): EnthalpySlopes {
 
   return {
     enter(stream, matrix) {
-      if (!mixture.slopes(stream, 'all', state)) return false;
+      if (!mixture.slopes(stream, 'enthalpy', state)) return false;
       matrix.fill(0);
       for (let i = 0; i < size; i++) matrix[i * width + i] = 1;
       matrix.set(enthalpy, size * width);
@@ -78,7 +78,7 @@ export function createEnthalpySlopes(mixture: Mixture): EnthalpySlopes {
       return true;
     },
     setTemperature(stream, matrices) {
-      if (!mixture.slopes(stream, 'all', state)) return false;
+      if (!mixture.slopes(stream, 'enthalpy', state)) return false;
       for (const matrix of matrices) {
         for (let k = 0; k < width; k++) {
           let sum = enthalpy[size + 1] * matrix[(size + 1) * width + k];

@@ -42,7 +42,8 @@ export function createStageSlopes(mixture: Mixture): StageSlopes {
 
   return {
     carry(path, matrix, pressure) {
-      if (!mixture.slopes(path.from, 'all', first) || !mixture.slopes(path.to, 'all', last)) return false;
+      const atEnd = path.polytropic === null ? 'enthalpy' : 'all';
+      if (!mixture.slopes(path.from, 'all', first) || !mixture.slopes(path.to, atEnd, last)) return false;
       along(first.entropy, matrix, entropy);
       along(first.enthalpy, matrix, enthalpy);
       suctionK.set(matrix.subarray(size * width, (size + 1) * width));

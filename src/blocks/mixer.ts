@@ -68,7 +68,7 @@ export const mixer: BlockKind<Settings> = {
         mixture.settleAtEnthalpy(out, enthalpyW);
         last.riseK = out.temperatureK - meanK;
       },
-      slopes(inlets, outlets, { of: [matrices] }) {
+      slopes(inlets, outlets, { of: [matrices], moved }) {
         const { size } = mixture;
         const [out] = outlets;
         const sets = (inlet: StreamState) =>
@@ -77,13 +77,14 @@ export const mixer: BlockKind<Settings> = {
         // alone set it, that would be left undetermined.
         const share = 1 / inlets.filter(sets).length;
         const unchanged = inlets.length === 1 && inlets[0].pressurePa === out.pressurePa;
-        if (!unchanged && !mixture.slopes(out, 'all', after)) return false;
+        if (!unchanged && !mixture.slopes(out, 'enthalpy', after)) return false;
         for (let k = 0; k < inlets.length; k++) {
+          if (!moved[k]) continue;
           keepFlows(matrices[k], size);
           if (setting.pressure === undefined && sets(inlets[k])) followPressure(matrices[k], size, share);
           if (unchanged) keepTemperature(matrices[k], size);
           else if (
-            !mixture.slopes(inlets[k], 'all', before) ||
+            !mixture.slopes(inlets[k], 'enthalpy', before) ||
             !temperatureAt(after.enthalpy, before.enthalpy, matrices[k])
           )
             return false;

@@ -7,12 +7,24 @@ export interface BlockSlopes {
   readonly width: number;
   /** by outlet, then by inlet: width rows (of the outlet) of width columns (of the inlet), row by row */
   readonly of: readonly (readonly Float64Array[])[];
+  /** by inlet: does anything move it? what it moves may be left out otherwise (a makeup) */
+  readonly moved: readonly boolean[];
 }
 
-/** Room for the derivatives of a block, all zero. */
-export function blockSlopes(width: number, outlets: number, inlets: number): BlockSlopes {
+/**
+ * Room for the derivatives of a block, all zero.
+ *
+ * @param moved  by inlet; all where left out
+ */
+export function blockSlopes(
+  width: number,
+  outlets: number,
+  inlets: number,
+  moved: readonly boolean[] = Array.from({ length: inlets }, () => true),
+): BlockSlopes {
   return {
     width,
+    moved,
     of: Array.from({ length: outlets }, () =>
       Array.from({ length: inlets }, () => new Float64Array(width * width)),
     ),

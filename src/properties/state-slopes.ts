@@ -35,8 +35,11 @@ const SMALLEST = 1e-300;
 /** Two phases whose fugacities differ by more than this are the mixed sides of a jump (see solve-state.ts) [-]. */
 const IN_EQUILIBRIUM = 1e-7;
 
-/** Fill in the derivatives of a settled stream: those of its liquid, or all; false where it has none. */
-export type FillStateSlopes = (stream: StreamState, what: 'liquid' | 'all', slopes: StateSlopes) => boolean;
+/** Which derivatives are asked for: those of the liquid alone, with those of the enthalpy, or all. */
+export type WantedSlopes = 'liquid' | 'enthalpy' | 'all';
+
+/** Fill in the derivatives of a settled stream that are asked for; false where it has none. */
+export type FillStateSlopes = (stream: StreamState, what: WantedSlopes, slopes: StateSlopes) => boolean;
 
 /**
  * Derivatives of phases, enthalpy and entropy of a stream in equilibrium, on the side of a phase boundary on which
@@ -66,17 +69,17 @@ export function createStateSlopes(
     if (!read(stream)) return false;
     const { temperatureK: T, pressurePa: P } = stream;
     const both = phases.G > 0 && phases.L > 0;
-    const all = what === 'all';
-    if (phases.G > 0 && (both || all)) gas.setFugacities(T, P, y, both);
-    if (phases.L > 0 && (both || all)) liquid.set(T, P, l);
+    const more = what !== 'liquid';
+    if (phases.G > 0 && (both || more)) gas.setFugacities(T, P, y, both);
+    if (phases.L > 0 && (both || more)) liquid.set(T, P, l);
     if (!fillLiquid(P, both, slopes.liquid)) return false;
-    if (!all) return true;
+    if (!more) return true;
     if (phases.G > 0) gas.setDeparture(T, P, y);
     idealGas.heatCapacities(T, ideal);
     let heatCapacity = 0;
     for (let i = 0; i < size; i++) heatCapacity += flows[i] * ideal[i];
     fillEnthalpy(T, heatCapacity, slopes);
-    fillEntropy(T, P, heatCapacity, slopes);
+    if (what === 'all') fillEntropy(T, P, heatCapacity, slopes);
     return true;
   };
 

@@ -40,7 +40,9 @@ export function createPassSlopes(plant: Plant, group: Group): PassSlopes {
   for (const state of inside) moves.set(state, new Float64Array(width * columns));
   const room = new Map<number, BlockSlopes>();
   for (const block of group.blocks) {
-    room.set(block, blockSlopes(width, plant.outlets[block].length, plant.inlets[block].length));
+    const inlets = plant.inlets[block];
+    const moved = inlets.map((inlet) => moves.has(inlet));
+    room.set(block, blockSlopes(width, plant.outlets[block].length, inlets.length, moved));
   }
   const saved = emptyStream(plant.mixture.size);
   const base = new Map<StreamState, StreamState>();

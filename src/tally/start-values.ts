@@ -25,11 +25,10 @@ const LARGEST_SHARE = 0.99;
  */
 export function startFromFeeds(plant: Plant, group: Group): number {
   const { mixture, streams, seen } = plant;
-  const entering = enteringStates(plant, group);
   const arriving = new Float64Array(mixture.size);
   let pressurePa = 0;
   let temperatureK = 0;
-  for (const state of entering) {
+  for (const state of enteringStates(plant, group)) {
     for (let i = 0; i < mixture.size; i++) arriving[i] += state.flowsMolPerS[i];
     pressurePa = Math.max(pressurePa, state.pressurePa);
     temperatureK = Math.max(temperatureK, state.temperatureK);
@@ -95,8 +94,19 @@ function scaledUp(first: number, second: number): number {
   return first / (1 - Math.min((second - first) / first, LARGEST_SHARE));
 }
 
+const entering = new WeakMap<Group, readonly StreamState[]>();
+
 /** The streams that enter a group from feeds and from groups closed before it. */
-function enteringStates(plant: Plant, group: Group): StreamState[] {
+function enteringStates(plant: Plant, group: Group): readonly StreamState[] {
+  let states = entering.get(group);
+  if (states === undefined) {
+    states = findEnteringStates(plant, group);
+    entering.set(group, states);
+  }
+  return states;
+}
+
+function findEnteringStates(plant: Plant, group: Group): StreamState[] {
   const inside = new Set(group.blocks.flatMap((block) => plant.outlets[block]));
   const torn = new Set(group.tears.map((s) => plant.seen[s]));
   const all = new Set(group.blocks.flatMap((block) => plant.inlets[block]));
