@@ -38,6 +38,15 @@ export { markdownSheet } from './sheets/markdown.ts';
 export { type Renderer, type RenderOptions, renderers } from './sheets/renderers.ts';
 export type { SheetOptions } from './sheets/sheet.ts';
 export { textSheet } from './sheets/text.ts';
+export { type Axis, type AxisFault, readAxis } from './study/axis.ts';
+export {
+  type CaseOutcome,
+  type CaseRunner,
+  type CaseRunnerOptions,
+  createCaseRunner,
+} from './study/case-runner.ts';
+export { createGrid, type Grid } from './study/grid.ts';
+export { createSweeper, type PathTable, type SweepPlan, sweepHeads } from './study/sweep.ts';
 export { type Balance, type BalanceOptions, balance } from './tally/balance.ts';
 export { type Lever, type Levers, levers } from './tally/levers.ts';
 export { type Plan, planFlowsheet } from './tally/plan.ts';

@@ -77,8 +77,29 @@ describe('before the first case it is told in four parts:', () => {
   });
 
   test('what is wrong with the study of a file, at its place', () => {
-    expect(told(run(['sweep', 'study.yaml']).err)).toMatchInlineSnapshot();
-    expect(told(run(['sweep', 'note.yaml']).err)).toMatchInlineSnapshot();
+    expect(told(run(['sweep', 'study.yaml']).err)).toMatchInlineSnapshot(`
+      "study.yaml:54:34 error wrong-unit
+        10 bar is no temperature.
+        why:  "bar" is a unit of pressure, and a temperature is needed here
+        mend: write it in degC, K, degF
+
+      1 error
+      "
+    `);
+    expect(told(run(['sweep', 'note.yaml']).err)).toMatchInlineSnapshot(`
+      "note.yaml:56:29 error bad-note
+        study: figures.recycle_ration is no column of its table.
+        why:  the nearest column is figures.recycle_ratio
+        mend: write figures.recycle_ratio
+
+      note.yaml:56:63 error bad-note
+        study: {best figures.recycle_ratio} is no blank.
+        why:  a blank says which number of a column it stands for: first, last, least, most or ratio
+        mend: write {last COLUMN}, {most COLUMN; %} or {COLUMN at most COLUMN}
+
+      2 errors
+      "
+    `);
   });
 
   test('with --json as diagnostics', () => {

@@ -4,7 +4,18 @@ import { beforeAll, describe, expect, test } from 'vitest';
 import { commandLine } from './looptally.ts';
 
 const { run, folder } = commandLine();
-const names = ['balance', 'check', 'levers', 'sheet', 'equilibrium', 'data', 'new', 'schema'];
+const names = [
+  'balance',
+  'check',
+  'sweep',
+  'gather',
+  'levers',
+  'sheet',
+  'equilibrium',
+  'data',
+  'new',
+  'schema',
+];
 
 beforeAll(() => {
   mkdirSync(join(folder(), 'plans'));
@@ -64,7 +75,7 @@ describe('a command line that cannot be followed is told in four parts with exit
   There is no command methanol.yaml.
    1 | looptally methanol.yaml
      |           ^^^^^^^^^^^^^
-  why:  the commands are balance, check, levers, sheet, equilibrium, data, new, schema
+  why:  the commands are balance, check, sweep, gather, levers, sheet, equilibrium, data, new, schema
   mend: write looptally balance methanol.yaml
 
 1 error
