@@ -4,6 +4,7 @@ import { benchMethods } from './methods.ts';
 import { benchRandomLoops } from './random-loops.ts';
 import { benchScale } from './scale.ts';
 import { benchScipy } from './scipy.ts';
+import { benchSweep } from './sweep.ts';
 
 /**
  * Everything, or the parts named: npm run bench -- methods kernels scale command.
@@ -15,6 +16,7 @@ const parts: Readonly<Record<string, () => Promise<void>>> = {
   kernels: benchKernels,
   scipy: benchScipy,
   scale: benchScale,
+  sweep: benchSweep,
   command: benchCommand,
 };
 

@@ -40,8 +40,17 @@ export { type Renderer, type RenderOptions, renderers } from './sheets/renderers
 export type { SheetOptions } from './sheets/sheet.ts';
 export { textSheet } from './sheets/text.ts';
 export { uncertaintyText } from './sheets/uncertainty.ts';
+export { type Axis, type AxisFault, readAxis } from './study/axis.ts';
+export {
+  type CaseOutcome,
+  type CaseRunner,
+  type CaseRunnerOptions,
+  createCaseRunner,
+} from './study/case-runner.ts';
 export { type Compared, type Comparison, compare } from './study/compare.ts';
+export { createGrid, type Grid } from './study/grid.ts';
 export { keyFigureFormulas } from './study/key-figures.ts';
+export { createSweeper, type PathTable, type SweepPlan, sweepHeads } from './study/sweep.ts';
 export { type Uncertainty, type UncertaintyOptions, uncertainty } from './study/uncertainty.ts';
 export { type Balance, type BalanceOptions, balance } from './tally/balance.ts';
 export { type Lever, type Levers, levers } from './tally/levers.ts';

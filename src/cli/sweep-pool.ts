@@ -19,6 +19,9 @@ export interface PathsWanted {
   readonly workers: number | undefined;
 }
 
+/** A path leaves little behind; with the usual room for young objects each worker would take 50 MB more [MB]. */
+const YOUNG_MB = 16;
+
 /** Make the paths of a job and hand them over in their order, whoever finishes first. */
 export async function makePaths(
   job: SweepJob,
@@ -64,7 +67,10 @@ function withWorkers(
     const idle: Worker[] = [];
     let given = from;
     let due = from;
-    const workers = Array.from({ length: count }, () => new Worker(entry, { workerData: job }));
+    const workers = Array.from(
+      { length: count },
+      () => new Worker(entry, { workerData: job, resourceLimits: { maxYoungGenerationSizeMb: YOUNG_MB } }),
+    );
     let ended = false;
     const end = (finish: () => void) => {
       ended = true;

@@ -1,5 +1,5 @@
 import { nearest } from '../diagnostics/nearest.ts';
-import { formulaRoots, misnamed } from '../flowsheet/formula-scope.ts';
+import { formulaRoots, misnamed, worldOf } from '../flowsheet/formula-scope.ts';
 import type { Flowsheet } from '../model/flowsheet.ts';
 import { createCaseRunner } from '../study/case-runner.ts';
 import { createPlantScope } from '../tally/scope.ts';
@@ -27,12 +27,7 @@ function expressionsOf(words: readonly string[]) {
 
 /** Check what `--record` names against the flowsheet. @throws Refusal with all that is wrong */
 export function typedRecord(words: readonly string[], flowsheet: Flowsheet): string[] {
-  const world = {
-    tags: flowsheet.streams.map(({ tag }) => tag),
-    blocks: flowsheet.blocks.map(({ name }) => name),
-    components: flowsheet.components.map(({ id }) => id),
-    figures: flowsheet.figures.map(({ name }) => name),
-  };
+  const world = worldOf(flowsheet);
   const faults: UsageFault[] = [];
   const texts: string[] = [];
   for (const { text, at, offset } of expressionsOf(words)) {

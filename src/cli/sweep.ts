@@ -134,8 +134,8 @@ async function toStandardOutput({ job, grid, from, to, reading, options }: Run):
 async function toFile(run: Run & { readonly out: string }): Promise<Tallied> {
   const { job, grid, from, to, part, reading, options, out } = run;
   const heads = sweepHeads(planOf(job));
-  const identity = identityOf(job, `${part.part}/${part.of}`);
   checkRoom(out, rowsOf(grid, from, to), heads.length - 3);
+  const identity = identityOf(job, `${part.part}/${part.of}`);
   const journal = openJournal(out, identity, from, options.resume === true);
   const count = counter();
   try {

@@ -1,4 +1,5 @@
 import { countSlips, nearest } from '../diagnostics/nearest.ts';
+import type { Flowsheet } from '../model/flowsheet.ts';
 import type { FormulaName } from '../units/formula.ts';
 import type { Fault } from './findings.ts';
 
@@ -84,6 +85,16 @@ export function formulaWorld({
     },
   };
   return { tree, figures: [] };
+}
+
+/** The same of a flowsheet that has been read, its own figures with them. */
+export function worldOf({ streams, blocks, components, figures }: Flowsheet): FormulaWorld {
+  const names = {
+    tags: streams.map(({ tag }) => tag),
+    blocks: blocks.map(({ name }) => name),
+    components: components.map(({ id }) => id),
+  };
+  return { ...formulaWorld(names), figures: figures.map(({ name }) => name) };
 }
 
 function each(names: readonly string[], tree: Tree): Tree {

@@ -4,7 +4,20 @@ import { beforeAll, describe, expect, test } from 'vitest';
 import { commandLine } from './looptally.ts';
 
 const { run, folder } = commandLine();
-const names = ['balance', 'check', 'levers', 'compare', 'sheet', 'equilibrium', 'data', 'new', 'schema'];
+const names = [
+  'balance',
+  'check',
+  'sweep',
+  'gather',
+  'levers',
+  'compare',
+  'uncertainty',
+  'sheet',
+  'equilibrium',
+  'data',
+  'new',
+  'schema',
+];
 
 beforeAll(() => {
   mkdirSync(join(folder(), 'plans'));

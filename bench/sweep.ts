@@ -1,0 +1,120 @@
+import { spawn } from 'node:child_process';
+import { mkdtempSync, readFileSync, rmSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { readAxis } from '../src/study/axis.ts';
+import { createGrid } from '../src/study/grid.ts';
+import { createSweeper } from '../src/study/sweep.ts';
+import { compileFormula } from '../src/units/formula.ts';
+import { column, cpuMs, median, title } from './measure.ts';
+import { FOLDER, openShipped } from './shipped.ts';
+
+const LOOP = join(FOLDER, 'reference-loop.yaml');
+const PROGRAM = 'dist/bench/command/cli.js';
+const RECORD = ['figures.overall_yield.value', 'figures.recycle_ratio', 'figures.inerts.converter'];
+const ROUNDS = 3;
+
+const temperatures = (count: number) => `-25 degC..10 degC:${count}`;
+const PURGE = '0.5 %..10 %:100';
+
+/** A grid over condenser temperature and purge of the reference loop: speed in one thread, gain of two, memory. */
+export async function benchSweep(): Promise<void> {
+  title('Sweep of the reference loop over condenser temperature and purge, three figures recorded');
+  await oneThread();
+  const folder = mkdtempSync(join(tmpdir(), 'looptally-bench-'));
+  try {
+    await command(folder);
+  } finally {
+    rmSync(folder, { recursive: true, force: true });
+  }
+}
+
+async function oneThread(): Promise<void> {
+  const flowsheet = await openShipped(LOOP);
+  const axes = [
+    readAxis('condenser.temperature', temperatures(100), 'temperature'),
+    readAxis('purge.fractions.bleed', PURGE, 'fraction'),
+  ].map((axis) => {
+    if ('code' in axis) throw new Error(axis.what);
+    return axis;
+  });
+  const record = RECORD.map((text) => {
+    const formula = compileFormula(text, ['figures']);
+    if (!formula.ok) throw new Error(formula.what);
+    return { text, evaluate: formula.evaluate };
+  });
+  const grid = createGrid(axes);
+  const sweep = createSweeper(flowsheet, { grid, record });
+  for (let path = 0; path < 10; path++) sweep(path);
+  let passes = 0;
+  let failed = 0;
+  const times = Array.from({ length: ROUNDS }, () =>
+    cpuMs(() => {
+      passes = 0;
+      failed = 0;
+      for (let path = 0; path < grid.paths; path++) {
+        const table = sweep(path);
+        for (const one of table.passes) passes += one;
+        for (const one of table.converged) if (one === 0) failed++;
+      }
+    }),
+  );
+  const rate = (grid.size / median(times)) * 1e3;
+  console.log(`${column(rate, 8)}  cases a second of one core, after warming up`);
+  console.log(`${column(passes / grid.size, 8)}  passes a case, ${failed} of ${grid.size} not closed`);
+}
+
+async function command(folder: string): Promise<void> {
+  const one: Run[] = [];
+  const two: Run[] = [];
+  for (let round = 0; round < ROUNDS; round++) {
+    one.push(await sweep(folder, 300, 1));
+    two.push(await sweep(folder, 300, 2));
+  }
+  const gain = median(one.map(({ ms }, round) => ms / two[round]!.ms));
+  console.log(`${column(gain, 8)}  times as fast with two workers as with one, start and table included`);
+  for (const count of [100, 1000]) {
+    const { peakMB } = await sweep(folder, count, 2);
+    console.log(`${column(peakMB, 8)}  MB at most for ${count * 100} points, two workers`);
+  }
+}
+
+interface Run {
+  readonly ms: number;
+  /** most memory that the process ever held */
+  readonly peakMB: number;
+}
+
+function sweep(folder: string, count: number, workers: number): Promise<Run> {
+  const began = performance.now();
+  const out = join(folder, 'table.csv');
+  const over = [`condenser.temperature=${temperatures(count)}`, `purge.fractions.bleed=${PURGE}`];
+  const child = spawn(process.execPath, [
+    PROGRAM,
+    'sweep',
+    LOOP,
+    ...over.flatMap((axis) => ['--over', axis]),
+    ...['--record', RECORD.join(','), '--out', out, '--workers', String(workers), '--quiet'],
+  ]);
+  let peakMB = Number.NaN;
+  const watch = setInterval(() => {
+    peakMB = peakOf(child.pid) ?? peakMB;
+  }, 20);
+  return new Promise((resolve, reject) => {
+    child.on('exit', (code) => {
+      clearInterval(watch);
+      if (code === 0) resolve({ ms: performance.now() - began, peakMB });
+      else reject(new Error(`the sweep ended with ${code}`));
+    });
+  });
+}
+
+/** The high-water mark that the system keeps of a process; null where it is gone or the system keeps none. */
+function peakOf(pid: number | undefined): number | null {
+  try {
+    const kB = /VmHWM:\s+(\d+) kB/.exec(readFileSync(`/proc/${pid}/status`, 'utf8'))?.[1];
+    return kB === undefined ? null : Number(kB) / 1e3;
+  } catch {
+    return null;
+  }
+}
