@@ -74,12 +74,17 @@ export const codes: Readonly<Record<string, string>> = {
   // Ledger, aims, cases, figures, solver, changes
   'bad-aim': 'an aim that cannot be pursued',
   'bad-ledger': 'an entry of the ledger that does not fit',
+  'bad-objective': 'an objective that cannot be worked with',
+  'bad-price': 'a price that cannot be read, or of something that the flowsheet does not have',
   'bad-set': 'a change that is not written PATH=VALUE',
   'set-and-aimed': 'a setting is set by --set or a case and moved by an aim',
   'unit-of-figure': 'a figure is shown in a unit that its formula does not have',
   'yield-above-one': 'the overall yield is above 100 %, for product comes from elsewhere too',
   'bad-tear': 'a stream that cannot be torn',
   'unknown-case': 'a case that is not in the file',
+  'limits-not-met': 'no settings within their bounds meet the limits of the objective',
+  'no-objective': 'a file without an objective was to be optimised',
+  'objective-open': 'no start at which the loop closes and the objective is a number',
   'unknown-figure': 'a name of a formula that leads to no number',
   'unknown-setting': 'a path that leads to no setting',
 

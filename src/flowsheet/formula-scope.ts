@@ -12,6 +12,8 @@ export interface FormulaWorld {
   readonly components: readonly string[];
   /** the user's own figures that stand above */
   readonly figures: readonly string[];
+  /** names of single numbers that stand beside streams, blocks and figures: cost and profit of an objective */
+  readonly money?: readonly string[];
 }
 
 /**
@@ -40,7 +42,7 @@ export function misnamed(
 /** A number, a branch with known names, or a branch whose names only the result knows. */
 type Tree = 'number' | 'details' | { readonly [name: string]: Tree };
 
-function treeOf({ tags, blocks, components, figures }: FormulaWorld): Tree {
+function treeOf({ tags, blocks, components, figures, money = [] }: FormulaWorld): Tree {
   const byComponent = each(components, 'number');
   const stream: Tree = {
     n: byComponent,
@@ -55,6 +57,7 @@ function treeOf({ tags, blocks, components, figures }: FormulaWorld): Tree {
     enthalpy: 'number',
   };
   return {
+    ...Object.fromEntries(money.map((name): [string, Tree] => [name, 'number'])),
     streams: each(tags, stream),
     blocks: each(blocks, 'details'),
     figures: {

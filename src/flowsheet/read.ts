@@ -14,7 +14,9 @@ import { createFindings, type Fault, inOrder, type Reading } from './findings.ts
 import { readHeader } from './header.ts';
 import { readLedger } from './ledger.ts';
 import { ledgerDefaults } from './ledger-defaults.ts';
+import { readObjective } from './objective.ts';
 import { createPlaceOf } from './place-of.ts';
+import { readPrices } from './prices.ts';
 import { readReactions } from './reactions.ts';
 import { fileKeys } from './schema.ts';
 import { readSolve } from './solve.ts';
@@ -99,6 +101,12 @@ function readTree(
   const figures = readFigures(reading, world);
   const ownFigures = entriesOf(child(root, 'figures')).map((e) => e.key);
   const aims = readAims(reading, world === null ? null : { ...world, figures: ownFigures }, settings);
+  const priced =
+    world === null
+      ? null
+      : readPrices(reading, components!, streams, feeds.names, blocks ?? [], ledger?.ledger ?? null);
+  const objective =
+    world === null ? null : readObjective(reading, { ...world, figures: ownFigures }, settings, priced, aims);
   const solve = readSolve(reading, named ? streams : null);
   if (
     !sound ||
@@ -126,6 +134,8 @@ function readTree(
     aims,
     cases,
     figures,
+    prices: priced?.prices ?? null,
+    objective,
     solve,
     assumptions: [
       ...changes

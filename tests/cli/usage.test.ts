@@ -4,7 +4,18 @@ import { beforeAll, describe, expect, test } from 'vitest';
 import { commandLine } from './looptally.ts';
 
 const { run, folder } = commandLine();
-const names = ['balance', 'check', 'levers', 'compare', 'sheet', 'equilibrium', 'data', 'new', 'schema'];
+const names = [
+  'balance',
+  'check',
+  'levers',
+  'compare',
+  'optimise',
+  'sheet',
+  'equilibrium',
+  'data',
+  'new',
+  'schema',
+];
 
 beforeAll(() => {
   mkdirSync(join(folder(), 'plans'));
