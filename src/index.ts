@@ -36,6 +36,7 @@ export { compareText } from './sheets/compare.ts';
 export { type CsvTableName, csvSheet } from './sheets/csv.ts';
 export { leversText } from './sheets/levers.ts';
 export { markdownSheet } from './sheets/markdown.ts';
+export { optimiseText } from './sheets/optimise.ts';
 export { type Renderer, type RenderOptions, renderers } from './sheets/renderers.ts';
 export type { SheetOptions } from './sheets/sheet.ts';
 export { textSheet } from './sheets/text.ts';
@@ -50,6 +51,7 @@ export {
 export { type Compared, type Comparison, compare } from './study/compare.ts';
 export { createGrid, type Grid } from './study/grid.ts';
 export { keyFigureFormulas } from './study/key-figures.ts';
+export { type Optimised, type OptimiseOptions, optimise } from './study/optimise.ts';
 export { createSweeper, type PathTable, type SweepPlan, sweepHeads } from './study/sweep.ts';
 export { type Uncertainty, type UncertaintyOptions, uncertainty } from './study/uncertainty.ts';
 export { type Balance, type BalanceOptions, balance } from './tally/balance.ts';

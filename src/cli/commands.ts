@@ -58,6 +58,13 @@ export const commands: ReadonlyMap<string, CommandEntry> = new Map([
     },
   ],
   [
+    'optimise',
+    {
+      summary: 'the best settings for the objective in the file, or a trade-off',
+      load: async () => (await import('./optimise.ts')).optimiseCommand(),
+    },
+  ],
+  [
     'sheet',
     {
       summary: 'close the loop and write its sheet to files (.csv, .md)',

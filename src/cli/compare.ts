@@ -1,4 +1,3 @@
-import { extname } from 'node:path';
 import type { Command } from 'commander';
 import type { Flowsheet } from '../model/flowsheet.ts';
 import { compareJson, compareText } from '../sheets/compare.ts';
@@ -8,6 +7,7 @@ import { collect, command, type FileOptions } from './common-options.ts';
 import { exitCodes } from './exit-codes.ts';
 import { tell } from './messages.ts';
 import { flowsheetIn } from './open-flowsheet.ts';
+import { rendererOf } from './output-format.ts';
 import { readSource } from './read-source.ts';
 import { type Source, usageRefusal } from './refusal.ts';
 import { balanceOptions, exitCodeOf, type SolveOptions, withSolveOptions } from './solve.ts';
@@ -48,7 +48,10 @@ export function compareCommand(): Command {
 }
 
 async function runCompare(files: readonly string[], options: CompareOptions): Promise<void> {
-  const outputs = (options.out ?? []).map((path) => ({ path, render: rendererFor(path) }));
+  const outputs = (options.out ?? []).map((path) => ({
+    path,
+    render: rendererOf(path, compareRenderers, 'comparison'),
+  }));
   for (const file of files) checkOutputs(options.out ?? [], file);
   const { case: cases, out: _, ...solving } = options;
   const members = await membersOf(files, cases, solving);
@@ -96,21 +99,6 @@ async function membersOf(
   if (missing !== undefined) throw unknownCase(missing, members);
   if (members.length === 1) throw nothingToCompare(files[0]);
   return members;
-}
-
-function rendererFor(path: string) {
-  const extension = extname(path).toLowerCase();
-  const render = compareRenderers.get(extension);
-  if (render !== undefined) return render;
-  throw usageRefusal(
-    'unknown-format',
-    extension === ''
-      ? `${path} does not say its format.`
-      : `There is no comparison in the format ${extension}.`,
-    `the ending of the name says the format; there are ${[...compareRenderers.keys()].join(' and ')}`,
-    `write --out ${path.slice(0, path.length - extension.length)}.csv`,
-    path,
-  );
 }
 
 function unknownCase(name: string, members: readonly Member[]) {

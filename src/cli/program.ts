@@ -74,7 +74,7 @@ function overview(): string {
     '  looptally new ammonia --out loop.yaml',
     '  looptally balance loop.yaml',
     '',
-    'Exit codes: 0 done, 1 a fault of Looptally, 2 bad input or usage, 3 did not close, 4 an aim not reached.',
+    'Exit codes: 0 done, 1 a fault of Looptally, 2 bad input or usage, 3 did not close, 4 an aim or limit not reached.',
     '',
   ].join('\n');
 }

@@ -103,7 +103,7 @@ function readBounds(
 }
 
 /** SI unit of the setting, told by the unit that its bound is written in. */
-function unitOfBound(move: string, bound: string | number): string {
+export function unitOfBound(move: string, bound: string | number): string {
   if (/^[^.]+\.flows\.[^.]+$/.test(move) && typeof bound === 'string') return 'mol/s';
   const fitting = (Object.keys(dimensions) as Dimension[]).find((d) => parseQuantity(String(bound), d).ok);
   return fitting === undefined ? '' : dimensions[fitting].si;

@@ -11,6 +11,8 @@ export interface FormulaWorld {
   readonly tree: Tree;
   /** the user's own figures that stand above */
   readonly figures: readonly string[];
+  /** names of single numbers that stand beside streams, blocks and figures: cost and profit of an objective */
+  readonly money?: readonly string[];
 }
 
 /** A number, a branch with known names, or a branch whose names only the result knows. */
@@ -101,8 +103,10 @@ function each(names: readonly string[], tree: Tree): Tree {
   return Object.fromEntries(names.map((name) => [name, tree]));
 }
 
-function follow(parts: readonly string[], { tree: root, figures }: FormulaWorld): Fault | null {
-  let tree = root;
+function follow(parts: readonly string[], world: FormulaWorld): Fault | null {
+  const { figures, money = [] } = world;
+  if (parts.length === 1 && money.includes(parts[0])) return null;
+  let { tree } = world;
   for (const [i, part] of parts.entries()) {
     // The user's own figures come and go from formula to formula.
     if (i === 2 && parts[0] === 'figures' && parts[1] === 'user') tree = each(figures, 'number');

@@ -23,7 +23,7 @@ export function readFormula(
   text: string = node.text,
   offset = 0,
 ): ReadFormula | null {
-  const compiled = compileFormula(text, formulaRoots);
+  const compiled = compileFormula(text, [...formulaRoots, ...(world?.money ?? [])]);
   if (!compiled.ok) {
     const { what, why, mend } = compiled;
     const where = placeInside(node, offset + compiled.offset, compiled.length);

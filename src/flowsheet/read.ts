@@ -16,7 +16,9 @@ import { formulaWorld } from './formula-scope.ts';
 import { readHeader } from './header.ts';
 import { readLedger } from './ledger.ts';
 import { ledgerDefaults } from './ledger-defaults.ts';
+import { readObjective } from './objective.ts';
 import { createPlaceOf } from './place-of.ts';
+import { readPrices } from './prices.ts';
 import { readReactions } from './reactions.ts';
 import { fileKeys } from './schema.ts';
 import { readSolve } from './solve.ts';
@@ -124,6 +126,12 @@ function readTree(
     : null;
   const spreads = readSpreads(reading, spreadable, aims);
   const correlations = readCorrelations(reading, spreads);
+  const priced =
+    world === null
+      ? null
+      : readPrices(reading, components!, streams, feeds.names, blocks ?? [], ledger?.ledger ?? null);
+  const objective =
+    world === null ? null : readObjective(reading, { ...world, figures: ownFigures }, settings, priced, aims);
   const solve = readSolve(reading, named ? streams : null);
   const study = readStudy(reading, world === null ? null : { ...world, figures: ownFigures });
   if (
@@ -154,6 +162,8 @@ function readTree(
     figures,
     spreads: spreads.spreads,
     correlations,
+    prices: priced?.prices ?? null,
+    objective,
     solve,
     study,
     assumptions: [

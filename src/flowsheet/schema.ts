@@ -121,6 +121,27 @@ export const correlationSchema = z.strictObject({
   value: plainNumber({ above: -1, below: 1, description: 'correlation of the ranks (Spearman)' }),
 });
 
+const goalSchema = z.union([z.array(z.string()).min(1).max(2), z.string().transform((one) => [one])]);
+
+/** What `looptally optimise` is asked; one goal, or two for a trade-off front. */
+export const objectiveSchema = z.strictObject({
+  minimise: goalSchema.optional().meta({
+    description: 'cost, or a formula',
+    examples: ['cost', 'figures.power_kW.total'],
+  }),
+  maximise: goalSchema.optional().meta({ description: 'profit, or a formula', examples: ['profit'] }),
+  move: z.record(z.string(), z.string().meta({ examples: ['-30 degC..5 degC'] })).meta({
+    description: 'settings and the bounds between which they may be moved',
+  }),
+  limits: z
+    .union([z.array(z.string()), z.string().transform((one) => [one])])
+    .optional()
+    .meta({
+      description: 'what must hold, formula < value or formula > value',
+      examples: [['figures.inerts.converter < 14 %']],
+    }),
+});
+
 export const solveSchema = z.strictObject({
   method: z.enum(['auto', 'direct', 'wegstein', 'eigenvalue', 'anderson', 'broyden', 'newton']).optional(),
   tolerance: plainNumber({ above: 0, max: 0.01, description: 'relative' }).optional(),
@@ -181,6 +202,14 @@ export const fileSchema = z.strictObject({
     .optional()
     .meta({ description: 'what is not known for sure, by the path of a setting or constant' }),
   correlations: z.array(correlationSchema).optional(),
+  prices: z
+    .record(z.string(), z.string().meta({ examples: ['60 EUR/MWh', '350 EUR/t'] }))
+    .optional()
+    .meta({
+      description:
+        'of makeup (or a feed), power, refrigeration (cold), cooling_water (heat), product, purge (fuel value)',
+    }),
+  objective: objectiveSchema.optional(),
   solve: solveSchema.optional(),
   study: studySchema.optional(),
 });

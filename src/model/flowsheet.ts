@@ -78,6 +78,58 @@ export interface UserFigure {
   readonly unit: string;
 }
 
+/** What is bought or sold, with what it comes to in an hour. */
+export interface PricedItem {
+  /** makeup or a feed, power, refrigeration, cooling_water, product, purge */
+  readonly name: string;
+  /** the price as written, e.g. 60 EUR/MWh */
+  readonly price: string;
+  /** money per hour: what it costs, or brings where `income` is true */
+  readonly perHour: Formula;
+  readonly income: boolean;
+}
+
+export interface Prices {
+  /** the word that stands before the unit of every price */
+  readonly currency: string;
+  readonly items: readonly PricedItem[];
+}
+
+/** A figure to be made as small or as large as possible. */
+export interface Goal {
+  readonly sense: 'minimise' | 'maximise';
+  /** as written; its formula has cost and profit written out */
+  readonly text: string;
+  readonly formula: Formula;
+  /** unit of the value, '' for a fraction or where it cannot be told */
+  readonly unit: string;
+}
+
+/** A setting that may be moved between bounds [SI]. */
+export interface Move {
+  readonly path: string;
+  readonly between: readonly [number, number];
+  /** SI unit of the setting, '' for fractions and numbers */
+  readonly unit: string;
+}
+
+/** A figure that must stay below or above a value. */
+export interface FigureLimit {
+  /** as written, e.g. figures.inerts.converter < 14 % */
+  readonly text: string;
+  readonly formula: Formula;
+  readonly side: 'below' | 'above';
+  /** in the unit of the formula */
+  readonly bound: number;
+}
+
+/** What `optimise` is asked: one goal, or two for a trade-off front. */
+export interface Objective {
+  readonly goals: readonly Goal[];
+  readonly moves: readonly Move[];
+  readonly limits: readonly FigureLimit[];
+}
+
 export interface SolveSpec {
   readonly method: MethodName;
   readonly tolerance: number;
@@ -133,6 +185,8 @@ export interface Flowsheet {
   readonly figures: readonly UserFigure[];
   readonly spreads: readonly Spread[];
   readonly correlations: readonly Correlation[];
+  readonly prices: Prices | null;
+  readonly objective: Objective | null;
   readonly solve: SolveSpec;
   /** null where the file has no study */
   readonly study: StudySpec | null;

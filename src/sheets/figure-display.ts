@@ -17,22 +17,22 @@ export function figureDisplay(
   const [root, ...rest] = figure.split('.');
   if (root === 'user') {
     const unit = userUnits[rest.join('.')] ?? '';
-    return unit === '%' ? PERCENT : plain(unit);
+    return unit === '%' ? PERCENT : plainDisplay(unit);
   }
   if (FRACTIONS.some((name) => `${figure}.`.startsWith(`${name}.`))) return PERCENT;
   const named = UNITS_IN_NAMES.find(([suffix]) => figure.split('.').some((part) => part.endsWith(suffix)));
-  return plain(named?.[1] ?? '');
+  return plainDisplay(named?.[1] ?? '');
 }
 
 /** The display of a value moved in SI, as an aim moves it. */
 export function settingDisplay(path: string, unit: string): FigureDisplay {
   if (unit === 'K' && /temperature|intercooling/.test(path))
     return { unit: 'degC', step: 'K', factor: 1, offset: -273.15 };
-  if (unit === 'Pa') return { ...plain('bar'), factor: 1e-5 };
-  if (unit === 'W') return { ...plain('kW'), factor: 1e-3 };
-  if (unit === 'mol/s') return { ...plain('kmol/h'), factor: 3.6 };
+  if (unit === 'Pa') return { ...plainDisplay('bar'), factor: 1e-5 };
+  if (unit === 'W') return { ...plainDisplay('kW'), factor: 1e-3 };
+  if (unit === 'mol/s') return { ...plainDisplay('kmol/h'), factor: 3.6 };
   if (unit === '' && /fraction|conversion|efficiency|recover/.test(path)) return PERCENT;
-  return plain(unit);
+  return plainDisplay(unit);
 }
 
 /** The number without its unit. */
@@ -40,6 +40,11 @@ export function shownValue(value: number | null, { factor, offset, unit }: Figur
   if (value === null) return '-';
   const shown = value * factor + offset;
   return unit === '%' ? fixed(shown, 2, 1e-8) : unit === 'degC' ? fixed(shown, 2, 1e-9) : significant(shown);
+}
+
+/** The number with its unit. */
+export function shownWithUnit(value: number | null, display: FigureDisplay): string {
+  return `${shownValue(value, display)} ${display.unit}`.trimEnd();
 }
 
 /** A difference with its sign, three digits; 0 stays 0. */
@@ -68,6 +73,7 @@ const UNITS_IN_NAMES: readonly (readonly [string, string])[] = [
   ['_kW', 'kW'],
 ];
 
-function plain(unit: string): FigureDisplay {
+/** A number as it stands, with its unit. */
+export function plainDisplay(unit: string): FigureDisplay {
   return { unit, step: unit, factor: 1, offset: 0 };
 }

@@ -12,6 +12,7 @@ const names = [
   'levers',
   'compare',
   'uncertainty',
+  'optimise',
   'sheet',
   'equilibrium',
   'data',
