@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto';
-import { closeSync, fsyncSync, ftruncateSync, openSync, readSync, writeSync } from 'node:fs';
+import { closeSync, ftruncateSync, openSync, readFileSync, readSync, statSync, writeSync } from 'node:fs';
 import type { PathTable } from '../study/sweep.ts';
 
 /**
@@ -28,9 +28,20 @@ const HEAD = 16;
 /** @throws what the system says where the file is there already or cannot be written */
 export function createJournal(path: string, identity: Identity, firstPath: number): Journal {
   const file = openSync(path, 'wx+', 0o666);
-  const head = Buffer.from(`${JSON.stringify(identity)}\n`);
+  const head = headOf(identity);
   writeWhole(file, head, 0);
   return journalOf(file, head.length, head.length, firstPath, 0);
+}
+
+/** Was the program stopped before it had said which sweep a side file belongs to? Then nothing is lost with it. */
+export function isBarelyBegun(path: string, identity: Identity): boolean {
+  const head = headOf(identity);
+  const { size } = statSync(path);
+  return size < head.length && head.subarray(0, size).equals(readFileSync(path));
+}
+
+function headOf(identity: Identity): Buffer {
+  return Buffer.from(`${JSON.stringify(identity)}\n`);
 }
 
 /** What an existing side file says it belongs to, and where its records begin; null where it is none. */
@@ -83,10 +94,7 @@ function journalOf(file: number, begins: number, from: number, firstPath: number
     *tables() {
       for (const { table } of records(file, begins, end)) yield table;
     },
-    close() {
-      fsyncSync(file);
-      closeSync(file);
-    },
+    close: () => closeSync(file),
   };
 }
 

@@ -1,9 +1,16 @@
 import { createHash } from 'node:crypto';
-import { existsSync, statfsSync } from 'node:fs';
+import { existsSync, rmSync, statfsSync } from 'node:fs';
 import { dirname } from 'node:path';
 import { type Refusal, usageRefusal } from './refusal.ts';
 import type { SweepJob } from './sweep-job.ts';
-import { createJournal, type Identity, type Journal, readIdentity, resumeJournal } from './sweep-journal.ts';
+import {
+  createJournal,
+  type Identity,
+  isBarelyBegun,
+  type Journal,
+  readIdentity,
+  resumeJournal,
+} from './sweep-journal.ts';
 import { version } from './version.ts';
 
 /** What a sweep is made from: where one of these differs, the rows would. */
@@ -39,6 +46,10 @@ export function openJournal(out: string, identity: Identity, firstPath: number, 
   try {
     if (!existsSync(path)) return createJournal(path, identity, firstPath);
     if (!resume) throw unfinished(out, path);
+    if (isBarelyBegun(path, identity)) {
+      rmSync(path);
+      return createJournal(path, identity, firstPath);
+    }
     const found = readIdentity(path);
     if (found === null) throw noSideFile(path);
     const different = Object.keys(identity).filter((key) => found.identity[key] !== identity[key]);

@@ -6,6 +6,7 @@ import {
   readFileSync,
   rmSync,
   statSync,
+  truncateSync,
   writeFileSync,
   writeSync,
 } from 'node:fs';
@@ -192,6 +193,13 @@ describe('a stopped sweep', () => {
     closeSync(file);
     expect(run(sweep('damaged.csv', '--resume')).code).toBe(0);
     expect(readFileSync(at('damaged.csv')).equals(undisturbed)).toBe(true);
+  });
+
+  test.each([0, 1, 100])('after %i bytes begins anew', (bytes) => {
+    stop('begun.csv');
+    truncateSync(at('begun.csv.part'), bytes);
+    expect(run(sweep('begun.csv', '--resume'))).toMatchObject({ code: 0, err: '' });
+    expect(readFileSync(at('begun.csv')).equals(undisturbed)).toBe(true);
   });
 
   test('whose side file is something else is left alone', () => {
