@@ -164,7 +164,7 @@ function titleBlock(
 
 /** A long title is set smaller before it is clipped. */
 function fitting(title: string, width: number): number {
-  const sizes = [LARGE, MIDDLE];
+  const sizes = [LARGE, 17, MIDDLE, 12];
   return sizes.find((size) => textWidth(title.slice(0, 400), size, true) <= width) ?? SMALL;
 }
 
