@@ -35,7 +35,7 @@ export {
 export { compareText } from './sheets/compare.ts';
 export { type CsvTableName, csvSheet } from './sheets/csv.ts';
 export { type Drawing, type DrawingOptions, drawingOf } from './sheets/drawing/drawing.ts';
-export type { TitleBlock } from './sheets/drawing/sheet-frame.ts';
+export type { TitleBlock } from './sheets/drawing/title-block.ts';
 export { leversText } from './sheets/levers.ts';
 export { markdownSheet } from './sheets/markdown.ts';
 export { type Rendered, type Renderer, type RenderOptions, renderers } from './sheets/renderers.ts';

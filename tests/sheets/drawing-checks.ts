@@ -40,7 +40,6 @@ export function crossingPoints({ lines }: Drawing): string[] {
     for (const other of lines.slice(k + 1))
       for (const a of stretches(one.points))
         for (const b of stretches(other.points)) {
-          const thin = { x: a.x + SLACK, y: a.y + SLACK };
           const across = a.width === 0 ? b.height === 0 : b.width === 0;
           if (!across) continue;
           const [upright, level] = a.width === 0 ? [a, b] : [b, a];
@@ -50,7 +49,7 @@ export function crossingPoints({ lines }: Drawing): string[] {
             level.y > upright.y + SLACK &&
             level.y < upright.y + upright.height - SLACK
           )
-            found.push(`${one.tag} x ${other.tag} at ${thin.x},${thin.y}`);
+            found.push(`${one.tag} x ${other.tag} at ${upright.x},${level.y}`);
         }
   return found;
 }

@@ -64,6 +64,13 @@ test('every kind of block has a symbol of its own', () => {
   expect([...drawnKinds()].sort()).toEqual([...blockKinds.keys()].sort());
 });
 
+test.each(['<a>', '<a></b>', '<a b="1" b="2"/>', '<a>&x;</a>', '<a/><a/>', '<a>\u0001</a>', '<a b=1/>'])(
+  'the check of XML refuses %j',
+  (source) => {
+    expect(() => parseXml(source)).toThrow();
+  },
+);
+
 test('the checks find what overlaps and what crosses', () => {
   const level = {
     tag: 'S1',

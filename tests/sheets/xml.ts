@@ -25,9 +25,8 @@ export function parseXml(source: string): { elements: string[]; texts: string[] 
       if (open.pop() !== name) throw new Error(`</${name}> closes nothing`);
     } else {
       if (open.length === 0) roots++;
-      const names = [...attributes.matchAll(/([\w:-]+)=/g)].map((each) => each[1]);
-      const bare = names.filter((each, k) => names.indexOf(each) !== k && attributes.includes(` ${each}="`));
-      if (bare.length > 0) throw new Error(`twice the attribute ${bare[0]}`);
+      const names = [...attributes.matchAll(/([\w:-]+)="[^"]*"/g)].map((each) => each[1]);
+      if (new Set(names).size < names.length) throw new Error(`an attribute given twice:${attributes}`);
       elements.push(name!);
       if (empty !== '/') open.push(name!);
     }

@@ -4,7 +4,7 @@ import { arrange } from './arrange.ts';
 import { giveDirections } from './directions.ts';
 import { flagOf } from './flags.ts';
 import { type DrawnStream, networkOf } from './network.ts';
-import { drawFrame, frameFor, type TitleBlock } from './sheet-frame.ts';
+import { drawFrame, frameFor } from './sheet-frame.ts';
 import {
   type Box,
   escaped,
@@ -18,6 +18,7 @@ import {
   type Point,
   SMALL,
 } from './svg.ts';
+import type { TitleBlock } from './title-block.ts';
 
 export interface DrawingOptions {
   /** the notes of the flowsheet */
