@@ -34,10 +34,12 @@ export {
 } from './properties/catalogue.ts';
 export { compareText } from './sheets/compare.ts';
 export { type CsvTableName, csvSheet } from './sheets/csv.ts';
+export { type Drawing, type DrawingOptions, drawingOf } from './sheets/drawing/drawing.ts';
+export type { TitleBlock } from './sheets/drawing/title-block.ts';
 export { leversText } from './sheets/levers.ts';
 export { markdownSheet } from './sheets/markdown.ts';
 export { optimiseText } from './sheets/optimise.ts';
-export { type Renderer, type RenderOptions, renderers } from './sheets/renderers.ts';
+export { type Rendered, type Renderer, type RenderOptions, renderers } from './sheets/renderers.ts';
 export type { SheetOptions } from './sheets/sheet.ts';
 export { textSheet } from './sheets/text.ts';
 export { uncertaintyText } from './sheets/uncertainty.ts';

@@ -21,6 +21,7 @@ export function sheetCommand(): Command {
     'looptally new ammonia --out loop.yaml',
     'looptally sheet loop.yaml --out loop.md --out loop.csv',
     'looptally sheet loop.yaml --out ledger.csv --table ledger',
+    'looptally sheet loop.yaml --out loop.svg',
   ]);
   return withSolveOptions(command)
     .option(
@@ -47,14 +48,16 @@ async function runSheet(file: string, options: SheetCommandOptions): Promise<voi
     }
     return;
   }
+  const { flowsheet, result } = solved;
+  const product = flowsheet.ledger.product?.stream;
   const sheetOptions = {
-    figureUnits: figureUnits(solved.flowsheet),
+    figureUnits: figureUnits(flowsheet),
+    drawing: { notes: flowsheet.notes, ...(product === undefined ? {} : { product }) },
     ...(options.table === undefined ? {} : { table: options.table }),
   };
-  const outputs: Output[] = chosen.map(({ path, renderer }) => ({
-    path,
-    content: renderer.render(solved.result, sheetOptions),
-  }));
+  const outputs: Output[] = [];
+  for (const { path, renderer } of chosen)
+    outputs.push({ path, content: await renderer.render(result, sheetOptions) });
   writeOutputs(outputs);
   if (options.json) {
     printJson(resultJson(solved));
@@ -79,7 +82,7 @@ function unknownFormat(path: string): Refusal {
   return usageRefusal(
     'unknown-format',
     extension === '' ? `${path} does not say its format.` : `There is no sheet of the format ${extension}.`,
-    `the ending of the name says the format; there are ${[...renderers.keys()].join(' and ')}`,
+    `the ending of the name says the format; there are ${[...renderers.keys()].join(', ')}`,
     `write --out ${path.slice(0, path.length - extension.length)}.md`,
     path,
   );

@@ -1,17 +1,23 @@
 import type { Result } from '../model/result.ts';
 import { type CsvTableName, csvSheet } from './csv.ts';
+import { type DrawingOptions, drawingOf } from './drawing/drawing.ts';
 import { markdownSheet } from './markdown.ts';
 import type { SheetOptions } from './sheet.ts';
 
 export interface RenderOptions extends SheetOptions {
   /** which table a CSV file holds */
   readonly table?: CsvTableName;
+  /** what a drawing says beyond the result */
+  readonly drawing?: DrawingOptions;
 }
+
+/** The content of a file. */
+export type Rendered = string | Uint8Array;
 
 export interface Renderer {
   /** what the format is, for help and messages */
   readonly summary: string;
-  render(result: Result, options: RenderOptions): string;
+  render(result: Result, options: RenderOptions): Rendered | Promise<Rendered>;
 }
 
 /** Formats of a sheet by the extension of its file. A new format is one file and one line here. */
@@ -21,4 +27,11 @@ export const renderers: ReadonlyMap<string, Renderer> = new Map([
     { summary: 'one table for a spreadsheet', render: (result, options) => csvSheet(result, options.table) },
   ],
   ['.md', { summary: 'the whole sheet as Markdown', render: markdownSheet }],
+  [
+    '.svg',
+    {
+      summary: 'the flow diagram',
+      render: async (result, options) => (await drawingOf(result, options.drawing)).svg,
+    },
+  ],
 ] satisfies [string, Renderer][]);

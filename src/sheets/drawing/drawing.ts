@@ -1,0 +1,134 @@
+import type { Result } from '../../model/result.ts';
+import { plainText } from '../plain.ts';
+import { arrange } from './arrange.ts';
+import { giveDirections } from './directions.ts';
+import { flagOf } from './flags.ts';
+import { type DrawnStream, networkOf } from './network.ts';
+import { drawFrame, frameFor } from './sheet-frame.ts';
+import {
+  type Box,
+  escaped,
+  FACES,
+  LINE,
+  line,
+  MAIN_LINE,
+  MM,
+  num,
+  type PlacedText,
+  type Point,
+  SMALL,
+} from './svg.ts';
+import type { TitleBlock } from './title-block.ts';
+
+export interface DrawingOptions {
+  /** the notes of the flowsheet */
+  readonly notes?: string;
+  /** tag of the product stream */
+  readonly product?: string;
+  readonly titleBlock?: TitleBlock;
+}
+
+/** A small flowsheet is drawn larger than a large one, up to this. */
+const LARGEST_SCALE = 1.5;
+const ORIGIN = { x: 0, y: 0 };
+
+/** A drawing as SVG, and where everything on it stands. */
+export interface Drawing {
+  readonly svg: string;
+  readonly texts: readonly { readonly text: string; readonly box: Box }[];
+  readonly symbols: readonly { readonly name: string; readonly kind: string; readonly box: Box }[];
+  readonly lines: readonly { readonly tag: string; readonly points: readonly Point[] }[];
+}
+
+/** The flow diagram of a result on a sheet with a title block: black on white, in millimetres, without script. */
+export async function drawingOf(result: Result, options: DrawingOptions = {}): Promise<Drawing> {
+  const network = networkOf(result);
+  giveDirections(network);
+  const flags = network.streams.map(({ tag, state }) => flagOf(tag, state));
+  const { boxes, layout } = await arrange(network, result, flags, options.product ?? null);
+  const frame = frameFor(layout.width, layout.height);
+  const { field } = frame;
+  const scale = Math.min(LARGEST_SCALE, field.width / layout.width, field.height / layout.height);
+  const by = {
+    x: field.x + (field.width - scale * layout.width) / 2,
+    y: field.y + (field.height - scale * layout.height) / 2,
+  };
+  const onSheet = ({ x, y }: Point): Point => ({ x: by.x + scale * x, y: by.y + scale * y });
+  const boxOnSheet = (box: Box, corner: Point): Box => ({
+    ...onSheet({ x: box.x + corner.x, y: box.y + corner.y }),
+    width: scale * box.width,
+    height: scale * box.height,
+  });
+
+  const edge = drawFrame(frame, result, { notes: options.notes ?? '', titleBlock: options.titleBlock ?? {} });
+  const drawnFlags = flags.map((flag, k) => flag.draw(layout.flags[k]!));
+  const texts: { text: string; box: Box }[] = [
+    ...edge.texts,
+    ...drawnFlags.flatMap((flag) =>
+      flag.texts.map(({ text, box }) => ({ text, box: boxOnSheet(box, ORIGIN) })),
+    ),
+  ];
+  const symbols: { name: string; kind: string; box: Box }[] = [];
+  const nodes = boxes.map((box, k) => {
+    const corner = layout.nodes[k]!;
+    symbols.push({ name: box.node.name, kind: box.node.kind, box: boxOnSheet(box.symbol, corner) });
+    texts.push(...box.texts.map(({ text, box: inner }) => ({ text, box: boxOnSheet(inner, corner) })));
+    return `<g transform="translate(${num(corner.x)} ${num(corner.y)})">${box.svg}${words(box.texts)}</g>`;
+  });
+  const { width, height } = frame;
+  const svg = [
+    `<svg xmlns="http://www.w3.org/2000/svg" width="${width / MM}mm" height="${height / MM}mm" viewBox="0 0 ${width} ${height}">`,
+    `<title>${escaped(plainText(result.title) || 'Untitled flowsheet')}</title>`,
+    `<rect width="${width}" height="${height}" fill="#fff"/>`,
+    `<g fill="none" stroke="#000" stroke-width="${LINE}" font-family="${FACES}" font-size="${SMALL}">`,
+    `<g id="frame">${edge.svg}${words(edge.texts)}</g>`,
+    `<g transform="translate(${num(by.x)} ${num(by.y)}) scale(${num(scale)})">`,
+    `<g id="streams">`,
+    ...network.streams.map((stream, k) => drawStream(stream, layout.lines[k]!, isReturn(stream))),
+    `</g>`,
+    `<g id="blocks">`,
+    ...nodes,
+    `</g>`,
+    `<g id="flags">`,
+    ...drawnFlags.map((flag) => flag.svg + words(flag.texts)),
+    `</g>`,
+    `</g>`,
+    `</g>`,
+    `</svg>`,
+    '',
+  ].join('\n');
+  const lines = network.streams.map(({ tag }, k) => ({ tag, points: layout.lines[k]!.map(onSheet) }));
+  return { svg, texts, symbols, lines };
+
+  function isReturn({ loop, back, from }: DrawnStream): boolean {
+    return back || (loop && network.lanes[from]!.returning);
+  }
+}
+
+function words(texts: readonly PlacedText[]): string {
+  return `<g fill="#000" stroke="none">${texts.map(({ svg }) => svg).join('')}</g>`;
+}
+
+const HEAD = 9;
+
+/** A stream with its head; two heads on the way back of a recycle. */
+function drawStream({ loop }: DrawnStream, points: readonly Point[], isReturn: boolean): string {
+  const end = points.at(-1)!;
+  const before = points.at(-2) ?? end;
+  const length = Math.hypot(end.x - before.x, end.y - before.y) || 1;
+  const along = { x: (end.x - before.x) / length, y: (end.y - before.y) / length };
+  const head = (back: number): string => {
+    const tip = { x: end.x - back * along.x, y: end.y - back * along.y };
+    const foot = { x: tip.x - HEAD * along.x, y: tip.y - HEAD * along.y };
+    const [a, b] = [1, -1].map(
+      (side) => `${num(foot.x - 4 * side * along.y)} ${num(foot.y + 4 * side * along.x)}`,
+    );
+    return `<path d="M${num(tip.x)} ${num(tip.y)}L${a}L${b}Z" fill="#000" stroke="none"/>`;
+  };
+  // The line ends inside its head, so that the tip stays sharp.
+  const shortened = [
+    ...points.slice(0, -1),
+    { x: end.x - 0.6 * HEAD * along.x, y: end.y - 0.6 * HEAD * along.y },
+  ];
+  return line(shortened, loop ? MAIN_LINE : LINE) + head(0) + (isReturn ? head(HEAD) : '');
+}

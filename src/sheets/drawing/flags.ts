@@ -1,0 +1,41 @@
+import type { StreamResult } from '../../model/result.ts';
+import { fixed, significant } from '../numbers.ts';
+import { type PlacedText, type Point, rectangle, SMALL, THIN_LINE, text } from './svg.ts';
+import { textWidth } from './text-width.ts';
+
+/** The flag at a stream: its tag in a frame, under it temperature, pressure and flow. */
+export interface Flag {
+  readonly width: number;
+  readonly height: number;
+  draw(at: Point): { readonly svg: string; readonly texts: readonly PlacedText[] };
+}
+
+const TAG_WIDTH = 90;
+const ROW = 11;
+const TAG_ROW = 14;
+
+export function flagOf(tag: string, state: StreamResult): Flag {
+  const rows = [
+    `${fixed(state.temperature_K - 273.15, 1, 1e-9)} °C`,
+    `${significant(state.pressure_bar, 4)} bar`,
+    `${flowText(state.flow_kmol_h)} kmol/h`,
+  ];
+  const head = text(tag, 4, 10, { bold: true, width: TAG_WIDTH });
+  const frame = head.box.width + 8;
+  return {
+    width: Math.max(frame, ...rows.map((row) => textWidth(row, SMALL))) + 2,
+    height: TAG_ROW + ROW * rows.length,
+    draw({ x, y }) {
+      const texts = [
+        text(tag, x + 4, y + 10, { bold: true, width: TAG_WIDTH }),
+        ...rows.map((row, k) => text(row, x, y + TAG_ROW + 9 + ROW * k)),
+      ];
+      return { svg: rectangle({ x, y, width: frame, height: TAG_ROW - 1 }, THIN_LINE), texts };
+    },
+  };
+}
+
+/** Four figures, and no decimals where there are more before the point. */
+function flowText(flow: number): string {
+  return Math.abs(flow) >= 1000 && Math.abs(flow) < 1e9 ? flow.toFixed(0) : significant(flow, 4);
+}
