@@ -25,7 +25,8 @@ export function slowestModeText({ radius, options }: Facts): string {
   if (Math.abs(missing) < 1e-9) return 'all of a deviation comes back in every pass (spectral radius 1)';
   if (radius > 1)
     return `a deviation grows by a factor of ${figure(radius)} in every pass (spectral radius ${figure(radius)})`;
-  const decimals = missing < 0.1 ? Math.ceil(-Math.log10(missing)) + 2 : 3;
+  // A power of ten but for rounding must not have a digit more on one side of it.
+  const decimals = missing < 0.1 ? Math.ceil(-Math.log10(missing) - 1e-6) + 2 : 3;
   return (
     `${figure(100 * missing)} % of a deviation goes out in a pass and the rest comes back (spectral radius ` +
     `${radius.toFixed(decimals)}): by direct substitution about ` +
