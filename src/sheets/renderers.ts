@@ -1,9 +1,14 @@
+import type { Flowsheet } from '../model/flowsheet.ts';
 import type { Result } from '../model/result.ts';
 import { type CsvTableName, csvSheet } from './csv.ts';
 import { markdownSheet } from './markdown.ts';
 import type { SheetOptions } from './sheet.ts';
 
 export interface RenderOptions extends SheetOptions {
+  /** the flowsheet that was closed: a workbook lists its settings and sources */
+  readonly flowsheet: Flowsheet;
+  /** version of Looptally, for the head of a workbook */
+  readonly version?: string;
   /** which table a CSV file holds */
   readonly table?: CsvTableName;
 }
@@ -11,14 +16,28 @@ export interface RenderOptions extends SheetOptions {
 export interface Renderer {
   /** what the format is, for help and messages */
   readonly summary: string;
-  render(result: Result, options: RenderOptions): string;
+  /** the file; a promise of it where the format has to be loaded first */
+  render(result: Result, options: RenderOptions): string | Uint8Array | Promise<string | Uint8Array>;
 }
 
 /** Formats of a sheet by the extension of its file. A new format is one file and one line here. */
 export const renderers: ReadonlyMap<string, Renderer> = new Map([
   [
     '.csv',
-    { summary: 'one table for a spreadsheet', render: (result, options) => csvSheet(result, options.table) },
+    {
+      summary: 'one table for a spreadsheet',
+      render: (result, options) => csvSheet(result, options.table, options),
+    },
   ],
   ['.md', { summary: 'the whole sheet as Markdown', render: markdownSheet }],
+  [
+    '.xlsx',
+    {
+      summary: 'the study as a workbook with live formulas',
+      render: async (result, options) => {
+        const { workbook } = await import('./workbook.ts');
+        return workbook(result, options.flowsheet, options);
+      },
+    },
+  ],
 ] satisfies [string, Renderer][]);

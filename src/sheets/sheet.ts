@@ -15,8 +15,10 @@ export interface Paint {
 
 export const noPaint: Paint = { head: (text) => text, alarm: (text) => text };
 
-/** What every sheet ends with. */
-export const caution =
+/** What every sheet must say. */
+export const notACertificate =
   'A study tool, not a design certificate. Hydrogen, ammonia, carbon monoxide and high pressure: design, ' +
-  'materials and relief follow local codes and belong in the hands of licensed practice. ' +
-  'Check the assumptions above before a figure leaves this sheet.';
+  'materials and relief follow local codes and belong in the hands of licensed practice.';
+
+/** What every sheet ends with. */
+export const caution = `${notACertificate} Check the assumptions above before a figure leaves this sheet.`;
