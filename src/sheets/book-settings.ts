@@ -4,6 +4,7 @@ import { natural } from '../study/compare.ts';
 import { type SettingValue, settingList } from '../study/setting-list.ts';
 import { settingDisplay } from './figure-display.ts';
 import { plainText } from './plain.ts';
+import { heightOf } from './xlsx-head.ts';
 import { heads, looks, number, ownFormat, text, unitHeads } from './xlsx-looks.ts';
 import { type Cell, type Page, put } from './xlsx-model.ts';
 
@@ -13,11 +14,12 @@ export function fillSettings(page: Page, result: Result, flowsheet: Flowsheet): 
   const movedBy = new Map(Object.entries(result.aims).map(([name, aim]) => [aim.setting, { name, aim }]));
   for (const [path, value] of settingList(flowsheet)) {
     const moved = movedBy.get(path);
-    put(page, [
+    const row = put(page, [
       text(path),
       ...(moved === undefined ? given(value) : found(path, moved.aim)),
       text(moved === undefined ? '' : `moved by the aim ${plainText(moved.name)}`, looks.unit),
     ]);
+    if (value.kind === 'text') page.heights.set(row, heightOf(value.text, page.widths[1]!));
   }
   if (Object.keys(result.aims).length === 0) return;
   put(page, []);
@@ -36,7 +38,7 @@ export function fillSettings(page: Page, result: Result, flowsheet: Flowsheet): 
 }
 
 function given(value: SettingValue): [Cell, Cell] {
-  if (value.kind === 'text') return [text(value.text, looks.right), text('')];
+  if (value.kind === 'text') return [text(value.text, looks.rightProse), null];
   const { setting } = value;
   // The natural unit of a temperature is that of its steps; as a value it is read in degC.
   if (setting.dimension === 'temperature')

@@ -37,7 +37,7 @@ export function bookOf(result: Result, flowsheet: Flowsheet, options: WorkbookOp
     ledger: page('Ledger', [20, 9, ...numbers(exitTags(result).length + 6)], 2),
     closure: page('Closure', [14, 9, ...numbers(6, 16)]),
     blocks: page('Blocks', BLOCK_WIDTHS, 1),
-    settings: page('Settings', [40, 30, 14, 60]),
+    settings: page('Settings', [44, 44, 14, 60]),
     assumptions: page('Assumptions', [150]),
     sources: page('Sources', [16, 24, 110]),
     components: page('Components', [13, 24, 12, 13, 14, ...numbers(elementsOf(flowsheet).length, 9)], 1),

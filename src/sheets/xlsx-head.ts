@@ -44,10 +44,7 @@ export function createPage(
 
 /** The height in points of a row whose text is broken at a width in characters. */
 export function heightOf(line: string, width: number): number {
-  return Math.min(
-    TALLEST,
-    LINE * Math.max(1, Math.ceil(line.length / (0.9 * Math.min(width, LONGEST_LINE)))),
-  );
+  return Math.min(TALLEST, LINE * Math.max(1, Math.ceil(line.length / Math.min(width, LONGEST_LINE))));
 }
 
 function caseLine(result: Result): string {

@@ -13,6 +13,7 @@ export const looks = {
   prose: { wrap: true },
   remark: { wrap: true, indent: true },
   right: { side: 'right' },
+  rightProse: { side: 'right', wrap: true },
   sum: { bold: true, line: 'above' },
   closure: { format: '0.0E+00' },
   share: { format: '0.00%' },

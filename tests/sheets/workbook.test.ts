@@ -1,4 +1,5 @@
 import { describe, expect, test } from 'vitest';
+import { randomFlowsheet } from '../../bench/random-flowsheet.ts';
 import { bookOf, workbook } from '../../src/sheets/workbook.ts';
 import { workbookBytes } from '../../src/sheets/xlsx-file.ts';
 import type { Page } from '../../src/sheets/xlsx-model.ts';
@@ -35,15 +36,7 @@ describe.each(shipped)('the workbook of %s', async (name) => {
   const { result } = closed;
   const { cell, name: named } = createEvaluator(book);
 
-  test('shows beside every formula what the formula gives', () => {
-    const live = [...book.cells].filter(([, { formula }]) => formula !== null);
-    expect(live.length).toBeGreaterThan(100);
-    for (const [at, { value }] of live) {
-      // What is left open is the noise of large numbers: kmol/h, kg/h or kW, all below 1e7 here.
-      const noise = /^(Ledger|Closure)!/.test(at) ? 1e-7 : 0;
-      expect(Math.abs(cell(at) - value!), at).toBeLessThanOrEqual(1e-9 * Math.abs(value!) + noise);
-    }
-  });
+  test('shows beside every formula what the formula gives', () => expectLive(book));
 
   test('works out the closures and totals of the result again', () => {
     const closures = new Map([
@@ -101,6 +94,19 @@ describe.each(shipped)('the workbook of %s', async (name) => {
     expect(bytes[1]).toEqual(bytes[0]);
     expect(bytes[2]).toEqual(bytes[0]);
   });
+});
+
+// Whatever the flowsheet, writing it throws where a formula does not give the number of the result.
+test.each([
+  { blocks: 10, recycles: 1, seed: 3 },
+  { blocks: 30, recycles: 3, seed: 1 },
+  { blocks: 60, recycles: 5, seed: 2 },
+  { blocks: 200, recycles: 20, seed: 1 },
+])('the workbook of a random flowsheet of $blocks blocks gives its numbers again', async (wanted) => {
+  const closed = await closeText(randomFlowsheet(wanted));
+  const book = read(closed);
+  expectLive(book);
+  expect(book.cells.get('Figures!C7')!.value).toBeGreaterThan(0);
 });
 
 describe('a workbook', () => {
@@ -346,6 +352,18 @@ test('a book can be looked at without its bytes', () => {
   expect(pages.map(({ rows }) => rows.length).every((count) => count > 6)).toBe(true);
   expect(names.get('fresh_feed')).toBe('Figures!C7');
 });
+
+/** Every formula gives the value beside it. */
+function expectLive(book: ReadBook): void {
+  const { cell } = createEvaluator(book);
+  const live = [...book.cells].filter(([, { formula }]) => formula !== null);
+  expect(live.length).toBeGreaterThan(100);
+  for (const [at, { value }] of live) {
+    // What is left open is the noise of large numbers: kmol/h, kg/h or kW, all below 1e7 here.
+    const noise = /^(Ledger|Closure)!/.test(at) ? 1e-7 : 0;
+    expect(Math.abs(cell(at) - value!), at).toBeLessThanOrEqual(1e-9 * Math.abs(value!) + noise);
+  }
+}
 
 function near(value: number, expected: number, relative = 1e-9): void {
   expect(Math.abs(value - expected), `${value} is not ${expected}`).toBeLessThanOrEqual(
