@@ -7,6 +7,7 @@ import { figureUnits } from './figure-units.ts';
 import { type Refusal, usageRefusal } from './refusal.ts';
 import { resultJson, type SolveOptions, solve, tellShortfall, withSolveOptions } from './solve.ts';
 import { printJson, say } from './terminal.ts';
+import { version } from './version.ts';
 import { checkOutputs, type Output, writeOutputs } from './write-files.ts';
 
 interface SheetCommandOptions extends SolveOptions {
@@ -19,7 +20,7 @@ export function sheetCommand(): Command {
   const tables = Object.keys(csvTables);
   const command = fileCommand('sheet', 'Closes the loop and writes its sheet to one or several files.', [
     'looptally new ammonia --out loop.yaml',
-    'looptally sheet loop.yaml --out loop.md --out loop.csv',
+    'looptally sheet loop.yaml --out loop.xlsx --out loop.md',
     'looptally sheet loop.yaml --out ledger.csv --table ledger',
     'looptally sheet loop.yaml --out loop.svg',
   ]);
@@ -51,6 +52,8 @@ async function runSheet(file: string, options: SheetCommandOptions): Promise<voi
   const { flowsheet, result } = solved;
   const product = flowsheet.ledger.product?.stream;
   const sheetOptions = {
+    flowsheet,
+    version,
     figureUnits: figureUnits(flowsheet),
     drawing: { notes: flowsheet.notes, ...(product === undefined ? {} : { product }) },
     ...(options.table === undefined ? {} : { table: options.table }),
@@ -82,10 +85,14 @@ function unknownFormat(path: string): Refusal {
   return usageRefusal(
     'unknown-format',
     extension === '' ? `${path} does not say its format.` : `There is no sheet of the format ${extension}.`,
-    `the ending of the name says the format; there are ${[...renderers.keys()].join(', ')}`,
+    `the ending of the name says the format; there are ${listed([...renderers.keys()])}`,
     `write --out ${path.slice(0, path.length - extension.length)}.md`,
     path,
   );
+}
+
+function listed(names: readonly string[]): string {
+  return `${names.slice(0, -1).join(', ')} and ${names.at(-1)}`;
 }
 
 function nowhereToWrite(): Refusal {

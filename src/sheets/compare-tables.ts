@@ -1,7 +1,7 @@
 import type { Comparison } from '../study/compare.ts';
 import { natural } from '../study/compare.ts';
 import { cellText, columnLine, differingFigures, displayOf, figureName, unitOf } from './compare.ts';
-import { csvCell } from './csv.ts';
+import { csvCell, FRACTION } from './csv.ts';
 import { shownStep, shownValue } from './figure-display.ts';
 import { escaped, list, table } from './markdown.ts';
 import { percent } from './numbers.ts';
@@ -60,7 +60,7 @@ export function compareCsv(found: Comparison): string {
 
 /** Numbers of a CSV file are those of the result, where a fraction is 0 to 1. */
 function csvUnit(unit: string): string {
-  return unit === '%' ? '' : unit;
+  return unit === '%' ? FRACTION : unit;
 }
 
 function blanks(count: number): string[] {

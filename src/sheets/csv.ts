@@ -1,9 +1,13 @@
 import type { Result } from '../model/result.ts';
 import { exitTags } from './ledger-rows.ts';
 import { plainText } from './plain.ts';
+import type { SheetOptions } from './sheet.ts';
 import { feedStreams } from './story.ts';
 
 type Cell = string | number | null;
+
+/** Numbers of a CSV file are those of the result: what the sheets show in per cent is 0 to 1 here. */
+export const FRACTION = 'fraction';
 
 /** The tables a CSV file may hold; each is one rectangle with one line of heads, ready to filter and to join. */
 export const csvTables = {
@@ -20,8 +24,8 @@ export type CsvTableName = keyof typeof csvTables;
  *
  * @source format: RFC 4180 (2005); guard against formulas: OWASP, CSV Injection
  */
-export function csvSheet(result: Result, name: CsvTableName = 'streams'): string {
-  return csvTables[name](result)
+export function csvSheet(result: Result, name: CsvTableName = 'streams', options: SheetOptions = {}): string {
+  return csvTables[name](result, options)
     .map((row) => `${row.map(csvCell).join(',')}\r\n`)
     .join('');
 }
@@ -97,7 +101,7 @@ function ledgerTable(result: Result): Cell[][] {
   ];
 }
 
-function figureTable(result: Result): Cell[][] {
+function figureTable(result: Result, { figureUnits = {} }: SheetOptions): Cell[][] {
   const { figures, closure } = result;
   const feed = feedStreams(result).reduce((sum, [, stream]) => sum + stream.flow_kmol_h, 0);
   const rows: Cell[][] = [
@@ -108,12 +112,17 @@ function figureTable(result: Result): Cell[][] {
   ];
   for (const [block, values] of Object.entries(figures.per_pass_conversion)) {
     for (const [id, value] of Object.entries(values))
-      rows.push(['conversion per pass', `${id} in ${block}`, value, '']);
+      rows.push(['conversion per pass', `${id} in ${block}`, value, FRACTION]);
   }
-  rows.push(...each('overall conversion', figures.overall_conversion, ''));
+  rows.push(...each('overall conversion', figures.overall_conversion, FRACTION));
   const { overall_yield: overallYield, purge } = figures;
   if (overallYield)
-    rows.push(['yield', `${overallYield.product} per ${overallYield.reactant}`, overallYield.value, '']);
+    rows.push([
+      'yield',
+      `${overallYield.product} per ${overallYield.reactant}`,
+      overallYield.value,
+      FRACTION,
+    ]);
   rows.push(['production', overallYield?.product ?? '', figures.production_t_d, 't/d']);
   rows.push(...each('inerts at inlet', figures.inerts, 'mol/mol'));
   if (purge) {
@@ -122,13 +131,16 @@ function figureTable(result: Result): Cell[][] {
       ['purge per fresh feed', '', purge.fraction_of_makeup, 'mol/mol'],
     );
     rows.push(...each('lost in purge', purge.lost_kmol_h, 'kmol/h'));
-    rows.push(...each('lost in purge, part of feed', purge.lost_fraction, ''));
+    rows.push(...each('lost in purge, part of feed', purge.lost_fraction, FRACTION));
     rows.push(['lower heating value of purge', '', purge.lhv_MW, 'MW']);
   }
   rows.push(...each('power', figures.power_kW, 'kW'));
   rows.push(['specific power', '', figures.specific_power_kWh_t, 'kWh/t']);
   rows.push(...each('heat added', figures.duty_kW, 'kW'));
-  rows.push(...each('own figure', figures.user, ''));
+  for (const [own, value] of Object.entries(figures.user)) {
+    const unit = figureUnits[own] ?? '';
+    rows.push(['own figure', own, value, unit === '%' ? FRACTION : unit]);
+  }
   rows.push(['closure', 'mass', closure.mass, 'relative'], ['closure', 'energy', closure.energy, 'relative']);
   rows.push(...each('closure of atoms', closure.atoms, 'relative'));
   return rows;

@@ -21,7 +21,7 @@ export function markdownSheet(result: Result, options: SheetOptions = {}): strin
     section('Aims', aims(result)),
     section('Warnings', list(result.warnings.map((w) => `${w.where}: ${w.message} [${w.code}]`))),
     section('Streams', streamTables(result)),
-    section('Ledger, kmol/h', table(ledgerRows(result))),
+    section('Ledger', table(ledger(result))),
     section('Blocks', blocks(result)),
     section('Closure, relative', table(closureRows(result), 0)),
     section('Assumptions', list(result.assumptions)),
@@ -62,14 +62,21 @@ function aims(result: Result): string {
 }
 
 function streamTables(result: Result): string {
-  const columns = Object.keys(result.streams).length;
-  const cells = streamRows(result).map((row) => [
-    row.head.trim(),
-    ...(row.section ? Array<string>(columns).fill('') : row.cells),
-  ]);
+  // A table that is pasted elsewhere has no groups: every row says its unit itself.
+  const cells = streamRows(result)
+    .filter((row) => !row.section)
+    .map((row) => [row.alone ?? row.head, ...row.cells]);
   return columnGroups(cells, PAGE_WIDTH)
     .map((group) => table(pickColumns(cells, group)))
     .join('\n\n');
+}
+
+/** The ledger with the unit in every head. */
+function ledger(result: Result): string[][] {
+  const [head, ...rows] = ledgerRows(result);
+  const last = head!.length - 1;
+  const unit = (k: number) => (k === 0 ? '' : k === last ? ', relative' : ', kmol/h');
+  return [head!.map((word, k) => word + unit(k)), ...rows];
 }
 
 function blocks(result: Result): string {

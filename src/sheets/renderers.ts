@@ -1,3 +1,4 @@
+import type { Flowsheet } from '../model/flowsheet.ts';
 import type { Result } from '../model/result.ts';
 import { type CsvTableName, csvSheet } from './csv.ts';
 import { type DrawingOptions, drawingOf } from './drawing/drawing.ts';
@@ -5,6 +6,10 @@ import { markdownSheet } from './markdown.ts';
 import type { SheetOptions } from './sheet.ts';
 
 export interface RenderOptions extends SheetOptions {
+  /** the flowsheet that was closed: a workbook lists its settings and sources */
+  readonly flowsheet: Flowsheet;
+  /** version of Looptally, for the head of a workbook */
+  readonly version?: string;
   /** which table a CSV file holds */
   readonly table?: CsvTableName;
   /** what a drawing says beyond the result */
@@ -17,6 +22,7 @@ export type Rendered = string | Uint8Array;
 export interface Renderer {
   /** what the format is, for help and messages */
   readonly summary: string;
+  /** the file; a promise of it where the format has to be loaded first */
   render(result: Result, options: RenderOptions): Rendered | Promise<Rendered>;
 }
 
@@ -24,7 +30,10 @@ export interface Renderer {
 export const renderers: ReadonlyMap<string, Renderer> = new Map([
   [
     '.csv',
-    { summary: 'one table for a spreadsheet', render: (result, options) => csvSheet(result, options.table) },
+    {
+      summary: 'one table for a spreadsheet',
+      render: (result, options) => csvSheet(result, options.table, options),
+    },
   ],
   ['.md', { summary: 'the whole sheet as Markdown', render: markdownSheet }],
   [
@@ -32,6 +41,16 @@ export const renderers: ReadonlyMap<string, Renderer> = new Map([
     {
       summary: 'the flow diagram',
       render: async (result, options) => (await drawingOf(result, options.drawing)).svg,
+    },
+  ],
+  [
+    '.xlsx',
+    {
+      summary: 'the study as a workbook with live formulas',
+      render: async (result, options) => {
+        const { workbook } = await import('./workbook.ts');
+        return workbook(result, options.flowsheet, options);
+      },
     },
   ],
 ] satisfies [string, Renderer][]);

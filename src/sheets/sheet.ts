@@ -15,7 +15,7 @@ export interface Paint {
 
 export const noPaint: Paint = { head: (text) => text, alarm: (text) => text };
 
-/** What every drawing says as well. */
+/** What every sheet must say. */
 export const studyTool =
   'A study tool, not a design certificate. Hydrogen, ammonia, carbon monoxide and high pressure: design, ' +
   'materials and relief follow local codes and belong in the hands of licensed practice.';

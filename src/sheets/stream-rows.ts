@@ -6,6 +6,8 @@ import { plainText } from './plain.ts';
 export interface StreamRow {
   readonly head: string;
   readonly cells: readonly string[];
+  /** the head where the row stands without the rows around it; left out where that is the same */
+  readonly alone?: string;
   /** true for the head of a group of rows, which has no cells */
   readonly section: boolean;
 }
@@ -62,13 +64,15 @@ export function streamRows(result: Result): StreamRow[] {
     ),
     enthalpyRow(streams),
     ...componentRows(
-      'components, kmol/h',
+      'components',
+      'kmol/h',
       components,
       streams,
       (stream, id) => stream.components_kmol_h[id] ?? 0,
     ),
     ...componentRows(
-      'composition, mol %',
+      'composition',
+      'mol %',
       components,
       streams,
       (stream, id) => 100 * (stream.mole_fraction[id] ?? 0),
@@ -89,7 +93,9 @@ function endRows(head: string, ends: readonly string[]): StreamRow[] {
     head,
     parts.map((part) => part[1] ?? ''),
   );
-  return ports.every((port) => port === '') ? [blocks] : [blocks, textRow('  port', ports)];
+  return ports.every((port) => port === '')
+    ? [blocks]
+    : [blocks, { ...textRow('  port', ports), alone: `${head}, port` }];
 }
 
 /** A row of numbers with the same decimals; null leaves its cell empty. */
@@ -150,6 +156,7 @@ function enthalpyRow(streams: readonly StreamResult[]): StreamRow {
 
 function componentRows(
   head: string,
+  unit: string,
   components: readonly string[],
   streams: readonly StreamResult[],
   amountOf: (stream: StreamResult, id: string) => number,
@@ -159,9 +166,10 @@ function componentRows(
   const all = values.flat();
   const decimals = decimalsFor(all, 6, 2, most);
   return [
-    { head, cells: [], section: true },
+    { head: `${head}, ${unit}`, cells: [], section: true },
     ...components.map((id, index) => ({
       head: `  ${id}`,
+      alone: `${id}, ${unit}`,
       cells: values[index]!.map((value) => fixed(value, decimals, noiseOf(all))),
       section: false,
     })),

@@ -95,7 +95,7 @@ function overallYield(plant: Plant, { entering }: Tallied): Figures['overall_yie
   if (!product || !reactant) return null;
   const p = index(plant, product.component);
   const r = index(plant, reactant);
-  const reaction = yieldReaction(plant, p, r);
+  const reaction = yieldReaction(plant.flowsheet.reactions, p, r);
   if (!reaction || entering[r] === 0) return null;
   const possible = (entering[r] * reaction.coefficients[p]) / -reaction.coefficients[r];
   const made = state(plant, product.stream).flowsMolPerS[p] - entering[p];
@@ -106,9 +106,13 @@ function overallYield(plant: Plant, { entering }: Tallied): Figures['overall_yie
  * The reaction that says how much product a key reactant can make: of those that turn the one into the other, the one
  * that makes most of it, so that the order in which they are written does not matter.
  */
-function yieldReaction(plant: Plant, product: number, reactant: number): Reaction | null {
+export function yieldReaction(
+  reactions: readonly Reaction[],
+  product: number,
+  reactant: number,
+): Reaction | null {
   const share = ({ coefficients }: Reaction) => coefficients[product] / -coefficients[reactant];
-  const fitting = plant.flowsheet.reactions.filter(
+  const fitting = reactions.filter(
     ({ coefficients }) => coefficients[product] > 0 && coefficients[reactant] < 0,
   );
   return fitting.reduce<Reaction | null>(

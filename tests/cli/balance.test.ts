@@ -2,6 +2,7 @@ import { readdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { beforeAll, describe, expect, test } from 'vitest';
 import type { Result } from '../../src/model/result.ts';
+import { readWorkbook } from '../sheets/read-workbook.ts';
 import { commandLine } from './looptally.ts';
 
 const { run, folder } = commandLine();
@@ -198,6 +199,19 @@ describe('sheet', () => {
       err: '',
     });
     expect(readFileSync(join(folder(), 'a.csv'), 'utf8')).toMatch(/^component,in \[kmol\/h\],/);
+  });
+
+  test('writes a workbook that says by which version it was made', () => {
+    expect(run(['sheet', 'ammonia.yaml', '--quiet', '--out', 'loop.XLSX'])).toEqual({
+      code: 0,
+      out: '',
+      err: '',
+    });
+    const { cells, names } = readWorkbook(readFileSync(join(folder(), 'loop.XLSX')));
+    const version = run(['--version']).out.trim();
+    expect(cells.get('Streams!A3')!.text).toContain(`Looptally ${version}. A study tool`);
+    const { figures } = JSON.parse(run(['balance', 'ammonia.yaml', '--json']).out);
+    expect(cells.get(names.get('recycle_ratio')!)!.value).toBeCloseTo(figures.recycle_ratio, 12);
   });
 
   test('writes nothing when the file has faults', () => {

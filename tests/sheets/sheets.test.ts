@@ -5,6 +5,7 @@ import { markdownSheet } from '../../src/sheets/markdown.ts';
 import { renderers } from '../../src/sheets/renderers.ts';
 import { textSheet } from '../../src/sheets/text.ts';
 import { traceText } from '../../src/sheets/trace.ts';
+import { closeShipped } from './closed.ts';
 import { exampleResult } from './example-result.ts';
 
 const options = { figureUnits: { hydrogen_slip: '%', 'reactor outlet': 'degC' } };
@@ -23,7 +24,9 @@ describe('the sheet of a closed loop', () => {
   test.each(['streams', 'ledger', 'figures'] as const)(
     'as CSV of the %s is what was agreed',
     async (table) => {
-      await expect(csvSheet(exampleResult, table)).toMatchFileSnapshot(`__golden__/example.${table}.csv`);
+      await expect(csvSheet(exampleResult, table, options)).toMatchFileSnapshot(
+        `__golden__/example.${table}.csv`,
+      );
     },
   );
 
@@ -39,8 +42,9 @@ describe('the sheet of a closed loop', () => {
   });
 
   test('does not depend on when or how often it is made', async () => {
+    const { result, flowsheet } = await closeShipped('conversion-loop.yaml');
     for (const { render } of renderers.values())
-      expect(await render(exampleResult, {})).toEqual(await render(exampleResult, {}));
+      expect(await render(result, { flowsheet })).toEqual(await render(result, { flowsheet }));
   });
 });
 
@@ -84,6 +88,9 @@ describe("the user's own words on a sheet", () => {
     expect(csvSheet(hostile).split('\r\n')[1]).toMatch(/^'=1\+1,makeup,mixer,/);
     expect(csvCell('@SUM(A1)')).toBe("'@SUM(A1)");
     expect(csvCell('-5')).toBe("'-5");
+    expect(csvCell('\t=1+1')).toBe("'=1+1");
+    expect(csvCell('\r\n+1')).toBe("'+1");
+    expect(csvCell('\uff1d1+1')).toBe("'\uff1d1+1");
     expect(csvCell(-5)).toBe('-5');
     expect(csvCell('say "hi", you')).toBe('"say ""hi"", you"');
     expect(csvCell(Number.NaN)).toBe('');
