@@ -99,8 +99,8 @@ describe('the table', () => {
       {
         "err": "",
         "out": "condenser.temperature [degC]  streams.S2.T  converged  passes  note
-                               -20         271.8        yes       6
-                                 5       288.604        yes       6
+                               -20         271.8        yes       5
+                                 5       288.604        yes       4
       ",
       }
     `);
