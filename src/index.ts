@@ -55,6 +55,7 @@ export { createGrid, type Grid } from './study/grid.ts';
 export { keyFigureFormulas } from './study/key-figures.ts';
 export { type Optimised, type OptimiseOptions, optimise } from './study/optimise.ts';
 export { createSweeper, type PathTable, type SweepPlan, sweepHeads } from './study/sweep.ts';
+export { type SweepOptions, type SweptCase, sweepCases } from './study/sweep-cases.ts';
 export { type Uncertainty, type UncertaintyOptions, uncertainty } from './study/uncertainty.ts';
 export { type Balance, type BalanceOptions, balance } from './tally/balance.ts';
 export { type Lever, type Levers, levers } from './tally/levers.ts';
