@@ -1,10 +1,10 @@
 import { expect, test } from 'vitest';
 import { balance } from '../../src/tally/balance.ts';
 import { read } from './read.ts';
-import { shippedText } from './shipped.ts';
+import { textWithoutObjective } from './shipped.ts';
 
 async function aimsOf(...aims: readonly string[]) {
-  const text = `${shippedText('ammonia-loop.yaml')}\naims:\n${aims.map((aim) => `  ${aim}\n`).join('')}`;
+  const text = `${textWithoutObjective('ammonia-loop.yaml')}\naims:\n${aims.map((aim) => `  ${aim}\n`).join('')}`;
   const { result } = balance(await read(text));
   expect(result.convergence.converged).toBe(true);
   return result.aims;

@@ -3,10 +3,10 @@ import { closeWithAims } from '../../src/tally/aims.ts';
 import { balance } from '../../src/tally/balance.ts';
 import { createPlant, type Plant } from '../../src/tally/plant.ts';
 import { read } from './read.ts';
-import { shippedText } from './shipped.ts';
+import { textWithoutObjective } from './shipped.ts';
 
 const loop = (aims: readonly string[], name = 'ammonia-loop.yaml') =>
-  `${shippedText(name)}\naims:\n${aims.map((aim) => `  ${aim}\n`).join('')}`;
+  `${textWithoutObjective(name)}\naims:\n${aims.map((aim) => `  ${aim}\n`).join('')}`;
 const solved = async (text: string) => balance(await read(text)).result;
 
 const INERTS =

@@ -1,9 +1,9 @@
 import { expect, test } from 'vitest';
 import { balance } from '../../src/tally/balance.ts';
 import { read } from './read.ts';
-import { shippedText } from './shipped.ts';
+import { textWithoutObjective } from './shipped.ts';
 
-const withAims = (aims: string) => `${shippedText('ammonia-loop.yaml')}\naims:\n${aims}\n`;
+const withAims = (aims: string) => `${textWithoutObjective('ammonia-loop.yaml')}\naims:\n${aims}\n`;
 
 test('the purge that holds the inerts at 12 % is found', async () => {
   const text = withAims(
@@ -18,7 +18,7 @@ test('the purge that holds the inerts at 12 % is found', async () => {
   expect(aim.value).toBeLessThan(0.03);
   // Solved again with the value found, without the aim, the loop gives the same figure.
   const again = balance(
-    await read(shippedText('ammonia-loop.yaml'), { set: [`purge.fractions.bleed=${aim.value}`] }),
+    await read(textWithoutObjective('ammonia-loop.yaml'), { set: [`purge.fractions.bleed=${aim.value}`] }),
   );
   expect(again.result.figures.inerts['converter']).toBeCloseTo(0.12, 7);
 });
@@ -51,11 +51,11 @@ test('an aim out of reach ends at the bound that stands in the way, and says so'
 });
 
 test('an aim of zero is reached: a converter duty that comes to nothing', async () => {
-  const text = shippedText('ammonia-loop.yaml').replace('adiabatic: true', 'temperature: 470 degC');
+  const text = textWithoutObjective('ammonia-loop.yaml').replace('adiabatic: true', 'temperature: 470 degC');
   const aim =
     'aims:\n  autothermal: {move: converter.temperature, between: [420 degC, 520 degC], until: blocks.converter.duty = 0 kW}\n';
   const { result } = balance(await read(`${text}\n${aim}`));
   expect(result.aims['autothermal']).toMatchObject({ reached: true, until: 'blocks.converter.duty = 0 kW' });
-  const adiabatic = balance(await read(shippedText('ammonia-loop.yaml'))).result;
+  const adiabatic = balance(await read(textWithoutObjective('ammonia-loop.yaml'))).result;
   expect(result.streams['S5'].temperature_K).toBeCloseTo(adiabatic.streams['S5'].temperature_K, 3);
 });

@@ -12,3 +12,8 @@ export const shipped: readonly string[] = readdirSync(folder)
 export function shippedText(name: string): string {
   return readFileSync(`${folder}${name}`, 'utf8');
 }
+
+/** The same without what `optimise` is asked: a setting that an objective moves can have no aim. */
+export function textWithoutObjective(name: string): string {
+  return shippedText(name).replace(/^(?:prices|objective):.*\n(?:[ \t]+.*\n|\n)*/gm, '');
+}
