@@ -1,6 +1,6 @@
 import { ANDERSON_INDEPENDENCE, ANDERSON_MEMORY } from './anderson.ts';
 import { createDirect } from './direct.ts';
-import type { FixedPointMethod } from './method.ts';
+import { type FixedPointMethod, type Note, wordsOf } from './method.ts';
 import { createNewton } from './newton.ts';
 import type { Derivatives } from './problem.ts';
 import { createSecants, type Secants } from './secants.ts';
@@ -61,7 +61,7 @@ export function createAuto(): FixedPointMethod {
   let sinceProgress = 0;
   let leading = 0;
   let fromBest = false;
-  let note = '';
+  let note: Note = '';
 
   function patience(n: number): number {
     if (leading > 0) return LEAD_PATIENCE;
@@ -179,8 +179,9 @@ export function createAuto(): FixedPointMethod {
     gBest = new Float64Array(n);
   }
 
-  function tell(remark: string): void {
-    note = note === '' || remark === '' ? note + remark : `${note}; ${remark}`;
+  function tell(remark: Note): void {
+    if (note === '') note = remark;
+    else if (remark !== '') note = `${wordsOf(note)}; ${wordsOf(remark)}`;
   }
 }
 

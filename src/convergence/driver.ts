@@ -4,6 +4,7 @@ import { evaluateSafely } from './attempt.ts';
 import { keepWithinBounds } from './bounds.ts';
 import { createErrorEstimate } from './error-estimate.ts';
 import { createJacobian } from './jacobian.ts';
+import { type Note, wordsOf } from './method.ts';
 import { methods } from './methods.ts';
 import type { FixedPointProblem } from './problem.ts';
 import { largestShare } from './vectors.ts';
@@ -136,7 +137,7 @@ export function createCloser(problem: FixedPointProblem, name: MethodName): Clos
     const history: PassRecord[] = [];
     for (const vector of [x, g, xGood, gGood]) vector.set(start);
     let madeBy = 'start';
-    let note = '';
+    let note: Note = '';
     let hasGood = false;
     let halvings = 0;
     let residual = NaN;
@@ -160,8 +161,8 @@ export function createCloser(problem: FixedPointProblem, name: MethodName): Clos
       g: gGood.slice(),
     });
 
-    const log = (record: Omit<PassRecord, 'pass' | 'method' | 'note'>, remark: string): void => {
-      const entry = { pass: history.length + 1, ...record, method: madeBy, note: remark };
+    const log = (record: Omit<PassRecord, 'pass' | 'method' | 'note'>, remark: Note): void => {
+      const entry = recordOf({ pass: history.length + 1, ...record, method: madeBy }, remark);
       history.push(entry);
       options.onPass?.(entry);
     };
@@ -249,6 +250,19 @@ function allFinite(x: Float64Array): boolean {
   return true;
 }
 
-function joined(first: string, second: string): string {
-  return first === '' ? second : `${first}; ${second}`;
+function joined(first: Note, second: string): string {
+  const words = wordsOf(first);
+  return words === '' ? second : `${words}; ${second}`;
+}
+
+function recordOf(record: Omit<PassRecord, 'note'>, note: Note): PassRecord {
+  if (typeof note === 'string') return { ...record, note };
+  let words: string | null = null;
+  return {
+    ...record,
+    get note() {
+      words ??= note();
+      return words;
+    },
+  };
 }

@@ -30,8 +30,8 @@ export interface Jacobian {
   /** Put aside what there is, and take it back. */
   keep(): void;
   restore(): void;
-  /** Spectral radius of ∂G/∂x as the map gave it last; NaN where there are too many variables. Spoils nothing. */
-  radius(): number;
+  /** Works out the spectral radius of ∂G/∂x as the map gave it last; NaN where there are too many variables. */
+  radius(): () => number;
   /** Index of the variable that moves most where the derivatives are singular. */
   loosest(): number;
   /** what variable i is measured with */
@@ -118,7 +118,11 @@ export function createJacobian(n: number): Jacobian {
       for (let i = 1; i < n; i++) if (Math.abs(answer[i]) > Math.abs(answer[most])) most = i;
       return most;
     },
-    radius: () => (n > MOST_VARIABLES || given.length === 0 ? NaN : radiusOf(given.slice(), n, SQUARINGS)),
+    radius() {
+      if (n > MOST_VARIABLES || given.length === 0) return () => Number.NaN;
+      const then = given.slice();
+      return () => radiusOf(then.slice(), n, SQUARINGS);
+    },
   };
 }
 

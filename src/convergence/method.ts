@@ -1,5 +1,12 @@
 import type { Derivatives } from './problem.ts';
 
+/** A remark for the trace; where it takes work, it is worked out when the trace is read. */
+export type Note = string | (() => string);
+
+export function wordsOf(note: Note): string {
+  return typeof note === 'string' ? note : note();
+}
+
 /**
  * A way of making the next guess from what a pass returned. Methods see plain numbers only: bounds, failing
  * blocks, the stopping test and the trace are the driver's business. A method takes part in every pass of one
@@ -37,5 +44,5 @@ export interface FixedPointMethod {
   /** It cannot do more than direct steps here. */
   readonly isStuck?: boolean;
   /** What it did in the last call and why; empty when nothing is worth saying. */
-  note(): string;
+  note(): Note;
 }

@@ -1,5 +1,5 @@
 import { createJacobian, type Jacobian } from './jacobian.ts';
-import type { FixedPointMethod } from './method.ts';
+import type { FixedPointMethod, Note } from './method.ts';
 import type { Derivatives } from './problem.ts';
 import { largestShare, takenBack } from './vectors.ts';
 
@@ -73,7 +73,7 @@ export function createNewton(): FixedPointMethod {
   let taken = 1;
   /** what the derivatives are has been said in the trace */
   let said = false;
-  let note = '';
+  let note: Note = '';
 
   /** Take the derivatives at the point handed in, and the step or the first probe into xNext. */
   function takeDerivatives(
@@ -108,15 +108,18 @@ export function createNewton(): FixedPointMethod {
   }
 
   /** For the trace: what direct substitution would be up against. */
-  function aboutDerivatives(): string {
+  function aboutDerivatives(): Note {
     said = true;
     const radius = jacobian.radius();
     const how = derivatives?.propagated
       ? 'carried through the pass'
       : 'carried through the pass, some by differences';
-    return Number.isNaN(radius)
-      ? `derivatives ${how}`
-      : `derivatives ${how}; spectral radius ${radius.toFixed(4)}`;
+    return () => {
+      const found = radius();
+      return Number.isNaN(found)
+        ? `derivatives ${how}`
+        : `derivatives ${how}; spectral radius ${found.toFixed(4)}`;
+    };
   }
 
   /** The same at the base, which is not the point handed in: a map gives derivatives of its last pass only. */

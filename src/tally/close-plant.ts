@@ -60,7 +60,10 @@ export function closePlant(plant: Plant, options: CloseOptions): PlantClosure {
         residual: record.residual,
         worst: problem.names[record.worst] ?? '',
         method: record.method,
-        note: record.note,
+        // Worked out when the trace is read: a study reads none.
+        get note() {
+          return record.note;
+        },
       });
     }
     passes = Math.max(passes, closure.passes + spent);
