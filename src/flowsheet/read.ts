@@ -127,11 +127,13 @@ function readTree(
   const spreads = readSpreads(reading, spreadable, aims);
   const correlations = readCorrelations(reading, spreads);
   const priced =
-    world === null
+    world === null || !whole
       ? null
       : readPrices(reading, components!, streams, feeds.names, blocks ?? [], ledger?.ledger ?? null);
   const objective =
-    world === null ? null : readObjective(reading, { ...world, figures: ownFigures }, settings, priced, aims);
+    world === null || !whole
+      ? null
+      : readObjective(reading, { ...world, figures: ownFigures }, settings, priced, aims);
   const solve = readSolve(reading, named ? streams : null);
   const study = readStudy(reading, world === null ? null : { ...world, figures: ownFigures });
   if (

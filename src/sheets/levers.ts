@@ -1,6 +1,7 @@
 import type { NumericSetting } from '../flowsheet/numeric-settings.ts';
 import { holdsOn, leadFigure } from '../tally/lever-ranking.ts';
 import type { Lever, Levers } from '../tally/levers.ts';
+import { sideOf } from '../tally/probe.ts';
 import { holdLines, holdsByFigure } from './lever-holds.ts';
 import { significant, valueText } from './numbers.ts';
 import { plainText, wrapped } from './plain.ts';
@@ -169,7 +170,10 @@ function noteLines(found: Levers, columns: readonly Column[]): string[] {
   return notes.flatMap((note) => wrapped(note, WIDTH, '  - ', '    '));
 }
 
-function raisingSide({ figures, sides }: Lever, lead: string): 'more' | 'less' | null {
+/** The side on which the figure rises, or the only one that a setting at its bound has; null where it does nothing. */
+function raisingSide({ setting, figures, sides }: Lever, lead: string): 'more' | 'less' | null {
+  const only = sideOf(setting);
+  if (only !== 'both') return (figures[lead] ?? 0) === 0 ? null : only === 'up' ? 'more' : 'less';
   const more = (sides?.more ?? figures)[lead] ?? 0;
   const less = -((sides?.less ?? figures)[lead] ?? 0);
   if (more <= 0 && less <= 0) return null;
