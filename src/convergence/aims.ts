@@ -1,6 +1,7 @@
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
 import { reachOneAim } from './one-aim.ts';
 import { reachSeveralAims } from './several-aims.ts';
+import { largestShare } from './vectors.ts';
 
 /**
  * Figures minus their targets at given settings, each divided by the size of its target; closes the loop behind.
@@ -82,9 +83,7 @@ export function reachAims(
 
 /** Largest residual in units of its tolerance: 1 or less is reached. */
 export function aimsMerit(residuals: Float64Array, tolerances: Float64Array): number {
-  let most = 0;
-  for (let i = 0; i < residuals.length; i++) most = Math.max(most, Math.abs(residuals[i]) / tolerances[i]);
-  return most;
+  return largestShare(residuals, tolerances);
 }
 
 function createSearch(

@@ -1,5 +1,5 @@
 /**
- * Solve A x = b in place by Gaussian elimination with row pivoting; for the handful of unknowns of aims.
+ * Solve A x = b in place by Gaussian elimination with row pivoting; for the unknowns of recycles and aims.
  *
  * @param A  rows of an n × n matrix, overwritten
  * @param b  right side, overwritten by the solution

@@ -1,4 +1,5 @@
 import { solveInPlace } from '../convergence/linear-solve.ts';
+import { largest } from '../convergence/vectors.ts';
 import type { Plant } from './plant.ts';
 import { createRecycleProblem, type RecycleProblem } from './recycle-problem.ts';
 
@@ -156,14 +157,12 @@ function solveRows(
   r: Float64Array,
   mayFloat?: (variable: number) => boolean,
 ): boolean {
-  let most = 0;
-  for (let i = 0; i < r.length; i++) most = Math.max(most, Math.abs(r[i]));
   return solveInPlace(
     rows.map((row) => row.slice()),
     r,
     SINGULAR,
     mayFloat,
-    MET * most,
+    MET * largest(r),
   );
 }
 

@@ -1,3 +1,4 @@
+import { largestShare } from '../convergence/vectors.ts';
 import type { NumericSetting } from '../flowsheet/numeric-settings.ts';
 import { figureLeaves } from './figure-leaves.ts';
 import type { LinearClosure } from './linear-closure.ts';
@@ -67,7 +68,7 @@ export function quotient(side: Side, f0: number, one: number, other: number, h: 
 /** A step that moves the tears by no more than TEAR_STEP. */
 export function stepAlong(closure: LinearClosure, setting: NumericSetting, tangent: Float64Array): number {
   const h = STEP * sizeOf(setting);
-  const moved = largest(tangent, closure.scale);
+  const moved = largestShare(tangent, closure.scale);
   return moved === 0 ? h : Math.min(Math.max(TEAR_STEP / moved, 0.01 * h), h);
 }
 
@@ -91,10 +92,4 @@ export function sideOf(setting: NumericSetting): Side {
 
 function phasesOf(plant: Plant): string {
   return plant.streams.map((s) => (s.vapourFraction >= 1 ? 'g' : s.vapourFraction <= 0 ? 'l' : 'm')).join('');
-}
-
-export function largest(values: Float64Array, scale: Float64Array): number {
-  let most = 0;
-  for (let i = 0; i < values.length; i++) most = Math.max(most, Math.abs(values[i]) / scale[i]);
-  return most;
 }
