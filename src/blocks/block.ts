@@ -79,6 +79,12 @@ export interface Unit {
    */
   pass(inlets: readonly StreamState[], outlets: readonly StreamState[]): void;
   /**
+   * The same for flows and pressures alone, where nobody asks for the heat of an outlet (`BlockKind.asksForHeat`):
+   * temperature, phases and enthalpy of the outlets may be left as they are. Left out: `pass` does it.
+   * @throws PassTrouble
+   */
+  passFlows?(inlets: readonly StreamState[], outlets: readonly StreamState[]): void;
+  /**
    * Write one outlet from the one inlet that it needs (`BlockKind.needs`), before the others are known. The
    * pass that follows writes it again.
    * @throws PassTrouble
@@ -113,6 +119,12 @@ export interface BlockKind<S extends object = object> {
   through?(inlet: string, outlet: string): boolean;
   /** The one inlet that an outlet can be calculated from; null, or left out: it needs all of them. */
   needs?(settings: S, outlet: string): string | null;
+  /**
+   * Does what a block hands on depend on the heat of its inlets, that is on their temperature, phases and enthalpy? What
+   * it hands on is flows and pressures, and the heat of its outlets where that is `asked` for. Left out: it does. A block
+   * that answers no without being asked must read the heat of its inlets in `report` alone.
+   */
+  asksForHeat?(settings: S, asked: boolean): boolean;
   /** names of the reactions that run in this block */
   reactionsIn?(settings: S): readonly string[];
   /** those of them that run to equilibrium */

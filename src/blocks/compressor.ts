@@ -7,6 +7,7 @@ import { exactlyOne } from './checks.ts';
 import { hotDischarge, type IdleCooler, idleIntercooling, liquidAtSuction } from './compressor-warnings.ts';
 import { createKnockOut } from './knock-out.ts';
 import { createMachineStage, type MachineStage } from './machine-stage.ts';
+import { followPressure, keepFlows } from './outlet-slopes.ts';
 import { quietReport } from './report.ts';
 import { stageRatio } from './stage-ratio.ts';
 import { carryAlongTrain, type Train } from './train-slopes.ts';
@@ -83,6 +84,7 @@ export const compressor: BlockKind<Settings> = {
     if (!setting.knock_out) return true;
     return outlet === 'condensate' ? role !== 'gas' : role !== 'solid';
   },
+  asksForHeat: (setting, asked) => asked || setting.knock_out === true,
   create(setting, { mixture }) {
     const machines: MachineStage[] = [];
     /** by stage: is it cooled before it? */
@@ -126,13 +128,20 @@ export const compressor: BlockKind<Settings> = {
         }
         if (condensate) drums.collect(condensate, setting.intercooling ?? out!.temperatureK, firstDrumPa);
       },
-      slopes(_, __, { width, of: [[matrix]] }) {
+      ...(setting.knock_out ? {} : { passFlows }),
+      slopes(_, __, { width, of: [[matrix]], flowsOnly }) {
+        const pressureSlope = setting.ratio ?? (setting.pressure_rise === undefined ? 0 : 1);
+        if (flowsOnly && !setting.knock_out) {
+          keepFlows(matrix, mixture.size);
+          followPressure(matrix, mixture.size, pressureSlope);
+          return true;
+        }
         if (setting.knock_out || idleDrop) return false;
         for (let i = 0; i < width; i++) matrix[i * width + i] = 1;
         const train: Train = {
           stages: machines.slice(0, setting.stages ?? 1),
           ratio,
-          pressureSlope: setting.ratio ?? (setting.pressure_rise === undefined ? 0 : 1),
+          pressureSlope,
           cools: (stage) => cooled[stage],
         };
         return carryAlongTrain(train, mixture.size, matrix);
@@ -171,6 +180,11 @@ export const compressor: BlockKind<Settings> = {
         });
       },
     };
+
+    function passFlows([inlet]: readonly StreamState[], [out]: readonly StreamState[]): void {
+      out!.flowsMolPerS.set(inlet!.flowsMolPerS);
+      out!.pressurePa = dischargePressure(setting, inlet!.pressurePa);
+    }
 
     function compress(k: number, stream: StreamState, pressurePa: number): number {
       machines[k - 1] ??= createMachineStage(mixture);

@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import type { Component } from '../model/component.ts';
-import { emptyStream } from '../model/stream.ts';
+import { emptyStream, type StreamState } from '../model/stream.ts';
 import { vapourPressureRange } from '../properties/vapour-pressure.ts';
 import { quantity } from '../units/schema.ts';
 import type { BlockKind, SettingsFault } from './block.ts';
@@ -11,7 +11,7 @@ import { createDutySlopes } from './duty-slopes.ts';
 import { heatCurve } from './heat-curve.ts';
 import { settleWithDuty } from './heat-duty.ts';
 import { partSlopes } from './outlet-slopes.ts';
-import { partPhases } from './phase-outlets.ts';
+import { partFlows, partPhases } from './phase-outlets.ts';
 import { enthalpyAdded, quietReport } from './report.ts';
 
 const settings = z.strictObject({
@@ -54,12 +54,22 @@ export const condenser: BlockKind<Settings> = {
     if (actual === 'solid') return outlet === 'liquid';
     return outlet === 'gas' || actual !== 'gas';
   },
+  asksForHeat: ({ temperature }) => temperature === undefined,
   create(setting, context) {
     const mixture = setting.condense ? context.mixture.withCondensables(setting.condense) : context.mixture;
     const mixed = emptyStream(mixture.size);
     const mixedSlopes = new Float64Array((mixture.size + 2) ** 2);
     const duty = createDutySlopes(mixture, context.mixture);
     const cooling = createCoolingSplit(mixture);
+
+    function passFlows([inlet]: readonly StreamState[], [gas, liquid]: readonly StreamState[]): void {
+      mixed.flowsMolPerS.set(inlet!.flowsMolPerS);
+      mixed.pressurePa = pressureAfterDrop(inlet!.pressurePa, setting.pressure_drop);
+      mixed.temperatureK = setting.temperature!;
+      mixture.settleLiquid(mixed);
+      partFlows(mixed, gas!, liquid!);
+    }
+
     return {
       pass([inlet], [gas, liquid]) {
         mixed.flowsMolPerS.set(inlet!.flowsMolPerS);
@@ -72,6 +82,7 @@ export const condenser: BlockKind<Settings> = {
         }
         partPhases(mixed, gas!, liquid!, mixture);
       },
+      ...(setting.temperature === undefined ? {} : { passFlows }),
       slopes([inlet], _, { of: [[gas], [liquid]] }) {
         const temperatureIsSet = setting.temperature !== undefined;
         mixedSlopes.fill(0);

@@ -1,13 +1,13 @@
 import { z } from 'zod';
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
-import { emptyStream } from '../model/stream.ts';
+import { emptyStream, type StreamState } from '../model/stream.ts';
 import { quantity } from '../units/schema.ts';
 import type { BlockKind } from './block.ts';
 import { exactlyOne } from './checks.ts';
 import { createDutySlopes } from './duty-slopes.ts';
 import { settleWithDuty } from './heat-duty.ts';
 import { partSlopes } from './outlet-slopes.ts';
-import { partPhases } from './phase-outlets.ts';
+import { partFlows, partPhases } from './phase-outlets.ts';
 import { enthalpyAdded, quietReport } from './report.ts';
 
 const settings = z.strictObject({
@@ -37,17 +37,30 @@ export const flash: BlockKind<Settings> = {
     }),
   passes: (_, outlet, __, role) =>
     role === 'solid' ? outlet === 'liquid' : outlet === 'gas' || role !== 'gas',
+  asksForHeat: ({ temperature }) => temperature === undefined,
   create(setting, { mixture }) {
     const mixed = emptyStream(mixture.size);
     const mixedSlopes = new Float64Array((mixture.size + 2) ** 2);
     const duty = createDutySlopes(mixture);
     let started = false;
+
+    function letDown(inlet: StreamState): void {
+      if (setting.pressure > inlet.pressurePa * (1 + 1e-9))
+        throw raisesPressure(setting.pressure, inlet.pressurePa);
+      mixed.flowsMolPerS.set(inlet.flowsMolPerS);
+      mixed.pressurePa = setting.pressure;
+    }
+
+    function passFlows([inlet]: readonly StreamState[], [gas, liquid]: readonly StreamState[]): void {
+      letDown(inlet!);
+      mixed.temperatureK = setting.temperature!;
+      mixture.settleLiquid(mixed);
+      partFlows(mixed, gas!, liquid!);
+    }
+
     return {
       pass([inlet], [gas, liquid]) {
-        if (setting.pressure > inlet!.pressurePa * (1 + 1e-9))
-          throw raisesPressure(setting.pressure, inlet!.pressurePa);
-        mixed.flowsMolPerS.set(inlet!.flowsMolPerS);
-        mixed.pressurePa = setting.pressure;
+        letDown(inlet!);
         if (setting.temperature !== undefined) {
           mixed.temperatureK = setting.temperature;
           mixture.settle(mixed);
@@ -58,6 +71,7 @@ export const flash: BlockKind<Settings> = {
         }
         partPhases(mixed, gas!, liquid!, mixture);
       },
+      ...(setting.temperature === undefined ? {} : { passFlows }),
       slopes([inlet], _, { of: [[gas], [liquid]] }) {
         const temperatureIsSet = setting.temperature !== undefined;
         mixedSlopes.fill(0);

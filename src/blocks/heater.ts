@@ -41,13 +41,21 @@ export const heater: BlockKind<Settings> = {
     }),
     ...steamFaults(setting.steam),
   ],
+  asksForHeat: ({ duty }, asked) => asked && duty !== undefined,
   create(setting, { mixture }) {
     const duty = createDutySlopes(mixture);
     let started = false;
+
+    function passFlows([inlet]: readonly StreamState[], [out]: readonly StreamState[]): void {
+      out!.flowsMolPerS.set(inlet!.flowsMolPerS);
+      out!.pressurePa = pressureAfterDrop(inlet!.pressurePa, setting.pressure_drop);
+    }
+
     return {
-      pass([inlet], [out]) {
-        out!.flowsMolPerS.set(inlet!.flowsMolPerS);
-        out!.pressurePa = pressureAfterDrop(inlet!.pressurePa, setting.pressure_drop);
+      pass(inlets, outlets) {
+        const [inlet] = inlets;
+        const [out] = outlets;
+        passFlows(inlets, outlets);
         if (setting.temperature !== undefined) {
           out!.temperatureK = setting.temperature;
           mixture.settle(out!);
@@ -58,9 +66,10 @@ export const heater: BlockKind<Settings> = {
         if (setting.duty !== undefined) settleWithDuty(mixture, out!, inlet!.enthalpyW, setting.duty);
         else settleAtVapourFraction(out!, setting.vapour_fraction!, mixture);
       },
-      slopes([inlet], [out], { of }) {
-        if (setting.vapour_fraction !== undefined) return false;
-        const temperatureIsSet = setting.temperature !== undefined;
+      passFlows,
+      slopes([inlet], [out], { of, flowsOnly }) {
+        if (setting.vapour_fraction !== undefined && !flowsOnly) return false;
+        const temperatureIsSet = flowsOnly || setting.temperature !== undefined;
         return duty.fill(inlet!, out!, { temperatureIsSet, pressureIsSet: false }, false, of[0][0]);
       },
       report(inlets, outlets) {

@@ -30,45 +30,56 @@ export const mixer: BlockKind<Settings> = {
   summary: 'joins streams without exchange of heat',
   settings,
   ports: () => ({ inlets: 'any', outlets: ['out'] }),
+  asksForHeat: (_, asked) => asked,
   create(setting, { mixture }) {
     /** what mixing adds to the mean temperature of the inlets, from the last pass: next time's first guess [K] */
     const last = { riseK: 0 };
     const before = stateSlopes(mixture.size);
     const after = stateSlopes(mixture.size);
+    const mean = { temperatureK: 0, enthalpyW: 0 };
+
+    /** Flows and pressure of the outlet; of the inlets the sum of the enthalpies and the mean temperature. */
+    function join(inlets: readonly StreamState[], out: StreamState): void {
+      out.flowsMolPerS.fill(0);
+      mean.enthalpyW = 0;
+      let pressurePa = Number.POSITIVE_INFINITY;
+      let flow = 0;
+      let flowTimesK = 0;
+      for (let k = 0; k < inlets.length; k++) {
+        const inlet = inlets[k];
+        const total = mixture.total(inlet);
+        for (let i = 0; i < mixture.size; i++) out.flowsMolPerS[i] += inlet.flowsMolPerS[i];
+        mean.enthalpyW += inlet.enthalpyW;
+        // An inlet that carries nothing (a recycle not yet started) sets no pressure.
+        if (total > 0) pressurePa = Math.min(pressurePa, inlet.pressurePa);
+        flow += total;
+        flowTimesK += total * inlet.temperatureK;
+      }
+      if (pressurePa === Number.POSITIVE_INFINITY) pressurePa = inlets[0].pressurePa;
+      if (setting.pressure !== undefined) {
+        if (setting.pressure > pressurePa * (1 + 1e-9)) throw raisesPressure(setting.pressure, pressurePa);
+        pressurePa = setting.pressure;
+      }
+      out.pressurePa = pressurePa;
+      mean.temperatureK = flow > 0 ? flowTimesK / flow : inlets[0].temperatureK;
+    }
+
     return {
       pass(inlets, outlets) {
         const out = outlets[0];
-        out.flowsMolPerS.fill(0);
-        let enthalpyW = 0;
-        let pressurePa = Number.POSITIVE_INFINITY;
-        let flow = 0;
-        let flowTimesK = 0;
-        for (let k = 0; k < inlets.length; k++) {
-          const inlet = inlets[k];
-          const total = mixture.total(inlet);
-          for (let i = 0; i < mixture.size; i++) out.flowsMolPerS[i] += inlet.flowsMolPerS[i];
-          enthalpyW += inlet.enthalpyW;
-          // An inlet that carries nothing (a recycle not yet started) sets no pressure.
-          if (total > 0) pressurePa = Math.min(pressurePa, inlet.pressurePa);
-          flow += total;
-          flowTimesK += total * inlet.temperatureK;
-        }
-        if (pressurePa === Number.POSITIVE_INFINITY) pressurePa = inlets[0].pressurePa;
-        if (setting.pressure !== undefined) {
-          if (setting.pressure > pressurePa * (1 + 1e-9)) throw raisesPressure(setting.pressure, pressurePa);
-          pressurePa = setting.pressure;
-        }
-        out.pressurePa = pressurePa;
-        const meanK = flow > 0 ? flowTimesK / flow : inlets[0].temperatureK;
-        if (inlets.length === 1 && inlets[0].pressurePa === pressurePa) {
+        join(inlets, out);
+        if (inlets.length === 1 && inlets[0].pressurePa === out.pressurePa) {
           copyStream(inlets[0], out);
           return;
         }
-        out.temperatureK = meanK + last.riseK;
-        mixture.settleAtEnthalpy(out, enthalpyW);
-        last.riseK = out.temperatureK - meanK;
+        out.temperatureK = mean.temperatureK + last.riseK;
+        mixture.settleAtEnthalpy(out, mean.enthalpyW);
+        last.riseK = out.temperatureK - mean.temperatureK;
       },
-      slopes(inlets, outlets, { of: [matrices], moved }) {
+      passFlows(inlets, outlets) {
+        join(inlets, outlets[0]);
+      },
+      slopes(inlets, outlets, { of: [matrices], moved, flowsOnly }) {
         const { size } = mixture;
         const [out] = outlets;
         const sets = (inlet: StreamState) =>
@@ -77,11 +88,12 @@ export const mixer: BlockKind<Settings> = {
         // alone set it, that would be left undetermined.
         const share = 1 / inlets.filter(sets).length;
         const unchanged = inlets.length === 1 && inlets[0].pressurePa === out.pressurePa;
-        if (!unchanged && !mixture.slopes(out, 'enthalpy', after)) return false;
+        if (!flowsOnly && !unchanged && !mixture.slopes(out, 'enthalpy', after)) return false;
         for (let k = 0; k < inlets.length; k++) {
           if (!moved[k]) continue;
           keepFlows(matrices[k], size);
           if (setting.pressure === undefined && sets(inlets[k])) followPressure(matrices[k], size, share);
+          if (flowsOnly) continue;
           if (unchanged) keepTemperature(matrices[k], size);
           else if (
             !mixture.slopes(inlets[k], 'enthalpy', before) ||

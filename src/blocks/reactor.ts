@@ -73,6 +73,7 @@ export const reactor: BlockKind<Settings> = {
     ),
   equilibriaIn: (setting) =>
     Object.entries(setting.reactions).flatMap(([name, one]) => (one.conversion === undefined ? [name] : [])),
+  asksForHeat: ({ temperature }) => temperature === undefined,
   create: (setting, context) => {
     const { beds } = setting;
     return beds === undefined
@@ -95,11 +96,22 @@ function createReactor(setting: Settings, context: BlockContext): Unit {
     mixture.settle(out);
   }
 
+  function take(inlet: StreamState, out: StreamState): void {
+    feed.flowsMolPerS.set(inlet.flowsMolPerS);
+    out.flowsMolPerS.set(inlet.flowsMolPerS);
+    out.pressurePa = pressureAfterDrop(inlet.pressurePa, setting.pressure_drop);
+  }
+
+  function passFlows([inlet]: readonly StreamState[], [out]: readonly StreamState[]): void {
+    take(inlet!, out!);
+    out!.temperatureK = setting.temperature!;
+    run.react(out!.temperatureK, out!.pressurePa, feed.flowsMolPerS, out!.flowsMolPerS);
+  }
+
   return {
+    ...(setting.temperature === undefined ? {} : { passFlows }),
     pass([inlet], [out]) {
-      feed.flowsMolPerS.set(inlet!.flowsMolPerS);
-      out!.flowsMolPerS.set(inlet!.flowsMolPerS);
-      out!.pressurePa = pressureAfterDrop(inlet!.pressurePa, setting.pressure_drop);
+      take(inlet!, out!);
       if (setting.temperature !== undefined) {
         out!.temperatureK = setting.temperature;
         reactAndSettle(out!);

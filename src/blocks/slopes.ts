@@ -9,6 +9,8 @@ export interface BlockSlopes {
   readonly of: readonly (readonly Float64Array[])[];
   /** by inlet: does anything move it? what it moves may be left out otherwise (a makeup) */
   readonly moved: readonly boolean[];
+  /** those of `Unit.passFlows`: the rows of temperatures may be left at zero */
+  readonly flowsOnly: boolean;
 }
 
 /**
@@ -21,10 +23,12 @@ export function blockSlopes(
   outlets: number,
   inlets: number,
   moved: readonly boolean[] = Array.from({ length: inlets }, () => true),
+  flowsOnly = false,
 ): BlockSlopes {
   return {
     width,
     moved,
+    flowsOnly,
     of: Array.from({ length: outlets }, () =>
       Array.from({ length: inlets }, () => new Float64Array(width * width)),
     ),

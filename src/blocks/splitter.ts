@@ -34,6 +34,7 @@ export const splitter: BlockKind<Settings> = {
     ...sumAboveOne(setting),
   ],
   passes: (setting, outlet) => share(setting, outlet) > 0,
+  asksForHeat: (_, asked) => asked,
   create(setting, { mixture }) {
     const names = outletNames(setting);
     return {

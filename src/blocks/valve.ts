@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
+import type { StreamState } from '../model/stream.ts';
 import { quantity } from '../units/schema.ts';
 import type { BlockKind } from './block.ts';
 import { createDutySlopes } from './duty-slopes.ts';
@@ -21,27 +22,30 @@ export const valve: BlockKind<Settings> = {
   summary: 'lets a stream down to a lower pressure at constant enthalpy',
   settings,
   ports: () => ({ inlets: ['in'], outlets: ['out'] }),
+  asksForHeat: (_, asked) => asked,
   create(setting, { mixture }) {
     const duty = createDutySlopes(mixture);
     let started = false;
+
+    function passFlows([inlet]: readonly StreamState[], [out]: readonly StreamState[]): void {
+      if (setting.pressure > inlet!.pressurePa * (1 + 1e-9))
+        throw raisesPressure(setting.pressure, inlet!.pressurePa);
+      out!.flowsMolPerS.set(inlet!.flowsMolPerS);
+      out!.pressurePa = setting.pressure;
+    }
+
     return {
-      pass([inlet], [out]) {
-        if (setting.pressure > inlet!.pressurePa * (1 + 1e-9)) {
-          throw new PassTrouble(
-            'pressure-rise',
-            `The valve is set to ${(setting.pressure / 1e5).toFixed(3)} bar, above its inlet of ${(inlet!.pressurePa / 1e5).toFixed(3)} bar.`,
-            'a valve cannot raise the pressure of a stream',
-            'lower the outlet pressure, or use a compressor (gas) or a pump (liquid)',
-          );
-        }
-        out!.flowsMolPerS.set(inlet!.flowsMolPerS);
-        out!.pressurePa = setting.pressure;
+      passFlows,
+      pass(inlets, outlets) {
+        const [inlet] = inlets;
+        const [out] = outlets;
+        passFlows(inlets, outlets);
         if (!started) out!.temperatureK = inlet!.temperatureK;
         started = true;
         mixture.settleAtEnthalpy(out!, inlet!.enthalpyW);
       },
-      slopes: ([inlet], [out], { of }) =>
-        duty.fill(inlet!, out!, { temperatureIsSet: false, pressureIsSet: true }, false, of[0][0]),
+      slopes: ([inlet], [out], { of, flowsOnly }) =>
+        duty.fill(inlet!, out!, { temperatureIsSet: flowsOnly, pressureIsSet: true }, false, of[0][0]),
       report(inlets, outlets) {
         return quietReport({
           details: {
@@ -55,3 +59,12 @@ export const valve: BlockKind<Settings> = {
     };
   },
 };
+
+function raisesPressure(wantedPa: number, inletPa: number): PassTrouble {
+  return new PassTrouble(
+    'pressure-rise',
+    `The valve is set to ${(wantedPa / 1e5).toFixed(3)} bar, above its inlet of ${(inletPa / 1e5).toFixed(3)} bar.`,
+    'a valve cannot raise the pressure of a stream',
+    'lower the outlet pressure, or use a compressor (gas) or a pump (liquid)',
+  );
+}

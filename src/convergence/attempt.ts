@@ -11,8 +11,21 @@ export interface Failure {
 
 /** One pass; null when it went well. Errors that are not a block's trouble are ours and go through. */
 export function evaluateSafely(problem: FixedPointProblem, x: Float64Array, g: Float64Array): Failure | null {
+  return safely(problem.evaluate, x, g);
+}
+
+/** `FixedPointProblem.complete` where there is one, in the same way. */
+export function completeSafely(problem: FixedPointProblem, x: Float64Array, g: Float64Array): Failure | null {
+  return problem.complete ? safely(problem.complete, x, g) : null;
+}
+
+function safely(
+  work: (x: Float64Array, g: Float64Array) => void,
+  x: Float64Array,
+  g: Float64Array,
+): Failure | null {
   try {
-    problem.evaluate(x, g);
+    work(x, g);
   } catch (error) {
     if (!(error instanceof PassTrouble)) throw error;
     const where = error.block === null ? '' : `${error.block}: `;

@@ -1,6 +1,6 @@
 import type { PassTrouble } from '../diagnostics/diagnostic.ts';
 import type { MethodName } from '../model/flowsheet.ts';
-import { evaluateSafely } from './attempt.ts';
+import { completeSafely, evaluateSafely } from './attempt.ts';
 import { keepWithinBounds } from './bounds.ts';
 import { createErrorEstimate } from './error-estimate.ts';
 import { createJacobian } from './jacobian.ts';
@@ -42,6 +42,9 @@ export interface PassRecord {
   readonly note: string;
 }
 
+/** What a pass showed. */
+type Seen = Omit<PassRecord, 'pass' | 'method' | 'note'>;
+
 export interface Closure {
   readonly converged: boolean;
   /** why it stopped */
@@ -71,14 +74,14 @@ const STALL_PASSES = 60;
 const STALL_PASSES_EACH = 7;
 /** What an answer must be better by to count; slow direct substitution (0.01 % purge) gains 1e-4 a pass. */
 const STALL_SHARE = 1 - 1e-6;
-const failedPass = {
+const failedPass: Seen = {
   residual: NaN,
   worst: -1,
   error: NaN,
   guess: NaN,
   answer: NaN,
   extraError: NaN,
-} as const;
+};
 /** Halvings of a step that makes a block fail, before the direct step is tried. */
 const HALVINGS = 5;
 
@@ -147,22 +150,28 @@ export function createCloser(problem: FixedPointProblem, name: MethodName): Clos
 
     keepWithinBounds(problem, x, x, x);
 
-    const stop = (reason: Closure['reason'], trouble: PassTrouble | null = null): Closure => ({
-      converged: reason === 'closed',
-      reason,
-      method: name,
-      passes: history.length,
-      residual,
-      error,
-      history,
-      trouble,
-      loose: reason === 'undetermined' ? jacobian.loosest() : -1,
-      x: xGood.slice(),
-      g: gGood.slice(),
-    });
+    const stop = (reason: Closure['reason'], trouble: PassTrouble | null = null): Closure => {
+      const loose = reason === 'undetermined' ? jacobian.loosest() : -1;
+      // What has not closed is shown as it stands, so it is to be whole; what is in trouble stands where it failed.
+      if (reason !== 'closed' && reason !== 'trouble' && reason !== 'not-finite')
+        completeSafely(problem, xGood, gGood);
+      return {
+        converged: reason === 'closed',
+        reason,
+        method: name,
+        passes: history.length,
+        residual,
+        error,
+        history,
+        trouble,
+        loose,
+        x: xGood.slice(),
+        g: gGood.slice(),
+      };
+    };
 
-    const log = (record: Omit<PassRecord, 'pass' | 'method' | 'note'>, remark: Note): void => {
-      const entry = recordOf({ pass: history.length + 1, ...record, method: madeBy }, remark);
+    const log = (seen: Seen, remark: Note): void => {
+      const entry = new LoggedPass(history.length + 1, madeBy, seen, remark);
       history.push(entry);
       options.onPass?.(entry);
     };
@@ -194,9 +203,19 @@ export function createCloser(problem: FixedPointProblem, name: MethodName): Clos
       scaleOf(problem, x, g, scale);
       const worst = worstVariable(x, g, scale);
       residual = n === 0 ? 0 : Math.abs(g[worst] - x[worst]) / scale[worst];
-      const extraError = problem.extraError?.() ?? 0;
+      let extraError = problem.extraError?.() ?? 0;
       const known = method.distance?.(x, g, scale) ?? NaN;
       error = distance.next(x, g, scale, residual, known);
+      if (residual <= tolerance && error <= tolerance && extraError <= tolerance && problem.complete) {
+        const failure = completeSafely(problem, x, g);
+        if (failure !== null) {
+          log(failedPass, joined(note, failure.says));
+          return stop(failure.reason, failure.trouble);
+        }
+        xGood.set(x);
+        gGood.set(g);
+        extraError = problem.extraError?.() ?? 0;
+      }
       log({ residual, worst, error, guess: x[worst], answer: g[worst], extraError }, note);
 
       if (residual <= tolerance && error <= tolerance && extraError <= tolerance) {
@@ -255,14 +274,31 @@ function joined(first: Note, second: string): string {
   return words === '' ? second : `${words}; ${second}`;
 }
 
-function recordOf(record: Omit<PassRecord, 'note'>, note: Note): PassRecord {
-  if (typeof note === 'string') return { ...record, note };
-  let words: string | null = null;
-  return {
-    ...record,
-    get note() {
-      words ??= note();
-      return words;
-    },
-  };
+class LoggedPass implements PassRecord {
+  readonly pass: number;
+  readonly residual: number;
+  readonly worst: number;
+  readonly error: number;
+  readonly guess: number;
+  readonly answer: number;
+  readonly extraError: number;
+  readonly method: string;
+  #note: Note;
+
+  constructor(pass: number, method: string, seen: Seen, note: Note) {
+    this.pass = pass;
+    this.residual = seen.residual;
+    this.worst = seen.worst;
+    this.error = seen.error;
+    this.guess = seen.guess;
+    this.answer = seen.answer;
+    this.extraError = seen.extraError;
+    this.method = method;
+    this.#note = note;
+  }
+
+  get note(): string {
+    this.#note = wordsOf(this.#note);
+    return this.#note;
+  }
 }

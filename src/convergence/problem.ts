@@ -12,6 +12,12 @@ export interface FixedPointProblem {
   scale?(x: Float64Array, g: Float64Array, out: Float64Array): void;
   /** An error of the last pass that must be within the tolerance too, e.g. of the balance over the battery limit. */
   extraError?(): number;
+  /**
+   * Work out what the passes left out because nothing that goes round asks for it, at the last guess evaluated: its
+   * variables, which no other one depends on, are written into x and g. Until then `extraError` leaves it out too. May
+   * throw PassTrouble.
+   */
+  complete?(x: Float64Array, g: Float64Array): void;
   /** dG/dx at the last guess evaluated; left out where only differences of passes can tell. */
   readonly derivatives?: Derivatives;
 }

@@ -42,6 +42,8 @@ export interface Mixture {
   readonly roles: readonly Role[];
   /** From T, P and flows: the phases and the enthalpy. */
   settle(stream: StreamState): void;
+  /** From T, P and flows: the phases alone; the enthalpy stays as it is. */
+  settleLiquid(stream: StreamState): void;
   /** From T, P, flows and a given share of liquid: the enthalpy. */
   settlePhases(stream: StreamState): void;
   /** From P, flows and an enthalpy [W]: temperature and phases. An empty stream holds none. @throws PassTrouble outside 20–3500 K */
@@ -164,13 +166,17 @@ export function createMixture(spec: MixtureSpec): Mixture {
     stream.enthalpyW = enthalpy(stream);
   }
 
-  function settle(stream: StreamState): void {
+  function settleLiquid(stream: StreamState): void {
     stream.vapourFraction = phases.split(
       stream.temperatureK,
       stream.pressurePa,
       stream.flowsMolPerS,
       stream.liquidMolPerS,
     );
+  }
+
+  function settle(stream: StreamState): void {
+    settleLiquid(stream);
     stream.enthalpyW = enthalpy(stream);
   }
 
@@ -182,6 +188,7 @@ export function createMixture(spec: MixtureSpec): Mixture {
     idealGas,
     roles,
     settle,
+    settleLiquid,
     settlePhases,
     settleAtEnthalpy: (stream, enthalpyW) => {
       solveState(stream, enthalpyW, 'enthalpy', settle, enthalpyOf, clearHeatCapacity);

@@ -2,6 +2,7 @@ import { type Closer, type Closure, createCloser } from '../convergence/driver.t
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
 import type { MethodName } from '../model/flowsheet.ts';
 import type { TraceEntry } from '../model/result.ts';
+import { type HeatLeft, heatLeft } from './heat-left.ts';
 import type { Group, Plant } from './plant.ts';
 import { createRecycleProblem, type RecycleProblem } from './recycle-problem.ts';
 import { startFromFeeds } from './start-values.ts';
@@ -35,50 +36,68 @@ export interface PlantClosure {
 /** Close the groups of a plant one after another, in calculation order; stops at the first that fails. */
 export function closePlant(plant: Plant, options: CloseOptions): PlantClosure {
   plant.refreshFeeds();
-  const history: TraceEntry[] = [];
+  const closed: ClosedGroup[] = [];
   let passes = 1;
   let residual = 0;
+
+  const outcome = (failure: PlantClosure['failure']): PlantClosure => {
+    let history: TraceEntry[] | null = null;
+    return {
+      converged: failure === null,
+      method: options.method,
+      passes,
+      residual,
+      failure,
+      // Worked out when the trace is read: a study reads none.
+      get history() {
+        history ??= closed.flatMap(traceOf);
+        return history;
+      },
+    };
+  };
+
   for (const group of plant.groups) {
     if (group.tears.length === 0) {
       const trouble = passOnce(plant, group);
-      if (trouble) {
-        const failure = { group, closure: null, trouble, names: [] };
-        return { converged: false, method: options.method, passes, residual, history, failure };
-      }
+      if (trouble) return outcome({ group, closure: null, trouble, names: [] });
       continue;
     }
-    const { problem, start, closer } = recycleOf(plant, group, options.method);
-    const spent = options.warm ? 0 : startFromFeeds(plant, group);
+    const { problem, left, start, closer } = recycleOf(plant, group, options.method);
+    const { names } = problem;
+    const spent = options.warm ? 0 : startFromFeeds(plant, group, left);
     problem.read(start);
-    const closure = closer.close(start, {
-      ...options,
-      maxPasses: Math.max(options.maxPasses - spent, 1),
-    });
-    for (const record of closure.history) {
-      history.push({
-        pass: record.pass + spent,
-        residual: record.residual,
-        worst: problem.names[record.worst] ?? '',
-        method: record.method,
-        // Worked out when the trace is read: a study reads none.
-        get note() {
-          return record.note;
-        },
-      });
-    }
+    const maxPasses = Math.max(options.maxPasses - spent, 1);
+    const closure = closer.close(start, { ...options, maxPasses });
+    closed.push({ closure, spent, names });
     passes = Math.max(passes, closure.passes + spent);
     residual = Math.max(residual, closure.residual);
-    if (!closure.converged) {
-      const failure = { group, closure, trouble: closure.trouble, names: problem.names };
-      return { converged: false, method: options.method, passes, residual, history, failure };
-    }
+    if (!closure.converged) return outcome({ group, closure, trouble: closure.trouble, names });
   }
-  return { converged: true, method: options.method, passes, residual, history, failure: null };
+  return outcome(null);
+}
+
+interface ClosedGroup {
+  readonly closure: Closure;
+  /** passes that found the start values */
+  readonly spent: number;
+  /** of the variables */
+  readonly names: readonly string[];
+}
+
+function traceOf({ closure, spent, names }: ClosedGroup): TraceEntry[] {
+  return closure.history.map(({ pass, residual, worst, method, note }) => ({
+    pass: pass + spent,
+    residual,
+    worst: names[worst] ?? '',
+    method,
+    note,
+  }));
 }
 
 /** What is made once for the recycle of a group and kept while its plant is. */
 interface Recycle {
   readonly problem: RecycleProblem;
+  readonly left: HeatLeft | null;
   readonly start: Float64Array;
   closer: Closer;
 }
@@ -87,8 +106,9 @@ const recycles = new WeakMap<Group, Recycle>();
 function recycleOf(plant: Plant, group: Group, method: MethodName): Recycle {
   let recycle = recycles.get(group);
   if (recycle === undefined) {
-    const problem = createRecycleProblem(plant, group);
-    recycle = { problem, start: new Float64Array(problem.size), closer: createCloser(problem, method) };
+    const left = heatLeft(plant, group);
+    const problem = createRecycleProblem(plant, group, left);
+    recycle = { problem, left, start: new Float64Array(problem.size), closer: createCloser(problem, method) };
     recycles.set(group, recycle);
   }
   if (recycle.closer.method !== method) recycle.closer = createCloser(recycle.problem, method);

@@ -2,6 +2,7 @@ import { type BlockSlopes, blockSlopes } from '../blocks/slopes.ts';
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
 import { copyStream, emptyStream, type StreamState } from '../model/stream.ts';
 import type { Step } from './calculation-steps.ts';
+import type { HeatLeft } from './heat-left.ts';
 import type { Group, Plant } from './plant.ts';
 
 /** Step of a difference, relative to the variable: passes are good to some 1e-12 [-]. */
@@ -28,9 +29,10 @@ export interface PassSlopes {
  * inlets times its own (`Unit.slopes`) are those of its outlets. A block that has none to offer is evaluated beside
  * the last pass, once for each inlet variable that moves at all, and once more to leave it as it was.
  *
+ * @param left  what the passes leave out; its derivatives are zero, as it stays as it is
  * @source A. Griewank, A. Walther, Evaluating Derivatives, 2nd ed., SIAM 2008, chapter 3
  */
-export function createPassSlopes(plant: Plant, group: Group): PassSlopes {
+export function createPassSlopes(plant: Plant, group: Group, left: HeatLeft | null = null): PassSlopes {
   const width = plant.mixture.size + 2;
   const columns = group.tears.length * width;
   /** derivatives of every state of the group, width rows of `columns`; null where nothing moves it */
@@ -42,7 +44,16 @@ export function createPassSlopes(plant: Plant, group: Group): PassSlopes {
   for (const block of group.blocks) {
     const inlets = plant.inlets[block];
     const moved = inlets.map((inlet) => moves.has(inlet));
-    room.set(block, blockSlopes(width, plant.outlets[block].length, inlets.length, moved));
+    room.set(block, blockSlopes(width, plant.outlets[block].length, inlets.length, moved, isLeft(block)));
+  }
+
+  function isLeft(block: number): boolean {
+    return left?.flowsOnly[group.steps.findIndex((step) => step.block === block)] ?? false;
+  }
+
+  function passAgain(step: Step, slopes: BlockSlopes): void {
+    if (slopes.flowsOnly) plant.passFlows(step);
+    else plant.pass(step);
   }
   const saved = emptyStream(plant.mixture.size);
   const base = new Map<StreamState, StreamState>();
@@ -109,13 +120,13 @@ export function createPassSlopes(plant: Plant, group: Group): PassSlopes {
         try {
           let h = moved(inlet, v, STEP * size);
           try {
-            plant.pass(step);
+            passAgain(step, slopes);
           } catch (trouble) {
             if (!(trouble instanceof PassTrouble)) throw trouble;
             copyStream(saved, inlet);
             h = moved(inlet, v, -Math.min(STEP * size, 0.5 * variable(saved, v, width)));
             if (h === 0) throw trouble;
-            plant.pass(step);
+            passAgain(step, slopes);
           }
           outlets.forEach((outlet, o) => {
             const at = base.get(outlet)!;
@@ -127,7 +138,7 @@ export function createPassSlopes(plant: Plant, group: Group): PassSlopes {
           copyStream(saved, inlet);
         }
       }
-      plant.pass(step);
+      passAgain(step, slopes);
     });
   }
 

@@ -52,6 +52,8 @@ export interface Plant {
    * @throws PassTrouble with the block's name
    */
   pass(step: Step): void;
+  /** The same for flows and pressures alone (`Unit.passFlows`). */
+  passFlows(step: Step): void;
   /**
    * move a setting by its path, e.g. condenser.temperature; value in SI. Factors on constants count as settings here:
    * reactions.synthesis.K, components.NH3.vapour_pressure, 1 as the data say
@@ -144,11 +146,22 @@ export function createPlant(flowsheet: Flowsheet): Plant {
         if (ahead === null) units[block].pass(inlets[block], outlets[block]);
         else units[block].passAhead!(ahead, inlets[block], outlets[block]);
       } catch (trouble) {
-        if (trouble instanceof PassTrouble) trouble.block ??= blocks[block].name;
-        throw trouble;
+        throw named(trouble, block);
+      }
+    },
+    passFlows({ block }) {
+      try {
+        units[block].passFlows!(inlets[block], outlets[block]);
+      } catch (trouble) {
+        throw named(trouble, block);
       }
     },
     set: (path, value) => moveSetting(path, value, settings),
     get: (path) => readSetting(path, settings),
   };
+
+  function named(trouble: unknown, block: number): unknown {
+    if (trouble instanceof PassTrouble) trouble.block ??= blocks[block].name;
+    return trouble;
+  }
 }

@@ -1,5 +1,6 @@
 import type { FixedPointProblem } from '../convergence/problem.ts';
 import type { StreamState } from '../model/stream.ts';
+import type { HeatLeft } from './heat-left.ts';
 import { createPassSlopes } from './pass-slopes.ts';
 import type { Group, Plant } from './plant.ts';
 
@@ -23,8 +24,14 @@ export interface RecycleProblem extends FixedPointProblem {
  * x = the torn streams as guessed, G(x) = the same streams as the blocks of the group return them.
  * The extra error is the balance over the battery limit that the difference leaves open: per component against
  * what enters or is formed, and of energy against what the blocks exchange.
+ *
+ * @param left  what the passes are to leave to `complete`
  */
-export function createRecycleProblem(plant: Plant, group: Group): RecycleProblem {
+export function createRecycleProblem(
+  plant: Plant,
+  group: Group,
+  left: HeatLeft | null = null,
+): RecycleProblem {
   const { mixture, streams, seen, flowsheet } = plant;
   const width = mixture.size + 2;
   const size = width * group.tears.length;
@@ -48,7 +55,21 @@ export function createRecycleProblem(plant: Plant, group: Group): RecycleProblem
     x[at + mixture.size + 1] = state.pressurePa * BAR;
   }
 
-  const slopes = createPassSlopes(plant, group);
+  const slopes = createPassSlopes(plant, group, left);
+  /** by tear: is its heat closed with its flows? */
+  const heat = group.tears.map((s) => !left?.tears.includes(s));
+  let complete = left === null;
+
+  function pass(): void {
+    for (let k = 0; k < group.steps.length; k++) {
+      if (left?.flowsOnly[k]) plant.passFlows(group.steps[k]);
+      else plant.pass(group.steps[k]);
+    }
+  }
+
+  function readAnswer(g: Float64Array): void {
+    for (let t = 0; t < group.tears.length; t++) pack(streams[group.tears[t]], g, t * width);
+  }
 
   return {
     size,
@@ -82,11 +103,13 @@ export function createRecycleProblem(plant: Plant, group: Group): RecycleProblem
         for (let i = 0; i < mixture.size; i++) guess.flowsMolPerS[i] = x[at + i];
         guess.temperatureK = x[at + mixture.size] / KELVIN;
         guess.pressurePa = x[at + mixture.size + 1] / BAR;
-        mixture.settle(guess);
+        if (heat[t]) mixture.settle(guess);
       }
-      for (const step of group.steps) plant.pass(step);
-      for (let t = 0; t < group.tears.length; t++) pack(streams[group.tears[t]], g, t * width);
+      pass();
+      readAnswer(g);
+      complete = left === null;
     },
+    ...(left && { complete: completeHeat(left) }),
     scale(x, g, out) {
       for (let t = 0; t < group.tears.length; t++) {
         const at = t * width;
@@ -99,9 +122,28 @@ export function createRecycleProblem(plant: Plant, group: Group): RecycleProblem
       }
     },
     extraError() {
-      return Math.max(materialError(), energyError());
+      return complete ? Math.max(materialError(), energyError()) : materialError();
     },
   };
+
+  /** All blocks but those that have their heat from the tears, so that these get theirs; then what is behind them. */
+  function completeHeat({ flowsOnly, tears, behindTears }: HeatLeft) {
+    const later = new Set(behindTears);
+    return (x: Float64Array, g: Float64Array): void => {
+      for (const [k, step] of group.steps.entries()) {
+        if (flowsOnly[k] && later.has(step)) plant.passFlows(step);
+        else plant.pass(step);
+      }
+      for (const s of tears) {
+        seen[s].temperatureK = streams[s].temperatureK;
+        mixture.settle(seen[s]);
+        x[group.tears.indexOf(s) * width + mixture.size] = streams[s].temperatureK * KELVIN;
+      }
+      for (const step of behindTears) plant.pass(step);
+      readAnswer(g);
+      complete = true;
+    };
+  }
 
   /** What the tears leave open of each component, against what enters the flowsheet or is formed in the group. */
   function materialError(): number {

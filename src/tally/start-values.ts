@@ -1,5 +1,6 @@
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
 import { copyStream, type StreamState } from '../model/stream.ts';
+import type { HeatLeft } from './heat-left.ts';
 import type { Group, Plant } from './plant.ts';
 
 /** Passes at most before the guess is scaled up: the second mends what the first could not do yet. */
@@ -21,9 +22,10 @@ const LARGEST_SHARE = 0.99;
  * A block that cannot work yet (nothing flows, no pressure) is passed over and leaves its outlets empty; a third
  * pass is made where that was so in the second, and where it is so still, multiples of t₀ are tried as the guess.
  *
+ * @param left  what the passes leave to the closing
  * @returns passes made
  */
-export function startFromFeeds(plant: Plant, group: Group): number {
+export function startFromFeeds(plant: Plant, group: Group, left: HeatLeft | null): number {
   const { mixture, streams, seen } = plant;
   const arriving = new Float64Array(mixture.size);
   let pressurePa = 0;
@@ -57,7 +59,7 @@ export function startFromFeeds(plant: Plant, group: Group): number {
   let complete = false;
   const pass = () => {
     if (passes > 0) for (const s of group.tears) copyStream(streams[s], seen[s]);
-    complete = passLeniently(plant, group);
+    complete = passLeniently(plant, group, left);
     passes++;
   };
   do pass();
@@ -114,11 +116,12 @@ function findEnteringStates(plant: Plant, group: Group): StreamState[] {
 }
 
 /** Take every step; false when one of them could not. */
-function passLeniently(plant: Plant, group: Group): boolean {
+function passLeniently(plant: Plant, group: Group, left: HeatLeft | null): boolean {
   let complete = true;
-  for (const step of group.steps) {
+  for (let k = 0; k < group.steps.length; k++) {
     try {
-      plant.pass(step);
+      if (left?.flowsOnly[k]) plant.passFlows(group.steps[k]);
+      else plant.pass(group.steps[k]);
     } catch (trouble) {
       if (!(trouble instanceof PassTrouble)) throw trouble;
       complete = false;

@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { blockKinds } from '../../src/blocks/registry.ts';
+import { emptyStream, type StreamState } from '../../src/model/stream.ts';
 import { cases, feed, feedsOf, ids, mixture, reactions, scaledTo10 } from './block-cases.ts';
 import { copyOf, enthalpySize, expectBalances, expectClose, mixtureOf, trial } from './helpers.ts';
 
@@ -98,6 +99,43 @@ describe.each(cases)(
       });
     });
 
+    test('hands on what it says without the heat of its inlets', () => {
+      const { asksForHeat } = blockKinds.get(kind)!;
+      fc.assert(
+        fc.property(anyFeed, (value) => {
+          const t = trial(kind, raw, mixture, feedsOf(mixture, inlets, value, step), reactions);
+          const before = t.outlets.map(copyOf);
+          if (t.unit.passFlows) {
+            const flows = t.outlets.map(() => emptyStream(mixture.size));
+            t.unit.passFlows(t.inlets, flows);
+            flows.forEach((out, k) => {
+              expectSameFlows(out, before[k]!);
+            });
+            t.pass();
+          }
+          const asks = (asked: boolean) => asksForHeat?.(t.settings, asked) ?? true;
+          if (asks(false)) return;
+          for (const inlet of t.inlets) {
+            inlet.temperatureK += 7;
+            mixture.settle(inlet);
+          }
+          const told = JSON.stringify(t.unit.report(t.inlets, t.outlets));
+          t.pass();
+          t.outlets.forEach((out, k) => {
+            expectSameFlows(out, before[k]!);
+          });
+          if (asks(true)) return;
+          t.outlets.forEach((out, k) => {
+            expect(out.temperatureK).toBe(before[k]!.temperatureK);
+          });
+          expect(numbersOf(JSON.stringify(t.unit.report(t.inlets, t.outlets)))).toEqual(
+            numbersOf(told).map((number) => expect.closeTo(number, 4)),
+          );
+        }),
+        { numRuns: 10 },
+      );
+    });
+
     if (!adiabatic) return;
     test('never lets entropy fall', () => {
       fc.assert(
@@ -118,6 +156,17 @@ describe.each(cases)(
     });
   },
 );
+
+function expectSameFlows(out: StreamState, before: StreamState): void {
+  expect(out.pressurePa).toBe(before.pressurePa);
+  out.flowsMolPerS.forEach((flow, i) => {
+    expectClose(flow, before.flowsMolPerS[i]!, 1e-8, 'flow');
+  });
+}
+
+function numbersOf(json: string): number[] {
+  return (json.match(/-?\d+(?:\.\d+)?(?:e[-+]?\d+)?/g) ?? []).map(Number);
+}
 
 function moveNumber(settings: Record<string, unknown>, path: readonly string[], to: number): void {
   const last = path.length - 1;

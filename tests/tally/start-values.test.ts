@@ -32,7 +32,7 @@ async function startOf(text: string, tag: string): Promise<{ flows: number[]; pa
   const plant = createPlant(flowsheet);
   plant.refreshFeeds();
   const group = plant.groups.find((one) => one.tears.length > 0)!;
-  const passes = startFromFeeds(plant, group);
+  const passes = startFromFeeds(plant, group, null);
   const state = plant.streams[flowsheet.streams.findIndex((s) => s.tag === tag)]!;
   return { flows: [...state.flowsMolPerS].map((flow) => flow * 3.6), passes };
 }
