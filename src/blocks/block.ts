@@ -125,6 +125,8 @@ export interface BlockKind<S extends object = object> {
    * that answers no without being asked must read the heat of its inlets in `report` alone.
    */
   asksForHeat?(settings: S, asked: boolean): boolean;
+  /** May it hold something back during the passes, to be told among the faults of its report? Left out: never. */
+  mayHoldBack?(settings: S): boolean;
   /** names of the reactions that run in this block */
   reactionsIn?(settings: S): readonly string[];
   /** those of them that run to equilibrium */

@@ -54,6 +54,7 @@ export const condenser: BlockKind<Settings> = {
     if (actual === 'solid') return outlet === 'liquid';
     return outlet === 'gas' || actual !== 'gas';
   },
+  mayHoldBack: ({ cooling }) => cooling !== undefined,
   asksForHeat: ({ temperature }) => temperature === undefined,
   create(setting, context) {
     const mixture = setting.condense ? context.mixture.withCondensables(setting.condense) : context.mixture;

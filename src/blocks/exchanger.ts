@@ -66,6 +66,7 @@ export const exchanger: BlockKind<ExchangerSettings> = {
     const isSet = outlet === 'cold' ? setting.cold_temperature : setting.hot_temperature;
     return isSet !== undefined || setting.duty !== undefined ? outlet : null;
   },
+  mayHoldBack: () => true,
   create(setting, { mixture }) {
     const limit = createDutyLimit(mixture);
     const curve = createCounterCurrent(mixture);

@@ -1,7 +1,10 @@
+/** The row that holds each unknown, −1 for one that floats. */
+let holder = new Int32Array(0);
+
 /**
  * Solve A x = b in place by Gaussian elimination with row pivoting; for the unknowns of recycles and aims.
  *
- * @param A  rows of an n × n matrix, overwritten
+ * @param A  rows of an n × n matrix, overwritten and put into another order
  * @param b  right side, overwritten by the solution
  * @param smallest  pivot, relative to the largest entry of A, below which the matrix counts as singular
  * @param mayFloat  unknowns that may be left at 0 where nothing holds them and the equations are met all the same
@@ -9,16 +12,15 @@
  * @returns false when it is singular (b is then of no use)
  */
 export function solveInPlace(
-  A: readonly Float64Array[],
+  A: Float64Array[],
   b: Float64Array,
   smallest = 1e-10,
   mayFloat: (unknown: number) => boolean = () => false,
   settled = 0,
 ): boolean {
   const n = b.length;
-  const row = Array.from(A);
-  /** the row that holds each unknown, −1 for one that floats */
-  const holder = new Int32Array(n);
+  const row = A;
+  if (holder.length < n) holder = new Int32Array(n);
   let largest = 0;
   for (let i = 0; i < n; i++) {
     for (let j = 0; j < n; j++) largest = Math.max(largest, Math.abs(row[i][j]));

@@ -100,7 +100,7 @@ export function createCaseRunner(flowsheet: Flowsheet, options: CaseRunnerOption
       const { closure, missed } = closeOnce(plant, { ...close, maxPasses, warm });
       reading.refresh();
       if (!closure.converged) return failed(closure.passes, whyNot(closure));
-      const [fault] = faultDiagnostics(plant, reading.reports());
+      const [fault] = faultDiagnostics(plant, reading.reportOf);
       if (fault) return failed(closure.passes, sentence(fault.what, fault.why));
       return { closed: true, passes: closure.passes, note: missed };
     } catch (trouble) {

@@ -52,7 +52,7 @@ export function balancePlant(plant: Plant, options: BalanceOptions = {}): Balanc
   if (!closure.converged)
     return { result: tally(plant, closure, read), diagnosis: diagnose(plant, last, close) };
   // Streams that agree with one another are no answer where a block could not do as it was told.
-  const [fault = null] = faultDiagnostics(plant, reports);
+  const [fault = null] = faultDiagnostics(plant, (b) => reports[b]!);
   return { result: tally(plant, { ...closure, converged: fault === null }, read), diagnosis: fault };
 }
 

@@ -100,18 +100,23 @@ function worstText(closure: PlantClosure, { closure: { history }, names }: Facts
   return last === undefined ? size : `${names[last.worst]} is ${size}`;
 }
 
-/** What keeps the blocks of a plant whose streams have closed from doing what their settings ask for. */
-export function faultDiagnostics(plant: Plant, reports: readonly BlockReport[]): Diagnostic[] {
-  return reports.flatMap(({ faults }, b) =>
-    faults.map(({ code, path = [], what, why, mend }) => ({
+/**
+ * What keeps the blocks of a plant whose streams have closed from doing what their settings ask for.
+ *
+ * @param reportOf  what a block says of the last pass; not asked of those that never hold anything back
+ */
+export function faultDiagnostics(plant: Plant, reportOf: (block: number) => BlockReport): Diagnostic[] {
+  return plant.kinds.flatMap((kind, b) => {
+    if (!kind.mayHoldBack?.(plant.blocks[b].settings)) return [];
+    return reportOf(b).faults.map(({ code, path = [], what, why, mend }) => ({
       code,
       severity: 'error' as const,
       where: plant.flowsheet.placeOf(['blocks', plant.blocks[b].name, ...path].join('.')),
       what: `${plant.blocks[b].name}: ${what}`,
       why,
       mend,
-    })),
-  );
+    }));
+  });
 }
 
 function placeOfTrouble({ block, setting }: PassTrouble): string {

@@ -3,7 +3,6 @@ import type { StreamState } from '../model/stream.ts';
 import { figureReaders } from './figures.ts';
 import { count } from './ledger.ts';
 import type { Plant } from './plant.ts';
-import { reportsOf } from './reports.ts';
 import { KMOL_H } from './stream-results.ts';
 
 /**
@@ -17,7 +16,8 @@ import { KMOL_H } from './stream-results.ts';
  */
 export interface PlantScope {
   readonly scope: Readonly<Record<string, unknown>>;
-  readonly reports: () => readonly BlockReport[];
+  /** what a block says of the last pass */
+  readonly reportOf: (block: number) => BlockReport;
   /** to be called when the plant has been calculated again */
   refresh(): void;
 }
@@ -33,7 +33,11 @@ export function createPlantScope(plant: Plant, known?: readonly BlockReport[]): 
     });
     return () => (value ??= work());
   };
-  const reports = kept(() => reportsOf(plant), known);
+  const byBlock = plant.units.map((unit, b) =>
+    kept(() => unit.report(plant.inlets[b], plant.outlets[b]), known?.[b]),
+  );
+  const reportOf = (b: number) => byBlock[b]!();
+  const reports = kept(() => byBlock.map((report) => report()));
   const source = { plant, tallied: kept(() => count(plant)), reports };
   const ids = mixture.components.map((c) => c.id);
 
@@ -60,7 +64,7 @@ export function createPlantScope(plant: Plant, known?: readonly BlockReport[]): 
   }
 
   const blockScope = (b: number) => {
-    const { details, dutyW, powerW } = reports()[b]!;
+    const { details, dutyW, powerW } = reportOf(b);
     return { ...details, duty: dutyW / 1e3, power: powerW / 1e3 };
   };
   const user = getters(flowsheet.figures.map(({ name, formula }) => [name, () => formula.evaluate(scope)]));
@@ -77,7 +81,7 @@ export function createPlantScope(plant: Plant, known?: readonly BlockReport[]): 
   };
   return {
     scope,
-    reports,
+    reportOf,
     refresh() {
       for (const drop of forget) drop();
     },
