@@ -67,7 +67,7 @@ export function createCaseRunner(flowsheet: Flowsheet, options: CaseRunnerOption
   /** A plant in which nothing is left of a case: what a failed one leaves in its streams may be no numbers. */
   function renew(values: ArrayLike<number>): void {
     if (!untouched) {
-      plant = createPlant(flowsheet);
+      plant = plant.renewed();
       reading = createPlantScope(plant);
     }
     move(values);

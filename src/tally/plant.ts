@@ -9,7 +9,7 @@ import { createMixture, type Mixture } from '../properties/mixture.ts';
 import { type Step, stepGraph } from './calculation-steps.ts';
 import { feedFlows } from './feed-flows.ts';
 import { moveSetting, readSetting } from './setting-path.ts';
-import { wire } from './wiring.ts';
+import { type Wiring, wire } from './wiring.ts';
 
 /** Blocks that are closed together: those of one recycle system, or a single block. */
 export interface Group {
@@ -61,25 +61,41 @@ export interface Plant {
   set(path: string, value: number): void;
   /** the number a path stands for, undefined where it is left to its default */
   get(path: string): number | undefined;
+  /**
+   * A plant as `createPlant` makes it, its settings those of the flowsheet; property model and calculation order are
+   * taken over, so this one is of no use any more.
+   */
+  renewed(): Plant;
 }
 
 /** Wire up a checked flowsheet: property model, units, streams, calculation order. */
 export function createPlant(flowsheet: Flowsheet): Plant {
-  const { components } = flowsheet;
-  const reactions = flowsheet.reactions.map((reaction) => ({ ...reaction, moved: { lnFactor: 0 } }));
+  return equip(frameOf(flowsheet));
+}
+
+/** What a plant is built on: nothing in it is left by a pass but what is worked out again to the same bytes. */
+interface Frame {
+  readonly flowsheet: Flowsheet;
+  readonly mixture: Mixture;
+  readonly vapourPressures: { readonly lnFactors: Float64Array; moves: number };
+  readonly kinds: readonly BlockKind[];
+  readonly wiring: Wiring;
+  readonly groups: readonly Group[];
+  readonly smallestTears: boolean;
+}
+
+function frameOf(flowsheet: Flowsheet): Frame {
+  const { components, blocks } = flowsheet;
   const vapourPressures = { lnFactors: new Float64Array(components.length), moves: 0 };
   const mixture = createMixture({
     components,
     gas: flowsheet.gas,
     liquid: flowsheet.liquid,
     dissolvedGases: flowsheet.dissolvedGases,
-    basis: enthalpyBasisFor(components, reactions),
+    basis: enthalpyBasisFor(components, flowsheet.reactions),
     moved: vapourPressures,
   });
-  const blocks = flowsheet.blocks.map((b) => ({ ...b, settings: structuredClone(b.settings) }));
-  const feeds = flowsheet.feeds.map((feed) => ({ ...feed, parts: feed.parts.slice() }));
   const kinds = blocks.map((b) => blockKinds.get(b.kind)!);
-  const units = blocks.map((b, i) => kinds[i].create(b.settings, { name: b.name, mixture, reactions }));
   const wiring = wire(flowsheet, blocks, kinds);
   const graph = stepGraph(flowsheet, blocks, kinds);
   const plan = planCalculation(
@@ -101,6 +117,19 @@ export function createPlant(flowsheet: Flowsheet): Plant {
       tears: [...new Set(Array.from(group.tears, (edge) => graph.edgeStreams[edge]))],
     };
   });
+  return { flowsheet, mixture, vapourPressures, kinds, wiring, groups, smallestTears: plan.exact };
+}
+
+/** Units, streams and settings of their own for a frame. */
+function equip(frame: Frame): Plant {
+  const { flowsheet, mixture, vapourPressures, kinds, wiring } = frame;
+  const { components } = flowsheet;
+  const reactions = flowsheet.reactions.map((reaction) => ({ ...reaction, moved: { lnFactor: 0 } }));
+  const blocks = flowsheet.blocks.map((b) => ({ ...b, settings: structuredClone(b.settings) }));
+  const feeds = flowsheet.feeds.map((feed) => ({ ...feed, parts: feed.parts.slice() }));
+  const units = blocks.map((b, i) => kinds[i].create(b.settings, { name: b.name, mixture, reactions }));
+  // Copies: what is kept with a group belongs to one plant.
+  const groups = frame.groups.map((group) => ({ ...group }));
   const streams = flowsheet.streams.map(() => emptyStream(components.length));
   const torn = new Set(groups.flatMap((group) => group.tears));
   const seen = streams.map((state, s) => (torn.has(s) ? emptyStream(components.length) : state));
@@ -122,7 +151,7 @@ export function createPlant(flowsheet: Flowsheet): Plant {
     inlets,
     outlets,
     groups,
-    smallestTears: plan.exact,
+    smallestTears: frame.smallestTears,
     feeds,
     enters: wiring.enters,
     leaves: wiring.leaves,
@@ -158,6 +187,13 @@ export function createPlant(flowsheet: Flowsheet): Plant {
     },
     set: (path, value) => moveSetting(path, value, settings),
     get: (path) => readSetting(path, settings),
+    renewed() {
+      if (vapourPressures.lnFactors.some((factor) => factor !== 0)) {
+        vapourPressures.lnFactors.fill(0);
+        vapourPressures.moves++;
+      }
+      return equip(frame);
+    },
   };
 
   function named(trouble: unknown, block: number): unknown {
