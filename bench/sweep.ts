@@ -64,18 +64,31 @@ async function oneThread(): Promise<void> {
   console.log(`${column(passes / grid.size, 8)}  passes a case, ${failed} of ${grid.size} not closed`);
 }
 
+/** Rows of the small and of the large grid along the condenser temperature; each has a hundred of the purge. */
+const FEW = 100;
+const MANY = 1000;
+
 async function command(folder: string): Promise<void> {
-  const one: Run[] = [];
-  const two: Run[] = [];
+  const rounds: { few: Run; many: Run }[][] = [];
   for (let round = 0; round < ROUNDS; round++) {
-    one.push(await sweep(folder, 300, 1));
-    two.push(await sweep(folder, 300, 2));
+    const runs = [];
+    for (const workers of [1, 2]) {
+      runs.push({ few: await sweep(folder, FEW, workers), many: await sweep(folder, MANY, workers) });
+    }
+    rounds.push(runs);
   }
-  const gain = median(one.map(({ ms }, round) => ms / two[round]!.ms));
-  console.log(`${column(gain, 8)}  times as fast with two workers as with one, start and table included`);
-  for (const count of [100, 1000]) {
-    const { peakMB } = await sweep(folder, count, 2);
-    console.log(`${column(peakMB, 8)}  MB at most for ${count * 100} points, two workers`);
+  const gain = (ms: (runs: { few: Run; many: Run }) => number) =>
+    column(median(rounds.map(([one, two]) => ms(one!) / ms(two!))), 8);
+  console.log(
+    `${gain(({ few, many }) => many.ms - few.ms)}  times as fast with two workers as with one, after warming up (from ${FEW * 100} to ${MANY * 100} points)`,
+  );
+  console.log(`${gain(({ many }) => many.ms)}  the same for ${MANY * 100} points, start and table included`);
+  console.log(`${gain(({ few }) => few.ms)}  the same for ${FEW * 100} points, where starting takes longest`);
+  for (const [workers, name] of ['one worker', 'two workers'].entries()) {
+    const peak = (of: 'few' | 'many') =>
+      column(Math.max(...rounds.map((runs) => runs[workers]![of].peakMB)), 8);
+    console.log(`${peak('few')}  MB at most for ${FEW * 100} points, ${name}`);
+    console.log(`${peak('many')}  MB at most for ${MANY * 100} points, ${name}`);
   }
 }
 
