@@ -6,7 +6,7 @@ import { type FormulaWorld, formulaRoots } from './formula-scope.ts';
 import { type ReadFormula, readFormula } from './formulas.ts';
 import { checkPart } from './issues.ts';
 import type { ReadPrices } from './prices.ts';
-import { objectiveSchema } from './schema.ts';
+import { objectiveSchema } from './schema-studies.ts';
 import { type SettingsWorld, trySetting } from './settings.ts';
 import { readTarget, unitOfName } from './target.ts';
 import { child, nodeAt, type Path, placeInside, placeOfPath, type YamlScalar } from './yaml-tree.ts';

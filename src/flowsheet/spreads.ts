@@ -7,7 +7,7 @@ import { numericConstants } from './constants.ts';
 import type { Fault, Reading } from './findings.ts';
 import { checkPart } from './issues.ts';
 import { type NumericSetting, numericSettings } from './numeric-settings.ts';
-import { spreadSchemas } from './schema.ts';
+import { spreadSchemas } from './schema-studies.ts';
 import { optionalEntries } from './section.ts';
 import { keyPlaceOfPath, nodeAt, type Path, placeOfPath } from './yaml-tree.ts';
 
