@@ -27,6 +27,7 @@ export function uncertaintyText(found: Uncertainty, options: SheetOptions = {}):
     ...section('What each figure follows: rank correlation, and share of the variance of ranks', [
       ...rankLines(figures),
       ...overlapNote(found),
+      ...chanceNote(found),
     ]),
     ...(found.extraCases === 0
       ? []
@@ -206,6 +207,20 @@ function overlapNote({ figures }: Uncertainty): string[] {
   const note =
     'Spreads that move together have one share: the squares of their correlations would count twice what they have in common.';
   return wrapped(note, WIDTH, '  ', '  ');
+}
+
+/**
+ * The square of a rank correlation that one in twenty samples of independent numbers goes beyond, times their count.
+ * @source M. G. Kendall & J. D. Gibbons, Rank Correlation Methods, 5th ed., 1990 (from memory): variance 1/(n − 1)
+ */
+const CHANCE = 1.96 ** 2;
+
+/** Below which a share of so few samples says nothing; silent where that is less than is shown. */
+function chanceNote({ figures }: Uncertainty): string[] {
+  const count = mostCounted(figures);
+  const share = CHANCE / Math.max(1, count - 1);
+  if (count === 0 || share < 2 * SMALL_SHARE) return [];
+  return [`  Of ${count} samples, a share below ${Math.min(100, Math.ceil(100 * share))} % may be chance.`];
 }
 
 function sobolLines(figures: readonly FigureSpread[]): string[] {

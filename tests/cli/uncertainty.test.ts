@@ -35,15 +35,14 @@ test('the sheet: percentiles, their ranges, and what each figure follows; no lin
   expect(out).toMatch(
     /makeup\.composition\.\w+ [+-]0\.\d\d with\s+makeup\.composition\.\w+ [+-]0\.\d\d\s+\(together \d+ %\)/,
   );
-  const lines = out
-    .slice(out.indexOf('What each figure follows'))
-    .split(/\n {2}(?=[a-z])/)
-    .slice(1);
+  const [, causes] = /What each figure follows([\s\S]*)\n {2}Spreads that move together/.exec(out)!;
+  const lines = causes!.split(/\n {2}(?=[a-z])/).slice(1);
   const sums = lines.map((line) =>
     [...line.matchAll(/(\d+) %\)/g)].reduce((sum, [, n]) => sum + Number(n), 0),
   );
   expect(sums).toHaveLength(8);
   expect(Math.max(...sums)).toBeLessThanOrEqual(104);
+  expect(out).toContain('Of 64 samples, a share below 7 % may be chance.');
   expect(out.split('\n').filter((line) => [...line].length > 100)).toEqual([]);
 });
 
