@@ -8,8 +8,12 @@ import { reachedTwice } from './reactor-checks.ts';
 export const bedSettings = z.strictObject({
   inlet_temperature: quantity('temperature', {
     description: 'the gas is cooled or heated to this before the bed',
+    examples: ['400 degC'],
   }).optional(),
-  duty: quantity('power', { description: 'heat added before the bed; negative for cooling' }).optional(),
+  duty: quantity('power', {
+    description: 'heat added before the bed; negative for cooling',
+    examples: ['-8 MW'],
+  }).optional(),
   quench: z
     .literal(true)
     .meta({
@@ -25,7 +29,7 @@ export const bedSettings = z.strictObject({
   }).optional(),
   pressure_drop: quantity('pressureDifference', {
     min: 0,
-    description: 'pressure lost over the bed and what stands before it',
+    description: 'pressure lost over the bed and what stands before it, none if left out',
   }).optional(),
 });
 export type BedSettings = z.infer<typeof bedSettings>;

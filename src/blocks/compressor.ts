@@ -14,40 +14,50 @@ import { carryAlongTrain, type Train } from './train-slopes.ts';
 
 const settings = z.strictObject({
   pressure: quantity('pressure', { description: 'discharge pressure' }).optional(),
-  ratio: plainNumber({ min: 1, description: 'discharge over suction pressure' }).optional(),
+  ratio: plainNumber({ min: 1, description: 'discharge over suction pressure', examples: [1.05] }).optional(),
   pressure_rise: quantity('pressureDifference', {
     min: 0,
     description: 'discharge less suction pressure',
+    examples: ['12 bar'],
   }).optional(),
   efficiency: fraction({
     min: 0.05,
     description: 'isentropic efficiency of each stage, 75 % if left out',
+    examples: ['78 %'],
   }).optional(),
   polytropic_efficiency: fraction({
     min: 0.4,
     description: 'polytropic efficiency of each stage, instead of the isentropic one',
+    examples: ['82 %'],
   }).optional(),
   stages: count({
     max: 12,
     description: 'number of stages of equal pressure ratio, 1 if left out',
+    examples: [3],
   }).optional(),
   intercooling: quantity('temperature', {
-    description: 'temperature behind the coolers between stages',
+    description: 'temperature behind the coolers between stages; not cooled if left out',
+    examples: ['40 degC'],
   }).optional(),
   pressure_drop_per_cooler: quantity('pressureDifference', {
     min: 0,
-    description: 'pressure lost in each cooler between stages',
+    description: 'pressure lost in each cooler between stages, none if left out',
+    examples: ['0.5 bar'],
   }).optional(),
   knock_out: z
     .boolean()
-    .meta({ description: 'take out what condenses between stages, by the outlet condensate' })
+    .meta({
+      description: 'take out what condenses between stages, by the outlet condensate; false if left out',
+    })
     .optional(),
   drive_efficiency: fraction({
     min: 0.05,
     description: 'shaft power over power drawn, 100 % if left out',
+    examples: ['95 %'],
   }).optional(),
   discharge_limit: quantity('temperature', {
     description: 'a stage hotter than this is warned of, 232 degC if left out',
+    examples: ['150 degC'],
   }).optional(),
 });
 type Settings = z.infer<typeof settings>;

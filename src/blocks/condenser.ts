@@ -15,14 +15,30 @@ import { partFlows, partPhases } from './phase-outlets.ts';
 import { enthalpyAdded, quietReport } from './report.ts';
 
 const settings = z.strictObject({
-  temperature: quantity('temperature', { description: 'temperature of gas and condensate' }).optional(),
+  temperature: quantity('temperature', {
+    description: 'temperature of gas and condensate',
+    examples: ['-5 degC', '40 degC'],
+  }).optional(),
   duty: quantity('power', { description: 'heat added; negative for cooling' }).optional(),
   pressure_drop: quantity('pressureDifference', {
     min: 0,
-    description: 'pressure lost on the gas side',
+    description: 'pressure lost on the gas side, none if left out',
   }).optional(),
-  condense: z.array(z.string()).min(1).optional(),
-  cooling: coolingSettings.optional(),
+  condense: z
+    .array(z.string())
+    .min(1)
+    .meta({
+      description:
+        'components that share themselves between gas and liquid by vapour pressure; those with a critical temperature above 350 K if left out',
+      examples: [['NH3']],
+    })
+    .optional(),
+  cooling: coolingSettings
+    .meta({
+      description: 'shares the duty between cooling water and refrigeration; one duty if left out',
+      examples: [{ water: '25 degC', approach: '10 K' }],
+    })
+    .optional(),
 });
 type Settings = z.infer<typeof settings>;
 

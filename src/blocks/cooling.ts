@@ -7,20 +7,33 @@ import { coldFaults } from './cooling-faults.ts';
 
 /** How a condenser is cooled: by water as far as that goes, by refrigeration below. */
 export const coolingSettings = z.strictObject({
-  water: quantity('temperature', { description: 'temperature of the cooling water' }),
+  water: quantity('temperature', {
+    description: 'temperature of the cooling water',
+    examples: ['25 degC'],
+  }),
   approach: quantity('temperatureDifference', {
     min: 0,
     description: 'closest approach to water and refrigerant',
   }),
   levels: z
-    .array(quantity('temperature', { description: 'evaporation temperature of a chiller level' }))
+    .array(
+      quantity('temperature', {
+        description: 'evaporation temperature of a chiller level',
+        examples: ['-10 degC'],
+      }),
+    )
     .min(1)
     .max(8)
-    .meta({ description: 'evaporation temperatures of chillers in series, warmest first' })
+    .meta({
+      description:
+        'evaporation temperatures of chillers in series, warmest first; one as cold as needed if left out',
+      examples: [['5 degC', '-10 degC']],
+    })
     .optional(),
   second_law_efficiency: fraction({
     min: 0.05,
     description: 'power of an ideal refrigerator over the real power, 50 % if left out',
+    examples: ['50 %'],
   }).optional(),
 });
 export type CoolingSettings = z.infer<typeof coolingSettings>;

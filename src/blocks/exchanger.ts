@@ -13,20 +13,28 @@ import { quietReport } from './report.ts';
 const settings = z.strictObject({
   cold_temperature: quantity('temperature', {
     description: 'outlet temperature of the cold side',
+    examples: ['290 degC'],
   }).optional(),
-  hot_temperature: quantity('temperature', { description: 'outlet temperature of the hot side' }).optional(),
-  duty: quantity('power', { min: 0, description: 'heat moved from the hot to the cold side' }).optional(),
+  hot_temperature: quantity('temperature', {
+    description: 'outlet temperature of the hot side',
+    examples: ['90 degC'],
+  }).optional(),
+  duty: quantity('power', {
+    min: 0,
+    description: 'heat moved from the hot to the cold side',
+    examples: ['20 MW'],
+  }).optional(),
   approach: quantity('temperatureDifference', {
     min: 0,
     description: 'smallest temperature difference along the curve; the heat moved follows',
   }).optional(),
   hot_pressure_drop: quantity('pressureDifference', {
     min: 0,
-    description: 'pressure lost on the hot side',
+    description: 'pressure lost on the hot side, none if left out',
   }).optional(),
   cold_pressure_drop: quantity('pressureDifference', {
     min: 0,
-    description: 'pressure lost on the cold side',
+    description: 'pressure lost on the cold side, none if left out',
   }).optional(),
 });
 export type ExchangerSettings = z.infer<typeof settings>;

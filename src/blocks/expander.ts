@@ -8,12 +8,17 @@ import { createMachineStage } from './machine-stage.ts';
 import { quietReport } from './report.ts';
 
 const settings = z.strictObject({
-  pressure: quantity('pressure', { description: 'discharge pressure' }).optional(),
-  ratio: plainNumber({ min: 1, description: 'inlet over discharge pressure' }).optional(),
-  efficiency: fraction({ min: 0.05, description: 'isentropic efficiency, 80 % if left out' }).optional(),
+  pressure: quantity('pressure', { description: 'discharge pressure', examples: ['6 bar'] }).optional(),
+  ratio: plainNumber({ min: 1, description: 'inlet over discharge pressure', examples: [3] }).optional(),
+  efficiency: fraction({
+    min: 0.05,
+    description: 'isentropic efficiency, 80 % if left out',
+    examples: ['82 %'],
+  }).optional(),
   drive_efficiency: fraction({
     min: 0.05,
     description: 'power delivered over shaft power (generator, gear), 100 % if left out',
+    examples: ['95 %'],
   }).optional(),
 });
 type Settings = z.infer<typeof settings>;

@@ -11,9 +11,15 @@ import { partFlows, partPhases } from './phase-outlets.ts';
 import { enthalpyAdded, quietReport } from './report.ts';
 
 const settings = z.strictObject({
-  pressure: quantity('pressure', { description: 'pressure of the vessel' }),
-  adiabatic: z.literal(true).optional(),
-  temperature: quantity('temperature', { description: 'temperature of the vessel' }).optional(),
+  pressure: quantity('pressure', { description: 'pressure of the vessel', examples: ['20 bar'] }),
+  adiabatic: z
+    .literal(true)
+    .meta({ description: 'no heat is exchanged; one of adiabatic, temperature and duty' })
+    .optional(),
+  temperature: quantity('temperature', {
+    description: 'temperature of the vessel',
+    examples: ['30 degC'],
+  }).optional(),
   duty: quantity('power', { description: 'heat added; negative for cooling' }).optional(),
 });
 type Settings = z.infer<typeof settings>;

@@ -9,14 +9,23 @@ import { createDutySlopes } from './duty-slopes.ts';
 import { temperatureAlong } from './heat-curve.ts';
 import { settleWithDuty } from './heat-duty.ts';
 import { enthalpyAdded, quietReport } from './report.ts';
-import { raiseSteam, steamFaults, steamSettings } from './steam-raising.ts';
+import { raiseSteam, STEAM, steamFaults, steamSettings } from './steam-raising.ts';
 
 const settings = z.strictObject({
-  temperature: quantity('temperature', { description: 'outlet temperature' }).optional(),
+  temperature: quantity('temperature', {
+    description: 'outlet temperature',
+    examples: ['290 degC'],
+  }).optional(),
   duty: quantity('power', { description: 'heat added; negative for cooling' }).optional(),
-  vapour_fraction: fraction({ description: 'mol vapour per mol of the outlet' }).optional(),
-  pressure_drop: quantity('pressureDifference', { min: 0, description: 'pressure lost' }).optional(),
-  steam: steamSettings.optional(),
+  vapour_fraction: fraction({
+    description: 'mol vapour per mol of the outlet',
+    examples: ['100 %', '0.5'],
+  }).optional(),
+  pressure_drop: quantity('pressureDifference', {
+    min: 0,
+    description: 'pressure lost, none if left out',
+  }).optional(),
+  steam: steamSettings.meta({ description: STEAM }).optional(),
 });
 type Settings = z.infer<typeof settings>;
 

@@ -9,7 +9,11 @@ import { quietReport } from './report.ts';
 
 const settings = z.strictObject({
   pressure: quantity('pressure', { description: 'discharge pressure' }),
-  efficiency: fraction({ min: 0.05, description: 'hydraulic efficiency, 70 % if left out' }).optional(),
+  efficiency: fraction({
+    min: 0.05,
+    description: 'hydraulic efficiency, 70 % if left out',
+    examples: ['75 %'],
+  }).optional(),
 });
 type Settings = z.infer<typeof settings>;
 

@@ -12,29 +12,55 @@ import { createReactionRun } from './reaction-run.ts';
 import { reactionFaults } from './reactor-checks.ts';
 import { liquidWarnings } from './reactor-warnings.ts';
 import { enthalpyAdded, lazily, quietReport } from './report.ts';
-import { raiseSteam, steamFaults, steamSettings } from './steam-raising.ts';
+import { raiseSteam, STEAM, steamFaults, steamSettings } from './steam-raising.ts';
 
 const settings = z.strictObject({
-  reactions: z.record(
-    z.string(),
-    z.strictObject({
-      approach: quantity('temperatureDifference', {
-        min: 0,
-        description: 'temperature approach to equilibrium, 0 K if left out',
-      }).optional(),
-      fraction_of_equilibrium: fraction({
-        description: 'share of the extent at equilibrium that is run, in place of an approach',
-      }).optional(),
-      conversion: fraction({ description: 'share of the key reactant that this reaction takes' }).optional(),
-      of: z.string().meta({ description: 'the key reactant of a conversion' }).optional(),
+  reactions: z
+    .record(
+      z.string(),
+      z.strictObject({
+        approach: quantity('temperatureDifference', {
+          min: 0,
+          description: 'temperature approach to equilibrium, 0 K if left out',
+        }).optional(),
+        fraction_of_equilibrium: fraction({
+          description: 'share of the extent at equilibrium that is run, in place of an approach',
+        }).optional(),
+        conversion: fraction({
+          description: 'share of the key reactant that this reaction takes',
+        }).optional(),
+        of: z
+          .string()
+          .meta({ description: 'the key reactant of a conversion', examples: ['H2'] })
+          .optional(),
+      }),
+    )
+    .meta({
+      description:
+        'reactions of the flowsheet that run here, by name: to equilibrium by approach or fraction_of_equilibrium, or to a set conversion',
+      examples: [{ synthesis: { approach: '10 K' } }, { shift: { conversion: '95 %', of: 'CO' } }],
     }),
-  ),
   temperature: quantity('temperature', { description: 'outlet temperature; the duty follows' }).optional(),
-  adiabatic: z.literal(true).optional(),
-  duty: quantity('power', { description: 'heat added; negative for cooling' }).optional(),
-  beds: z.array(bedSettings).optional(),
-  pressure_drop: quantity('pressureDifference', { min: 0, description: 'pressure lost' }).optional(),
-  steam: steamSettings.optional(),
+  adiabatic: z
+    .literal(true)
+    .meta({ description: 'no heat is exchanged; one of temperature, adiabatic, duty and beds' })
+    .optional(),
+  duty: quantity('power', {
+    description: 'heat added; negative for cooling',
+    examples: ['-20 MW'],
+  }).optional(),
+  beds: z
+    .array(bedSettings)
+    .meta({
+      description: 'adiabatic beds in series, each cooled, heated or quenched before it',
+      examples: [[{ inlet_temperature: '400 degC' }, { inlet_temperature: '420 degC' }]],
+    })
+    .optional(),
+  pressure_drop: quantity('pressureDifference', {
+    min: 0,
+    description: 'pressure lost, none if left out',
+  }).optional(),
+  steam: steamSettings.meta({ description: STEAM }).optional(),
 });
 type Settings = z.infer<typeof settings>;
 

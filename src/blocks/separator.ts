@@ -8,16 +8,30 @@ import { portName } from './port-name.ts';
 import { enthalpyAdded, quietReport } from './report.ts';
 
 const settings = z.strictObject({
-  recover: z.record(
-    portName,
-    z.record(z.string(), fraction({ description: 'share of the component that leaves by this outlet' })),
-  ),
+  recover: z
+    .record(
+      portName,
+      z
+        .record(z.string(), fraction({ description: 'share of the component that leaves by this outlet' }))
+        .meta({
+          description: 'shares by component that leave by this outlet',
+          examples: [{ H2: '90 %', N2: '5 %' }],
+        }),
+    )
+    .meta({
+      description: 'by outlet the share of each component; what is left leaves by the outlet rest',
+      examples: [{ permeate: { H2: '90 %', N2: '5 %' } }],
+    }),
   pressures: z
     .record(
       z.string(),
       quantity('pressure', { description: 'pressure of this outlet, that of the inlet if left out' }),
     )
-    .optional(),
+    .optional()
+    .meta({
+      description: 'pressures by outlet, rest among them; that of the inlet if left out',
+      examples: [{ permeate: '30 bar' }],
+    }),
 });
 type Settings = z.infer<typeof settings>;
 

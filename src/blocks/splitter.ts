@@ -13,8 +13,18 @@ import { quietReport } from './report.ts';
 const settings = z.strictObject({
   fractions: z
     .record(portName, fraction({ description: 'share of the inlet that leaves by this outlet' }))
-    .optional(),
-  flows: z.record(portName, flow({ description: 'flow that leaves by this outlet' })).optional(),
+    .optional()
+    .meta({
+      description: 'shares by outlet; what is left leaves by the outlet rest. One of fractions and flows',
+      examples: [{ bleed: '3 %' }],
+    }),
+  flows: z
+    .record(portName, flow({ description: 'flow that leaves by this outlet' }))
+    .optional()
+    .meta({
+      description: 'flows by outlet; what is left leaves by the outlet rest. One of fractions and flows',
+      examples: [{ bleed: '120 kmol/h' }],
+    }),
 });
 type Settings = z.infer<typeof settings>;
 

@@ -11,17 +11,27 @@ import { quantity } from '../units/schema.ts';
 import type { BlockReport, SettingsFault } from './block.ts';
 import { evenShares, inOrder } from './heat-path.ts';
 
+/** What an editor says of `steam`. */
+export const STEAM =
+  'the steam that the heat given off could raise; changes no stream. None reckoned if left out';
+
 /** The steam that the heat given off by a block could raise. */
 export const steamSettings = z.strictObject({
   pressure: quantity('pressure', {
     min: LOWEST_STEAM_PA,
     max: HIGHEST_STEAM_PA,
     description: 'pressure at which the steam is raised',
+    examples: ['40 bar'],
   }),
-  feedwater: quantity('temperature', { min: 273.15, description: 'temperature of the boiler feedwater' }),
+  feedwater: quantity('temperature', {
+    min: 273.15,
+    description: 'temperature of the boiler feedwater',
+    examples: ['105 degC'],
+  }),
   superheat: quantity('temperatureDifference', {
     min: 0,
     description: 'above saturation; saturated steam if left out',
+    examples: ['60 K'],
   }).optional(),
   approach: quantity('temperatureDifference', {
     min: 0,

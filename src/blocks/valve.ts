@@ -7,7 +7,7 @@ import { createDutySlopes } from './duty-slopes.ts';
 import { quietReport } from './report.ts';
 
 const settings = z.strictObject({
-  pressure: quantity('pressure', { description: 'outlet pressure' }),
+  pressure: quantity('pressure', { description: 'outlet pressure', examples: ['20 bar'] }),
 });
 type Settings = z.infer<typeof settings>;
 

@@ -33,6 +33,7 @@ async function runBalance(file: string, options: BalanceCommandOptions): Promise
     textSheet(solved.result, {
       figureUnits: figureUnits(solved.flowsheet),
       paint: paintFor(process.stdout),
+      diagnosis: solved.diagnosis,
       trace: options.trace === true,
     }),
   );

@@ -5,7 +5,7 @@ import type { Reading } from './findings.ts';
 import type { FormulaWorld } from './formula-scope.ts';
 import { readFormula } from './formulas.ts';
 import { checkPart } from './issues.ts';
-import { aimSchema } from './schema.ts';
+import { aimSchema } from './schema-studies.ts';
 import { optionalEntries } from './section.ts';
 import { type SettingsWorld, trySetting } from './settings.ts';
 import { readTarget } from './target.ts';

@@ -8,7 +8,7 @@ import { customDefinition } from './custom-definition.ts';
 import type { Reading } from './findings.ts';
 import { checkPart } from './issues.ts';
 import { checkName } from './names.ts';
-import { customSchema } from './schema.ts';
+import { customSchema } from './schema-components.ts';
 import {
   child,
   entriesOf,

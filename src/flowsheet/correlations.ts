@@ -4,7 +4,7 @@ import type { Correlation } from '../model/spread.ts';
 import { correlationFactor } from './correlation-matrix.ts';
 import type { Fault, Reading } from './findings.ts';
 import { checkPart } from './issues.ts';
-import { correlationSchema } from './schema.ts';
+import { correlationSchema } from './schema-studies.ts';
 import type { ReadSpreads } from './spreads.ts';
 import { child, type Path, placeOfPath } from './yaml-tree.ts';
 

@@ -1,6 +1,6 @@
 import type { z } from 'zod';
 import type { CustomDefinition } from '../properties/custom-component.ts';
-import type { customSchema } from './schema.ts';
+import type { customSchema } from './schema-components.ts';
 
 type Entry = z.infer<typeof customSchema>;
 type Outcome =

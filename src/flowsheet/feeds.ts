@@ -3,6 +3,7 @@ import { nearest } from '../diagnostics/nearest.ts';
 import type { Component } from '../model/component.ts';
 import type { Feed } from '../model/flowsheet.ts';
 import { NORMAL_VOLUME_M3_PER_MOL } from '../properties/constants.ts';
+import { splitQuantity } from '../units/quantity.ts';
 import type { Flow } from '../units/schema.ts';
 import type { Reading } from './findings.ts';
 import { checkPart } from './issues.ts';
@@ -111,11 +112,11 @@ function isWhole(reading: Reading, name: string, path: Path, entry: FeedEntry): 
 /** {H2: 74 %, N2: 26} would be 0.74 to 26: certainly not meant. */
 function mixesPerCent(reading: Reading, name: string, path: Path, basis: string): boolean {
   const node = nodeAt(reading.root, [...path, 'composition']);
-  const written = entriesOf(node).map((e) => ({
-    ...e,
-    bare: e.value.kind === 'scalar' && typeof e.value.value === 'number',
-    zero: e.value.kind === 'scalar' && e.value.value === 0,
-  }));
+  // By its text: the bound of an objective or an aim stands here as text even where it is a bare number.
+  const written = entriesOf(node).map((e) => {
+    const number = e.value.kind === 'scalar' ? splitQuantity(e.value.text) : null;
+    return { ...e, bare: number?.unit === '', zero: number?.unit === '' && number.number === 0 };
+  });
   const bare = written.find((e) => e.bare && !e.zero);
   const perCent = written.find((e) => !e.bare);
   if (bare === undefined || perCent === undefined) return false;

@@ -5,7 +5,7 @@ import type { FormulaWorld } from './formula-scope.ts';
 import { readFormula } from './formulas.ts';
 import { checkPart } from './issues.ts';
 import { checkName } from './names.ts';
-import { figureSchema } from './schema.ts';
+import { figureSchema } from './schema-studies.ts';
 import { optionalEntries } from './section.ts';
 import { unitOfName } from './target.ts';
 import { nodeAt, placeOfPath, type YamlScalar } from './yaml-tree.ts';

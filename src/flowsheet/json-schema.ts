@@ -16,12 +16,18 @@ export function flowsheetJsonSchema(): Json {
     properties: {
       ...properties,
       blocks: {
+        description: properties['blocks']!['description'],
         type: 'object',
         propertyNames: NAME_PATTERN,
         additionalProperties: {
           type: 'object',
           required: ['kind'],
-          properties: { kind: { enum: kinds.map((k) => k.kind) } },
+          properties: {
+            kind: {
+              enum: kinds.map((k) => k.kind),
+              description: kinds.map((k) => `${k.kind}: ${k.summary}`).join('\n'),
+            },
+          },
           allOf: kinds.map((k) => ({
             if: { properties: { kind: { const: k.kind } }, required: ['kind'] },
             // biome-ignore lint/suspicious/noThenProperty: the word of JSON Schema
@@ -37,7 +43,8 @@ const NAME_PATTERN = { pattern: '^[A-Za-z][A-Za-z0-9_]*$' };
 
 function withKind(settings: Json, kind: string, summary: string): Json {
   const properties = (settings['properties'] ?? {}) as Json;
-  return { ...settings, description: summary, properties: { kind: { const: kind }, ...properties } };
+  const own = { const: kind, description: summary };
+  return { ...settings, description: summary, properties: { kind: own, ...properties } };
 }
 
 function toJson(schema: z.ZodType): Json {

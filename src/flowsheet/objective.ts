@@ -1,12 +1,13 @@
 import type { Aim, FigureLimit, Goal, Move, Objective } from '../model/flowsheet.ts';
 import { compileFormula } from '../units/formula.ts';
+import { lastUnit } from '../units/quantity.ts';
 import { unitOfBound } from './aims.ts';
 import type { Fault, Reading } from './findings.ts';
 import { type FormulaWorld, formulaRoots } from './formula-scope.ts';
 import { type ReadFormula, readFormula } from './formulas.ts';
 import { checkPart } from './issues.ts';
 import type { ReadPrices } from './prices.ts';
-import { objectiveSchema } from './schema.ts';
+import { objectiveSchema } from './schema-studies.ts';
 import { type SettingsWorld, trySetting } from './settings.ts';
 import { readTarget, unitOfName } from './target.ts';
 import { child, nodeAt, type Path, placeInside, placeOfPath, type YamlScalar } from './yaml-tree.ts';
@@ -170,7 +171,8 @@ function readMove(reading: Reading, settings: SettingsWorld, aims: readonly Aim[
     const mend = low === high ? 'write two different bounds' : 'swap the two';
     return cannot(`the bounds of ${path} are not in order.`, why, mend, node.place);
   }
-  return [{ path, between: [low, high], unit: unitOfBound(path, ends[1]!.trim()) }];
+  const written = lastUnit(ends);
+  return [{ path, between: [low, high], unit: unitOfBound(path, ends[1]!.trim()), written }];
 }
 
 function readLimit(

@@ -1,175 +1,143 @@
 import { z } from 'zod';
-import { count, flow, plainNumber, quantity } from '../units/schema.ts';
-
-/** Text; a title may well be a year. */
-const text = z.union([z.string(), z.number().transform(String)]);
-
-/** Share of a component: a number of parts, or per cent. */
-const part = quantity('fraction', { min: 0, description: 'parts, or per cent' });
-
-const nasaSchema = z.strictObject({
-  from: quantity('temperature'),
-  to: quantity('temperature'),
-  a: z.array(plainNumber()).length(7),
-  b1: plainNumber(),
-  b2: plainNumber(),
-});
-
-const antoineSchema = z.strictObject({
-  A: plainNumber(),
-  B: plainNumber(),
-  C: plainNumber(),
-  from: quantity('temperature'),
-  to: quantity('temperature'),
-});
-
-/** A component of the user's own under `components`. */
-export const customSchema = z.strictObject({
-  formula: z.string().meta({ description: 'atoms of one molecule, e.g. C2H6O' }),
-  source: text.meta({ description: 'where the data come from' }),
-  name: text.optional(),
-  cas: text.optional(),
-  solid: z.boolean().optional(),
-  formation_enthalpy: quantity('molarEnergy', { description: 'at 298.15 K, gas' }).optional(),
-  entropy: quantity('molarHeatCapacity', { description: 'at 298.15 K and 1 bar, gas' }).optional(),
-  heat_capacity: z
-    .union([z.array(plainNumber()).min(1).max(4), quantity('molarHeatCapacity')])
-    .optional()
-    .meta({ description: 'ideal gas; or the list a, b, c, d of a + bT + cT2 + dT3 in J/(mol K), T in K' }),
-  heat_capacity_range: z
-    .strictObject({ from: quantity('temperature'), to: quantity('temperature') })
-    .optional(),
-  nasa: z.array(nasaSchema).min(1).optional(),
-  critical_temperature: quantity('temperature').optional(),
-  critical_pressure: quantity('pressure').optional(),
-  acentric_factor: plainNumber({ min: -1, max: 3 }).optional(),
-  boiling_temperature: quantity('temperature').optional(),
-  antoine: antoineSchema.optional().meta({ description: 'log10(P/bar) = A - B/(T + C), T in K' }),
-  liquid_volume: quantity('molarVolume').optional(),
-  vaporisation_enthalpy: quantity('molarEnergy', {
-    above: 0,
-    description: 'at the boiling point',
-  }).optional(),
-});
+import { flow, quantity } from '../units/schema.ts';
+import { customSchema, text } from './schema-components.ts';
+import {
+  aimSchema,
+  correlationSchema,
+  figureSchema,
+  objectiveSchema,
+  solveSchema,
+  spreadSchema,
+  studySchema,
+} from './schema-studies.ts';
 
 export const reactionSchema = z.strictObject({
-  equation: z.string(),
-  constant: z.string().optional().meta({ description: 'a published constant by its name' }),
+  equation: z
+    .string()
+    .meta({ description: 'the reaction, balanced; C_gr is graphite', examples: ['N2 + 3 H2 <=> 2 NH3'] }),
+  constant: z
+    .string()
+    .optional()
+    .meta({
+      description:
+        'a published equilibrium constant by its name (looptally data lists them); from Gibbs energies if neither this nor lnK is given',
+      examples: ['gillespie-beattie-1930', 'graaf-winkelman-2016', 'moe-1962'],
+    }),
   lnK: z
     .union([z.string(), z.number().transform(String)])
     .optional()
-    .meta({ description: 'formula in T [K]' }),
-  standard_pressure: quantity('pressure').optional(),
+    .meta({
+      description: 'ln of the equilibrium constant, a formula in T [K]',
+      examples: ['4577.8/T - 4.33'],
+    }),
+  standard_pressure: quantity('pressure', {
+    description: 'to which the pressures in an lnK of your own are referred, 1 bar if left out',
+    examples: ['1 bar', '1 atm'],
+  }).optional(),
 });
 
 export const feedSchema = z.strictObject({
-  temperature: quantity('temperature'),
-  pressure: quantity('pressure'),
-  flow: flow({ description: 'total, by mole, mass or normal volume' }).optional(),
-  composition: z.record(z.string(), part).optional(),
-  basis: z.enum(['mole', 'mass']).optional(),
-  flows: z.record(z.string(), flow()).optional(),
+  temperature: quantity('temperature', {
+    description: 'temperature at the battery limit',
+    examples: ['35 degC'],
+  }),
+  pressure: quantity('pressure', { description: 'pressure at the battery limit' }),
+  flow: flow({ description: 'total, by mole, mass or normal volume; needs a composition' }).optional(),
+  composition: z
+    .record(
+      z.string(),
+      quantity('fraction', {
+        min: 0,
+        description: 'part of this component, as a number of parts or per cent',
+        examples: [74.2, '24.7 %'],
+      }),
+    )
+    .optional()
+    .meta({
+      description: 'parts of each component, made to add up to 1; components left out are not in it',
+      examples: [{ H2: 74.2, N2: 24.7, Ar: 0.3, CH4: 0.8 }],
+    }),
+  basis: z
+    .enum(['mole', 'mass'])
+    .optional()
+    .meta({ description: 'what the parts of the composition count, mole if left out' }),
+  flows: z
+    .record(z.string(), flow({ description: 'flow of this component' }))
+    .optional()
+    .meta({
+      description: 'flow of each component, instead of flow and composition',
+      examples: [{ H2: '4800 kmol/h', N2: '1600 kmol/h' }],
+    }),
 });
 
 export const ledgerSchema = z.strictObject({
   product: z
     .string()
     .optional()
-    .meta({ examples: ['NH3 in S5'] }),
-  reactant: z.string().optional(),
-  purge: z.union([z.array(z.string()), z.string().transform((tag) => [tag])]).optional(),
-  recycle: z.string().optional(),
-});
-
-const bound = z.union([z.string(), z.number()]);
-export const aimSchema = z.strictObject({
-  move: z.string().meta({ description: 'the setting that is moved', examples: ['purge.fractions.bleed'] }),
-  between: z.tuple([bound, bound]),
-  until: z.string().meta({ description: 'formula = target', examples: ['streams.S2.y.Ar = 12 %'] }),
-});
-
-export const figureSchema = z.strictObject({
-  formula: z.union([z.string(), z.number().transform(String)]),
-  unit: z.string().max(20).optional(),
-});
-
-/** A value in the unit of the setting that is spread. */
-const spreadValue = z.union([z.string(), z.number()]);
-const middle = spreadValue.optional().meta({ description: 'the value in the file if left out' });
-/** The shapes of a spread by their kind. */
-export const spreadSchemas = {
-  normal: z.strictObject({ kind: z.literal('normal'), mean: middle, sd: spreadValue }),
-  uniform: z.strictObject({ kind: z.literal('uniform'), low: spreadValue, high: spreadValue }),
-  triangular: z.strictObject({
-    kind: z.literal('triangular'),
-    low: spreadValue,
-    mode: middle,
-    high: spreadValue,
-  }),
-  'log-normal': z.strictObject({
-    kind: z.literal('log-normal'),
-    median: middle,
-    factor: plainNumber({
-      above: 1,
-      description: 'one standard deviation up is so many times the median, one down so much less',
+    .meta({
+      description:
+        'component and stream; if left out what the first reaction makes, in the stream its liquid leaves by',
+      examples: ['NH3 in S5'],
     }),
-  }),
-};
-
-export const correlationSchema = z.strictObject({
-  between: z.tuple([z.string(), z.string()]).meta({ description: 'two paths under spreads' }),
-  value: plainNumber({ above: -1, below: 1, description: 'correlation of the ranks (Spearman)' }),
-});
-
-const goalSchema = z.union([z.array(z.string()).min(1).max(2), z.string().transform((one) => [one])]);
-
-/** What `looptally optimise` is asked; one goal, or two for a trade-off front. */
-export const objectiveSchema = z.strictObject({
-  minimise: goalSchema.optional().meta({
-    description: 'cost, or a formula',
-    examples: ['cost', 'figures.power_kW.total'],
-  }),
-  maximise: goalSchema.optional().meta({ description: 'profit, or a formula', examples: ['profit'] }),
-  move: z.record(z.string(), z.string().meta({ examples: ['-30 degC..5 degC'] })).meta({
-    description: 'settings and the bounds between which they may be moved',
-  }),
-  limits: z
-    .union([z.array(z.string()), z.string().transform((one) => [one])])
+  reactant: z
+    .string()
     .optional()
     .meta({
-      description: 'what must hold, formula < value or formula > value',
-      examples: [['figures.inerts.converter < 14 %']],
+      description: 'component that the yield refers to; hydrogen or the first reactant if left out',
+      examples: ['H2'],
     }),
-});
-
-export const solveSchema = z.strictObject({
-  method: z.enum(['auto', 'direct', 'wegstein', 'eigenvalue', 'anderson', 'broyden', 'newton']).optional(),
-  tolerance: plainNumber({ above: 0, max: 0.01, description: 'relative' }).optional(),
-  max_passes: count({ max: 100_000 }).optional(),
-  tear: z.union([z.array(z.string()), z.string().transform((tag) => [tag])]).optional(),
-});
-
-export const studySchema = z.strictObject({
-  over: z.record(z.string(), bound).meta({
-    description: 'settings and the values they take, the last one running fastest',
-    examples: [{ 'condenser.temperature': '-25 degC..10 degC:8', 'purge.fractions.bleed': '1 %, 2 %, 5 %' }],
-  }),
-  record: z.array(bound).optional().meta({ description: 'formulas read out of every case' }),
-  note: z
-    .union([z.array(z.string()), z.string().transform((line) => [line])])
+  purge: z
+    .union([z.array(z.string()), z.string().transform((tag) => [tag])])
     .optional()
-    .meta({ description: 'printed after the table; {last COLUMN} stands for a number of it' }),
+    .meta({
+      description: 'streams that count as purge; what leaves the plant from splitters if left out',
+      examples: [['S6'], 'S6'],
+    }),
+  recycle: z
+    .string()
+    .optional()
+    .meta({
+      description: 'stream that counts as the recycle; the first that comes back into a mixer if left out',
+      examples: ['S8'],
+    }),
 });
 
 /** The parts of the file that are one value each. */
 export const headerShape = {
   looptally: z.literal(1).meta({ description: 'version of this format' }),
-  title: text.optional(),
-  notes: text.optional(),
-  gas: z.enum(['ideal', 'srk', 'pr']).optional().meta({ description: 'vapour model' }),
-  liquid: z.enum(['antoine', 'eos']).optional(),
-  dissolved_gases: z.boolean().optional(),
+  title: text.optional().meta({ description: 'heading of every sheet', examples: ['Ammonia loop'] }),
+  notes: text.optional().meta({ description: 'free text, printed with the sheets' }),
+  gas: z
+    .enum(['ideal', 'srk', 'pr'])
+    .optional()
+    .meta({ description: 'vapour model: ideal gas, Soave-Redlich-Kwong or Peng-Robinson; srk if left out' }),
+  liquid: z.enum(['antoine', 'eos']).optional().meta({
+    description:
+      'how gas and liquid are parted: by vapour pressures, or by the equation of state alone; antoine if left out',
+  }),
+  dissolved_gases: z
+    .boolean()
+    .optional()
+    .meta({ description: "gases dissolve in the condensate by Henry's law; true if left out" }),
 };
+
+/** The names that prices always know, for editors; their units depend on what is priced. */
+const priceHints = Object.fromEntries(
+  Object.entries({
+    makeup: [
+      'all feeds without a price of their own, per t, kmol, Nm3, or MWh or GJ of lower heating value',
+      '25 EUR/MWh',
+    ],
+    power: [
+      'power of machines, and of refrigeration where that has no price of its own, per MWh or GJ',
+      '70 EUR/MWh',
+    ],
+    refrigeration: ['cold that is bought for condensers with cooling, per MWh or GJ', '4 EUR/GJ'],
+    cooling_water: ['heat that water takes from condensers with cooling, per MWh or GJ', '0.5 EUR/GJ'],
+    product: ['the product of the ledger, per t, kmol or Nm3', '420 EUR/t'],
+    purge: ['fuel value of the purge, per MWh or GJ of lower heating value', '20 EUR/MWh'],
+  }).map(([name, [description, example]]) => [name, { type: 'string', description, examples: [example] }]),
+);
 
 /**
  * The whole file. The reader checks it part by part, so that a fault in one part does not hide those in the
@@ -177,41 +145,98 @@ export const headerShape = {
  */
 export const fileSchema = z.strictObject({
   ...headerShape,
-  components: z.union([
-    z.array(z.union([z.string(), z.record(z.string(), customSchema)])).min(1),
-    z.record(z.string(), customSchema.nullable()),
-  ]),
-  reactions: z.record(z.string(), z.union([z.string(), reactionSchema])).optional(),
-  feeds: z.record(z.string(), feedSchema),
-  blocks: z.record(z.string(), z.looseObject({ kind: z.string() })),
-  streams: z.record(z.string(), z.string().meta({ examples: ['makeup -> mixer'] })),
-  ledger: ledgerSchema.optional(),
-  aims: z.record(z.string(), aimSchema).optional(),
-  cases: z.record(z.string(), z.record(z.string(), z.unknown())).optional(),
-  figures: z.record(z.string(), figureSchema).optional(),
-  spreads: z
+  components: z
+    .union([
+      z.array(z.union([z.string(), z.record(z.string(), customSchema)])).min(1),
+      z.record(z.string(), customSchema.nullable()),
+    ])
+    .meta({
+      description:
+        'what the streams may contain: a list of ids (looptally data lists the built-in ones), with components of your own as {ID: {formula: ..., ...}}',
+      examples: [['H2', 'N2', 'NH3', 'Ar', 'CH4']],
+    }),
+  reactions: z
+    .record(z.string(), z.union([z.string(), reactionSchema]))
+    .optional()
+    .meta({
+      description: 'reactions by name: an equation, or a mapping with an equilibrium constant',
+      examples: [{ synthesis: 'N2 + 3 H2 <=> 2 NH3' }],
+    }),
+  feeds: z.record(z.string(), feedSchema).meta({
+    description: 'streams that enter across the battery limit, by name',
+    examples: [
+      {
+        makeup: {
+          flow: '6500 kmol/h',
+          temperature: '35 degC',
+          pressure: '200 bar',
+          composition: { H2: 75, N2: 25 },
+        },
+      },
+    ],
+  }),
+  blocks: z.record(z.string(), z.looseObject({ kind: z.string() })).meta({
+    description: 'unit operations by name; the kind says what a block does and which settings it has',
+  }),
+  streams: z
     .record(
       z.string(),
-      z.union([
-        spreadSchemas.normal,
-        spreadSchemas.uniform,
-        spreadSchemas.triangular,
-        spreadSchemas['log-normal'],
-      ]),
+      z.string().meta({
+        description: 'from -> to; a port follows a dot, out is the battery limit',
+        examples: ['makeup -> mixer', 'condenser.liquid -> out'],
+      }),
     )
+    .meta({
+      description: 'what flows from one port to another, by tag',
+      examples: [{ S1: 'makeup -> mixer', S5: 'condenser.liquid -> out' }],
+    }),
+  ledger: ledgerSchema.optional().meta({ description: 'what the key figures refer to' }),
+  aims: z
+    .record(z.string(), aimSchema)
     .optional()
-    .meta({ description: 'what is not known for sure, by the path of a setting or constant' }),
-  correlations: z.array(correlationSchema).optional(),
-  prices: z
-    .record(z.string(), z.string().meta({ examples: ['60 EUR/MWh', '350 EUR/t'] }))
+    .meta({ description: 'wanted values, each reached by moving one setting, by name' }),
+  cases: z
+    .record(z.string(), z.record(z.string(), z.unknown()))
+    .optional()
+    .meta({
+      description: 'named sets of changes: setting and its value in this case',
+      examples: [{ 'cold condenser': { 'condenser.temperature': '-25 degC' } }],
+    }),
+  figures: z
+    .record(z.string(), figureSchema)
+    .optional()
+    .meta({ description: 'figures of your own, by name' }),
+  spreads: z
+    .record(z.string(), spreadSchema)
     .optional()
     .meta({
       description:
-        'of makeup (or a feed), power, refrigeration (cold), cooling_water (heat), product, purge (fuel value)',
+        'what is not known for sure, by the path of a setting or of a constant; drawn by looptally uncertainty',
+      examples: [{ 'condenser.temperature': { kind: 'normal', sd: '2 K' } }],
     }),
-  objective: objectiveSchema.optional(),
-  solve: solveSchema.optional(),
-  study: studySchema.optional(),
+  correlations: z
+    .array(correlationSchema)
+    .optional()
+    .meta({ description: 'spreads that vary together; independent if left out' }),
+  prices: z
+    .record(
+      z.string(),
+      z.string().meta({
+        description: 'price of what this feed brings: money per unit, always in the same currency',
+        examples: ['60 EUR/MWh', '350 EUR/t'],
+      }),
+    )
+    .optional()
+    .meta({
+      description: 'money per unit, in one currency, for cost and profit; feeds also by name',
+      examples: [{ makeup: '25 EUR/MWh', power: '70 EUR/MWh', product: '420 EUR/t' }],
+      properties: priceHints,
+    }),
+  objective: objectiveSchema
+    .optional()
+    .meta({ description: 'what looptally optimise is to make best, within bounds and limits' }),
+  solve: solveSchema.optional().meta({ description: 'how the recycles are closed' }),
+  study: studySchema.optional().meta({ description: 'the question that looptally sweep asks of this file' }),
 });
 
 /** Keys of the file in the order they are usually written. */

@@ -6,7 +6,8 @@ import { applyChanges, type Change, settingPath } from './changes.ts';
 import { readFeeds } from './feeds.ts';
 import { createFindings, type Reading } from './findings.ts';
 import { checkPart } from './issues.ts';
-import { feedSchema, headerShape, ledgerSchema, solveSchema } from './schema.ts';
+import { feedSchema, headerShape, ledgerSchema } from './schema.ts';
+import { solveSchema } from './schema-studies.ts';
 import { nodeAt, type Path, type YamlNode } from './yaml-tree.ts';
 
 /** What is needed to try a changed setting. */

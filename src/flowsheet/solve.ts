@@ -3,7 +3,7 @@ import type { SolveSpec, StreamSpec } from '../model/flowsheet.ts';
 import type { Reading } from './findings.ts';
 import { checkPart } from './issues.ts';
 import { streamsInLoops } from './loops.ts';
-import { solveSchema } from './schema.ts';
+import { solveSchema } from './schema-studies.ts';
 import { child, nodeAt, type Path, placeOfPath, scalarsOf } from './yaml-tree.ts';
 
 /** How the loops are closed, defaults filled in. Null where it is at fault. */

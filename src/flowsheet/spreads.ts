@@ -2,12 +2,13 @@ import { nearest } from '../diagnostics/nearest.ts';
 import type { Aim, Flowsheet } from '../model/flowsheet.ts';
 import type { Shape, Spread } from '../model/spread.ts';
 import type { Dimension } from '../units/dimension.ts';
-import { type Limits, parseQuantity } from '../units/quantity.ts';
+import { type Limits, lastUnit, parseQuantity } from '../units/quantity.ts';
+import { settingPath } from './changes.ts';
 import { numericConstants } from './constants.ts';
 import type { Fault, Reading } from './findings.ts';
 import { checkPart } from './issues.ts';
 import { type NumericSetting, numericSettings } from './numeric-settings.ts';
-import { spreadSchemas } from './schema.ts';
+import { spreadSchemas } from './schema-studies.ts';
 import { optionalEntries } from './section.ts';
 import { keyPlaceOfPath, nodeAt, type Path, placeOfPath } from './yaml-tree.ts';
 
@@ -49,9 +50,25 @@ export function readSpreads(
     else if (aim !== undefined) reading.findings.error(keyPlace, movedByAim(key, aim));
     if (setting === undefined || aim !== undefined || entry === undefined) return [];
     const shape = shapeOf(reading, path, entry, setting);
-    return shape === null ? [] : [{ path: key, shape }];
+    if (shape === null) return [];
+    return [{ path: key, shape, written: lastUnit([writtenInFile(reading, key), ...ownValues(entry)]) }];
   });
   return { spreads, paths: entries.map(({ key }) => key) };
+}
+
+/** The values of an entry that are written in a unit of the setting, not in one of its differences. */
+function ownValues(entry: Entry): string[] {
+  const values = Object.entries(entry).filter(([key]) =>
+    ['mean', 'median', 'low', 'mode', 'high'].includes(key),
+  );
+  return values.map(([, value]) => String(value));
+}
+
+/** What stands in the file for a setting; '' for a constant. */
+function writtenInFile({ root }: Reading, path: string): string {
+  const target = settingPath(root, path);
+  const node = 'fault' in target ? undefined : nodeAt(root, target.path);
+  return node?.kind === 'scalar' ? node.text : '';
 }
 
 type Kind = keyof typeof spreadSchemas;

@@ -4,7 +4,7 @@ import type { Fault, Reading } from './findings.ts';
 import type { FormulaWorld } from './formula-scope.ts';
 import { readFormula } from './formulas.ts';
 import { checkPart } from './issues.ts';
-import { studySchema } from './schema.ts';
+import { studySchema } from './schema-studies.ts';
 import { child, entriesOf, nodeAt, placeInside, type YamlScalar } from './yaml-tree.ts';
 
 /**

@@ -111,6 +111,8 @@ export interface Move {
   readonly between: readonly [number, number];
   /** SI unit of the setting, '' for fractions and numbers */
   readonly unit: string;
+  /** unit that the bounds are written in; '' where there is none */
+  readonly written: string;
 }
 
 /** A figure that must stay below or above a value. */

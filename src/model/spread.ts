@@ -11,6 +11,8 @@ export interface Spread {
   /** e.g. condenser.temperature, makeup.composition.Ar, reactions.synthesis.K, components.NH3.vapour_pressure */
   readonly path: string;
   readonly shape: Shape;
+  /** unit that its values are written in, or that of the setting in the file; '' where there is none */
+  readonly written: string;
 }
 
 /** Two spreads that move together. */

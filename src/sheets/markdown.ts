@@ -3,7 +3,7 @@ import { blockDetails, blockRows, closureRows } from './block-rows.ts';
 import { ledgerRows } from './ledger-rows.ts';
 import { settingText, significant } from './numbers.ts';
 import { plainText } from './plain.ts';
-import { caution, type SheetOptions } from './sheet.ts';
+import { caution, diagnosisRows, type SheetOptions } from './sheet.ts';
 import { story } from './story.ts';
 import { streamRows } from './stream-rows.ts';
 import { columnGroups, pickColumns, type Rows } from './table.ts';
@@ -17,6 +17,9 @@ export function markdownSheet(result: Result, options: SheetOptions = {}): strin
   return [
     `# ${escaped(result.title) || 'Untitled flowsheet'}`,
     `Case: ${result.case === null ? 'as in the file' : escaped(result.case)}. ${sentence(closingLine(result))}`,
+    diagnosisRows(options)
+      .map(([label, sentence]) => `- **${label}:** ${escaped(sentence)}`)
+      .join('\n'),
     section('The loop', table([['figure', 'value'], ...storyRows(result, options)], 2)),
     section('Aims', aims(result)),
     section('Warnings', list(result.warnings.map((w) => `${w.where}: ${w.message} [${w.code}]`))),

@@ -13,14 +13,14 @@ export const optimiseRenderers: ReadonlyMap<string, (found: Optimised) => string
 
 /**
  * One rectangle, numbers in full: the cases of the trade-off, or the best case and those around it. Settings stand in
- * their natural units, goals in those of formulas.
+ * the units of their bounds, goals in those of formulas.
  */
 export function optimiseCsv(found: Optimised): string {
   const { objective, flowsheet, front, curve, best } = found;
-  const units = moveUnits(flowsheet, objective.moves);
+  const columns = moveUnits(flowsheet, objective.moves).map(({ column }) => column);
   const head = [
     'row',
-    ...units.map(({ path, unit }) => `${path} [${unit}]`),
+    ...columns.map(({ head: text }) => text),
     ...objective.goals.map(({ text, unit }) => (unit === '' ? text : `${text} [${unit}]`)),
     'limits broken',
   ];
@@ -29,7 +29,7 @@ export function optimiseCsv(found: Optimised): string {
     settings: readonly number[],
     goals: readonly (number | null)[],
     broken: string,
-  ) => [name, ...units.map(({ natural }, i) => natural(settings[i]!)), ...goals, broken];
+  ) => [name, ...columns.map(({ number }, i) => number(settings[i]!)), ...goals, broken];
   const limitTexts = (indices: readonly number[]) => indices.map((k) => objective.limits[k]!.text).join('; ');
   const missed = best === null ? [] : Array.from(best.case.c.keys()).filter((k) => best.case.c[k]! > 1e-6);
   const rows =

@@ -3,7 +3,7 @@ import { blockDetails, blockRows, closureRows } from './block-rows.ts';
 import { ledgerRows } from './ledger-rows.ts';
 import { closureText, settingText, significant } from './numbers.ts';
 import { plainText, wrapped } from './plain.ts';
-import { caution, noPaint, type SheetOptions } from './sheet.ts';
+import { caution, diagnosisRows, noPaint, type SheetOptions } from './sheet.ts';
 import { story } from './story.ts';
 import { streamRows } from './stream-rows.ts';
 import { aligned, columnGroups, pickColumns } from './table.ts';
@@ -58,6 +58,9 @@ function title(result: Result, options: SheetOptions): string[] {
     `case: ${result.case === null ? 'as in the file' : plainText(result.case)}`,
     ...changedLines(result),
     result.convergence.converged ? closing : paint.alarm(closing),
+    ...diagnosisRows(options).flatMap(([label, sentence]) =>
+      wrapped(plainText(sentence), WIDTH, `  ${`${label}:`.padEnd(6)}`, ' '.repeat(8)),
+    ),
   ];
 }
 

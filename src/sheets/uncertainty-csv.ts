@@ -1,14 +1,16 @@
 import type { Uncertainty } from '../study/uncertainty.ts';
 import { csvCell } from './csv.ts';
+import { settingColumn } from './written-unit.ts';
 
 /**
- * Every case as one line: number, what was drawn in natural units, what was recorded, and how closing went. The cases behind
+ * Every case as one line: number, what was drawn in the units of the file, what was recorded, and how closing went. The cases behind
  * the samples asked for are those of the Sobol indices.
  */
 export function uncertaintyCsv({ spreads, figures, table }: Uncertainty): string {
+  const columns = spreads.map(({ setting, spread }) => settingColumn(setting, spread.written));
   const heads = [
     'sample',
-    ...spreads.map(({ setting: { path, unit } }) => (unit === '1' ? path : `${path} [${unit}]`)),
+    ...columns.map(({ head }) => head),
     ...figures.map(({ expression }) => expression),
     'converged',
     'passes',
@@ -19,7 +21,7 @@ export function uncertaintyCsv({ spreads, figures, table }: Uncertainty): string
     lines.push(
       [
         row + 1,
-        ...spreads.map(({ setting }, d) => table.drawn[row * spreads.length + d] / setting.unitSI),
+        ...columns.map(({ number }, d) => number(table.drawn[row * spreads.length + d])),
         ...figures.map((_, r) => table.found[row * figures.length + r]),
         table.converged[row] === 1 ? 'true' : 'false',
         table.passes[row],

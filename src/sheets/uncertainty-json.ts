@@ -40,22 +40,24 @@ function inUnits(shape: Shape, unitSI: number) {
   );
 }
 
-function figureJson({ asInFile, summary, shares }: FigureSpread) {
+function figureJson({ asInFile, summary, heldBy, shares }: FigureSpread) {
   return {
     in_file: asInFile,
     count: summary?.count ?? 0,
     mean: summary?.mean ?? null,
     mean_error: summary?.meanError ?? null,
     sd: summary?.sd ?? null,
+    held_by: heldBy,
     percentiles: Object.fromEntries(
       (summary?.percentiles ?? []).map(({ percent, value, low, high }) => [percent, { value, low, high }]),
     ),
     shares: Object.fromEntries(
-      shares.map(({ path, rankCorrelation, sobol }) => [
+      shares.map(({ path, rankCorrelation, rankShare, together, sobol }) => [
         path,
         {
           rank_correlation: rankCorrelation,
-          rank_share: rankCorrelation === null ? null : rankCorrelation ** 2,
+          rank_share: rankShare,
+          together: together.length > 1 ? together : null,
           first: sobol?.first ?? null,
           first_error: sobol?.firstError ?? null,
           total: sobol?.total ?? null,

@@ -24,7 +24,11 @@ export function uncertaintyText(found: Uncertainty, options: SheetOptions = {}):
     ...section('What was spread', spreadLines(found)),
     ...section('What becomes of the figures', figureLines(figures)),
     ...section('How far chance may have moved the percentiles, 95 % confidence', rangeLines(figures)),
-    ...section('What each figure follows: rank correlation, and its square as a share', rankLines(figures)),
+    ...section('What each figure follows: rank correlation, and share of the variance of ranks', [
+      ...rankLines(figures),
+      ...overlapNote(found),
+      ...chanceNote(found),
+    ]),
     ...(found.extraCases === 0
       ? []
       : section(
@@ -122,7 +126,7 @@ function figureLines(figures: readonly FigureSpread[]): string[] {
       shortName(expression),
       significant(asInFile, 4),
       significant(summary?.mean, 4),
-      significant(summary?.sd, 3),
+      summary?.steady === true ? '0' : significant(summary?.sd, 3),
       ...percents.map((_, p) => significant(summary?.percentiles[p].value, 4)),
       ...(partial ? [String(summary?.count ?? 0)] : []),
     ]),
@@ -136,15 +140,23 @@ function mostCounted(figures: readonly FigureSpread[]): number {
 
 function rangeLines(figures: readonly FigureSpread[]): string[] {
   const known = figures.filter(({ summary }) => summary !== null);
-  if (known.length === 0) return [];
+  const varying = known.filter(({ summary }) => !summary!.steady);
   const rows = [
-    ['figure', ...known[0].summary!.percentiles.map(({ percent }) => `${percent} %`)],
-    ...known.map(({ expression, summary }) => [
+    ['figure', ...(varying[0]?.summary?.percentiles ?? []).map(({ percent }) => `${percent} %`)],
+    ...varying.map(({ expression, summary }) => [
       shortName(expression),
       ...summary!.percentiles.map(rangeText),
     ]),
   ];
-  return inGroups(rows);
+  const unknown = varying.some(({ summary }) =>
+    summary!.percentiles.some(({ low, high }) => low === null || high === null),
+  );
+  const notes = unknown ? ['-  too few samples to tell how far out this percentile may lie'] : [];
+  return [
+    ...(varying.length === 0 ? [] : inGroups(rows)),
+    ...notes.map((note) => `  ${note}`),
+    ...steadyLines(known),
+  ];
 }
 
 /** The wider side of the range of a percentile. */
@@ -152,33 +164,75 @@ function rangeText({ value, low, high }: Percentile): string {
   return low === null || high === null ? '-' : `± ${significant(Math.max(value - low, high - value), 2)}`;
 }
 
+/** The figures that have one value in all cases, each with the reason where an aim is it. */
+function steadyLines(known: readonly FigureSpread[]): string[] {
+  return known.flatMap(({ expression, summary, heldBy }) =>
+    summary!.steady ? wrapped(`${shortName(expression)}: ${steadyText(heldBy)}`, WIDTH, '  ', '    ') : [],
+  );
+}
+
+function steadyText(heldBy: string | null): string {
+  return heldBy === null ? 'the same in all cases' : `held by the aim ${plainText(heldBy)}`;
+}
+
 /** Shares of less than this are told as a rest [-]. */
 const SMALL_SHARE = 0.005;
 
-/** For each figure the spreads that it follows, the strongest first. */
+/** For each figure the spreads that it follows, the strongest first; those that vary together stand side by side. */
 function rankLines(figures: readonly FigureSpread[]): string[] {
   return causeLines(
     figures,
-    ({ rankCorrelation }) => (rankCorrelation ?? 0) ** 2,
-    ({ rankCorrelation }) => {
-      const sign = rankCorrelation! < 0 ? '-' : '+';
-      return `${sign}${Math.abs(rankCorrelation!).toFixed(2)}\u00a0(${(100 * rankCorrelation! ** 2).toFixed(0)}\u00a0%)`;
+    ({ rankShare }) => rankShare ?? 0,
+    (share, shares) => {
+      const group = shares
+        .filter(({ path }) => share.together.includes(path))
+        .toSorted((a, b) => Math.abs(b.rankCorrelation ?? 0) - Math.abs(a.rankCorrelation ?? 0));
+      if (group[0] !== share) return [];
+      const members = group.map(
+        ({ path, rankCorrelation: r }) =>
+          `${plainText(path)}\u00a0${r! < 0 ? '-' : '+'}${Math.abs(r!).toFixed(2)}`,
+      );
+      const part = `${(100 * share.rankShare!).toFixed(0)}\u00a0%`;
+      return members.length === 1
+        ? [`${members[0]}\u00a0(${part})`]
+        : [`${members.join(' with ')} (together\u00a0${part})`];
     },
   );
+}
+
+/** Why spreads that vary together have one share. */
+function overlapNote({ figures }: Uncertainty): string[] {
+  const overlaps = figures.some(({ shares }) => shares.some(({ together }) => together.length > 1));
+  if (!overlaps) return [];
+  const note =
+    'Spreads that move together have one share: the squares of their correlations would count twice what they have in common.';
+  return wrapped(note, WIDTH, '  ', '  ');
+}
+
+/**
+ * The square of a rank correlation that one in twenty samples of independent numbers goes beyond, times their count.
+ * @source M. G. Kendall & J. D. Gibbons, Rank Correlation Methods, 5th ed., 1990 (from memory): variance 1/(n − 1)
+ */
+const CHANCE = 1.96 ** 2;
+
+/** Below which a share of so few samples says nothing; silent where that is less than is shown. */
+function chanceNote({ figures }: Uncertainty): string[] {
+  const count = mostCounted(figures);
+  const share = CHANCE / Math.max(1, count - 1);
+  if (count === 0 || share < 2 * SMALL_SHARE) return [];
+  return [`  Of ${count} samples, a share below ${Math.min(100, Math.ceil(100 * share))} % may be chance.`];
 }
 
 function sobolLines(figures: readonly FigureSpread[]): string[] {
   return causeLines(
     figures,
     ({ sobol }) => Math.max(sobol?.first ?? 0, sobol?.total ?? 0),
-    ({ sobol }) => {
+    ({ path, sobol }) => {
       const { first, firstError, total, totalError } = sobol!;
       const share = (value: number, error: number) =>
         `${(100 * value).toFixed(0)}\u00a0±\u00a0${(100 * error).toFixed(0)}`;
-      return `${share(first, firstError)} / ${share(total, totalError)}\u00a0%`.replaceAll(
-        ' / ',
-        '\u00a0/\u00a0',
-      );
+      const both = `${share(first, firstError)}\u00a0/\u00a0${share(total, totalError)}\u00a0%`;
+      return [`${plainText(path)}\u00a0${both}`];
     },
   );
 }
@@ -186,17 +240,21 @@ function sobolLines(figures: readonly FigureSpread[]): string[] {
 function causeLines(
   all: readonly FigureSpread[],
   sizeOf: (share: Share) => number,
-  text: (share: Share) => string,
+  texts: (share: Share, shares: readonly Share[]) => readonly string[],
 ): string[] {
   const figures = all.filter(({ summary }) => summary !== null);
   const names = figures.map(({ expression }) => shortName(expression));
   const width = Math.min(30, Math.max(...names.map((name) => name.length)));
-  return figures.flatMap(({ shares }, f) => {
-    const large = shares.filter((share) => sizeOf(share) >= SMALL_SHARE);
-    const sorted = large.toSorted((a, b) => sizeOf(b) - sizeOf(a));
-    const list = sorted.map((share) => `${plainText(share.path)}\u00a0${text(share)}`).join(', ');
+  return figures.flatMap(({ shares, summary, heldBy }, f) => {
     const lead = `  ${names[f].padEnd(width)}  `;
-    return wrapped(list === '' ? 'follows none of them' : list, WIDTH, lead, ' '.repeat(width + 4));
+    const print = (text: string) => wrapped(text, WIDTH, lead, ' '.repeat(width + 4));
+    if (summary!.steady) return print(steadyText(heldBy));
+    const large = shares.filter((share) => sizeOf(share) >= SMALL_SHARE);
+    const list = large
+      .toSorted((a, b) => sizeOf(b) - sizeOf(a))
+      .flatMap((share) => texts(share, shares))
+      .join(', ');
+    return print(list === '' ? 'follows none of them' : list);
   });
 }
 

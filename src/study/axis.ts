@@ -1,6 +1,6 @@
 import type { Fault } from '../flowsheet/findings.ts';
 import type { Dimension } from '../units/dimension.ts';
-import { parseQuantity, splitQuantity } from '../units/quantity.ts';
+import { lastUnit, parseQuantity, splitQuantity } from '../units/quantity.ts';
 
 /** One setting of a sweep and the values it takes. */
 export interface Axis {
@@ -137,10 +137,6 @@ function fill(
     values.push(read.value);
   }
   return { numbers, values };
-}
-
-function lastUnit(ends: readonly string[]): string {
-  return ends.map((end) => splitQuantity(end)?.unit ?? '').findLast((unit) => unit !== '') ?? '';
 }
 
 const EXAMPLE = 'write it as in -25 degC..10 degC:8, or 1 %, 2 %, 5 %';

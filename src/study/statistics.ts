@@ -15,6 +15,8 @@ export interface Summary {
   readonly sd: number;
   /** standard error of the mean */
   readonly meanError: number;
+  /** all values are the same but for what closing a loop leaves open */
+  readonly steady: boolean;
   readonly percentiles: readonly Percentile[];
 }
 
@@ -31,6 +33,7 @@ export function summarise(values: Float64Array, percents: readonly number[]): Su
     mean,
     sd,
     meanError: sd / Math.sqrt(count),
+    steady: sorted.at(-1)! - sorted[0]! <= STEADY * Math.max(Math.abs(sorted[0]!), Math.abs(sorted.at(-1)!)),
     percentiles: percents.map((percent) => ({
       percent,
       value: quantileOf(sorted, percent / 100),
@@ -38,6 +41,9 @@ export function summarise(values: Float64Array, percents: readonly number[]): Su
     })),
   };
 }
+
+/** What closing a loop and reaching an aim leave open, relative [-]: recycles close to 1e-9, aims to 1e-8. */
+const STEADY = 1e-7;
 
 export function meanOf(values: ArrayLike<number>): number {
   let sum = 0;
@@ -80,10 +86,11 @@ function rangeOf(sorted: Float64Array, share: number): { low: number | null; hig
  * @source C. Spearman, Am. J. Psychol. 15 (1904) 72
  */
 export function rankCorrelation(x: Float64Array, y: Float64Array): number {
-  return correlation(ranksOf(x), ranksOf(y));
+  return correlationOfRanks(ranksOf(x), ranksOf(y));
 }
 
-function correlation(x: Float64Array, y: Float64Array): number {
+/** The same of ranks; of any numbers it is that of Pearson. */
+export function correlationOfRanks(x: Float64Array, y: Float64Array): number {
   const meanX = meanOf(x);
   const meanY = meanOf(y);
   let xx = 0;
@@ -97,7 +104,8 @@ function correlation(x: Float64Array, y: Float64Array): number {
   return xx === 0 || yy === 0 ? Number.NaN : xy / Math.sqrt(xx * yy);
 }
 
-function ranksOf(values: Float64Array): Float64Array {
+/** The rank of each value, from 0; ties have the mean of their ranks. */
+export function ranksOf(values: Float64Array): Float64Array {
   const order = Uint32Array.from(values, (_, i) => i).sort((a, b) => values[a] - values[b]);
   const ranks = new Float64Array(values.length);
   for (let from = 0; from < order.length; ) {

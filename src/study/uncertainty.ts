@@ -6,10 +6,11 @@ import type { Spread } from '../model/spread.ts';
 import { createDistribution, type Distribution } from './distribution.ts';
 import { createDrawnSettings } from './drawn-settings.ts';
 import { countFailures, type FailureCount } from './failures.ts';
+import { groupShare, groupsOf } from './rank-shares.ts';
 import { runCases, type SampleTable } from './sample-cases.ts';
 import { type SamplingMethod, unitPoints, valuesAt } from './sampling.ts';
 import { type SobolIndices, saltelliPlan, sobolIndices } from './sobol-indices.ts';
-import { rankCorrelation, type Summary, summarise } from './statistics.ts';
+import { ranksOf, type Summary, summarise } from './statistics.ts';
 
 export interface UncertaintyOptions {
   readonly samples: number;
@@ -35,6 +36,10 @@ export interface Share {
   readonly path: string;
   /** of the ranks (Spearman); null where one of the two does not vary */
   readonly rankCorrelation: number | null;
+  /** share of the variance of the figure's ranks, of all in `together` where it varies with others */
+  readonly rankShare: number | null;
+  /** the spreads that it varies together with, itself among them; alone where it varies by itself */
+  readonly together: readonly string[];
   readonly sobol: SobolIndices | null;
 }
 
@@ -45,6 +50,8 @@ export interface FigureSpread {
   readonly asInFile: number | null;
   /** null where no case has a value */
   readonly summary: Summary | null;
+  /** name of the aim that holds it at one value in every case; null where none does */
+  readonly heldBy: string | null;
   readonly shares: readonly Share[];
 }
 
@@ -97,7 +104,7 @@ export function uncertainty(flowsheet: Flowsheet, options: UncertaintyOptions): 
     figures: record.map(({ text }, r) => ({
       expression: text,
       asInFile: orNull(asInFile[r]),
-      ...figureSpread(r, { spreads, table, options }),
+      ...figureSpread(r, { flowsheet, spreads, table, options }),
     })),
     table,
     extraCases: table.rows - samples,
@@ -126,13 +133,13 @@ function factorOf({ spreads, correlations }: Flowsheet): Float64Array | null {
   return made.factor;
 }
 
-type Sampled = Pick<Uncertainty, 'spreads' | 'table' | 'options'>;
+type Sampled = Pick<Uncertainty, 'flowsheet' | 'spreads' | 'table' | 'options'>;
 
 /** Statistics of one figure over the sample. */
 function figureSpread(
   r: number,
-  { spreads, table, options }: Sampled,
-): Pick<FigureSpread, 'summary' | 'shares'> {
+  { flowsheet, spreads, table, options }: Sampled,
+): Pick<FigureSpread, 'summary' | 'heldBy' | 'shares'> {
   const { samples, percentiles, shares } = options;
   const size = spreads.length;
   const width = table.found.length / table.rows;
@@ -140,23 +147,43 @@ function figureSpread(
   const rows = Array.from({ length: samples }, (_, row) => row).filter((row) => Number.isFinite(values[row]));
   const known = Float64Array.from(rows, (row) => values[row]);
   const indices = shares === 'sobol' ? sobolIndices(values, size) : null;
+  const summary = known.length === 0 ? null : summarise(known, percentiles);
+  const ranks = summary === null || known.length < 3 || summary.steady ? null : ranksOf(known);
+  const groups = groupsOf(
+    spreads.map(({ spread }) => spread.path),
+    flowsheet.correlations,
+  );
+  const drawnRanks = (d: number) => ranksOf(Float64Array.from(rows, (row) => table.drawn[row * size + d]));
+  const found = groups.map((group) => ({
+    group,
+    ...(ranks === null ? NOTHING : groupShare(group.map(drawnRanks), ranks)),
+  }));
   return {
-    summary: known.length === 0 ? null : summarise(known, percentiles),
-    shares: spreads.map(({ spread }, d) => ({
-      path: spread.path,
-      rankCorrelation:
-        known.length < 3
-          ? null
-          : orNull(
-              rankCorrelation(
-                Float64Array.from(rows, (row) => table.drawn[row * size + d]),
-                known,
-              ),
-            ),
-      sobol: indices === null ? null : indices[d],
-    })),
+    summary,
+    heldBy: summary?.steady === true ? heldBy(flowsheet, table.rows > 1 ? summary.mean : Number.NaN) : null,
+    shares: spreads.map(({ spread }, d) => {
+      const { group, correlations, share } = found.find((one) => one.group.includes(d))!;
+      return {
+        path: spread.path,
+        rankCorrelation: orNull(correlations[group.indexOf(d)] ?? Number.NaN),
+        rankShare: orNull(share),
+        together: group.map((one) => spreads[one].spread.path),
+        sobol: indices === null ? null : indices[d],
+      };
+    }),
   };
 }
+
+/** Of a figure that does not vary no share can be told. */
+const NOTHING = { correlations: [], share: Number.NaN };
+
+/** The aim that wants this value; null where none does. */
+function heldBy({ aims }: Flowsheet, value: number): string | null {
+  return aims.find(({ target }) => Math.abs(value - target) <= SAME * Math.abs(target))?.name ?? null;
+}
+
+/** Aims are reached to 1e-8 of the wanted value [-]. */
+const SAME = 1e-7;
 
 function orNull(value: number): number | null {
   return Number.isFinite(value) ? value : null;

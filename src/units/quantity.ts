@@ -88,6 +88,21 @@ export function formatQuantity(value: number, dimension: Dimension, digits = 6):
   return shown === '' ? `${number}` : `${number} ${shown}`;
 }
 
+/**
+ * A value in SI as a number of the given unit, at twelve digits.
+ * @throws Error for a unit that does not fit: it has been read from the file before
+ */
+export function numberIn(value: number, unit: string, dimension: Dimension): number {
+  const known = unitFactor(unit, dimension) ?? engineFactor(unit, dimension);
+  if (known === undefined) throw new Error(`${unit} is no unit of ${dimensions[dimension].noun}`);
+  return Number((value / known.factor - known.offset).toPrecision(12));
+}
+
+/** Does a unit measure a dimension? No unit fits what has none. */
+export function fitsDimension(unit: string, dimension: Dimension): boolean {
+  return (unitFactor(unit, dimension) ?? engineFactor(unit, dimension)) !== undefined;
+}
+
 /** Number and unit of a text; null where it does not begin with a decimal number. The unit may be empty. */
 export function splitQuantity(text: string): { readonly number: number; readonly unit: string } | null {
   const match = /^\s*([+-]?(?:\d+\.?\d*|\.\d+)(?:[eE][+-]?\d+)?)(.*)$/s.exec(text);
@@ -96,6 +111,11 @@ export function splitQuantity(text: string): { readonly number: number; readonly
   const rest = match[2];
   if (!Number.isFinite(number) || /^([\d,._]|x[\dA-Fa-f])/.test(rest)) return null;
   return { number, unit: tidyUnit(rest) };
+}
+
+/** The unit of the last of some values that has one; '' where none has. */
+export function lastUnit(values: readonly string[]): string {
+  return values.map((value) => splitQuantity(value)?.unit ?? '').findLast((unit) => unit !== '') ?? '';
 }
 
 /** One spelling for the many ways a unit is typed: `Nm³/hr`, `bar(g)`, `°C`, `kmol / h`. */

@@ -16,6 +16,8 @@ export type FlowSchema = z.ZodPipe<z.ZodUnknown, z.ZodTransform<Flow, unknown>>;
 export type QuantityOptions = Limits & {
   /** what the setting is, for editors */
   readonly description?: string;
+  /** as it may be written there, for editors; those of the dimension if left out */
+  readonly examples?: readonly (string | number)[];
 };
 
 /**
@@ -78,7 +80,12 @@ export function count(options: QuantityOptions = {}): QuantitySchema {
   const bounds = { min: 1, ...options };
   return z
     .unknown()
-    .meta({ type: 'integer', minimum: bounds.min, ...optional('maximum', bounds.max), ...describe(options) })
+    .meta({
+      type: 'integer',
+      minimum: bounds.min,
+      ...optional('maximum', bounds.max),
+      ...describe(options, []),
+    })
     .transform((raw, context) => {
       const result = readQuantity(raw, 'number', bounds);
       if (result.ok && Number.isInteger(result.value)) return result.value;
@@ -102,7 +109,7 @@ export function flow(options: QuantityOptions = {}): FlowSchema {
       type: 'string',
       pattern: WITH_UNIT,
       examples: ['6500 kmol/h', '1200 t/d', '145000 Nm3/h'],
-      ...describe(options),
+      ...describe(options, FLOW_UNITS),
     })
     .transform((raw, context): Flow => {
       const faults: QuantityFault[] = [];
@@ -120,7 +127,10 @@ export function flow(options: QuantityOptions = {}): FlowSchema {
   return schema;
 }
 
-const WITH_UNIT = '^\\s*[+-]?(\\d+\\.?\\d*|\\.\\d+)([eE][+-]?\\d+)?\\s*[A-Za-z%°º].*$';
+const NUMBER = '^\\s*[+-]?(\\d+\\.?\\d*|\\.\\d+)([eE][+-]?\\d+)?\\s*';
+const WITH_UNIT = `${NUMBER}[A-Za-z%°º].*$`;
+const WITH_UNIT_OR_NONE = `${NUMBER}([A-Za-z%°º].*)?$`;
+const FLOW_UNITS = ['kmol/h', 'mol/s', 'kg/h', 't/d', 'Nm3/h', 'lbmol/h', 'MMscf/d'];
 const flowDimensions = [
   ['molar', 'molarFlow'],
   ['mass', 'massFlow'],
@@ -168,7 +178,7 @@ function generalFlowFault(faults: readonly QuantityFault[], text: string): Quant
   const ambiguous = faults.find((f) => f.why.includes('long ton'));
   if (ambiguous !== undefined) return { ...ambiguous, what: `${text} is no flow.` };
   if (first.code === 'missing-unit') {
-    const why = 'a flow needs its unit: kmol/h, mol/s, kg/h, t/d, Nm3/h, lbmol/h, MMscf/d';
+    const why = `a flow needs its unit: ${FLOW_UNITS.join(', ')}`;
     return { ...first, why, mend: `write ${text} kmol/h or another of these units` };
   }
   return {
@@ -192,18 +202,29 @@ function issueOf(fault: QuantityFault, input: unknown) {
 }
 
 function jsonSchemaOf(dimension: Dimension, options: QuantityOptions): Record<string, unknown> {
-  const facts = dimensions[dimension];
+  const { si, offered, examples } = dimensions[dimension];
   if (dimension === 'number') {
-    const bounds = { ...optional('minimum', options.min), ...optional('maximum', options.max) };
-    return { type: 'number', ...bounds, ...describe(options) };
+    const bounds = {
+      ...optional('minimum', options.min),
+      ...optional('maximum', options.max),
+      ...optional('exclusiveMinimum', options.above),
+      ...optional('exclusiveMaximum', options.below),
+    };
+    return { type: 'number', ...bounds, ...describe(options, []) };
   }
-  const examples = [...facts.examples];
-  if (facts.si !== '') return { type: 'string', pattern: WITH_UNIT, examples, ...describe(options) };
-  return { type: ['string', 'number'], examples, ...describe(options) };
+  const shared = { examples: [...examples] };
+  if (si !== '') return { type: 'string', pattern: WITH_UNIT, ...shared, ...describe(options, offered) };
+  const units = describe(options, [...offered, 'or none']);
+  return { type: ['string', 'number'], pattern: WITH_UNIT_OR_NONE, ...shared, ...units };
 }
 
-function describe(options: QuantityOptions): Record<string, unknown> {
-  return optional('description', options.description);
+/** What an editor shows: the description, with the units that fit behind it, and examples. */
+function describe({ description, examples }: QuantityOptions, units: readonly string[]) {
+  const inUnits = units.length === 0 ? '' : ` [${units.join(', ')}]`;
+  return {
+    ...optional('description', description === undefined ? undefined : `${description}${inUnits}`),
+    ...optional('examples', examples === undefined ? undefined : [...examples]),
+  };
 }
 
 function optional(key: string, value: unknown): Record<string, unknown> {

@@ -13,6 +13,9 @@ beforeAll(() => {
     'loop.yaml': whole,
     'plain.yaml': withSpreads(''),
     'one.yaml': withSpreads('spreads: {condenser.temperature: {kind: normal, sd: 2 K}}\n'),
+    'held.yaml': withSpreads(
+      'spreads: {condenser.temperature: {kind: normal, sd: 2 K}}\naims:\n  inert cap: {move: purge.fractions.bleed, between: [0.2 %, 20 %], until: figures.inerts.converter = 12 %}\n',
+    ),
     'fails.yaml': withSpreads(
       'spreads: {converter.pressure_drop: {kind: uniform, low: 1 bar, high: 301 bar}}\n',
     ),
@@ -28,6 +31,18 @@ test('the sheet: percentiles, their ranges, and what each figure follows; no lin
   expect(out).toMatch(/\n {2}figure +in the file +mean +sd +5 % +10 % +50 % +90 % +95 %\n/);
   expect(out).toMatch(/\n {2}production_t_d +makeup\.flow \+0\.9\d \(\d\d %\)/);
   expect(out).toContain('move together: rank correlation 0.5.');
+  // Of what moves together no part belongs to one alone: one share for both, and no sum above the whole.
+  expect(out).toMatch(
+    /makeup\.composition\.\w+ [+-]0\.\d\d with\s+makeup\.composition\.\w+ [+-]0\.\d\d\s+\(together \d+ %\)/,
+  );
+  const [, causes] = /What each figure follows([\s\S]*)\n {2}Spreads that move together/.exec(out)!;
+  const lines = causes!.split(/\n {2}(?=[a-z])/).slice(1);
+  const sums = lines.map((line) =>
+    [...line.matchAll(/(\d+) %\)/g)].reduce((sum, [, n]) => sum + Number(n), 0),
+  );
+  expect(sums).toHaveLength(8);
+  expect(Math.max(...sums)).toBeLessThanOrEqual(104);
+  expect(out).toContain('Of 64 samples, a share below 7 % may be chance.');
   expect(out.split('\n').filter((line) => [...line].length > 100)).toEqual([]);
 });
 
@@ -85,19 +100,35 @@ test('--json holds what was drawn from, the percentiles asked for, and the share
   expect(temperature.shares['condenser.temperature'].total).toBeCloseTo(1, 0);
 });
 
-test('--out: a line for each sample, in natural units', () => {
+test('--out: a line for each sample, in the units of the file', () => {
   const words = ['--samples', '10', '--record', 'streams.S6.T', '--out', 'samples.csv'];
   const { code, err } = run(['uncertainty', 'one.yaml', ...words]);
   expect({ code, err }).toEqual({ code: 0, err: 'wrote samples.csv\n' });
   const [head, ...lines] = readFileSync(join(folder(), 'samples.csv'), 'utf8').trimEnd().split('\r\n');
-  expect(head).toBe('sample,condenser.temperature [K],streams.S6.T,converged,passes,note');
+  expect(head).toBe('sample,condenser.temperature [degC],streams.S6.T,converged,passes,note');
   expect(lines).toHaveLength(10);
   for (const [n, line] of lines.entries()) {
     const cells = line.split(',');
     expect(cells[0]).toBe(String(n + 1));
-    expect(Number(cells[2])).toBeCloseTo(Number(cells[1]), 9);
+    expect(Number(cells[2])).toBeCloseTo(Number(cells[1]) + 273.15, 8);
     expect(cells[3]).toBe('true');
   }
+});
+
+test('a figure that an aim holds is said to be held, and no noise is shown of it', () => {
+  const record = 'figures.inerts.converter, figures.recycle_ratio';
+  const { code, out } = run(['uncertainty', 'held.yaml', '--samples', '40', '--record', record]);
+  expect(code).toBe(0);
+  expect(out).toMatch(/\n {2}inerts\.converter +0\.1200 +0\.1200 +0 +0\.1200 /);
+  expect(out).toContain('\n  inerts.converter: held by the aim inert cap\n');
+  expect(out).toMatch(/\n {2}inerts\.converter {2}held by the aim inert cap\n/);
+  expect(out).toMatch(/\n {2}recycle_ratio +- +± [\d.]+ /);
+  expect(out).toContain('-  too few samples to tell how far out this percentile may lie');
+  const { figures } = JSON.parse(
+    run(['uncertainty', 'held.yaml', '--samples', '8', '--record', record, '--json']).out,
+  );
+  expect(figures['figures.inerts.converter']).toMatchObject({ held_by: 'inert cap' });
+  expect(figures['figures.inerts.converter'].shares['condenser.temperature'].rank_share).toBeNull();
 });
 
 test('cases that do not close are told by reason, and the exit code is 3', () => {

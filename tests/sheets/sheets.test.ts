@@ -61,6 +61,26 @@ describe('a loop that did not close', () => {
     expect(markdownSheet(open).split('\n')[2]).toContain(`NOT CLOSED ${words}`);
     expect(csvSheet(open, 'figures')).toContain('closed,,no,');
   });
+
+  test('and why, and what would help, before any number', () => {
+    const where = { file: 'loop.yaml', line: 3, column: 1, length: 2 };
+    const words = { what: 'argon piles up in S2.', why: 'it has *no* way out', mend: 'add a purge' };
+    const diagnosis = { code: 'no-way-out', severity: 'error', where, ...words } as const;
+    const text = textSheet(open, { diagnosis }).split('\n');
+    expect(text.slice(4, 7)).toEqual([
+      '  what: argon piles up in S2.',
+      '  why:  it has *no* way out',
+      '  mend: add a purge',
+    ]);
+    const lines = markdownSheet(open, { diagnosis }).split('\n');
+    expect(lines.slice(4, 7)).toEqual([
+      '- **what:** argon piles up in S2.',
+      '- **why:** it has \\*no\\* way out',
+      '- **mend:** add a purge',
+    ]);
+    expect(lines[8]).toBe('## The loop');
+    expect(textSheet(exampleResult, { diagnosis: null })).toBe(textSheet(exampleResult));
+  });
 });
 
 describe("the user's own words on a sheet", () => {

@@ -53,7 +53,7 @@ test('the JSON Schema of a quantity is text with a unit, with examples', () => {
   expect(required).toEqual(['temperature']);
   expect(properties?.['temperature']).toMatchObject({
     type: 'string',
-    description: 'outlet temperature',
+    description: 'outlet temperature [degC, K, degF]',
     examples: ['450 degC', '723.15 K'],
   });
   const pattern = String((properties?.['temperature'] as { pattern?: string } | undefined)?.pattern);
