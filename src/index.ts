@@ -24,6 +24,7 @@ export type {
   Flowsheet,
   Formula,
   GasModelName,
+  Handle,
   LedgerSpec,
   LiquidModelName,
   MethodName,

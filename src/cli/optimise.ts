@@ -1,6 +1,7 @@
 import type { Command } from 'commander';
 import type { Diagnostic } from '../diagnostics/diagnostic.ts';
 import { shownWithUnit } from '../sheets/figure-display.ts';
+import { figureUnits } from '../sheets/figure-units.ts';
 import { formulaDisplay } from '../sheets/formula-display.ts';
 import { optimiseText } from '../sheets/optimise.ts';
 import { optimiseJson } from '../sheets/optimise-json.ts';
@@ -11,7 +12,6 @@ import { type Optimised, optimise } from '../study/optimise.ts';
 import type { Balance } from '../tally/balance.ts';
 import { collect, fileCommand, positiveInteger } from './common-options.ts';
 import { exitCodes } from './exit-codes.ts';
-import { figureUnits } from './figure-units.ts';
 import { diagnosticsJson, tell } from './messages.ts';
 import { openFlowsheet } from './open-flowsheet.ts';
 import { rendererOf } from './output-format.ts';

@@ -1,9 +1,9 @@
 import { extname } from 'node:path';
 import type { Command } from 'commander';
 import { type CsvTableName, csvTables } from '../sheets/csv.ts';
+import { figureUnits } from '../sheets/figure-units.ts';
 import { renderers } from '../sheets/renderers.ts';
 import { collect, fileCommand, oneOf } from './common-options.ts';
-import { figureUnits } from './figure-units.ts';
 import { type Refusal, usageRefusal } from './refusal.ts';
 import { resultJson, type SolveOptions, solve, tellShortfall, withSolveOptions } from './solve.ts';
 import { printJson, say } from './terminal.ts';

@@ -161,6 +161,11 @@ export const studySchema = z.strictObject({
     .meta({ description: 'printed after the table; {last COLUMN} stands for a number of it' }),
 });
 
+export const handlesSchema = z.record(z.string(), bound).meta({
+  description: 'settings that a live page lets its reader move, and their ranges',
+  examples: [{ 'condenser.temperature': '-30 degC..15 degC', 'purge.fractions.bleed': '0.5 %..10 %' }],
+});
+
 /** The parts of the file that are one value each. */
 export const headerShape = {
   looptally: z.literal(1).meta({ description: 'version of this format' }),
@@ -212,6 +217,7 @@ export const fileSchema = z.strictObject({
   objective: objectiveSchema.optional(),
   solve: solveSchema.optional(),
   study: studySchema.optional(),
+  handles: handlesSchema.optional(),
 });
 
 /** Keys of the file in the order they are usually written. */
