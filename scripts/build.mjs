@@ -53,7 +53,21 @@ export async function buildCli(folder) {
     metafile: true,
   });
   chmodSync(join(folder, 'cli.js'), 0o755);
+  await buildPageScripts(folder);
   return metafile;
+}
+
+/** What runs in the browser: one file each, which the command line writes into its pages. */
+async function buildPageScripts(folder) {
+  await build({
+    ...shared,
+    splitting: false,
+    format: 'iife',
+    platform: 'browser',
+    target: 'es2022',
+    entryPoints: { 'study-page': 'src/live/study-page.ts' },
+    outdir: folder,
+  });
 }
 
 async function buildLibrary(folder) {

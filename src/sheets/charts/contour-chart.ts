@@ -7,7 +7,16 @@ import { type ContourKey, contourKey, cross, keyHeight } from './contour-key.ts'
 import { contourLabels } from './contour-labels.ts';
 import { type ContourNodes, contourNodes } from './contour-nodes.ts';
 import { contourDescription, numberWith } from './description.ts';
-import { axes, CHART_WIDTH, checkId, createFrame, type Frame, svgFigure, ticksAcross } from './frame.ts';
+import {
+  axes,
+  axisData,
+  CHART_WIDTH,
+  checkId,
+  createFrame,
+  type Frame,
+  svgFigure,
+  ticksAcross,
+} from './frame.ts';
 import { type Marked, markedBox, markedPoint } from './marked-point.ts';
 import { decimalsOfStep, pointText } from './number-text.ts';
 
@@ -79,7 +88,8 @@ export function contourChart(spec: ContourChartSpec): string {
     ...marked.map((one) => markedPoint(one, frame, width)),
     contourKey(key, frame.plot.y + frame.plot.height + 50),
   ];
-  return svgFigure(id, title, contourDescription(spec, nodes), { width, height, frame }, body.join(''));
+  const data = `${axisData(frame, spec.x, spec.y)} data-unit="${escaped(plainText(spec.figure.unit))}"`;
+  return svgFigure(id, title, contourDescription(spec, nodes), { width, height, data }, body.join(''));
 }
 
 /** Round values between the least and the greatest. */

@@ -1,5 +1,6 @@
 import { type Box, escaped, FACES, num, text } from '../drawing/svg.ts';
 import { textWidth } from '../drawing/text-width.ts';
+import { plainText } from '../plain.ts';
 import { type AxisScale, axisTitle, type ChartAxis, type Tick } from './axis-scale.ts';
 import { INK, QUIET, RULE } from './palette.ts';
 
@@ -112,20 +113,25 @@ export function svgFigure(
   id: string,
   title: string,
   description: string,
-  { width, height, frame }: { readonly width: number; readonly height: number; readonly frame?: Frame },
+  { width, height, data = '' }: { readonly width: number; readonly height: number; readonly data?: string },
   body: string,
 ): string {
   return (
-    `<svg xmlns="http://www.w3.org/2000/svg" class="chart"${frame === undefined ? '' : placeData(frame)} role="img" aria-labelledby="${id}-title ${id}-desc" viewBox="0 0 ${num(width)} ${num(height)}" width="${num(width)}" height="${num(height)}" font-family="${FACES}" font-size="${LETTERS}">` +
+    `<svg xmlns="http://www.w3.org/2000/svg" class="chart"${data} role="img" aria-labelledby="${id}-title ${id}-desc" viewBox="0 0 ${num(width)} ${num(height)}" width="${num(width)}" height="${num(height)}" font-family="${FACES}" font-size="${LETTERS}">` +
     `<title id="${id}-title">${escaped(title)}</title><desc id="${id}-desc">${escaped(description)}</desc>${body}</svg>`
   );
 }
 
-/** How a script finds the place of a value: the ends of each axis in the drawing and in values. */
-function placeData({ plot, x, y }: Frame): string {
-  const axis = ({ low, high, log }: AxisScale, from: number, to: number) =>
+/** What a script needs to find the place of a value and to say it: ends, name and unit of each axis. */
+export function axisData({ plot, x, y }: Frame, xAxis: ChartAxis, yAxis: ChartAxis): string {
+  const ends = ({ low, high, log }: AxisScale, from: number, to: number) =>
     `${num(from)} ${num(to)} ${low} ${high} ${log ? 'log' : 'linear'}`;
-  return ` data-x-axis="${axis(x, plot.x, plot.x + plot.width)}" data-y-axis="${axis(y, plot.y + plot.height, plot.y)}"`;
+  const said = (name: string, { title, unit }: ChartAxis) =>
+    ` data-${name}-name="${escaped(plainText(title))}" data-${name}-unit="${escaped(plainText(unit))}"`;
+  return (
+    ` data-x-axis="${ends(x, plot.x, plot.x + plot.width)}" data-y-axis="${ends(y, plot.y + plot.height, plot.y)}"` +
+    `${said('x', xAxis)}${said('y', yAxis)}`
+  );
 }
 
 /** @throws Error where an id is none that XML and CSS take: ids are ours, never the user's text */
