@@ -65,7 +65,7 @@ async function buildPageScripts(folder) {
     format: 'iife',
     platform: 'browser',
     target: 'es2022',
-    entryPoints: { 'study-page': 'src/live/study-page.ts' },
+    entryPoints: { 'study-page': 'src/live/study/main.ts' },
     outdir: folder,
   });
 }

@@ -41,7 +41,7 @@ export function studyDocument(parts: StudyPageParts, options: StudyPageOptions):
       { label: 'Program', value: `Looptally ${version}`, span: 3 },
       { label: 'Prepared', value: '', span: 3 },
       { label: 'Checked', value: '', span: 3 },
-      { label: 'Date', value: '', span: 3 },
+      { label: 'Issued', value: '', span: 3 },
     ],
     ...(parts.lead === undefined ? {} : { lead: parts.lead }),
     sections: [...parts.sections.filter((one) => one !== null), takeAway(csvName)],
@@ -100,6 +100,7 @@ const studyStyle = `
 .pointed{fill:none;stroke:var(--accent);stroke-width:2}
 .long{max-height:32rem;overflow:auto}
 .long .scroll{overflow:visible}
+.long td{white-space:nowrap}
 .long thead th{position:sticky;top:0;background:var(--paper)}
 .differs{font-weight:650}
 .same{color:var(--soft)}

@@ -1,6 +1,8 @@
 /** Decimal mark of the reader's language; a file always has a point. */
 const MARK =
-  new Intl.NumberFormat(undefined).formatToParts(0.5).find(({ type }) => type === 'decimal')?.value ?? '.';
+  new Intl.NumberFormat(undefined, { numberingSystem: 'latn' })
+    .formatToParts(0.5)
+    .find(({ type }) => type === 'decimal')?.value ?? '.';
 
 /** A number with the digits that it was written with, and the reader's decimal mark. */
 export function localText(written: string): string {

@@ -1,7 +1,7 @@
 /// <reference lib="dom" />
 /// <reference lib="dom.iterable" />
 import { readCharts } from './chart-reading.ts';
-import { writeLocalNumbers } from './local-numbers.ts';
+import { writeLocalNumbers } from './decimal-mark.ts';
 
 /** What brings the page of a study to life: values under the pointer, the reader's numbers, the table to download. */
 writeLocalNumbers();

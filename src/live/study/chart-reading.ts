@@ -1,5 +1,5 @@
 import { type ChartPoint, nearestPoint, type PointRows, pointRows } from './chart-points.ts';
-import { localNumber } from './local-numbers.ts';
+import { localNumber } from './decimal-mark.ts';
 
 /** Charts tell the value under the pointer, or the one that the arrow keys have come to. */
 export function readCharts(): void {
