@@ -59,5 +59,5 @@ export function barChart({ id, title, bars, full, width = CHART_WIDTH }: BarChar
     `<defs>${hatchPattern(id)}</defs><path d="M${num(left)} 2V${num(height - 2)}" stroke="${QUIET}"/>` +
     `<g fill="${INK}">${rows.join('')}</g>`;
   const words = bars.map(({ label, text: said }) => `${label}: ${said}.`).join(' ');
-  return svgFigure(id, title, plainText(words), { width, height }, body);
+  return svgFigure(id, title, words, { width, height }, body);
 }

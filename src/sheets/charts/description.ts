@@ -1,4 +1,3 @@
-import { plainText } from '../plain.ts';
 import { axisTitle, type ChartAxis } from './axis-scale.ts';
 import type { ContourChartSpec } from './contour-chart.ts';
 import type { ContourNodes } from './contour-nodes.ts';
@@ -10,9 +9,9 @@ export function lineDescription({ x, y, series, marked = [] }: LineChartSpec): s
   const parts = [`${axisTitle(y)} against ${axisTitle(x)}.`];
   for (const one of series) parts.push(seriesSentence(one, x, y));
   for (const { x: atX, y: atY, label } of marked) {
-    parts.push(`${plainText(label)}: ${numberWith(atY, y)} at ${numberWith(atX, x)}.`);
+    parts.push(`${label}: ${numberWith(atY, y)} at ${numberWith(atX, x)}.`);
   }
-  return plainText(parts.join(' '));
+  return parts.join(' ');
 }
 
 function seriesSentence({ name, x, y }: LineSeries, xAxis: ChartAxis, yAxis: ChartAxis): string {
@@ -27,12 +26,13 @@ function seriesSentence({ name, x, y }: LineSeries, xAxis: ChartAxis, yAxis: Cha
     if (least < 0 || y[k]! < y[least]!) least = k;
     if (most < 0 || y[k]! > y[most]!) most = k;
   }
-  const head = name === '' ? '' : `${name}: `;
-  if (least < 0) return `${head}no value.`;
+  const said = (words: string) =>
+    name === '' ? words.charAt(0).toUpperCase() + words.slice(1) : `${name}: ${words}`;
+  if (least < 0) return said('no value.');
   const gaps = missing === 0 ? '' : `, no value at ${missing} of ${y.length} points`;
   const at = (k: number) => `${numberWith(y[k]!, yAxis)} at ${numberWith(x[k]!, xAxis)}`;
-  if (y[least] === y[most]) return `${head}${numberWith(y[least]!, yAxis)} throughout${gaps}.`;
-  return `${head}least ${at(least)}, greatest ${at(most)}${gaps}.`;
+  if (y[least] === y[most]) return said(`${numberWith(y[least]!, yAxis)} throughout${gaps}.`);
+  return said(`least ${at(least)}, greatest ${at(most)}${gaps}.`);
 }
 
 /** What a contour chart shows, in words. */
@@ -61,7 +61,7 @@ export function contourDescription(
   for (const one of marked) {
     parts.push(`${one.label}: ${numberWith(one.x, x)} and ${numberWith(one.y, y)}.`);
   }
-  return plainText(parts.join(' '));
+  return parts.join(' ');
 }
 
 /** A number of five digits with the unit of its axis. */

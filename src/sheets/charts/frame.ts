@@ -118,7 +118,7 @@ export function svgFigure(
 ): string {
   return (
     `<svg xmlns="http://www.w3.org/2000/svg" class="chart"${data} role="img" aria-labelledby="${id}-title ${id}-desc" viewBox="0 0 ${num(width)} ${num(height)}" width="${num(width)}" height="${num(height)}" font-family="${FACES}" font-size="${LETTERS}">` +
-    `<title id="${id}-title">${escaped(title)}</title><desc id="${id}-desc">${escaped(description)}</desc>${body}</svg>`
+    `<title id="${id}-title">${escaped(plainText(title))}</title><desc id="${id}-desc">${escaped(plainText(description))}</desc>${body}</svg>`
   );
 }
 

@@ -33,7 +33,7 @@ export function stretches(id: string, wanted: readonly Stretch[], { plot, x, atX
   if (shown.length === 0) return '';
   const parts = shown.map(({ left, width, label }) => {
     const name =
-      textWidth(label, LETTERS) <= width - 8
+      label !== '' && textWidth(label, LETTERS) <= width - 8
         ? text(label, left + 4, plot.y + LETTERS + 1, { size: LETTERS, width: width - 8 }).svg
         : '';
     return (

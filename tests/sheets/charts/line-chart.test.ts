@@ -30,7 +30,7 @@ test('a chart of lines says what it shows to those who cannot see it', () => {
   expect(svg).toContain('role="img" aria-labelledby="recycle-title recycle-desc"');
   expect(svg).toContain('<title id="recycle-title">Recycle ratio</title>');
   expect(svg).toContain(
-    '<desc id="recycle-desc">figures.recycle_ratio against condenser.temperature [degC]. least 4.1000 at -25.000 degC, greatest 5.0000 at 0 degC. as in the file: 4.5000 at -10.000 degC.</desc>',
+    '<desc id="recycle-desc">figures.recycle_ratio against condenser.temperature [degC]. Least 4.1000 at -25.000 degC, greatest 5.0000 at 0 degC. as in the file: 4.5000 at -10.000 degC.</desc>',
   );
 });
 
@@ -176,7 +176,7 @@ test('numbers are written by the function that is given', () => {
   const comma = (value: number, decimals: number) => value.toFixed(decimals).replace('.', ',');
   const svg = lineChart(spec({ y: { title: 'ratio', unit: '', text: comma } }));
   expect(textsOf(svg).map(({ text }) => text)).toContain('4,2');
-  expect(svg).toContain('least 4,1000 at');
+  expect(svg).toContain('Least 4,1000 at');
 });
 
 test('an id that is none, and x and y of different length, are faults of ours', () => {
