@@ -1,2 +1,4 @@
-/** Bundle the command line into a folder: cli.js and chunks beside it. */
+/** Bundle the command line into a folder: cli.js, live.js and chunks beside them. */
 export function buildCli(folder: string): Promise<void>;
+/** Bundle the script of live pages into a folder: live.js. */
+export function buildLive(folder: string): Promise<void>;

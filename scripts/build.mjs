@@ -42,8 +42,44 @@ const banner = `#!/usr/bin/env node
 import { createRequire as looptallyCreateRequire } from 'node:module';
 const require = looptallyCreateRequire(import.meta.url);`;
 
-/** Bundle the command line into a folder: cli.js, the worker of sweeps and chunks beside it. */
+// The page knows the units of our own table; mathjs and the layout engine are larger than all the rest of it.
+const pageStaysSmall = {
+  name: 'page-stays-small',
+  setup(bundler) {
+    bundler.onResolve({ filter: /^mathjs$/ }, ({ path }) => ({ path, namespace: 'no-further-units' }));
+    bundler.onLoad({ filter: /.*/, namespace: 'no-further-units' }, () => ({
+      contents: 'export const unitDependencies = {}; export const create = () => ({});',
+    }));
+    bundler.onResolve({ filter: /^elkjs/ }, ({ importer }) => ({
+      errors: [{ text: `elkjs does not belong into the page (${importer})` }],
+    }));
+  },
+};
+
+/** Bundle the script of live pages into a folder: live.js, one file that asks for nothing. */
+export async function buildLive(folder) {
+  const { metafile } = await build({
+    absWorkingDir: root,
+    bundle: true,
+    format: 'iife',
+    platform: 'browser',
+    target: 'es2022',
+    minify: true,
+    legalComments: 'none',
+    charset: 'utf8',
+    define: { LOOPTALLY_VERSION: JSON.stringify(version) },
+    plugins: [oneLanguage, pageStaysSmall],
+    logLevel: 'warning',
+    entryPoints: { live: 'src/live/main.ts' },
+    outdir: folder,
+    metafile: true,
+  });
+  return metafile;
+}
+
+/** Bundle the command line into a folder: cli.js, the worker of sweeps, the script of pages and chunks beside it. */
 export async function buildCli(folder) {
+  await buildLive(folder);
   const { metafile } = await build({
     ...shared,
     entryPoints: { cli: 'src/cli/main.ts', 'sweep-worker': 'src/cli/sweep-worker.ts' },
@@ -53,7 +89,21 @@ export async function buildCli(folder) {
     metafile: true,
   });
   chmodSync(join(folder, 'cli.js'), 0o755);
+  await buildPageScripts(folder);
   return metafile;
+}
+
+/** What runs in the browser: one file each, which the command line writes into its pages. */
+async function buildPageScripts(folder) {
+  await build({
+    ...shared,
+    splitting: false,
+    format: 'iife',
+    platform: 'browser',
+    target: 'es2022',
+    entryPoints: { 'study-page': 'src/live/study/main.ts' },
+    outdir: folder,
+  });
 }
 
 async function buildLibrary(folder) {

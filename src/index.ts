@@ -24,6 +24,7 @@ export type {
   Flowsheet,
   Formula,
   GasModelName,
+  Handle,
   LedgerSpec,
   LiquidModelName,
   MethodName,
@@ -62,6 +63,7 @@ export type { TitleBlock } from './sheets/drawing/title-block.ts';
 export { leversText } from './sheets/levers.ts';
 export { markdownSheet } from './sheets/markdown.ts';
 export { optimiseText } from './sheets/optimise.ts';
+export type { LivePage } from './sheets/page/sheet-page.ts';
 export { type Rendered, type Renderer, type RenderOptions, renderers } from './sheets/renderers.ts';
 export type { SheetOptions } from './sheets/sheet.ts';
 export { textSheet } from './sheets/text.ts';

@@ -1,7 +1,7 @@
 import type { Command } from 'commander';
+import { figureUnits } from '../sheets/figure-units.ts';
 import { textSheet } from '../sheets/text.ts';
 import { fileCommand } from './common-options.ts';
-import { figureUnits } from './figure-units.ts';
 import { resultJson, type SolveOptions, solve, tellShortfall, withSolveOptions } from './solve.ts';
 import { paintFor, print, printJson } from './terminal.ts';
 

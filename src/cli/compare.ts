@@ -2,7 +2,8 @@ import type { Command } from 'commander';
 import type { Flowsheet } from '../model/flowsheet.ts';
 import { compareJson, compareText } from '../sheets/compare.ts';
 import { compareRenderers } from '../sheets/compare-tables.ts';
-import { compare } from '../study/compare.ts';
+import { comparePage } from '../sheets/study-page/compare-page.ts';
+import { type Comparison, compare } from '../study/compare.ts';
 import { collect, command, type FileOptions } from './common-options.ts';
 import { exitCodes } from './exit-codes.ts';
 import { tell } from './messages.ts';
@@ -11,6 +12,7 @@ import { rendererOf } from './output-format.ts';
 import { readSource } from './read-source.ts';
 import { type Source, usageRefusal } from './refusal.ts';
 import { balanceOptions, exitCodeOf, type SolveOptions, withSolveOptions } from './solve.ts';
+import { pageOptions } from './study-page.ts';
 import { paintFor, print, printJson, say } from './terminal.ts';
 import { checkOutputs, writeOutputs } from './write-files.ts';
 
@@ -18,6 +20,11 @@ interface CompareOptions extends Omit<SolveOptions, 'case'> {
   readonly case?: readonly string[];
   readonly out?: readonly string[];
 }
+
+const renderers = new Map<string, (found: Comparison, path: string) => string>([
+  ...compareRenderers,
+  ['.html', (found, path) => comparePage(found, pageOptions(path))],
+]);
 
 interface Member {
   readonly name: string;
@@ -43,21 +50,25 @@ export function compareCommand(): Command {
       'a case to compare (repeatable); all cases of a single file if left out',
       collect,
     )
-    .option('--out <name...>', 'file to write (repeatable): .csv (numbers in full) or .md', collect);
+    .option(
+      '--out <name...>',
+      'file to write (repeatable): .csv (numbers in full), .md or .html (a page)',
+      collect,
+    );
   return withSolveOptions(made).action(runCompare);
 }
 
 async function runCompare(files: readonly string[], options: CompareOptions): Promise<void> {
   const outputs = (options.out ?? []).map((path) => ({
     path,
-    render: rendererOf(path, compareRenderers, 'comparison'),
+    render: rendererOf(path, renderers, 'comparison'),
   }));
   for (const file of files) checkOutputs(options.out ?? [], file);
   const { case: cases, out: _, ...solving } = options;
   const members = await membersOf(files, cases, solving);
   const found = compare(members, balanceOptions(solving));
   process.exitCode = exitCode(found.columns);
-  writeOutputs(outputs.map(({ path, render }) => ({ path, content: render(found) })));
+  writeOutputs(outputs.map(({ path, render }) => ({ path, content: render(found, path) })));
   if (options.json) {
     printJson(compareJson(found));
     return;

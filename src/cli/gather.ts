@@ -2,6 +2,7 @@ import type { Command } from 'commander';
 import { command } from './common-options.ts';
 import { usageRefusal, usageRefusals } from './refusal.ts';
 import { openTextSlice, type Slice } from './slice-file.ts';
+import { isPage } from './study-page.ts';
 import { writeTrouble } from './sweep-resume.ts';
 import { tableKind, tableKinds, writeRenamed } from './table-file.ts';
 import { printJson, say } from './terminal.ts';
@@ -72,6 +73,15 @@ async function openSlice(path: string): Promise<Slice> {
 
 function checkKinds(paths: readonly string[], out: string): void {
   const kind = tableKind(out);
+  if (isPage(out)) {
+    throw usageRefusal(
+      'bad-output',
+      `${out} cannot be made from slices.`,
+      'a page needs the flowsheet, which slices do not hold',
+      'write e.g. --out table.csv; looptally sweep without --part writes the page',
+      out,
+    );
+  }
   if (!tableKinds.has(kind)) {
     throw usageRefusal(
       'bad-output',

@@ -1,22 +1,24 @@
 import type { Command } from 'commander';
 import type { Diagnostic } from '../diagnostics/diagnostic.ts';
 import { shownWithUnit } from '../sheets/figure-display.ts';
+import { figureUnits } from '../sheets/figure-units.ts';
 import { formulaDisplay } from '../sheets/formula-display.ts';
 import { optimiseText } from '../sheets/optimise.ts';
 import { optimiseJson } from '../sheets/optimise-json.ts';
 import { optimiseRenderers } from '../sheets/optimise-tables.ts';
+import { optimisePage } from '../sheets/study-page/optimise-page.ts';
 import { textSheet } from '../sheets/text.ts';
 import { balanceAt } from '../study/balance-at.ts';
 import { type Optimised, optimise } from '../study/optimise.ts';
 import type { Balance } from '../tally/balance.ts';
 import { collect, fileCommand, positiveInteger } from './common-options.ts';
 import { exitCodes } from './exit-codes.ts';
-import { figureUnits } from './figure-units.ts';
 import { diagnosticsJson, tell } from './messages.ts';
 import { openFlowsheet } from './open-flowsheet.ts';
 import { rendererOf } from './output-format.ts';
 import { aboutSource, Refusal, type Source } from './refusal.ts';
 import { balanceOptions, type SolveOptions, withSolveOptions } from './solve.ts';
+import { pageOptions } from './study-page.ts';
 import { paintFor, print, printJson, say } from './terminal.ts';
 import { checkOutputs, writeOutputs } from './write-files.ts';
 
@@ -26,6 +28,11 @@ interface OptimiseCommandOptions extends SolveOptions {
   readonly starts?: number;
   readonly points?: number;
 }
+
+const renderers = new Map<string, (found: Optimised, path: string) => string>([
+  ...optimiseRenderers,
+  ['.html', (found, path) => optimisePage(found, pageOptions(path))],
+]);
 
 const codeOf = {
   found: exitCodes.done,
@@ -47,13 +54,17 @@ export function optimiseCommand(): Command {
     .option('--starts <number>', 'descents from so many starts; 4 if left out', positiveInteger)
     .option('--points <number>', 'cases of a trade-off between two goals; 9 if left out', positiveInteger)
     .option('--sheet', 'the full sheet of the best case as well')
-    .option('--out <name...>', 'file to write (repeatable): .csv (numbers in full) or .md', collect)
+    .option(
+      '--out <name...>',
+      'file to write (repeatable): .csv (numbers in full), .md or .html (a page)',
+      collect,
+    )
     .action(runOptimise);
 }
 
 async function runOptimise(file: string, options: OptimiseCommandOptions): Promise<void> {
   const paths = options.out ?? [];
-  const outputs = paths.map((path) => ({ path, render: rendererOf(path, optimiseRenderers, 'optimum') }));
+  const outputs = paths.map((path) => ({ path, render: rendererOf(path, renderers, 'optimum') }));
   checkOutputs(paths, file);
   const { flowsheet, source } = await openFlowsheet(file, options);
   const { objective } = flowsheet;
@@ -68,7 +79,8 @@ async function runOptimise(file: string, options: OptimiseCommandOptions): Promi
   );
   process.exitCode = codeOf[found.outcome];
   const shortfall = shortfallOf(found);
-  if (shortfall === null) writeOutputs(outputs.map(({ path, render }) => ({ path, content: render(found) })));
+  if (shortfall === null)
+    writeOutputs(outputs.map(({ path, render }) => ({ path, content: render(found, path) })));
   const closed = options.sheet === true ? sheetOf(found, options) : null;
   if (options.json) {
     printJson({

@@ -1,9 +1,10 @@
 import { extname } from 'node:path';
 import type { Command } from 'commander';
 import { type CsvTableName, csvTables } from '../sheets/csv.ts';
+import { figureUnits } from '../sheets/figure-units.ts';
 import { renderers } from '../sheets/renderers.ts';
 import { collect, fileCommand, oneOf } from './common-options.ts';
-import { figureUnits } from './figure-units.ts';
+import { liveScript } from './live-script.ts';
 import { type Refusal, usageRefusal } from './refusal.ts';
 import { resultJson, type SolveOptions, solve, tellShortfall, withSolveOptions } from './solve.ts';
 import { printJson, say } from './terminal.ts';
@@ -23,6 +24,7 @@ export function sheetCommand(): Command {
     'looptally sheet loop.yaml --out loop.xlsx --out loop.md',
     'looptally sheet loop.yaml --out ledger.csv --table ledger',
     'looptally sheet loop.yaml --out loop.svg',
+    'looptally sheet loop.yaml --out loop.html',
   ]);
   return withSolveOptions(command)
     .option(
@@ -39,7 +41,9 @@ async function runSheet(file: string, options: SheetCommandOptions): Promise<voi
   if (paths.length === 0) throw nowhereToWrite();
   const chosen = paths.map((path) => ({ path, renderer: rendererFor(path) }));
   checkOutputs(paths, file);
-  const solved = await solve(file, options);
+  const isPage = ({ path }: { readonly path: string }) => extname(path).toLowerCase() === '.html';
+  const pages = chosen.some(isPage);
+  const solved = await solve(file, options, pages || options.json === true);
   if (!solved.result.convergence.converged) {
     // What does not close is no sheet: a file without that word on it would pass for an answer.
     if (options.json) printJson(resultJson(solved));
@@ -49,7 +53,7 @@ async function runSheet(file: string, options: SheetCommandOptions): Promise<voi
     }
     return;
   }
-  const { flowsheet, result } = solved;
+  const { flowsheet, result, source } = solved;
   const product = flowsheet.ledger.product?.stream;
   const sheetOptions = {
     flowsheet,
@@ -57,6 +61,7 @@ async function runSheet(file: string, options: SheetCommandOptions): Promise<voi
     figureUnits: figureUnits(flowsheet),
     drawing: { notes: flowsheet.notes, ...(product === undefined ? {} : { product }) },
     ...(options.table === undefined ? {} : { table: options.table }),
+    ...(pages ? { live: { script: liveScript(), text: source.text, set: options.set ?? [] } } : {}),
   };
   const outputs: Output[] = [];
   for (const { path, renderer } of chosen)

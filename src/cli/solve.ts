@@ -40,11 +40,19 @@ export function withSolveOptions(command: Command): Command {
     .option('--max-passes <number>', 'give up after so many passes', positiveInteger);
 }
 
-/** Read a flowsheet, close it and set the exit code. */
-export async function solve(file: string, options: SolveOptions): Promise<Solved> {
+/**
+ * Read a flowsheet, close it and set the exit code.
+ *
+ * @param curves  true where the curves of the blocks are wanted besides their numbers
+ */
+export async function solve(
+  file: string,
+  options: SolveOptions,
+  curves = options.json === true,
+): Promise<Solved> {
   const { flowsheet, source } = await openFlowsheet(file, options);
   const { result, diagnosis } = aboutSource(source, () =>
-    balance(flowsheet, { ...balanceOptions(options), curves: options.json === true }),
+    balance(flowsheet, { ...balanceOptions(options), curves }),
   );
   process.exitCode = exitCodeOf(result);
   return { flowsheet, source, result, diagnosis };

@@ -4,13 +4,16 @@ import type { Flowsheet } from '../model/flowsheet.ts';
 import { createGrid, type Grid, pathsOfPart } from '../study/grid.ts';
 import { createReading, type StudyReading } from '../study/reading.ts';
 import { sweepHeads } from '../study/sweep.ts';
+import { limitsToRecord } from '../study/swept-table.ts';
 import { collect, fileCommand, positiveInteger } from './common-options.ts';
 import { exitCodes } from './exit-codes.ts';
 import { openFlowsheet } from './open-flowsheet.ts';
 import { createProgress } from './progress.ts';
 import { aboutSource, commandLine, type Source, usageRefusal } from './refusal.ts';
 import { balanceOptions, type SolveOptions, withSolveOptions } from './solve.ts';
+import { checkPageRows, isPage } from './study-page.ts';
 import { planOf, type SweepJob } from './sweep-job.ts';
+import { createPageSink, noPageOfPart } from './sweep-page.ts';
 import { type AxisWanted, planAxes, typedAxes } from './sweep-plan.ts';
 import { makePaths } from './sweep-pool.ts';
 import { printedTable } from './sweep-print.ts';
@@ -53,7 +56,10 @@ export function sweepCommand(): Command {
       collect,
     )
     .option('--record <expressions>', 'figures or formulas, with commas between them (repeatable)', collect)
-    .option('--out <file>', 'write the table to a file: .csv, .ndjson or .parquet')
+    .option(
+      '--out <file>',
+      'write the table to a file: .csv, .ndjson or .parquet; with charts as a page: .html',
+    )
     .option('--workers <number>', 'threads that share the work; the table is the same', positiveInteger)
     .option('--resume', 'go on with a sweep that was stopped, however it was')
     .option('--part <k/n>', 'only this slice of the grid; looptally gather joins the slices', partOf)
@@ -70,7 +76,9 @@ async function runSweep(file: string, options: SweepOptions): Promise<void> {
     { source, set: options.set ?? [], case: options.case ?? null },
     options.yes === true,
   );
-  const record = recordWanted(flowsheet, options);
+  const asked = recordWanted(flowsheet, options);
+  const limits = isPage(out) ? limitsToRecord(flowsheet, asked) : [];
+  const record = [...asked, ...limits.map(({ formula }) => formula.text.trim())];
   const job: SweepJob = {
     text: source.text,
     file: source.name,
@@ -82,6 +90,7 @@ async function runSweep(file: string, options: SweepOptions): Promise<void> {
   };
   const grid = createGrid(axes);
   checkPart(part, grid);
+  if (isPage(out)) checkPageRows(grid.size, out!);
   aboutSource(source, () =>
     checkDetails(
       flowsheet,
@@ -95,12 +104,25 @@ async function runSweep(file: string, options: SweepOptions): Promise<void> {
   const note =
     isWhole && options.over === undefined && options.record === undefined ? flowsheet.study?.note : [];
   const reading = createReading(note ?? [], columns);
-  const run = { job, grid, from, to, part, reading, options };
+  const run = {
+    flowsheet,
+    added: limits.map(({ text }) => text),
+    job,
+    grid,
+    from,
+    to,
+    part,
+    reading,
+    options,
+  };
   const tallied = out === undefined ? await toStandardOutput(run) : await toFile({ ...run, out });
   process.exitCode = tallied.cases === tallied.notClosed ? exitCodes.notClosed : exitCodes.done;
 }
 
 interface Run {
+  readonly flowsheet: Flowsheet;
+  /** limits whose figures are recorded for a page though nobody asked */
+  readonly added: readonly string[];
   readonly job: SweepJob;
   readonly grid: Grid;
   readonly from: number;
@@ -132,7 +154,7 @@ async function toStandardOutput({ job, grid, from, to, reading, options }: Run):
 }
 
 async function toFile(run: Run & { readonly out: string }): Promise<Tallied> {
-  const { job, grid, from, to, part, reading, options, out } = run;
+  const { flowsheet, added, job, grid, from, to, part, reading, options, out } = run;
   const heads = sweepHeads(planOf(job));
   checkRoom(out, rowsOf(grid, from, to), heads.length - 3);
   const identity = identityOf(job, `${part.part}/${part.of}`);
@@ -149,10 +171,12 @@ async function toFile(run: Run & { readonly out: string }): Promise<Tallied> {
     });
     progress.end();
     await writeRenamed(out, async (write) => {
-      const sink = await tableKinds.get(tableKind(out))!(heads, write);
+      const sink = isPage(out)
+        ? createPageSink({ flowsheet, added, job, heads, reading, out, write })
+        : await tableKinds.get(tableKind(out))!(heads, write);
       for (const rows of journal.tables()) {
-        sink.add(rows);
         reading.add(rows);
+        sink.add(rows);
       }
       sink.end(part.of === 1 ? null : sliceMark(run, fingerprintOf(identity)));
     });
@@ -256,11 +280,12 @@ function checkPart({ part, of }: Part, { paths, size, pathRows }: Grid): void {
 function checkOut(out: string | undefined, file: string, { resume, part }: SweepOptions): void {
   if (out !== undefined) {
     checkOutputs([out], file);
-    if (tableKinds.has(tableKind(out))) return;
+    if (isPage(out) && part !== undefined) throw noPageOfPart(out);
+    if (isPage(out) || tableKinds.has(tableKind(out))) return;
     throw usageRefusal(
       'bad-output',
       `${out} has no ending that tells what to write.`,
-      `a table is written as ${[...tableKinds.keys()].join(', ')}`,
+      `a table is written as ${[...tableKinds.keys()].join(', ')}, a page as .html`,
       'write e.g. --out table.csv',
       out,
     );

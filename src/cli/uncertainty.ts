@@ -1,12 +1,13 @@
 import { type Command, InvalidArgumentError } from 'commander';
 import type { Flowsheet, Formula } from '../model/flowsheet.ts';
+import { uncertaintyPage } from '../sheets/study-page/uncertainty-page.ts';
 import { uncertaintyText } from '../sheets/uncertainty.ts';
 import { uncertaintyCsv } from '../sheets/uncertainty-csv.ts';
 import { uncertaintyJson } from '../sheets/uncertainty-json.ts';
 import { keyFigureFormulas } from '../study/key-figures.ts';
 import type { SamplingMethod } from '../study/sampling.ts';
 import { SOBOL_DIMENSIONS } from '../study/sobol-sequence.ts';
-import { type UncertaintyOptions, uncertainty } from '../study/uncertainty.ts';
+import { type Uncertainty, type UncertaintyOptions, uncertainty } from '../study/uncertainty.ts';
 import { balance } from '../tally/balance.ts';
 import { collect, type FileOptions, fileCommand, oneOf } from './common-options.ts';
 import { exitCodes } from './exit-codes.ts';
@@ -14,6 +15,7 @@ import { openFlowsheet } from './open-flowsheet.ts';
 import { recordedFormulas } from './record-option.ts';
 import { aboutSource, type Source, usageRefusal } from './refusal.ts';
 import { resultJson, tellShortfall } from './solve.ts';
+import { checkPageRows, isPage, pageOptions } from './study-page.ts';
 import { paintFor, print, printJson, say } from './terminal.ts';
 import { checkOutputs, writeOutputs } from './write-files.ts';
 
@@ -57,7 +59,7 @@ export function uncertaintyCommand(): Command {
     )
     .option('--percentiles <list>', 'which ones, e.g. 1,50,99', percentileList, DEFAULT_PERCENTILES)
     .option('--record <expr,...>', 'figures to look at (repeatable); the key figures if left out', collect)
-    .option('--out <table.csv>', 'write all samples to a file')
+    .option('--out <file>', 'write all samples to a table: .csv; or a page with charts: .html')
     .action(runUncertainty);
 }
 
@@ -65,15 +67,21 @@ async function runUncertainty(file: string, options: UncertaintyCommandOptions):
   if (options.out !== undefined) checkOutputs([options.out], file);
   const { flowsheet, source } = await openFlowsheet(file, options);
   checkPlan(flowsheet, options, file);
+  const cases = options.samples * (options.shares === 'sobol' ? flowsheet.spreads.length + 2 : 1);
+  if (isPage(options.out)) checkPageRows(cases, options.out!);
   const typed = options.record === undefined ? null : recordedFormulas(options.record, flowsheet);
   const record = typed ?? figuresInFile(flowsheet, source, options);
   if (record === null) return;
   const found = uncertainty(flowsheet, { ...studyOptions(options), record, progress: progressOf(options) });
   if (found.failed + found.extraFailed > 0) process.exitCode = exitCodes.notClosed;
-  if (options.out !== undefined) writeOutputs([{ path: options.out, content: uncertaintyCsv(found) }]);
+  if (options.out !== undefined) writeOutputs([{ path: options.out, content: fileOf(found, options.out) }]);
   if (options.json) printJson(uncertaintyJson(found));
   else print(uncertaintyText(found, { paint: paintFor(process.stdout) }));
   if (options.out !== undefined && !options.quiet) say(`wrote ${options.out}`);
+}
+
+function fileOf(found: Uncertainty, path: string): string {
+  return isPage(path) ? uncertaintyPage(found, pageOptions(path)) : uncertaintyCsv(found);
 }
 
 /** The key figures of the file as it stands; null, with the reason told, where it does not close. */

@@ -74,6 +74,7 @@ export const codes: Readonly<Record<string, string>> = {
 
   // Ledger, aims, cases, figures, solver, changes
   'bad-aim': 'an aim that cannot be pursued',
+  'bad-handle': 'a handle of the live page that cannot be moved as it is written',
   'bad-correlation': 'a correlation that cannot be, by itself or beside the others',
   'bad-spread': 'a spread that cannot be drawn from',
   'no-spreads': 'an uncertainty is asked for where nothing is spread',

@@ -13,6 +13,7 @@ import { readFeeds } from './feeds.ts';
 import { readFigures } from './figures.ts';
 import { createFindings, type Fault, inOrder, type Reading } from './findings.ts';
 import { formulaWorld } from './formula-scope.ts';
+import { readHandles } from './handles.ts';
 import { readHeader } from './header.ts';
 import { readLedger } from './ledger.ts';
 import { ledgerDefaults } from './ledger-defaults.ts';
@@ -136,6 +137,12 @@ function readTree(
       : readObjective(reading, { ...world, figures: ownFigures }, settings, priced, aims);
   const solve = readSolve(reading, named ? streams : null);
   const study = readStudy(reading, world === null ? null : { ...world, figures: ownFigures });
+  const handles = readHandles(reading, {
+    settings,
+    known: spreadable?.filter(({ path }) => !/^(reactions|components)\./.test(path)) ?? null,
+    aims,
+    moved: changes.map(({ path }) => path),
+  });
   if (
     !sound ||
     hasErrors(findings) ||
@@ -168,6 +175,7 @@ function readTree(
     objective,
     solve,
     study,
+    handles,
     assumptions: [
       ...changes
         .filter(({ pathPlace }) => pathPlace.file === SET_FILE)

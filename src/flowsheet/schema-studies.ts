@@ -180,3 +180,10 @@ export const studySchema = z.strictObject({
       examples: ['The recycle goes from {first figures.recycle_ratio} to {last figures.recycle_ratio}.'],
     }),
 });
+
+export const handlesSchema = z
+  .record(z.string(), valueLike(`range, ${ownUnit}`, ['-30 degC..15 degC']))
+  .meta({
+    description: 'settings that a live page lets its reader move, and their ranges',
+    examples: [{ 'condenser.temperature': '-30 degC..15 degC', 'purge.fractions.bleed': '0.5 %..10 %' }],
+  });

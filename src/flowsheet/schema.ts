@@ -5,6 +5,7 @@ import {
   aimSchema,
   correlationSchema,
   figureSchema,
+  handlesSchema,
   objectiveSchema,
   solveSchema,
   spreadSchema,
@@ -237,6 +238,7 @@ export const fileSchema = z.strictObject({
     .meta({ description: 'what looptally optimise is to make best, within bounds and limits' }),
   solve: solveSchema.optional().meta({ description: 'how the recycles are closed' }),
   study: studySchema.optional().meta({ description: 'the question that looptally sweep asks of this file' }),
+  handles: handlesSchema.optional(),
 });
 
 /** Keys of the file in the order they are usually written. */

@@ -166,6 +166,19 @@ export interface StudySpec {
   readonly note: readonly (readonly (string | StudyBlank)[])[];
 }
 
+/** A setting that a live page lets its reader move, and how far. */
+export interface Handle {
+  readonly path: string;
+  /** ends of the range [SI] */
+  readonly between: readonly [number, number];
+  /** unit in which the range is written; '' where there is none */
+  readonly unit: string;
+  /** value [SI] = (number in that unit + offset) × factor */
+  readonly scale: { readonly factor: number; readonly offset: number };
+  /** places of a slider over the range, both ends among them */
+  readonly places: number;
+}
+
 /** A checked flowsheet: every name resolved, every value in SI. */
 export interface Flowsheet {
   readonly file: string;
@@ -192,6 +205,8 @@ export interface Flowsheet {
   readonly solve: SolveSpec;
   /** null where the file has no study */
   readonly study: StudySpec | null;
+  /** empty where the file names none */
+  readonly handles: readonly Handle[];
   /** defaults that were filled in while reading, in plain sentences */
   readonly assumptions: readonly string[];
   /** where a part of the flowsheet stands in the file: `blocks.condenser.temperature`, `streams.S2`, ... */

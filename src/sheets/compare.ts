@@ -141,7 +141,8 @@ function settingLines(found: Comparison): string[] {
   );
 }
 
-function sameKind(a: SettingValue | null, b: SettingValue | null): boolean {
+/** Are two settings that read alike the same to the last digit? */
+export function sameKind(a: SettingValue | null, b: SettingValue | null): boolean {
   return a?.kind !== 'number' || b?.kind !== 'number' || a.setting.value === b.setting.value;
 }
 
@@ -172,7 +173,8 @@ function figureLines(found: Comparison): string[] {
   return [...lines, ...rest];
 }
 
-function percentStep(relative: number | null): string {
+/** A relative difference in per cent, with its sign. */
+export function percentStep(relative: number | null): string {
   if (relative === null) return '-';
   return relative === 0 ? '0' : `${relative > 0 ? '+' : ''}${significant(100 * relative, 3)}`;
 }

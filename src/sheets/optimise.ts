@@ -242,7 +242,7 @@ function startRows({ starts, objective, flowsheet }: Optimised, units: readonly 
 }
 
 /** The optimum as a case of the file. */
-function caseLines(
+export function caseLines(
   { outcome, best, objective, flowsheet }: Optimised,
   head: (text: string) => string,
 ): string[] {

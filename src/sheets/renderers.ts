@@ -3,6 +3,7 @@ import type { Result } from '../model/result.ts';
 import { type CsvTableName, csvSheet } from './csv.ts';
 import { type DrawingOptions, drawingOf } from './drawing/drawing.ts';
 import { markdownSheet } from './markdown.ts';
+import type { LivePage } from './page/sheet-page.ts';
 import type { SheetOptions } from './sheet.ts';
 
 export interface RenderOptions extends SheetOptions {
@@ -14,6 +15,8 @@ export interface RenderOptions extends SheetOptions {
   readonly table?: CsvTableName;
   /** what a drawing says beyond the result */
   readonly drawing?: DrawingOptions;
+  /** what lets an HTML page close the loop again; left out, the page stands still */
+  readonly live?: LivePage;
 }
 
 /** The content of a file. */
@@ -33,6 +36,16 @@ export const renderers: ReadonlyMap<string, Renderer> = new Map([
     {
       summary: 'one table for a spreadsheet',
       render: (result, options) => csvSheet(result, options.table, options),
+    },
+  ],
+  [
+    '.html',
+    {
+      summary: 'the sheet as one page that still solves',
+      render: async (result, options) => {
+        const { sheetPage } = await import('./page/sheet-page.ts');
+        return sheetPage(result, options);
+      },
     },
   ],
   ['.md', { summary: 'the whole sheet as Markdown', render: markdownSheet }],

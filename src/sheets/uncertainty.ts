@@ -42,7 +42,8 @@ export function uncertaintyText(found: Uncertainty, options: SheetOptions = {}):
   ].join('\n');
 }
 
-function sampleLine({ options, failed, extraCases, spreads }: Uncertainty): string {
+/** How many cases were drawn, how, and how many closed. */
+export function sampleLine({ options, failed, extraCases, spreads }: Uncertainty): string {
   const { samples, method, seed } = options;
   const closed = failed === 0 ? 'all closed' : `${samples - failed} closed, ${failed} did not`;
   const extra = extraCases === 0 ? '' : `; ${extraCases} extra cases for the Sobol indices`;
@@ -71,7 +72,8 @@ function spreadLines({ spreads, flowsheet }: Uncertainty): string[] {
   ];
 }
 
-function cutNotes({ spread, setting, distribution }: DrawnSpread): string[] {
+/** What the bounds of a setting cut off a spread, in sentences. */
+export function cutNotes({ spread, setting, distribution }: DrawnSpread): string[] {
   const { low, high } = setting.bounds;
   const note = (share: number, side: string, bound: number) =>
     share < 1e-12
@@ -82,7 +84,8 @@ function cutNotes({ spread, setting, distribution }: DrawnSpread): string[] {
   return [...note(distribution.cutBelow, 'below', low), ...note(distribution.cutAbove, 'above', high)];
 }
 
-function shapeText({ spread: { shape }, setting }: DrawnSpread): string {
+/** A spread in the natural unit of its setting. */
+export function shapeText({ spread: { shape }, setting }: DrawnSpread): string {
   const value = (x: number) => valueText(setting, x);
   switch (shape.kind) {
     case 'normal':
@@ -106,7 +109,8 @@ function unitText(unit: string): string {
   return unit === '1' ? '' : ` ${unit}`;
 }
 
-function shortName(expression: string): string {
+/** An expression without the word that all key figures begin with. */
+export function shortName(expression: string): string {
   return plainText(expression).replace(/^figures\.(?=[\w.]+$)/, '');
 }
 

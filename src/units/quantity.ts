@@ -1,7 +1,7 @@
 import { type Dimension, dimensions } from './dimension.ts';
 import { nearest } from './nearest.ts';
 import { engineFactor, isUnitText } from './unit-engine.ts';
-import { dimensionsOf, knownUnits, unitFactor } from './unit-table.ts';
+import { dimensionsOf, knownUnits, type UnitFactor, unitFactor } from './unit-table.ts';
 
 export { loadUnitEngine } from './unit-engine.ts';
 export type { Dimension };
@@ -38,11 +38,9 @@ export function parseQuantity(text: string, dimension: Dimension, limits: Limits
   const { number, unit } = split;
   const facts = dimensions[dimension];
   if (unit === '' && facts.si !== '') return bareNumber(text.trim(), number, dimension);
-  const known = unitFactor(unit, dimension) ?? engineFactor(unit, dimension);
-  if (known === undefined) return wrongUnit(text.trim(), unit, dimension);
-  const offset =
-    dimension === 'temperatureDifference' || dimension === 'pressureDifference' ? 0 : known.offset;
-  const value = (number + offset) * known.factor;
+  const scale = unitScale(unit, dimension);
+  if (scale === undefined) return wrongUnit(text.trim(), unit, dimension);
+  const value = (number + scale.offset) * scale.factor;
   if (!Number.isFinite(value)) return noQuantity(text, dimension);
   return withinLimits(value, text.trim(), dimension, limits);
 }
@@ -93,14 +91,21 @@ export function formatQuantity(value: number, dimension: Dimension, digits = 6):
  * @throws Error for a unit that does not fit: it has been read from the file before
  */
 export function numberIn(value: number, unit: string, dimension: Dimension): number {
-  const known = unitFactor(unit, dimension) ?? engineFactor(unit, dimension);
-  if (known === undefined) throw new Error(`${unit} is no unit of ${dimensions[dimension].noun}`);
-  return Number((value / known.factor - known.offset).toPrecision(12));
+  const scale = unitScale(unit, dimension);
+  if (scale === undefined) throw new Error(`${unit} is no unit of ${dimensions[dimension].noun}`);
+  return Number((value / scale.factor - scale.offset).toPrecision(12));
 }
 
 /** Does a unit measure a dimension? No unit fits what has none. */
 export function fitsDimension(unit: string, dimension: Dimension): boolean {
-  return (unitFactor(unit, dimension) ?? engineFactor(unit, dimension)) !== undefined;
+  return unitScale(unit, dimension) !== undefined;
+}
+
+/** The scale of a unit, value in SI = (number + offset) × factor; undefined where the dimension does not have it. */
+export function unitScale(unit: string, dimension: Dimension): UnitFactor | undefined {
+  const known = unitFactor(unit, dimension) ?? engineFactor(unit, dimension);
+  const isDifference = dimension === 'temperatureDifference' || dimension === 'pressureDifference';
+  return known === undefined ? undefined : { factor: known.factor, offset: isDifference ? 0 : known.offset };
 }
 
 /** Number and unit of a text; null where it does not begin with a decimal number. The unit may be empty. */

@@ -59,4 +59,9 @@ cases:
 # Figures of your own; streams offer n (kmol/h), y, m, w, T, P, flow, mass.
 figures:
   hydrogen_slip: {formula: streams.S6.n.H2 / streams.S1.n.H2, unit: '%'}
+
+# Settings that can be moved in the live page: looptally sheet loop.yaml --out loop.html
+handles:
+  condenser.temperature: -30 degC..15 degC
+  purge.fractions.bleed: 0.5 %..10 %
 `;

@@ -56,4 +56,8 @@ ledger:
 # Cases are named changes: looptally balance loop.yaml --case 'tired catalyst'
 cases:
   tired catalyst: {reactor.reactions.dehydration.conversion: 65 %}
+
+# Settings that can be moved in the live page: looptally sheet loop.yaml --out loop.html
+handles:
+  reactor.reactions.dehydration.conversion: 50 %..90 %
 `;

@@ -60,4 +60,9 @@ cases:
 figures:
   reactor_outlet: {formula: streams.S4.T - 273.15, unit: degC}
   hydrogen_left: {formula: streams.S7.y.H2, unit: '%'}
+
+# Settings that can be moved in the live page: looptally sheet loop.yaml --out loop.html
+handles:
+  condenser.temperature: 20 degC..70 degC
+  divider.fractions.product: 10 %..60 %
 `;

@@ -58,4 +58,9 @@ cases:
 figures:
   stoichiometric_number: {formula: (streams.S1.n.H2 - streams.S1.n.CO2) / (streams.S1.n.CO + streams.S1.n.CO2)}
   carbon_to_methanol: {formula: streams.S5.n.CH3OH / (streams.S1.n.CO + streams.S1.n.CO2), unit: '%'}
+
+# Settings that can be moved in the live page: looptally sheet loop.yaml --out loop.html
+handles:
+  condenser.temperature: 20 degC..70 degC
+  purge.fractions.bleed: 0.5 %..12 %
 `;

@@ -44,7 +44,7 @@ export function batteryBox(
 }
 
 /** The component that a stream has most of. */
-function mainly({ state }: DrawnStream): string {
+export function mainly({ state }: DrawnStream): string {
   const [id, part] = Object.entries(state.mole_fraction).reduce(
     (most, each) => (each[1] > most[1] ? each : most),
     ['', 0],

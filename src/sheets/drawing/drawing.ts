@@ -4,7 +4,7 @@ import { arrange } from './arrange.ts';
 import { giveDirections } from './directions.ts';
 import { flagOf } from './flags.ts';
 import { type DrawnStream, networkOf } from './network.ts';
-import { drawFrame, frameFor } from './sheet-frame.ts';
+import { bareFrame, drawFrame, frameFor } from './sheet-frame.ts';
 import {
   type Box,
   escaped,
@@ -19,6 +19,7 @@ import {
   SMALL,
 } from './svg.ts';
 import type { TitleBlock } from './title-block.ts';
+import { flagWord, nodeWord } from './words.ts';
 
 export interface DrawingOptions {
   /** the notes of the flowsheet */
@@ -26,6 +27,11 @@ export interface DrawingOptions {
   /** tag of the product stream */
   readonly product?: string;
   readonly titleBlock?: TitleBlock;
+  /**
+   * for a page that has a title block of its own: the diagram alone, and words that follow the numbers carry the key
+   * by which `drawingWords` names them in data-word
+   */
+  readonly forPage?: boolean;
 }
 
 /** A small flowsheet is drawn larger than a large one, up to this. */
@@ -46,7 +52,8 @@ export async function drawingOf(result: Result, options: DrawingOptions = {}): P
   giveDirections(network);
   const flags = network.streams.map(({ tag, state }) => flagOf(tag, state));
   const { boxes, layout } = await arrange(network, result, flags, options.product ?? null);
-  const frame = frameFor(layout.width, layout.height);
+  const forPage = options.forPage ?? false;
+  const frame = forPage ? bareFrame(layout.width, layout.height) : frameFor(layout.width, layout.height);
   const { field } = frame;
   const scale = Math.min(LARGEST_SCALE, field.width / layout.width, field.height / layout.height);
   const by = {
@@ -60,7 +67,9 @@ export async function drawingOf(result: Result, options: DrawingOptions = {}): P
     height: scale * box.height,
   });
 
-  const edge = drawFrame(frame, result, { notes: options.notes ?? '', titleBlock: options.titleBlock ?? {} });
+  const edge = forPage
+    ? { svg: '', texts: [] }
+    : drawFrame(frame, result, { notes: options.notes ?? '', titleBlock: options.titleBlock ?? {} });
   const drawnFlags = flags.map((flag, k) => flag.draw(layout.flags[k]!));
   const texts: { text: string; box: Box }[] = [
     ...edge.texts,
@@ -73,7 +82,7 @@ export async function drawingOf(result: Result, options: DrawingOptions = {}): P
     const corner = layout.nodes[k]!;
     symbols.push({ name: box.node.name, kind: box.node.kind, box: boxOnSheet(box.symbol, corner) });
     texts.push(...box.texts.map(({ text, box: inner }) => ({ text, box: boxOnSheet(inner, corner) })));
-    return `<g transform="translate(${num(corner.x)} ${num(corner.y)})">${box.svg}${words(box.texts)}</g>`;
+    return `<g transform="translate(${num(corner.x)} ${num(corner.y)})">${box.svg}${words(box.texts, forPage ? nodeWord(k) : null)}</g>`;
   });
   const { width, height } = frame;
   const svg = [
@@ -81,16 +90,16 @@ export async function drawingOf(result: Result, options: DrawingOptions = {}): P
     `<title>${escaped(plainText(result.title) || 'Untitled flowsheet')}</title>`,
     `<rect width="${width}" height="${height}" fill="#fff"/>`,
     `<g fill="none" stroke="#000" stroke-width="${LINE}" font-family="${FACES}" font-size="${SMALL}">`,
-    `<g id="frame">${edge.svg}${words(edge.texts)}</g>`,
+    ...(forPage ? [] : [`<g id="frame">${edge.svg}${words(edge.texts)}</g>`]),
     `<g transform="translate(${num(by.x)} ${num(by.y)}) scale(${num(scale)})">`,
-    `<g id="streams">`,
+    `<g ${layer('streams')}>`,
     ...network.streams.map((stream, k) => drawStream(stream, layout.lines[k]!, isReturn(stream))),
     `</g>`,
-    `<g id="blocks">`,
+    `<g ${layer('blocks')}>`,
     ...nodes,
     `</g>`,
-    `<g id="flags">`,
-    ...drawnFlags.map((flag) => flag.svg + words(flag.texts)),
+    `<g ${layer('flags')}>`,
+    ...drawnFlags.map((flag, k) => flag.svg + words(flag.texts, forPage ? flagWord(k) : null)),
     `</g>`,
     `</g>`,
     `</g>`,
@@ -100,13 +109,22 @@ export async function drawingOf(result: Result, options: DrawingOptions = {}): P
   const lines = network.streams.map(({ tag }, k) => ({ tag, points: layout.lines[k]!.map(onSheet) }));
   return { svg, texts, symbols, lines };
 
+  /** An id belongs to one drawing in a file of its own; in a page it might meet another. */
+  function layer(name: string): string {
+    return forPage ? `class="${name}"` : `id="${name}"`;
+  }
+
   function isReturn({ loop, back, from }: DrawnStream): boolean {
     return back || (loop && network.lanes[from]!.returning);
   }
 }
 
-function words(texts: readonly PlacedText[]): string {
-  return `<g fill="#000" stroke="none">${texts.map(({ svg }) => svg).join('')}</g>`;
+/** @param key  names each word for a script that lets it follow the numbers; null where nothing does */
+function words(texts: readonly PlacedText[], key: ((line: number) => string) | null = null): string {
+  const each = texts.map(({ svg }, line) =>
+    key === null ? svg : svg.replace('<text ', `<text data-word="${key(line)}" `),
+  );
+  return `<g fill="#000" stroke="none">${each.join('')}</g>`;
 }
 
 const HEAD = 9;

@@ -14,12 +14,17 @@ const TAG_WIDTH = 90;
 const ROW = 11;
 const TAG_ROW = 14;
 
-export function flagOf(tag: string, state: StreamResult): Flag {
-  const rows = [
+/** What stands under the tag of a flag. */
+export function flagRows(state: StreamResult): readonly string[] {
+  return [
     `${fixed(state.temperature_K - 273.15, 1, 1e-9)} °C`,
     `${significant(state.pressure_bar, 4)} bar`,
     `${flowText(state.flow_kmol_h)} kmol/h`,
   ];
+}
+
+export function flagOf(tag: string, state: StreamResult): Flag {
+  const rows = flagRows(state);
   const head = text(tag, 4, 10, { bold: true, width: TAG_WIDTH });
   const frame = head.box.width + 8;
   return {

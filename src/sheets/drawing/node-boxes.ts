@@ -63,7 +63,7 @@ function blockBox(
     ...symbol.inlets.map((port, k) => ({ port, stream: entering[k]!, enters: true })),
     ...symbol.outlets.map((port, k) => ({ port, stream: leaving[k]!, enters: false })),
   ].map(({ port, ...rest }) => ({ ...rest, ...(mirrored ? mirroredPort(port, symbol.width) : port) }));
-  return withLabel(node, symbol, mirrored, ports, [node.name, ...figureOf(block)]);
+  return withLabel(node, symbol, mirrored, ports, blockWords(node.name, block));
 }
 
 /** Does the stream come from ahead into a block drawn forward, or go back from one? */
@@ -147,6 +147,11 @@ function mirroredPort({ side, path }: SymbolPort, width: number): SymbolPort {
 function bedsOf({ details }: BlockResult): number {
   const beds = details['beds'];
   return typeof beds === 'object' && beds !== null ? Object.keys(beds).length : 1;
+}
+
+/** What stands beside a block: its name, and what it takes or gives. */
+export function blockWords(name: string, block: BlockResult): string[] {
+  return [name, ...figureOf(block)];
 }
 
 /** What a block takes or gives, in a word and a figure; nothing where it is nothing. */

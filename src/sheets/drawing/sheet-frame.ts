@@ -55,6 +55,17 @@ export function frameFor(width: number, height: number): Frame {
   };
 }
 
+/** No frame at all: a little room around a drawing at its full size. */
+export function bareFrame(width: number, height: number): Frame {
+  const room = 2 * MM;
+  return {
+    size: 'bare',
+    width: Math.ceil(width + 2 * room),
+    height: Math.ceil(height + 2 * room),
+    field: { x: room, y: room, width, height },
+  };
+}
+
 export interface FrameWords {
   readonly notes: string;
   readonly titleBlock: TitleBlock;
