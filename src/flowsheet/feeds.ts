@@ -3,6 +3,7 @@ import { nearest } from '../diagnostics/nearest.ts';
 import type { Component } from '../model/component.ts';
 import type { Feed } from '../model/flowsheet.ts';
 import { NORMAL_VOLUME_M3_PER_MOL } from '../properties/constants.ts';
+import { splitQuantity } from '../units/quantity.ts';
 import type { Flow } from '../units/schema.ts';
 import type { Reading } from './findings.ts';
 import { checkPart } from './issues.ts';
@@ -113,8 +114,8 @@ function mixesPerCent(reading: Reading, name: string, path: Path, basis: string)
   const node = nodeAt(reading.root, [...path, 'composition']);
   const written = entriesOf(node).map((e) => ({
     ...e,
-    bare: e.value.kind === 'scalar' && typeof e.value.value === 'number',
-    zero: e.value.kind === 'scalar' && e.value.value === 0,
+    bare: e.value.kind === 'scalar' && splitQuantity(e.value.text)?.unit === '',
+    zero: e.value.kind === 'scalar' && splitQuantity(e.value.text)?.number === 0,
   }));
   const bare = written.find((e) => e.bare && !e.zero);
   const perCent = written.find((e) => !e.bare);
