@@ -4,7 +4,7 @@ import { compareJson, compareText } from '../sheets/compare.ts';
 import { compareRenderers } from '../sheets/compare-tables.ts';
 import { comparePage } from '../sheets/study-page/compare-page.ts';
 import { type Comparison, compare } from '../study/compare.ts';
-import { collect, command, type FileOptions } from './common-options.ts';
+import { collect, command, type FileOptions, withMaxSize } from './common-options.ts';
 import { exitCodes } from './exit-codes.ts';
 import { tell } from './messages.ts';
 import { flowsheetIn } from './open-flowsheet.ts';
@@ -34,14 +34,16 @@ interface Member {
 
 /** `looptally compare FILE [FILE2 ...]`: cases or files side by side, the cause first. */
 export function compareCommand(): Command {
-  const made = command(
-    'compare',
-    'Closes cases of a file, or several files, and sets them side by side: settings that differ, then the figures.',
-    [
-      'looptally new ammonia --out loop.yaml',
-      'looptally compare loop.yaml',
-      "looptally compare loop.yaml --case 'cold condenser' --out cases.csv --out cases.md",
-    ],
+  const made = withMaxSize(
+    command(
+      'compare',
+      'Closes cases of a file, or several files, and sets them side by side: settings that differ, then the figures.',
+      [
+        'looptally new ammonia --out loop.yaml',
+        'looptally compare loop.yaml',
+        "looptally compare loop.yaml --case 'cold condenser' --out cases.csv --out cases.md",
+      ],
+    ),
   )
     .argument('<file...>', 'flowsheets; one alone is compared with all its cases')
     .option('--set <path=value>', 'change one setting in all of them (repeatable)', collect, [])
@@ -93,7 +95,7 @@ async function membersOf(
 ): Promise<Member[]> {
   const members: Member[] = [];
   for (const file of files) {
-    const text = await readSource(file);
+    const text = await readSource(file, options.maxSize);
     const { flowsheet, source } = await flowsheetIn(text, options);
     const plain = files.length === 1 ? 'as in the file' : file;
     members.push({ name: plain, flowsheet, source });

@@ -1,5 +1,6 @@
 import { builtInIds } from '../properties/components.ts';
 import { nearest } from '../units/nearest.ts';
+import { splitQuantity } from '../units/quantity.ts';
 import type { UsageFault } from './refusal.ts';
 
 /** `N2=1,H2=3` as moles by component; what is wrong with it is added to `faults`. */
@@ -43,8 +44,9 @@ function readPart(part: string, feed: Map<string, number>): Omit<UsageFault, 'at
       mend: EXAMPLE,
     };
   }
-  const amount = Number(number);
-  if (!Number.isFinite(amount) || amount < 0) {
+  const read = splitQuantity(number);
+  const amount = read?.unit === '' ? read.number : Number.NaN;
+  if (!(amount >= 0)) {
     return {
       code: 'bad-feed',
       what: `The amount of ${id} cannot be ${number}.`,

@@ -15,7 +15,7 @@ export interface Opened {
 
 /** Read and check a flowsheet as a command was asked to; warnings are told at once, errors refuse it. */
 export async function openFlowsheet(file: string, options: FileOptions): Promise<Opened> {
-  return flowsheetIn(await readSource(file), options);
+  return flowsheetIn(await readSource(file, options.maxSize), options);
 }
 
 /** The same for a text that has been read already, so that several cases of it can be opened. */
@@ -26,6 +26,7 @@ export async function flowsheetIn(text: Source, options: FileOptions): Promise<O
     file: source.name,
     set,
     case: options.case ?? null,
+    ...(options.maxSize === undefined ? {} : { maxBytes: options.maxSize }),
   });
   if (flowsheet === null) throw new Refusal(diagnostics, source);
   if (!options.quiet) tell(diagnostics, source);

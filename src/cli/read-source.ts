@@ -1,53 +1,47 @@
 import { readdirSync } from 'node:fs';
-import { readFile } from 'node:fs/promises';
+import { type FileHandle, open } from 'node:fs/promises';
 import { basename, dirname } from 'node:path';
+import { limits, sizeText } from '../flowsheet/limits.ts';
 import { nearest } from '../units/nearest.ts';
-import { type Refusal, type Source, usageRefusal } from './refusal.ts';
+import { decodeText } from './decode-text.ts';
+import { Refusal, type Source, usageRefusal } from './refusal.ts';
 
-/** More than any flowsheet written by hand; keeps a mistyped disk image out of memory. */
-const LARGEST_BYTES = 16 * 1024 * 1024;
-
-/** The text of a file, `-` for standard input. Refuses what is no readable UTF-8 text. */
-export async function readSource(file: string): Promise<Source> {
+/** The text of a file, `-` for standard input. Refuses what is too large or no readable UTF-8 text. */
+export async function readSource(file: string, maxBytes: number = limits.bytes): Promise<Source> {
   const name = file === '-' ? 'standard input' : file;
   let bytes: Uint8Array;
   try {
-    bytes = file === '-' ? await readStandardInput() : await readFile(file);
+    bytes = file === '-' ? await readUpTo(process.stdin, maxBytes) : await readFileUpTo(file, maxBytes);
   } catch (error) {
-    throw unreadable(file, error as NodeJS.ErrnoException);
+    throw error instanceof Refusal ? error : unreadable(file, error as NodeJS.ErrnoException);
   }
-  if (bytes.length > LARGEST_BYTES) throw tooLarge(file, name);
-  return { name, text: decoded(bytes, file, name) };
+  if (bytes.length > maxBytes) throw tooLarge(name, bytes, maxBytes);
+  return decodeText(bytes, name);
 }
 
-async function readStandardInput(): Promise<Uint8Array> {
+/** A file, or what comes through a pipe; of either no more than one chunk beyond the limit is taken into memory. */
+async function readFileUpTo(file: string, maxBytes: number): Promise<Uint8Array> {
+  let handle: FileHandle | null = null;
+  try {
+    handle = await open(file);
+    const stat = await handle.stat();
+    if (stat.isDirectory()) throw Object.assign(new Error('a folder'), { code: 'EISDIR' });
+    if (stat.isBlockDevice()) throw noFile(file);
+    return await readUpTo(handle.createReadStream({ autoClose: false, end: maxBytes }), maxBytes);
+  } finally {
+    await handle?.close();
+  }
+}
+
+async function readUpTo(stream: AsyncIterable<unknown>, maxBytes: number): Promise<Uint8Array> {
   const chunks: Uint8Array[] = [];
   let length = 0;
-  for await (const chunk of process.stdin) {
+  for await (const chunk of stream) {
     chunks.push(chunk as Uint8Array);
     length += (chunk as Uint8Array).length;
-    if (length > LARGEST_BYTES) break;
+    if (length > maxBytes) break;
   }
   return Buffer.concat(chunks);
-}
-
-function decoded(bytes: Uint8Array, file: string, name: string): string {
-  let text: string | null = null;
-  try {
-    text = new TextDecoder('utf-8', { fatal: true }).decode(bytes);
-  } catch {
-    // told below, together with text that only looks like text
-  }
-  if (text === null || text.includes('\0')) {
-    throw usageRefusal(
-      'not-text',
-      `${name} is not a text file.`,
-      'it holds bytes that are no UTF-8 text; a flowsheet is a YAML file',
-      'name the YAML file, or save it again with the encoding UTF-8',
-      file,
-    );
-  }
-  return text;
 }
 
 function unreadable(file: string, error: NodeJS.ErrnoException): Refusal {
@@ -93,12 +87,30 @@ function unreadable(file: string, error: NodeJS.ErrnoException): Refusal {
   }
 }
 
-function tooLarge(file: string, name: string): Refusal {
+function tooLarge(name: string, bytes: Uint8Array, maxBytes: number): Refusal {
+  const more = Math.min(4 * maxBytes, limits.mostBytes);
+  const where = { file: name, line: 1, column: 1, length: 1 };
+  return new Refusal(
+    [
+      {
+        code: 'file-too-large',
+        severity: 'error',
+        where,
+        what: `${name} is larger than ${sizeText(maxBytes)}.`,
+        why: 'a plant of 2,000 blocks takes less than half a MiB; this is probably another kind of file',
+        mend: `name the flowsheet itself${more > maxBytes ? `, or allow more: --max-size '${sizeText(more)}'` : ''}`,
+      },
+    ],
+    { name, text: new TextDecoder().decode(bytes.subarray(0, 200)) },
+  );
+}
+
+function noFile(file: string): Refusal {
   return usageRefusal(
-    'too-large',
-    `${name} is larger than 16 MB.`,
-    'no flowsheet is; this is probably another kind of file',
-    'name the YAML file of the flowsheet',
+    'is-a-device',
+    `${file} is a disk or another device.`,
+    'a flowsheet is one YAML file',
+    'name the file itself',
     file,
   );
 }

@@ -21,7 +21,14 @@ export interface SweepJob {
 
 /** Read the flowsheet of a checked job again and make it ready. */
 export async function openJob(job: SweepJob): Promise<(path: number) => PathTable> {
-  const { flowsheet } = await readFlowsheet(job.text, { file: job.file, set: job.set, case: job.case });
+  const { text, file, set, case: caseName } = job;
+  // Its size was judged when the file was opened.
+  const { flowsheet } = await readFlowsheet(text, {
+    file,
+    set,
+    case: caseName,
+    maxBytes: Number.POSITIVE_INFINITY,
+  });
   if (flowsheet === null) throw new Error('the flowsheet of a sweep could not be read again');
   return createSweeper(flowsheet, planOf(job));
 }

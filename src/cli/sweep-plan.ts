@@ -26,6 +26,8 @@ export interface PlanContext {
 /** Points of a grid that nobody needs to think about twice, and that nobody can mean. */
 const LARGE = 1_000_000;
 const TOO_LARGE = 1e12;
+/** The size of the file was judged when it was opened. */
+const JUDGED = Number.POSITIVE_INFINITY;
 /** Corners of a grid that are tried before it is begun. */
 const CORNERS = 32;
 
@@ -120,7 +122,12 @@ async function readAt(
   { source, set, case: name }: PlanContext,
 ): Promise<Flowsheet> {
   const changes = wanted.map(({ path }, a) => `${path}=${values[a]}`);
-  const read = await readFlowsheet(source.text, { file: source.name, set: [...set, ...changes], case: name });
+  const read = await readFlowsheet(source.text, {
+    file: source.name,
+    set: [...set, ...changes],
+    case: name,
+    maxBytes: JUDGED,
+  });
   if (read.flowsheet !== null) return read.flowsheet;
   const errors = read.diagnostics.filter(({ severity }) => severity === 'error');
   const ours = errors.flatMap((diagnostic): Told[] => {

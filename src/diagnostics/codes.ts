@@ -4,11 +4,14 @@
  */
 export const codes: Readonly<Record<string, string>> = {
   // The text of the file
+  'not-text': 'bytes that are no text in UTF-8',
   'empty-file': 'there is nothing in the file',
   'file-too-large': 'the file is larger than any flowsheet',
+  'too-many-entries': 'more blocks, streams, components, ... than are read',
   'two-documents': 'one file holds one flowsheet',
   yaml: 'the text is no YAML',
   'yaml-alias': 'an alias without its anchor, or too many of them',
+  'yaml-directive': 'a %YAML or %TAG line that asks for another reading of the file',
   'yaml-key': 'a key that is no plain word',
   'yaml-tag': 'a YAML tag, which a flowsheet does not need',
   'duplicate-key': 'one key stands twice in a mapping',

@@ -12,7 +12,9 @@ const WIDEST = 110;
 
 /** The four-part message: where and code, what, the line with carets under the place, why, mend. */
 export function formatDiagnostic(diagnostic: Diagnostic, options: FormatOptions): string {
-  const { where, severity, code, what, why, mend, also } = diagnostic;
+  const { where, severity, code, also } = diagnostic;
+  // They quote the file, and an escape sequence of the file must not reach a terminal.
+  const [what, why, mend] = [diagnostic.what, diagnostic.why, diagnostic.mend].map(printable);
   const paint = options.colour === true ? colours : plain;
   const head = `${paint.strong(`${where.file}:${where.line}:${where.column}`)} ${paint[severity](severity)} ${code}`;
   const lines = [head, `  ${upperFirst(what)}`, ...excerpt(where, options, paint)];

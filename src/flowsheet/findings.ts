@@ -1,5 +1,6 @@
 import type { Diagnostic } from '../diagnostics/diagnostic.ts';
 import type { Place } from '../model/place.ts';
+import { readable } from './wording.ts';
 import type { YamlNode } from './yaml-tree.ts';
 
 /** The four parts of a message without its place. */
@@ -24,6 +25,12 @@ export interface Findings {
   readonly list: readonly Diagnostic[];
 }
 
+/** Thrown where a file has so many faults that checking the rest of it would only cost time. */
+export class TooManyFaults extends Error {}
+
+/** A file with more faults than this is not read to its end. */
+const ENOUGH = 200;
+
 export function createFindings(): Findings {
   const list: Diagnostic[] = [];
   const said = new Set<string>();
@@ -34,9 +41,11 @@ export function createFindings(): Findings {
   return {
     list,
     error(where, fault, also) {
-      const { code, what, why, mend } = fault;
+      const { code } = fault;
+      const [what, why, mend] = [fault.what, fault.why, fault.mend].map(readable);
       const second = also === undefined ? {} : { also };
       if (isNew(where, what)) list.push({ code, severity: 'error', where, what, why, mend, ...second });
+      if (list.length >= ENOUGH) throw new TooManyFaults();
     },
     warning(where, { code, what, why, mend }) {
       isNew(where, what);
@@ -61,7 +70,7 @@ export function inOrder(diagnostics: readonly Diagnostic[], file: string): reado
     code: 'too-many',
     severity: 'error',
     where: sorted[MOST].where,
-    what: `${sorted.length - MOST} more errors are not shown.`,
+    what: `${sorted.length >= ENOUGH ? 'at least ' : ''}${sorted.length - MOST} more errors are not shown.`,
     why: `only the first ${MOST} are listed`,
     mend: 'mend those first, then check again',
   };

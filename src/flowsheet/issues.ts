@@ -92,11 +92,15 @@ function reportMissing(reading: Reading, path: Path, example: string): void {
 function unknownKey(key: string, owner: string, known: readonly string[]) {
   const near = nearest(key, known);
   const list = known.join(', ');
-  const merge = key === '<<' ? 'merging (<<) is not part of YAML 1.2; ' : '';
   return {
     code: 'unknown-key',
     what: `${owner} has an unknown key ${key}.`,
-    why: `${merge}${near === null ? (known.length === 0 ? 'it takes no settings' : `it takes: ${list}`) : `the nearest known key is ${near}`}`,
+    why:
+      near !== null
+        ? `the nearest known key is ${near}`
+        : known.length === 0
+          ? 'it takes no settings'
+          : `it takes: ${list}`,
     mend: near === null ? `take ${key} out` : `write ${near}`,
   };
 }
@@ -126,6 +130,12 @@ function likeliestBranch(branches: readonly (readonly Issue[])[]): readonly Issu
   return best !== undefined && score(best) < 100 ? best : undefined;
 }
 
+/** Words that YAML 1.1 took for true or false. */
+const booleans: ReadonlyMap<string, string> = new Map([
+  ...['yes', 'y', 'on'].map((word) => [word, 'true'] as const),
+  ...['no', 'n', 'off'].map((word) => [word, 'false'] as const),
+]);
+
 const typeNames: Readonly<Record<string, string>> = {
   object: 'a mapping (name: value)',
   record: 'a mapping (name: value)',
@@ -140,10 +150,14 @@ function describeMisfit(reading: Reading, issue: Issue, path: Path) {
   const found = shown(nodeAt(reading.root, path));
   if (issue.code === 'invalid_type') {
     const wanted = typeNames[issue.expected] ?? issue.expected;
+    const meant = issue.expected === 'boolean' ? booleans.get(found.toLowerCase()) : undefined;
     return {
       what: `${name}: ${found} does not fit.`,
-      why: `${wanted} is needed here`,
-      mend: `write ${wanted}`,
+      why:
+        meant === undefined
+          ? `${wanted} is needed here`
+          : `${found} is a text in YAML 1.2; ${wanted} is needed here`,
+      mend: `write ${meant ?? wanted}`,
     };
   }
   if (issue.code === 'invalid_value') {

@@ -16,6 +16,16 @@ export function checkName(findings: Findings, name: string, where: Place, noun: 
     });
     return false;
   }
+  if (name === 'constructor' || name === 'prototype') {
+    const why = `every object in JavaScript has a part called ${name}, so no formula may name one`;
+    findings.error(where, {
+      code: 'reserved-name',
+      what: `${noun} cannot be called ${name}.`,
+      why,
+      mend: 'choose another name',
+    });
+    return false;
+  }
   if (NAME.test(name)) return true;
   const tidy = name.replace(/[^A-Za-z0-9_]+/g, '_').replace(/^[^A-Za-z]+|_+$/g, '');
   findings.error(where, {

@@ -36,8 +36,7 @@ export function openMark(source: string, upTo: number): OpenMark | null {
 /** Index of the closing mark on the same line; null where there is none. */
 function endOfQuote(source: string, start: number): number | null {
   const quote = source[start];
-  const end = endOfLine(source, start);
-  for (let i = start + 1; i < end; i++) {
+  for (let i = start + 1; i < source.length && source[i] !== '\n' && source[i] !== '\r'; i++) {
     if (quote === '"' && source[i] === '\\') i++;
     else if (source[i] === quote) {
       if (quote === "'" && source[i + 1] === "'") i++;
@@ -48,6 +47,7 @@ function endOfQuote(source: string, start: number): number | null {
 }
 
 function endOfLine(source: string, from: number): number {
-  const found = source.slice(from).search(/[\r\n]/);
-  return found < 0 ? source.length : from + found;
+  let end = from;
+  while (end < source.length && source[end] !== '\n' && source[end] !== '\r') end++;
+  return end;
 }

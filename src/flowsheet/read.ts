@@ -11,12 +11,20 @@ import { readComponents, undeclaredGraphite } from './components.ts';
 import { readCorrelations } from './correlations.ts';
 import { readFeeds } from './feeds.ts';
 import { readFigures } from './figures.ts';
-import { createFindings, type Fault, inOrder, type Reading } from './findings.ts';
+import {
+  createFindings,
+  type Fault,
+  type Findings,
+  inOrder,
+  type Reading,
+  TooManyFaults,
+} from './findings.ts';
 import { formulaWorld } from './formula-scope.ts';
 import { readHandles } from './handles.ts';
 import { readHeader } from './header.ts';
 import { readLedger } from './ledger.ts';
 import { ledgerDefaults } from './ledger-defaults.ts';
+import { hasTooManyEntries } from './limits.ts';
 import { readObjective } from './objective.ts';
 import { createPlaceOf } from './place-of.ts';
 import { readPrices } from './prices.ts';
@@ -36,6 +44,8 @@ export interface ReadOptions {
   readonly set?: readonly string[];
   /** name of the case to apply */
   readonly case?: string | null;
+  /** largest size of the text in UTF-8 [bytes], 1 MiB if left out */
+  readonly maxBytes?: number;
 }
 
 export interface ReadResult {
@@ -48,20 +58,34 @@ export interface ReadResult {
 /** Read a flowsheet file: its text to a checked Flowsheet in SI, or to all that is wrong with it. Never throws on any text. */
 export async function readFlowsheet(text: string, options: ReadOptions): Promise<ReadResult> {
   const { file } = options;
-  const document = readYaml(text, file);
+  const document = readYaml(text, file, options.maxBytes);
   if (document.root === null) return { flowsheet: null, diagnostics: document.diagnostics };
   const findings = createFindings();
-  const caseName = options.case ?? null;
-  const changes = [
-    ...(caseName === null ? [] : chosenCase(document.root, caseName, findings)),
-    ...readSetChanges(options.set ?? [], findings),
-  ];
-  const root = applyChanges(document.root, changes, findings);
-  if ([...scalarsOf(root)].some((scalar) => needsUnitEngine(scalar.text))) await loadUnitEngine();
-  const flowsheet = readTree({ root, findings }, document.root, file, caseName, changes);
+  let flowsheet: Flowsheet | null = null;
+  try {
+    flowsheet = await readChanged(document.root, findings, options);
+  } catch (error) {
+    if (!(error instanceof TooManyFaults)) throw error;
+  }
   const diagnostics = inOrder([...document.diagnostics, ...findings.list], file);
   const sound = diagnostics.every((d) => d.severity === 'warning');
   return { flowsheet: sound ? flowsheet : null, diagnostics };
+}
+
+/** The file with the changes of its case and of `--set`, checked. */
+async function readChanged(
+  written: YamlNode,
+  findings: Findings,
+  { file, set = [], case: caseName = null }: ReadOptions,
+): Promise<Flowsheet | null> {
+  if (hasTooManyEntries({ root: written, findings })) return null;
+  const changes = [
+    ...(caseName === null ? [] : chosenCase(written, caseName, findings)),
+    ...readSetChanges(set, findings),
+  ];
+  const root = applyChanges(written, changes, findings);
+  for (const scalar of scalarsOf(root)) if (needsUnitEngine(scalar.text)) await loadUnitEngine();
+  return readTree({ root, findings }, written, file, caseName, changes);
 }
 
 function hasErrors({ list }: Reading['findings']): boolean {

@@ -8,8 +8,10 @@ import {
   YAMLException,
 } from 'js-yaml';
 import type { Diagnostic } from '../diagnostics/diagnostic.ts';
-import type { Place } from '../model/place.ts';
+import { isTooSmall } from '../units/no-quantity.ts';
+import { limits, sizeText } from './limits.ts';
 import { createPlacer, type Placer } from './text-places.ts';
+import { foreignDirective, isForeign, keyFault, secondDocument, trouble } from './yaml-refusals.ts';
 import type { YamlEntry, YamlNode, YamlScalar } from './yaml-tree.ts';
 import { syntaxTrouble } from './yaml-trouble.ts';
 
@@ -19,20 +21,21 @@ export interface YamlDocument {
   readonly diagnostics: readonly Diagnostic[];
 }
 
-/** Bounds that no real flowsheet meets, so that a hostile file costs neither time nor memory. */
-const yamlLimits = { characters: 1_000_000, depth: 30, aliases: 50, nodes: 50_000 } as const;
-
 /** Read YAML 1.2 (core schema) into a tree that knows its places. Never throws on any text. */
-export function readYaml(text: string, file: string): YamlDocument {
+export function readYaml(text: string, file: string, maxBytes: number = limits.bytes): YamlDocument {
   const source = text.replace(/^\uFEFF/, '');
-  const places = createPlacer(source, file);
-  if (source.length > yamlLimits.characters) {
-    const what = `the file is too large: ${(source.length / 1e6).toFixed(1)} million characters.`;
-    const why = 'a flowsheet has at most one million; this is hardly one';
-    return failed(trouble('file-too-large', places.at(0, 1), what, why, 'name the flowsheet file itself'));
+  const bytes = bytesOf(source, maxBytes);
+  if (bytes > maxBytes) {
+    const where = { file, line: 1, column: 1, length: 1 };
+    const what = `the file is larger than ${sizeText(maxBytes)}.`;
+    const why = `it has ${bytes} bytes; a plant of 2,000 blocks takes less than half a MiB`;
+    return failed(
+      trouble('file-too-large', where, what, why, 'name the flowsheet itself, or allow a larger file'),
+    );
   }
+  const places = createPlacer(source, file);
   try {
-    return buildTree(parseEvents(source, { maxDepth: yamlLimits.depth }), source, places);
+    return buildTree(parseEvents(source, { maxDepth: limits.depth }), source, places);
   } catch (error) {
     if (!(error instanceof YAMLException)) throw error;
     const found = syntaxTrouble(error.reason, source, error.mark?.position ?? 0);
@@ -40,14 +43,19 @@ export function readYaml(text: string, file: string): YamlDocument {
   }
 }
 
-/** A plain scalar by the YAML 1.2 core schema; hexadecimal, octal, infinite and not-a-number stay text. */
+/** Bytes in UTF-8; counted only where they may be too many. */
+function bytesOf(source: string, most: number): number {
+  return source.length * 3 <= most ? source.length : new TextEncoder().encode(source).length;
+}
+
+/** A plain scalar by the YAML 1.2 core schema; what no number can hold stays text, as do hexadecimal and octal. */
 function resolvePlain(text: string): string | number | boolean | null {
   if (/^(|~|null|Null|NULL)$/.test(text)) return null;
   if (/^(true|True|TRUE)$/.test(text)) return true;
   if (/^(false|False|FALSE)$/.test(text)) return false;
   if (/^[-+]?(\.\d+|\d+(\.\d*)?)([eE][-+]?\d+)?$/.test(text)) {
     const value = Number(text);
-    return Number.isFinite(value) ? value : text;
+    return Number.isFinite(value) && !isTooSmall(value, text) ? value : text;
   }
   return text;
 }
@@ -59,25 +67,18 @@ interface Build {
   readonly diagnostics: Diagnostic[];
   readonly anchors: Map<string, { readonly node: YamlNode; readonly size: number }>;
   next: number;
+  /** end of the last scalar, for the place of an empty value behind it */
+  scalarEnd: number;
   aliases: number;
   nodes: number;
 }
 
 function buildTree(events: readonly Event[], source: string, places: Placer): YamlDocument {
-  const documents = events.filter((event) => event.type === EVENT_ID.DOCUMENT).length;
-  if (documents > 1) {
-    const second = source.slice(1).search(/^---/m) + 1;
-    const mend = 'keep one flowsheet in one file: take out the lines --- and what follows the first document';
-    return failed(
-      trouble(
-        'two-documents',
-        places.at(Math.max(second, 0), 3),
-        'the file holds more than one document.',
-        'a line --- begins a new one',
-        mend,
-      ),
-    );
-  }
+  const starts = events.flatMap((event, i) => (event.type === EVENT_ID.DOCUMENT ? [i] : []));
+  const documents = starts.length;
+  if (documents > 1) return failed(secondDocument(events[starts[1] + 1], source, places));
+  const directive = events.find((event) => event.type === EVENT_ID.DOCUMENT)?.directives.find(isForeign);
+  if (directive !== undefined) return failed(foreignDirective(source, places));
   const build: Build = {
     events,
     source,
@@ -85,6 +86,7 @@ function buildTree(events: readonly Event[], source: string, places: Placer): Ya
     diagnostics: [],
     anchors: new Map(),
     next: 1,
+    scalarEnd: 0,
     aliases: 0,
     nodes: 0,
   };
@@ -102,13 +104,13 @@ function buildTree(events: readonly Event[], source: string, places: Placer): Ya
       ),
     );
   }
-  if (build.nodes > yamlLimits.nodes) {
-    const what = 'the file is too large once its aliases are written out.';
-    const why = `a flowsheet has at most ${yamlLimits.nodes} values`;
-    return failed(trouble('file-too-large', places.at(0, 1), what, why, 'take out the aliases (*name)'));
+  // A lost alias or entry leaves a hole that would only cause further messages.
+  const whole = !build.diagnostics.some((d) => d.code === 'yaml-alias' || d.code === 'yaml-key');
+  if (whole && build.nodes > limits.values) {
+    const what = `the file holds more than ${limits.values} values.`;
+    const why = 'a plant of 2,000 blocks has a tenth of that';
+    return failed(trouble('file-too-large', places.at(0, 1), what, why, 'divide it into several flowsheets'));
   }
-  // A lost alias leaves a hole that would only cause further messages.
-  const whole = !build.diagnostics.some((d) => d.code === 'yaml-alias');
   return { root: whole ? root : null, diagnostics: build.diagnostics };
 }
 
@@ -143,9 +145,10 @@ function readNode(build: Build): YamlNode {
 function readScalar(build: Build, event: ScalarEvent): YamlScalar {
   const { source, places } = build;
   if (event.valueStart < 0) {
-    const place = places.at(Math.max(0, previousEnd(build)), 1);
+    const place = places.at(build.scalarEnd, 1);
     return { kind: 'scalar', value: null, text: '', place, textPlace: null };
   }
+  build.scalarEnd = event.valueEnd;
   const text = getScalarValue(source, event);
   const plain = event.style === SCALAR_STYLE.PLAIN;
   const quoted = event.style === SCALAR_STYLE.SINGLE_QUOTED || event.style === SCALAR_STYLE.DOUBLE_QUOTED;
@@ -160,15 +163,6 @@ function readScalar(build: Build, event: ScalarEvent): YamlScalar {
     place: places.between(start, end),
     textPlace: straight ? places.between(event.valueStart, event.valueEnd) : null,
   };
-}
-
-/** End of the last thing before an empty value, which has no place of its own. */
-function previousEnd(build: Build): number {
-  for (let i = build.next - 2; i > 0; i--) {
-    const event = build.events[i];
-    if (event.type === EVENT_ID.SCALAR && event.valueEnd >= 0) return event.valueEnd;
-  }
-  return 0;
 }
 
 function readCollection(
@@ -190,31 +184,12 @@ function readCollection(
 function readEntry(build: Build, entries: Map<string, YamlEntry>): void {
   const key = readNode(build);
   const value = readNode(build);
-  if (key.kind !== 'scalar' || key.text === '') {
-    const what = 'a key is not a plain word.';
-    build.diagnostics.push(
-      trouble(
-        'yaml-key',
-        key.place,
-        what,
-        'every entry is written name: value',
-        'write a name before the colon',
-      ),
-    );
+  const fault = keyFault(key, value);
+  if (fault !== null) {
+    build.diagnostics.push(trouble('yaml-key', key.place, ...fault));
     return;
   }
-  if (key.text === '__proto__') {
-    build.diagnostics.push(
-      trouble(
-        'yaml-key',
-        key.place,
-        'the key __proto__ is refused.',
-        'it has a meaning of its own in JavaScript',
-        'choose another name',
-      ),
-    );
-    return;
-  }
+  if (key.kind !== 'scalar') return;
   const first = entries.get(key.text);
   if (first !== undefined) {
     const what = `the key ${key.text} stands here twice.`;
@@ -231,11 +206,7 @@ function readAlias(build: Build, start: number, end: number): YamlNode {
   const place = build.places.between(start - 1, end);
   const target = build.anchors.get(name);
   build.aliases++;
-  if (
-    target !== undefined &&
-    build.aliases <= yamlLimits.aliases &&
-    build.nodes + target.size <= yamlLimits.nodes
-  ) {
+  if (target !== undefined && build.aliases <= limits.aliases && build.nodes + target.size <= limits.values) {
     build.nodes += target.size;
     return target.node;
   }
@@ -248,7 +219,7 @@ function readAlias(build: Build, start: number, end: number): YamlNode {
         ]
       : [
           `the alias *${name} is one too many.`,
-          `at most ${yamlLimits.aliases} aliases and ${yamlLimits.nodes} values are read`,
+          `at most ${limits.aliases} aliases and ${limits.values} values are read`,
           'write the values themselves',
         ];
   const said = build.diagnostics.some(
@@ -260,8 +231,4 @@ function readAlias(build: Build, start: number, end: number): YamlNode {
 
 function failed(diagnostic: Diagnostic): YamlDocument {
   return { root: null, diagnostics: [diagnostic] };
-}
-
-function trouble(code: string, where: Place, what: string, why: string, mend: string): Diagnostic {
-  return { code, severity: 'error', where, what, why, mend };
 }

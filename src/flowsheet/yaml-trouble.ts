@@ -1,3 +1,5 @@
+import { invisibleIn } from '../units/invisible.ts';
+import { limits } from './limits.ts';
 import { openMark } from './open-mark.ts';
 
 /** What the YAML parser could not read, in our words. */
@@ -12,6 +14,11 @@ export interface SyntaxTrouble {
 
 /** Say in plain words why the parser stopped at `position`; its own reason where we have none. */
 export function syntaxTrouble(reason: string, source: string, position: number): SyntaxTrouble {
+  const tabbed = reason === 'deficient indentation' && lineAt(source, position).includes('\t');
+  if (tabbed) {
+    const why = 'a tab stands before a bracket on this line, and the columns cannot be told';
+    return trouble(source.lastIndexOf('\t', position), why, 'write blanks in place of tabs');
+  }
   const open = /indentation|end of the stream|quoted/.test(reason) ? openMark(source, position) : null;
   if (open !== null) {
     const quote = open.mark === '"' || open.mark === "'";
@@ -35,6 +42,7 @@ function trouble(position: number, why: string, mend: string): SyntaxTrouble {
 function explain(reason: string, source: string, position: number): readonly [string, string] {
   const before = source.slice(source.lastIndexOf('\n', position - 1) + 1, position);
   const at = source[position] ?? '';
+  const invisible = invisibleIn(lineAt(source, position));
   if (reason.includes('tab characters')) {
     return [
       'a tab stands where the line is indented, and tabs have no fixed width',
@@ -42,9 +50,15 @@ function explain(reason: string, source: string, position: number): readonly [st
     ];
   }
   if (reason.includes('maxDepth'))
-    return ['brackets or indents are nested deeper than any flowsheet needs', 'flatten the file'];
+    return [
+      `brackets or indents are nested more than ${limits.depth} deep, and no flowsheet needs that`,
+      'flatten the file',
+    ];
   if (reason.includes('null byte') || reason.includes('non-printable')) {
     return ['it contains characters that are no text', 'is this the flowsheet? save it as plain text, UTF-8'];
+  }
+  if (invisible !== null) {
+    return [`the line has the invisible character ${invisible.name} in it`, 'type the line anew'];
   }
   if (at === '%' || at === '@' || at === '`') {
     return [`a value cannot begin with ${at}`, `put the value into quotes, or write a number before ${at}`];
@@ -65,6 +79,12 @@ function explain(reason: string, source: string, position: number): readonly [st
     lower(reason),
     'look for a bracket, a quotation mark, a colon or an indent that is wrong here or just above',
   ];
+}
+
+function lineAt(source: string, position: number): string {
+  const start = Math.max(source.lastIndexOf('\n', position - 1), source.lastIndexOf('\r', position - 1)) + 1;
+  const end = source.slice(start).search(/[\r\n]/);
+  return end < 0 ? source.slice(start) : source.slice(start, start + end);
 }
 
 function lower(text: string): string {

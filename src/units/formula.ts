@@ -1,6 +1,7 @@
 import { formulaFunctions } from './formula-functions.ts';
 import { type FormulaFault, FormulaRefusal, refuse, type Token, tokensOf } from './formula-tokens.ts';
 import { nearest } from './nearest.ts';
+import { isTooSmall } from './no-quantity.ts';
 
 export type { FormulaFault };
 
@@ -111,7 +112,7 @@ function readSigned(parser: Parser): Evaluate {
     throw refuse(
       here,
       'the formula nests too deep.',
-      'so many brackets or signs cannot be meant',
+      `more than ${DEEPEST} brackets or signs inside each other cannot be meant`,
       'split it into figures',
     );
   }
@@ -144,13 +145,13 @@ function readAtom(parser: Parser): Evaluate {
   parser.at++;
   if (token.kind === 'number') {
     const value = Number(token.text);
-    if (Number.isFinite(value)) return () => value;
-    throw refuse(
-      token,
-      `${token.text} is too large.`,
-      'it is beyond what a number can hold',
-      'write a smaller number',
-    );
+    const [size, mend] = Number.isFinite(value)
+      ? ['small', 'write a larger number, or 0']
+      : ['large', 'write a smaller number'];
+    if (size === 'large' || isTooSmall(value, token.text)) {
+      throw refuse(token, `${token.text} is too ${size}.`, 'it is beyond what a number can hold', mend);
+    }
+    return () => value;
   }
   if (token.kind === 'name') {
     const next = peek(parser);

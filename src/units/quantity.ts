@@ -1,5 +1,6 @@
 import { type Dimension, dimensions } from './dimension.ts';
 import { nearest } from './nearest.ts';
+import { hidesSomething, isTooSmall, LONGEST_QUANTITY, whyNoQuantity } from './no-quantity.ts';
 import { engineFactor, isUnitText } from './unit-engine.ts';
 import { dimensionsOf, knownUnits, type UnitFactor, unitFactor } from './unit-table.ts';
 
@@ -41,7 +42,8 @@ export function parseQuantity(text: string, dimension: Dimension, limits: Limits
   const scale = unitScale(unit, dimension);
   if (scale === undefined) return wrongUnit(text.trim(), unit, dimension);
   const value = (number + scale.offset) * scale.factor;
-  if (!Number.isFinite(value)) return noQuantity(text, dimension);
+  const lost = !Number.isFinite(value) || isTooSmall(value, `${number + scale.offset}`);
+  if (lost) return noQuantity(text, dimension, value);
   return withinLimits(value, text.trim(), dimension, limits);
 }
 
@@ -55,7 +57,8 @@ export function withinLimits(
   const facts = dimensions[dimension];
   const natural = beyond(value, facts);
   const asked = beyond(value, limits);
-  if (natural === null && asked === null) return { ok: true, value };
+  // Adding 0 turns -0 into 0: no sheet should show a minus there.
+  if (natural === null && asked === null) return { ok: true, value: value + 0 };
   const [direction, bound, open] = (natural ?? asked)!;
   const limit = dimension === 'temperature' && bound === 0 ? '0 K' : formatQuantity(bound, dimension);
   const asPerCent =
@@ -74,7 +77,7 @@ export function withinLimits(
 
 /** True where a text is a number with a unit that only mathjs can know. */
 export function needsUnitEngine(text: string): boolean {
-  const split = text.length <= 80 ? splitQuantity(text) : null;
+  const split = splitQuantity(text);
   return split !== null && isUnitText(split.unit) && dimensionsOf(split.unit).length === 0;
 }
 
@@ -110,11 +113,14 @@ export function unitScale(unit: string, dimension: Dimension): UnitFactor | unde
 
 /** Number and unit of a text; null where it does not begin with a decimal number. The unit may be empty. */
 export function splitQuantity(text: string): { readonly number: number; readonly unit: string } | null {
+  if (text.length > LONGEST_QUANTITY || hidesSomething(text)) return null;
   const match = /^\s*([+-]?(?:\d+\.?\d*|\.\d+)(?:[eE][+-]?\d+)?)(.*)$/s.exec(text);
   if (match === null) return null;
   const number = Number(match[1]);
   const rest = match[2];
-  if (!Number.isFinite(number) || /^([\d,._]|x[\dA-Fa-f])/.test(rest)) return null;
+  const isNoNumber = !Number.isFinite(number) || isTooSmall(number, match[1]);
+  if (isNoNumber || /^([\d,._]|[:-]\d)/.test(rest)) return null;
+  if (number === 0 && /^[xXoObB][\dA-Fa-f]/.test(rest) && !/^bar/i.test(rest)) return null;
   return { number, unit: tidyUnit(rest) };
 }
 
@@ -203,25 +209,13 @@ function wrongUnit(text: string, unit: string, dimension: Dimension): QuantityFa
   return { ...fault, code: 'unknown-unit', why, mend: text.includes(unit) ? mend : write };
 }
 
-function noQuantity(text: string, dimension: Dimension): QuantityFault {
-  const { noun, examples } = dimensions[dimension];
+function noQuantity(text: string, dimension: Dimension, valueInSi?: number): QuantityFault {
+  const { noun } = dimensions[dimension];
   const shown = text.trim().length > 40 ? `${text.trim().slice(0, 40)}...` : text.trim();
-  const fault = {
+  return {
     ok: false,
     code: 'no-quantity',
     what: `"${shown}" is no ${noun.replace(/^an? /, '')}.`,
-  } as const;
-  const comma = /^\s*[+-]?\d+,\d+/.test(text);
-  if (comma || /^\s*[+-]?\d+_\d/.test(text)) {
-    return {
-      ...fault,
-      why: 'a number has a decimal point and no marks between its thousands',
-      mend: `write it as in ${examples[0]}: no comma, no underscore`,
-    };
-  }
-  return {
-    ...fault,
-    why: `${noun} is a decimal number${dimensions[dimension].si === '' ? '' : ' followed by its unit'}`,
-    mend: `write it as in ${examples.join(' or ')}`,
+    ...whyNoQuantity(text, dimension, valueInSi),
   };
 }

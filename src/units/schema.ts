@@ -234,5 +234,6 @@ function optional(key: string, value: unknown): Record<string, unknown> {
 function shown(raw: unknown): string {
   if (typeof raw === 'string') return raw.length > 40 ? `${raw.slice(0, 40)}...` : raw;
   if (Array.isArray(raw)) return 'a list';
+  if (raw === null) return 'an empty value';
   return typeof raw === 'object' ? 'a mapping' : String(raw);
 }

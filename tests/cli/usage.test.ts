@@ -210,11 +210,11 @@ describe('a command line that cannot be followed is told in four parts with exit
     },
     {
       words: ['check', 'picture.yaml'],
-      message: `command line:1:17 error not-text
-  picture.yaml is not a text file.
-   1 | looptally check picture.yaml
-     |                 ^^^^^^^^^^^^
-  why:  it holds bytes that are no UTF-8 text; a flowsheet is a YAML file
+      message: `picture.yaml:1:1 error not-text
+  picture.yaml is no text in UTF-8.
+   1 | \ufffdPNG???\ufffd
+     | ^
+  why:  byte 1 of the file is 0x89, which is no character of UTF-8
   mend: name the YAML file, or save it again with the encoding UTF-8
 
 1 error
@@ -222,12 +222,12 @@ describe('a command line that cannot be followed is told in four parts with exit
     },
     {
       words: ['check', 'zeros.yaml'],
-      message: `command line:1:17 error not-text
-  zeros.yaml is not a text file.
-   1 | looptally check zeros.yaml
-     |                 ^^^^^^^^^^
-  why:  it holds bytes that are no UTF-8 text; a flowsheet is a YAML file
-  mend: name the YAML file, or save it again with the encoding UTF-8
+      message: `zeros.yaml:1:13 error not-text
+  zeros.yaml is no text in UTF-8.
+   1 | looptally: 1?
+     |             ^
+  why:  byte 13 of the file is 0x00, which no text has
+  mend: name the YAML file, or take that character out
 
 1 error
 `,
