@@ -6,7 +6,7 @@ import { loadUnitEngine, needsUnitEngine } from '../units/quantity.ts';
 import { readAims } from './aims.ts';
 import { type Declared, type ReadBlock, readBlocks } from './blocks.ts';
 import { checkCases, chosenCase } from './cases.ts';
-import { applyChanges, type Change, readSetChanges, SET_FILE } from './changes.ts';
+import { applyChanges, type Change, mendInFull, readSetChanges, SET_FILE } from './changes.ts';
 import { readComponents, undeclaredGraphite } from './components.ts';
 import { readCorrelations } from './correlations.ts';
 import { readFeeds } from './feeds.ts';
@@ -58,7 +58,8 @@ export async function readFlowsheet(text: string, options: ReadOptions): Promise
   const root = applyChanges(document.root, changes, findings);
   if ([...scalarsOf(root)].some((scalar) => needsUnitEngine(scalar.text))) await loadUnitEngine();
   const flowsheet = readTree({ root, findings }, document.root, file, caseName, changes);
-  const diagnostics = inOrder([...document.diagnostics, ...findings.list], file);
+  const told = findings.list.map((finding) => mendInFull(finding, changes));
+  const diagnostics = inOrder([...document.diagnostics, ...told], file);
   const sound = diagnostics.every((d) => d.severity === 'warning');
   return { flowsheet: sound ? flowsheet : null, diagnostics };
 }
