@@ -1,8 +1,7 @@
 import { z } from 'zod';
-import { PassTrouble } from '../diagnostics/diagnostic.ts';
 import { copyStream, type StreamState } from '../model/stream.ts';
 import { count, fraction, plainNumber, quantity } from '../units/schema.ts';
-import type { BlockKind, SettingsFault } from './block.ts';
+import type { BlockFault, BlockKind, SettingsFault } from './block.ts';
 import { exactlyOne } from './checks.ts';
 import { hotDischarge, type IdleCooler, idleIntercooling, liquidAtSuction } from './compressor-warnings.ts';
 import { createKnockOut } from './knock-out.ts';
@@ -73,6 +72,9 @@ const EFFICIENCY = 0.75;
  * Balance: each stage takes its work adiabatically (see machine-stage.ts); the coolers take out heat between
  * stages; the liquid that the drums behind them take out is let down to the first drum and leaves there (see
  * knock-out.ts). Power drawn = shaft power / drive efficiency; drive losses are not given to the process.
+ *
+ * Inside a recycle the suction pressure is a guess, and may be above a set `pressure` before the recycle has come round: the
+ * gas is then let down as by a valve. If it is still so when the loop has closed, that is a fault.
  */
 export const compressor: BlockKind<Settings> = {
   kind: 'compressor',
@@ -94,6 +96,7 @@ export const compressor: BlockKind<Settings> = {
     if (!setting.knock_out) return true;
     return outlet === 'condensate' ? role !== 'gas' : role !== 'solid';
   },
+  mayHoldBack: ({ pressure }) => pressure !== undefined,
   asksForHeat: (setting, asked) => asked || setting.knock_out === true,
   create(setting, { mixture }) {
     const machines: MachineStage[] = [];
@@ -109,12 +112,12 @@ export const compressor: BlockKind<Settings> = {
     /** that let the pressure down and cooled nothing */
     let idleDrop = false;
     let ratio = 1;
+    /** suction pressure above that of the discharge, which lets the gas down; null where the machine compresses [Pa] */
+    let aboveDischargePa: number | null = null;
     return {
       pass([inlet], [out, condensate]) {
         const stages = setting.stages ?? 1;
-        const target = dischargePressure(setting, inlet!.pressurePa);
         const drop = setting.intercooling === undefined ? 0 : (setting.pressure_drop_per_cooler ?? 0);
-        ratio = stageRatio(inlet!.pressurePa, target, stages, drop);
         shaftW = 0;
         coolingW = 0;
         hottestK = 0;
@@ -124,6 +127,16 @@ export const compressor: BlockKind<Settings> = {
         wetBetween = false;
         copyStream(inlet!, out!);
         drums.start();
+        const target = dischargePressure(setting, inlet!.pressurePa);
+        if (target < inlet!.pressurePa * (1 - 1e-9)) {
+          aboveDischargePa = inlet!.pressurePa;
+          out!.pressurePa = target;
+          mixture.settleAtEnthalpy(out!, inlet!.enthalpyW);
+          if (condensate) drums.collect(condensate, out!.temperatureK, target);
+          return;
+        }
+        aboveDischargePa = null;
+        ratio = stageRatio(inlet!.pressurePa, target, stages, drop);
         let firstDrumPa = inlet!.pressurePa;
         for (let k = 1; k <= stages; k++) {
           if (k > 1) {
@@ -146,7 +159,7 @@ export const compressor: BlockKind<Settings> = {
           followPressure(matrix, mixture.size, pressureSlope);
           return true;
         }
-        if (setting.knock_out || idleDrop) return false;
+        if (setting.knock_out || idleDrop || aboveDischargePa !== null) return false;
         for (let i = 0; i < width; i++) matrix[i * width + i] = 1;
         const train: Train = {
           stages: machines.slice(0, setting.stages ?? 1),
@@ -169,6 +182,7 @@ export const compressor: BlockKind<Settings> = {
             intercooling_duty_kW: coolingW / 1e3,
             ...(outlets[1] ? { condensate_kmol_h: mixture.total(outlets[1]) * 3.6 } : {}),
           },
+          faults: aboveDischargePa === null ? [] : [fallingPressure(setting.pressure!, aboveDischargePa)],
           warnings: [
             ...(wetAtInlet
               ? [liquidAtSuction('enters a stage; take it out before it with a condenser')]
@@ -224,15 +238,20 @@ export const compressor: BlockKind<Settings> = {
 };
 
 function dischargePressure(setting: Settings, inletPa: number): number {
-  const target =
-    setting.pressure ?? (setting.ratio ? inletPa * setting.ratio : inletPa + (setting.pressure_rise ?? 0));
-  if (target >= inletPa * (1 - 1e-9)) return target;
-  throw new PassTrouble(
-    'pressure-fall',
-    `The compressor is set to ${(target / 1e5).toFixed(3)} bar, below its suction of ${(inletPa / 1e5).toFixed(3)} bar.`,
-    'a compressor raises the pressure',
-    'raise the discharge pressure, or use a valve',
+  return (
+    setting.pressure ?? (setting.ratio ? inletPa * setting.ratio : inletPa + (setting.pressure_rise ?? 0))
   );
+}
+
+/** Only a set pressure can lie below the suction: ratio and rise are 1 and 0 at least. */
+function fallingPressure(dischargePa: number, suctionPa: number): BlockFault {
+  return {
+    code: 'pressure-fall',
+    path: ['pressure'],
+    what: `The compressor is set to ${(dischargePa / 1e5).toFixed(3)} bar, below its suction of ${(suctionPa / 1e5).toFixed(3)} bar.`,
+    why: 'a compressor raises the pressure',
+    mend: 'raise the discharge pressure, or use a valve',
+  };
 }
 
 function coolingWithoutStages(setting: Settings): SettingsFault[] {

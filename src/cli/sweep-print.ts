@@ -1,4 +1,5 @@
-import { sweepJsonRows, sweepText } from '../sheets/sweep.ts';
+import { printedSweep } from '../sheets/printed-sweep.ts';
+import { sweepJsonRows } from '../sheets/sweep.ts';
 import type { PathTable } from '../study/sweep.ts';
 import { print } from './terminal.ts';
 
@@ -10,15 +11,19 @@ interface End {
 }
 
 /** The table on standard output, as it comes: aligned for reading, or one JSON value. */
-export function printedTable(heads: readonly string[], json: boolean) {
-  return json ? asJson(heads) : asText(heads);
+export function printedTable(heads: readonly string[], settings: number, json: boolean) {
+  return json ? asJson(heads) : asText(heads, settings);
 }
 
-function asText(heads: readonly string[]) {
-  print(sweepText.head(heads));
+/** On a terminal the table fits its width; what is piped into something else has its names in the heads. */
+function asText(heads: readonly string[], settings: number) {
+  const width = process.stdout.isTTY === true ? process.stdout.columns : Number.POSITIVE_INFINITY;
+  const printed = printedSweep(heads, settings, width);
+  print(printed.before);
   return {
-    add: (table: PathTable) => print(sweepText.rows(table, heads)),
+    add: (table: PathTable) => print(printed.rows(table)),
     end: ({ note }: End) => {
+      print(printed.after());
       if (note.length > 0) print(`\n${note.map((line) => `${line}\n`).join('')}`);
     },
   };

@@ -1,5 +1,4 @@
-import { nearest } from '../diagnostics/nearest.ts';
-import { formulaRoots, misnamed, worldOf } from '../flowsheet/formula-scope.ts';
+import { formulaRoots, misnamed, nearestName, worldOf } from '../flowsheet/formula-scope.ts';
 import type { Flowsheet } from '../model/flowsheet.ts';
 import { createCaseRunner } from '../study/case-runner.ts';
 import { createPlantScope } from '../tally/scope.ts';
@@ -112,7 +111,7 @@ function faultOf(
     const known = typeof value === 'object' && value !== null ? Object.keys(value) : [];
     if (!known.includes(part)) {
       const path = parts.slice(0, k).join('.');
-      const near = nearest(part, known);
+      const near = nearestName(part, known);
       return [
         {
           code: 'unknown-figure',
@@ -123,7 +122,12 @@ function faultOf(
               : near === null
                 ? `${path} has the parts ${known.join(', ')}`
                 : `the nearest is ${near}`,
-          mend: `write ${[path, near ?? known[0], ...parts.slice(k + 1)].filter((p) => p !== undefined).join('.')}`,
+          mend:
+            near !== null
+              ? `write ${[path, near, ...parts.slice(k + 1)].join('.')}`
+              : known.length === 0
+                ? `write ${path}`
+                : `write ${path}.NAME, NAME one of these`,
           at: text,
         },
       ];

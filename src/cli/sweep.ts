@@ -2,7 +2,7 @@ import { rmSync } from 'node:fs';
 import { type Command, InvalidArgumentError } from 'commander';
 import type { Flowsheet } from '../model/flowsheet.ts';
 import { createGrid, type Grid, pathsOfPart } from '../study/grid.ts';
-import { createReading, type StudyReading } from '../study/reading.ts';
+import { createReading, type ReadingColumn, type StudyReading } from '../study/reading.ts';
 import { sweepHeads } from '../study/sweep.ts';
 import { limitsToRecord } from '../study/swept-table.ts';
 import { collect, fileCommand, positiveInteger } from './common-options.ts';
@@ -62,7 +62,11 @@ export function sweepCommand(): Command {
     )
     .option('--workers <number>', 'threads that share the work; the table is the same', positiveInteger)
     .option('--resume', 'go on with a sweep that was stopped, however it was')
-    .option('--part <k/n>', 'only this slice of the grid; looptally gather joins the slices', partOf)
+    .option(
+      '--part <k/n>',
+      'only this slice of the grid; looptally gather joins the slices. Of a small grid they are uneven: 8 rows or more stay together',
+      partOf,
+    )
     .option('--yes', 'a grid of more than a million points is meant')
     .action(runSweep);
 }
@@ -100,7 +104,10 @@ async function runSweep(file: string, options: SweepOptions): Promise<void> {
   );
   const [from, to] = pathsOfPart(grid, part.part, part.of);
   const isWhole = part.of === 1;
-  const columns = [...axes.map(({ path: name, unit }) => ({ name, unit })), ...record.map(unitless)];
+  const columns = [
+    ...axes.map(({ path: name, unit }) => ({ name, unit, swept: true })),
+    ...record.map(recorded),
+  ];
   const note =
     isWhole && options.over === undefined && options.record === undefined ? flowsheet.study?.note : [];
   const reading = createReading(note ?? [], columns);
@@ -138,7 +145,7 @@ interface Tallied {
 }
 
 async function toStandardOutput({ job, grid, from, to, reading, options }: Run): Promise<Tallied> {
-  const table = printedTable(sweepHeads(planOf(job)), options.json === true);
+  const table = printedTable(sweepHeads(planOf(job)), job.axes.length, options.json === true);
   const progress = await createProgress(rowsOf(grid, from, to), 0, options.quiet === true || isTerminal());
   const count = counter();
   await makePaths(job, { from, to, workers: options.workers }, (rows) => {
@@ -189,8 +196,15 @@ async function toFile(run: Run & { readonly out: string }): Promise<Tallied> {
   const note = reading.lines();
   if (options.json) printJson({ table: out, cases: count.cases, not_converged: count.notClosed, note });
   else print(note.map((line) => `${line}\n`).join(''));
-  if (!options.quiet && !options.json) say(`${out}: ${summary(count)}`);
+  if (!options.quiet && !options.json) say(`${out}: ${summary(count)}${share(run)}`);
   return count;
+}
+
+/** What a slice has of the whole; silent for the whole. */
+function share(run: Run): string {
+  if (run.part.of === 1) return '';
+  const { first, last, total } = sliceMark(run, '');
+  return `; rows ${first} to ${last} of ${total}`;
 }
 
 function sliceMark({ grid, from, to, part }: Run, sweep: string) {
@@ -251,8 +265,8 @@ function recordWanted(flowsheet: Flowsheet, { record }: SweepOptions): string[] 
   return study.length > 0 ? study.map(({ text }) => text.trim()) : usualRecord(flowsheet);
 }
 
-function unitless(name: string): { name: string; unit: string } {
-  return { name, unit: '' };
+function recorded(name: string): ReadingColumn {
+  return { name, unit: '', swept: false };
 }
 
 const WHOLE: Part = { part: 1, of: 1 };

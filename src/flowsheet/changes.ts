@@ -1,8 +1,9 @@
+import type { Diagnostic } from '../diagnostics/diagnostic.ts';
 import { nearest } from '../diagnostics/nearest.ts';
 import type { Place } from '../model/place.ts';
 import type { Fault, Findings } from './findings.ts';
 import { readYaml } from './yaml-document.ts';
-import { child, entriesOf, type Path, withNode, type YamlNode } from './yaml-tree.ts';
+import { child, entriesOf, nodeAt, type Path, withNode, type YamlNode } from './yaml-tree.ts';
 
 /** Name of the pseudo file that values of `--set` lie in: one line for each. */
 export const SET_FILE = '--set';
@@ -69,6 +70,11 @@ export function readCaseChanges(caseNode: YamlNode | undefined): Change[] {
 export function applyChanges(root: YamlNode, changes: readonly Change[], findings: Findings): YamlNode {
   return changes.reduce((tree, change) => {
     const path = settingPath(tree, change.path);
+    const stranger = 'fault' in path ? null : strangeOutlet(tree, path.path, change.path);
+    if (stranger !== null) {
+      findings.error(change.pathPlace, stranger);
+      return tree;
+    }
     if (!('fault' in path)) {
       const taken = change.value.kind === 'scalar' && change.value.value === null;
       const changed = withNode(tree, path.path, taken ? null : change.value, change.pathPlace);
@@ -117,12 +123,75 @@ export function settingPath(
       fault: {
         ...notASetting(text),
         why: `the nearest known name is ${near}`,
-        mend: `write ${[near, ...rest].join('.')}`,
+        mend: `write ${nearestPath(root, [near, ...rest])}`,
       },
     };
   }
   const why = `a path begins with one of: ${[...names, ...roots].join(', ')}`;
-  return { fault: { ...notASetting(text), why } };
+  const meant = pathsEndingIn(root, parts);
+  const mend = meant.length === 0 ? {} : { mend: `write ${meant.slice(0, MOST_MEANT).join(' or ')}` };
+  return { fault: { ...notASetting(text), why, ...mend } };
+}
+
+/** More paths than this are no help. */
+const MOST_MEANT = 4;
+
+/** A path whose first name is known, the others mended as far as the file has names that are near. */
+function nearestPath(root: YamlNode, parts: readonly string[]): string {
+  const [first] = parts;
+  let node =
+    child(child(root, 'blocks'), first!) ?? child(child(root, 'feeds'), first!) ?? child(root, first!);
+  const mended = parts.slice(1).map((part) => {
+    const keys = entriesOf(node).map(({ key }) => key);
+    const name = keys.includes(part) ? part : (nearest(part, keys) ?? part);
+    node = child(node, name);
+    return name;
+  });
+  return [first, ...mended].join('.');
+}
+
+/** The settings in the file that a path without the name of its block or feed may mean. */
+function pathsEndingIn(root: YamlNode, parts: readonly string[]): string[] {
+  return ['blocks', 'feeds'].flatMap((section) =>
+    entriesOf(child(root, section)).flatMap(({ key, value }) => {
+      const end = parts.reduce<YamlNode | undefined>((at, part) => child(at, part), value);
+      return end === undefined ? [] : [[key, ...parts].join('.')];
+    }),
+  );
+}
+
+/**
+ * The outlets of a splitter or separator are named where streams begin at them: a change brings no new one, so what is not
+ * there is a slip. Null where the path is none of them.
+ */
+function strangeOutlet(root: YamlNode, path: Path, text: string): Fault | null {
+  const [section, block, list, outlet] = path;
+  if (section !== 'blocks' || path.length !== 4 || !OUTLET_LISTS.includes(String(list))) return null;
+  const known = entriesOf(nodeAt(root, [section, block!, list!])).map(({ key }) => key);
+  if (known.length === 0 || known.includes(String(outlet))) return null;
+  const near = nearest(String(outlet), known) ?? (known.length === 1 ? known[0]! : null);
+  return {
+    ...notASetting(text),
+    why: `no stream begins at an outlet ${outlet}; ${block} has ${known.join(', ')}`,
+    mend: near === null ? 'name one of these' : `write ${[block, list, near].join('.')}`,
+  };
+}
+
+const OUTLET_LISTS: readonly string[] = ['fractions', 'flows', 'recover'];
+
+/** Findings whose mend is the name of one key. */
+const NAMES_A_KEY: readonly string[] = ['unknown-key', 'unknown-reaction', 'unknown-component'];
+
+/** The mend of a slip inside a path that was typed, with the whole path: what is shown can be typed again. */
+export function mendInFull(finding: Diagnostic, changes: readonly Change[]): Diagnostic {
+  const change = changes.find(
+    ({ pathPlace: at }) => at.file === finding.where.file && at.line === finding.where.line,
+  );
+  const name = /^write ([A-Za-z_][\w-]*)$/.exec(finding.mend)?.[1];
+  if (change === undefined || name === undefined || !NAMES_A_KEY.includes(finding.code)) return finding;
+  const parts = change.path.split('.').map((part) => part.trim());
+  const at = parts.findLastIndex((part) => part !== name && nearest(part, [name]) !== null);
+  return at < 0 ? finding : { ...finding, mend: `write ${parts.with(at, name).join('.')}` };
 }
 
 function notASetting(text: string): Fault {

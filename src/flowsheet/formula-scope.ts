@@ -121,14 +121,15 @@ function follow(parts: readonly string[], world: FormulaWorld): Fault | null {
       continue;
     }
     const known = Object.keys(tree);
-    const near = nearest(part, known);
+    const near = nearestName(part, known);
     const list = known.length === 0 ? 'there are none' : `known are ${shortened(known)}`;
+    const write = (name: string) => [...parts.slice(0, i), name, ...parts.slice(i + 1)].join('.');
     return {
       code: 'unknown-figure',
       what: `${[...parts.slice(0, i), part].join('.')} is not known.`,
       why:
         near === null ? `${path} has no ${part}; ${list}` : `${path} has no ${part}; the nearest is ${near}`,
-      mend: `write ${[...parts.slice(0, i), near ?? known[0] ?? '...', ...parts.slice(i + 1)].join('.')}`,
+      mend: near !== null ? `write ${write(near)}` : oneOf(known, path),
     };
   }
   if (tree === 'number') return null;
@@ -138,7 +139,7 @@ function follow(parts: readonly string[], world: FormulaWorld): Fault | null {
     code: 'unknown-figure',
     what: `${parts.join('.')} is not one number.`,
     why: known.length === 0 ? 'there is nothing in it' : `it has the parts ${shortened(known)}`,
-    mend: `write ${parts.join('.')}.${known[0] ?? '...'}`,
+    mend: known.length === 1 ? `write ${parts.join('.')}.${known[0]}` : oneOf(known, parts.join('.')),
   };
 }
 
@@ -155,6 +156,19 @@ function misspeltDetail(parts: readonly string[], at: number): Fault | null {
     why: `the nearest is ${near}`,
     mend: `write ${path}`,
   };
+}
+
+/** What to write where nothing is near: the choice, for one picked for the user would be a guess. */
+function oneOf(known: readonly string[], path: string): string {
+  return known.length === 0 ? 'take it out' : `write ${path}.NAME, NAME one of ${shortened(known)}`;
+}
+
+/** The name most likely meant: a slip of the pen, or the one name that holds what was written (yield, overall_yield). */
+export function nearestName(part: string, known: readonly string[]): string | null {
+  const near = nearest(part, known);
+  if (near !== null || part.length < 4) return near;
+  const holding = known.filter((name) => name.toLowerCase().includes(part.toLowerCase()));
+  return holding.length === 1 ? holding[0]! : null;
 }
 
 function shortened(names: readonly string[]): string {

@@ -6,7 +6,7 @@ import { loadUnitEngine, needsUnitEngine } from '../units/quantity.ts';
 import { readAims } from './aims.ts';
 import { type Declared, type ReadBlock, readBlocks } from './blocks.ts';
 import { checkCases, chosenCase } from './cases.ts';
-import { applyChanges, type Change, readSetChanges, SET_FILE } from './changes.ts';
+import { applyChanges, type Change, mendInFull, readSetChanges, SET_FILE } from './changes.ts';
 import { readComponents, undeclaredGraphite } from './components.ts';
 import { readCorrelations } from './correlations.ts';
 import { readFeeds } from './feeds.ts';
@@ -62,27 +62,32 @@ export async function readFlowsheet(text: string, options: ReadOptions): Promise
   if (document.root === null) return { flowsheet: null, diagnostics: document.diagnostics };
   const findings = createFindings();
   let flowsheet: Flowsheet | null = null;
+  const changes: Change[] = [];
   try {
-    flowsheet = await readChanged(document.root, findings, options);
+    flowsheet = await readChanged(document.root, findings, options, changes);
   } catch (error) {
     if (!(error instanceof TooManyFaults)) throw error;
   }
-  const diagnostics = inOrder([...document.diagnostics, ...findings.list], file);
+  const told = findings.list.map((finding) => mendInFull(finding, changes));
+  const diagnostics = inOrder([...document.diagnostics, ...told], file);
   const sound = diagnostics.every((d) => d.severity === 'warning');
   return { flowsheet: sound ? flowsheet : null, diagnostics };
 }
 
-/** The file with the changes of its case and of `--set`, checked. */
+/**
+ * The file with the changes of its case and of `--set`, checked.
+ *
+ * @param changes  written: those changes
+ */
 async function readChanged(
   written: YamlNode,
   findings: Findings,
   { file, set = [], case: caseName = null }: ReadOptions,
+  changes: Change[],
 ): Promise<Flowsheet | null> {
   if (hasTooManyEntries({ root: written, findings })) return null;
-  const changes = [
-    ...(caseName === null ? [] : chosenCase(written, caseName, findings)),
-    ...readSetChanges(set, findings),
-  ];
+  if (caseName !== null) changes.push(...chosenCase(written, caseName, findings));
+  changes.push(...readSetChanges(set, findings));
   const root = applyChanges(written, changes, findings);
   for (const scalar of scalarsOf(root)) if (needsUnitEngine(scalar.text)) await loadUnitEngine();
   return readTree({ root, findings }, written, file, caseName, changes);

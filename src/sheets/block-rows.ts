@@ -41,6 +41,7 @@ export function blockDetails(details: Readonly<Record<string, unknown>>): string
   const alone: Record<string, unknown> = {};
   const groups: string[] = [];
   for (const [key, value] of Object.entries(details)) {
+    if (key.includes(CARBON) && !carbonMatters(details)) continue;
     const parts = severalParts(key, value);
     if (parts === null) alone[key] = value;
     else if (!isToldAlready(parts, details))
@@ -48,6 +49,16 @@ export function blockDetails(details: Readonly<Record<string, unknown>>): string
   }
   const first = flat(alone, '', null).join(', ');
   return first === '' ? groups : [first, ...groups];
+}
+
+const CARBON = 'carbon_';
+/** A gas with less of what carbon needs, as the traces of methane in an ammonia loop, is not worth a word [-]. */
+const SMALL_ACTIVITY = 1e-3;
+
+/** Is a reactor anywhere near laying down carbon? */
+function carbonMatters(details: Readonly<Record<string, unknown>>): boolean {
+  const activities = [details['carbon_activity_inlet'], details['carbon_activity_outlet']];
+  return activities.some((activity) => typeof activity === 'number' && activity >= SMALL_ACTIVITY);
 }
 
 /** Is there one part only, every number of which stands alone as well (a condenser with one evaporator)? */

@@ -1,5 +1,6 @@
 import type { Comparison } from '../study/compare.ts';
 import { natural } from '../study/compare.ts';
+import { nameInFormulas } from '../tally/figure-leaves.ts';
 import { cellText, columnLine, differingFigures, displayOf, figureName, unitOf } from './compare.ts';
 import { csvCell, FRACTION } from './csv.ts';
 import { shownStep, shownValue } from './figure-display.ts';
@@ -48,7 +49,7 @@ export function compareCsv(found: Comparison): string {
     ]),
     ...figures.map((row) => [
       'figure',
-      row.figure,
+      nameInFormulas(row.figure),
       row.moved === null ? csvUnit(displayOf(found, row).unit) : row.moved.unit,
       ...row.values,
       ...row.differences.slice(1),

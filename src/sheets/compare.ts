@@ -1,6 +1,7 @@
 import { toJson } from '../diagnostics/json.ts';
 import { type Comparison, type FigureRow, natural, type SettingRow } from '../study/compare.ts';
 import type { SettingValue } from '../study/setting-list.ts';
+import { nameInFormulas } from '../tally/figure-leaves.ts';
 import {
   type FigureDisplay,
   figureDisplay,
@@ -11,7 +12,7 @@ import {
 import { significant, valueText } from './numbers.ts';
 import { plainText, wrapped } from './plain.ts';
 import { noPaint, type SheetOptions } from './sheet.ts';
-import { aligned } from './table.ts';
+import { aligned, letters } from './table.ts';
 
 const WIDTH = 100;
 
@@ -58,7 +59,7 @@ export function compareJson(found: Comparison): unknown {
       ),
     })),
     figures: found.figures.map(({ figure, values, differences, relative }) => ({
-      figure,
+      figure: nameInFormulas(figure),
       values,
       differences,
       relative,
@@ -83,9 +84,11 @@ export function displayOf(found: Comparison, { figure, moved }: FigureRow): Figu
   return figureDisplay(figure, Object.fromEntries(units));
 }
 
-/** A figure as an engineer calls it: the name, an aim with the setting that it moves. */
+/** A figure as formulas call it behind `figures.`, an aim with the setting that it moves. */
 export function figureName({ figure, moved }: FigureRow): string {
-  return plainText(moved === null ? figure : `${moved.setting} (${figure.replace('aims.', 'aim ')})`);
+  return plainText(
+    moved === null ? nameInFormulas(figure) : `${moved.setting} (${figure.replace('aims.', 'aim ')})`,
+  );
 }
 
 export function cellText(value: SettingValue | null): string {
@@ -113,11 +116,6 @@ export function columnLine({ columns }: Comparison, c: number): string {
 function headOf({ columns }: Comparison, c: number): string {
   const long = columns.some(({ name }) => [...plainText(name)].length > LONGEST_HEAD);
   return long ? letters(c) : plainText(columns[c].name);
-}
-
-/** A to Z, then AA, AB, ... */
-function letters(c: number): string {
-  return (c < 26 ? '' : letters(Math.floor(c / 26) - 1)) + String.fromCharCode(65 + (c % 26));
 }
 
 const LONGEST_HEAD = 26;

@@ -1,7 +1,6 @@
 import type { PathTable } from '../study/sweep.ts';
 import { csvCell } from './csv.ts';
 import { plainText } from './plain.ts';
-import { aligned } from './table.ts';
 
 /** How a table of a sweep is written as text, piece by piece: no piece needs the others. */
 export interface SweepFormat {
@@ -40,40 +39,11 @@ export const sweepNdjson: SweepFormat = {
 export const sweepJsonRows = (table: PathTable): string[] =>
   Array.from({ length: table.rows }, (_, row) => `[${jsonCells(table, row).join(', ')}]`);
 
-const NUMBER_WIDTH = 11;
-
-/** For reading: aligned columns of six digits, as wide for the first path as for the last. */
-export const sweepText: SweepFormat = {
-  head: (heads) => textLines([heads.map(plainText)], heads),
-  rows: (table, heads) =>
-    textLines(
-      Array.from({ length: table.rows }, (_, row) => [
-        ...numbersOf(table, row).map(shortNumber),
-        table.converged[row] === 1 ? 'yes' : 'no',
-        String(table.passes[row]),
-        plainText(table.notes[row]!),
-      ]),
-      heads,
-    ),
-};
-
-function textLines(rows: readonly (readonly string[])[], heads: readonly string[]): string {
-  const note = heads.length - 1;
-  // A row as wide as anything that may come, to hold the columns; the note stands last and needs no width.
-  const widest = heads.map((head, c) =>
-    c === note ? '' : 'x'.repeat(Math.max(plainText(head).length, c < note - 2 ? NUMBER_WIDTH : 6)),
-  );
-  return aligned([widest, ...rows], { left: [note] })
-    .slice(1)
-    .map((line) => `${line}\n`)
-    .join('');
-}
-
 function csvLine(cells: readonly (string | number)[]): string {
   return `${cells.map(csvCell).join(',')}\r\n`;
 }
 
-function numbersOf({ cells, rows }: PathTable, row: number): number[] {
+export function numbersOf({ cells, rows }: PathTable, row: number): number[] {
   const width = cells.length / rows;
   return Array.from(cells.subarray(row * width, (row + 1) * width));
 }
@@ -89,8 +59,4 @@ function jsonCells(table: PathTable, row: number): string[] {
     String(table.passes[row]),
     JSON.stringify(plainText(table.notes[row]!)),
   ];
-}
-
-function shortNumber(value: number): string {
-  return Number.isNaN(value) ? '-' : String(Number(value.toPrecision(6)));
 }

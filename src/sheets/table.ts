@@ -51,6 +51,11 @@ export function columnGroups(rows: Rows, width: number, fixedColumns = 1, gap = 
   return groups;
 }
 
+/** Short heads of columns: A to Z, then AA, AB, ... */
+export function letters(c: number): string {
+  return (c < 26 ? '' : letters(Math.floor(c / 26) - 1)) + String.fromCharCode(65 + (c % 26));
+}
+
 /** Some columns of a table, in the order asked for. */
 export function pickColumns(rows: Rows, columns: readonly number[]): string[][] {
   return rows.map((row) => columns.map((column) => row[column] ?? ''));

@@ -75,8 +75,18 @@ export function compare(
 function settingRows(lists: readonly Map<string, SettingValue>[]): SettingRow[] {
   return unionOfKeys(lists)
     .map((path) => ({ path, values: lists.map((list) => list.get(path) ?? null) }))
-    .filter(({ values }) => values.some((value) => !isSame(value, values[0]!)));
+    .filter(({ values }) => values.some((value) => !isSame(value, values[0]!)))
+    .filter((row, _, rows) => !onlySaysThatABlockIsThere(row, rows));
 }
+
+/** The kind of a block that not all files have says no more than its settings do, where it has any. */
+function onlySaysThatABlockIsThere({ path, values }: SettingRow, rows: readonly SettingRow[]): boolean {
+  if (!path.endsWith(KIND) || !values.includes(null)) return false;
+  const block = path.slice(0, -KIND.length);
+  return rows.some((other) => other.path !== path && other.path.startsWith(`${block}.`));
+}
+
+const KIND = '.kind';
 
 function isSame(a: SettingValue | null, b: SettingValue | null): boolean {
   if (a === null || b === null) return a === b;

@@ -1,7 +1,7 @@
 import { formulaRoots } from '../flowsheet/formula-scope.ts';
 import type { Formula } from '../model/flowsheet.ts';
 import type { Figures } from '../model/result.ts';
-import { figureLeaves } from '../tally/figure-leaves.ts';
+import { figureLeaves, nameInFormulas } from '../tally/figure-leaves.ts';
 import { compileFormula } from '../units/formula.ts';
 
 /** What is recorded where nothing is asked for: the figures an engineer asks for first, and all of the user's own. */
@@ -28,7 +28,7 @@ export function keyFigureFormulas(figures: Figures): Formula[] {
     .map(([name]) => name)
     .filter((name) => !name.startsWith('purge.lost_fraction.') || name === `purge.lost_fraction.${reactant}`);
   return WANTED.flatMap((pattern) => names.filter((name) => pattern.test(name))).map((name) => {
-    const text = `figures.${name === 'overall_yield' ? 'overall_yield.value' : name}`;
+    const text = `figures.${nameInFormulas(name)}`;
     const compiled = compileFormula(text, formulaRoots);
     if (!compiled.ok) throw new Error(`${text}: ${compiled.what}`);
     return { text, evaluate: compiled.evaluate };

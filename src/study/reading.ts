@@ -8,11 +8,15 @@ export interface StudyReading {
   lines(): string[];
 }
 
-/** @param columns  name and unit of the settings and recorded expressions, in the order of the table */
-export function createReading(
-  note: StudySpec['note'],
-  columns: readonly { readonly name: string; readonly unit: string }[],
-): StudyReading {
+export interface ReadingColumn {
+  readonly name: string;
+  readonly unit: string;
+  /** a setting that the grid takes through its values, not something recorded */
+  readonly swept: boolean;
+}
+
+/** @param columns  the settings and recorded expressions, in the order of the table */
+export function createReading(note: StudySpec['note'], columns: readonly ReadingColumn[]): StudyReading {
   const width = columns.length;
   const indexOf = (name: string) => columns.findIndex((column) => column.name === name);
   let first: Float64Array | null = null;
@@ -20,6 +24,17 @@ export function createReading(
   /** the rows where each column is least and most */
   const least = new Array<Float64Array | null>(width).fill(null);
   const most = new Array<Float64Array | null>(width).fill(null);
+
+  /** ends of what each column goes through, cases that do not close among them */
+  const low = new Float64Array(width).fill(Number.POSITIVE_INFINITY);
+  const high = new Float64Array(width).fill(Number.NEGATIVE_INFINITY);
+
+  function takeEnds(row: Float64Array): void {
+    for (let c = 0; c < width; c++) {
+      if (row[c]! < low[c]!) low[c] = row[c]!;
+      if (row[c]! > high[c]!) high[c] = row[c]!;
+    }
+  }
 
   function takeRow(row: Float64Array): void {
     first ??= row.slice();
@@ -56,13 +71,19 @@ export function createReading(
     if (!Number.isFinite(value)) return '-';
     const unit = blank.unit || (blank.which === 'ratio' ? '' : columns[indexOf(blank.column)]!.unit);
     const scaled = blank.unit === '%' && columns[indexOf(blank.column)]!.unit !== '%' ? 100 * value : value;
-    return `${Number(scaled.toPrecision(3))}${unit === '' ? '' : ` ${unit}`}`;
+    const text = `${Number(scaled.toPrecision(3))}${unit === '' ? '' : ` ${unit}`}`;
+    const c = indexOf(blank.column);
+    if (!blank.which.startsWith('at ') || !columns[c]!.swept) return text;
+    // Between two values of the grid nothing was calculated, and beyond its ends nothing is known.
+    return value === low[c] || value === high[c] ? `${text} (an end of the range)` : `about ${text}`;
   }
 
   return {
     add({ cells, rows, converged }) {
       for (let row = 0; row < rows; row++) {
-        if (converged[row] === 1) takeRow(cells.slice(row * width, (row + 1) * width));
+        const values = cells.slice(row * width, (row + 1) * width);
+        takeEnds(values);
+        if (converged[row] === 1) takeRow(values);
       }
     },
     lines: () =>

@@ -1,4 +1,5 @@
 import type { BlockReport } from '../blocks/block.ts';
+import { quietReport } from '../blocks/report.ts';
 import type { Diagnostic, PassTrouble } from '../diagnostics/diagnostic.ts';
 import { type CloseOptions, closePlant, type PlantClosure } from './close-plant.ts';
 import type { Plant } from './plant.ts';
@@ -31,6 +32,8 @@ export function diagnose(plant: Plant, closure: PlantClosure, options: CloseOpti
   const failure = closure.failure;
   if (!failure) throw new Error('a plant that did not close names the group that failed');
   const { trouble } = failure;
+  const [before] = faultDiagnostics(plant, reportsBefore(plant, failure.group));
+  if (before !== undefined) return before;
   if (trouble) {
     // Before anything else passes through the plant: the blocks still stand where the pass failed.
     const told = troubleDiagnostic(plant, trouble, failure.group);
@@ -40,6 +43,17 @@ export function diagnose(plant: Plant, closure: PlantClosure, options: CloseOpti
   const facts = gatherFacts(plant, failure.group, failure.closure, failure.names, closure.passes, options);
   const finding = firstOf(recognisers, facts) ?? trendOnly(facts);
   return diagnosticOf(finding, closure, facts);
+}
+
+/**
+ * What the blocks ahead of a group say, whose streams are settled: what one of them could not do is the cause of whatever
+ * fails behind it. The others say nothing here.
+ */
+function reportsBefore(plant: Plant, group: Facts['group']): readonly BlockReport[] {
+  const ahead = new Set(plant.groups.slice(0, plant.groups.indexOf(group)).flatMap(({ blocks }) => blocks));
+  return plant.units.map((unit, b) =>
+    ahead.has(b) ? unit.report(plant.inlets[b], plant.outlets[b]) : quietReport({}),
+  );
 }
 
 /**

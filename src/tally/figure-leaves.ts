@@ -14,6 +14,11 @@ export function figureLeaves(figures: Figures): Map<string, number> {
   );
 }
 
+/** The same name as formulas call it behind `figures.`: there the yield has parts, of which one is a number. */
+export function nameInFormulas(leaf: string): string {
+  return leaf === 'overall_yield' ? 'overall_yield.value' : leaf;
+}
+
 function collect(name: string, value: unknown, leaves: Map<string, number>): void {
   if (typeof value === 'number') {
     if (Number.isFinite(value)) leaves.set(name, value);

@@ -41,6 +41,7 @@ test('--case chooses cases, --json has every figure as balance has it', () => {
   expect(columns.map((column) => column.case)).toEqual([null, 'small purge']);
   expect(settings).toEqual([{ path: 'purge.fractions.bleed', unit: '%', values: [2.2, 1] }]);
   const balance = JSON.parse(run(['balance', 'ammonia.yaml', '--case', 'small purge', '--json']).out);
+  expect(figures.map(({ figure }) => figure)).toContain('overall_yield.value');
   const made = figures.find(({ figure }) => figure === 'production_t_d')!;
   expect(made.values[1]).toBe(balance.figures.production_t_d);
 });
@@ -61,6 +62,14 @@ test('several files; --out writes tables, numbers in full', () => {
   expect(head).toContain('ammonia.yaml,fails.yaml,fails.yaml: difference');
   expect(closed).toMatch(/^closed,,,yes,yes/);
   expect(readFileSync(join(folder(), 'both.md'), 'utf8')).toContain('## Settings that differ');
+});
+
+test('of a block that one file has not its settings are told, not its kind as well', () => {
+  writeFileSync(join(folder(), 'other.yaml'), shippedText('ammonia-heat-recovery.yaml'));
+  const { out } = run(['compare', 'ammonia.yaml', 'other.yaml', '--json']);
+  const paths = (JSON.parse(out) as CompareJson).settings.map(({ path }) => path);
+  expect(paths).toContain('preheat.temperature');
+  expect(paths).not.toContain('preheat.kind');
 });
 
 test.each([

@@ -158,7 +158,7 @@ describe('before the first case it is told in four parts:', () => {
       `command line error unknown-figure
   blocks.condenser.condensed is not known.
   why:  blocks.condenser has the parts temperature_K, condensed_kmol_h, gas_fraction, duty, power
-  mend: write blocks.condenser.temperature_K
+  mend: write blocks.condenser.NAME, NAME one of these
 
 1 error
 `,

@@ -92,7 +92,7 @@ test.each([
    1 | condenser.temprature=-20 degC
      | ^^^^^^^^^^^^^^^^^^^^
   why:  the nearest known key is temperature
-  mend: write temperature
+  mend: write condenser.temperature
 
 1 error`,
   ],
@@ -169,4 +169,18 @@ test('what --set changed is told among the assumptions', async () => {
     set: ['condenser.temperature=-20 degC'],
   });
   expect(flowsheet?.assumptions).toContain('Changed by --set: condenser.temperature = -20 degC.');
+});
+
+test.each([
+  ['condensor.tempratur=-5 degC', 'write condenser.temperature'],
+  ['condenser.temprature=3 degC', 'write condenser.temperature'],
+  ['converter.reactions.synthesis.aproach=5 K', 'write converter.reactions.synthesis.approach'],
+  ['converter.reactions.sythesis.approach=5 K', 'write converter.reactions.synthesis.approach'],
+  ['makup.composition.Arr=0.3', 'write makeup.composition.Ar'],
+  ['purge.fractions.bled=3 %', 'write purge.fractions.bleed'],
+  ['fractions.bleed=2 %', 'write purge.fractions.bleed'],
+  ['temperature=3 degC', 'write converter.temperature or condenser.temperature or makeup.temperature'],
+])('the mend of %s is a path that can be typed again', async (set, mend) => {
+  const { diagnostics } = await read([set]);
+  expect(diagnostics.map((one) => [one.where.file, one.mend])).toEqual([['--set', mend]]);
 });

@@ -66,3 +66,23 @@ test('a condenser set by its duty starts, though once through holds less heat th
   expect(diagnosis).toBeNull();
   expect(Math.abs(result.streams['S7']!.temperature_K - 265.15)).toBeLessThan(1e-4);
 });
+
+test('a compressor whose suction is above its discharge before the recycle has come round does not end the closing', async () => {
+  const text = shippedText('ammonia-uncertain.yaml');
+  const flowsheet = await read(text, { set: ['circulator.pressure=184 bar'] });
+  const { result, diagnosis } = balance(flowsheet);
+  expect(diagnosis).toBeNull();
+  expect(result.streams['S9']!.pressure_bar).toBeCloseTo(184, 9);
+  expect(result.blocks['circulator']!.power_kW).toBeGreaterThan(0);
+});
+
+test('a compressor that is to lower the pressure is the cause of what fails behind it', async () => {
+  const text = shippedText('ammonia-loop.yaml');
+  const { result, diagnosis } = balance(await read(text, { set: ['makeup_compressor.pressure=10 bar'] }));
+  expect(result.convergence.converged).toBe(false);
+  expect(diagnosis).toMatchObject({
+    code: 'pressure-fall',
+    what: 'makeup_compressor: The compressor is set to 10.000 bar, below its suction of 26.000 bar.',
+    where: { file: '--set', column: 28 },
+  });
+});
