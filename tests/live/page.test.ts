@@ -9,16 +9,17 @@ import { bench, noBrowser } from './browser.ts';
 
 const axe = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
 const ammonia = shippedText('ammonia-loop.yaml');
+const reference = shippedText('reference-loop.yaml');
 
 describe.skipIf(noBrowser !== '')(`a page in the browser${noBrowser}`, () => {
   const { write, open, complaints } = bench();
 
   test('opened from disk it closes its loop without a word of complaint and shows the numbers it was written with', async () => {
     const address = await write('ammonia', ammonia);
-    const page = await open(address, { javaScriptEnabled: true });
+    const page = await open(address);
     await page.getByText('all as in the file').waitFor();
-    expect(await page.locator('[data-part="ledger"] table').first().innerText()).toContain('NH3');
-    expect(await figuresIn(page)).toEqual(await figuresOf(ammonia, []));
+    expect(await page.locator('[data-part="ledger"] table').first().textContent()).toContain('NH3');
+    expectSame(await figuresIn(page), await figuresOf(ammonia, []));
     expect(complaints).toEqual([]);
     await page.context().close();
   });
@@ -26,21 +27,23 @@ describe.skipIf(noBrowser !== '')(`a page in the browser${noBrowser}`, () => {
   test('a slider moved closes the loop at once, and at rest the figures are those of balance --set', async () => {
     const page = await open(await write('slider', ammonia));
     const slider = page.getByRole('slider', { name: 'condenser.temperature' });
-    const before = await page.locator('[data-part="glance"]').innerText();
+    const before = await page.locator('[data-part="glance"]').textContent();
     await slide(page, 'condenser.temperature', 20);
-    await expect.poll(() => page.locator('[data-part="glance"]').innerText()).not.toBe(before);
+    await expect.poll(() => page.locator('[data-part="glance"]').textContent()).not.toBe(before);
     await page.getByText('1 setting is moved').waitFor();
     expect(await slider.getAttribute('aria-valuetext')).toBe('-20 degC');
-    expect(await figuresIn(page)).toEqual(await figuresOf(ammonia, ['condenser.temperature=-20 degC']));
-    expect(await page.locator('[data-job="case"]').innerText()).toBe(
+    expectSame(await figuresIn(page), await figuresOf(ammonia, ['condenser.temperature=-20 degC']));
+    expect(await page.locator('[data-job="case"]').textContent()).toBe(
       'as in the file; moved condenser.temperature = -20 degC',
     );
-    expect(await page.locator('[data-part="settings"] mark').innerText()).toBe('moved; in the file -8 degC');
+    expect(await page.locator('[data-part="settings"] mark').textContent()).toBe(
+      'moved; in the file -8 degC',
+    );
     const flag = await page.locator('[data-word="flag-5-1"]').innerHTML();
     expect(flag).toBe('-20.0 °C');
     await page.getByRole('button', { name: 'reset condenser.temperature' }).click();
     await page.getByText('all as in the file').waitFor();
-    expect(await figuresIn(page)).toEqual(await figuresOf(ammonia, []));
+    expectSame(await figuresIn(page), await figuresOf(ammonia, []));
     expect(complaints).toEqual([]);
     await page.context().close();
   });
@@ -53,14 +56,15 @@ describe.skipIf(noBrowser !== '')(`a page in the browser${noBrowser}`, () => {
     expect(await field.inputValue()).toBe('-10');
     await type(page, 'purge.fractions.bleed', '2,75');
     await page.getByText('2 settings are moved').waitFor();
-    expect(await figuresIn(page)).toEqual(
+    expectSame(
+      await figuresIn(page),
       await figuresOf(ammonia, ['condenser.temperature=14 degF', 'purge.fractions.bleed=2.75 %']),
     );
     const shown = await figuresIn(page);
     await type(page, 'condenser.temperature', '-5 bar');
     const fault = page.getByRole('alert').filter({ hasText: 'is no temperature' });
     await fault.waitFor();
-    expect(await fault.innerText()).toContain('why: "bar" is a unit of pressure');
+    expect(await fault.textContent()).toContain('why: "bar" is a unit of pressure');
     expect(await field.getAttribute('aria-invalid')).toBe('true');
     expect(await figuresIn(page)).toEqual(shown);
     await type(page, 'condenser.temperature', '3 furlong');
@@ -73,17 +77,17 @@ describe.skipIf(noBrowser !== '')(`a page in the browser${noBrowser}`, () => {
   });
 
   test('where the loop does not close nothing passes for an answer', async () => {
-    const page = await open(await write('open', ammonia));
-    await type(page, 'condenser.temperature', '180');
+    const page = await open(await write('open', reference));
+    await type(page, 'purge.fractions.bleed', '0');
     await page.getByText('NOT CLOSED with these settings').waitFor();
-    expect(await page.locator('#lead').innerText()).toMatch(/why: [\s\S]*mend: /);
-    expect(await page.locator('[data-job="status"]').innerText()).toBe('NOT CLOSED');
+    expect(await page.locator('#lead').textContent()).toMatch(/why: [\s\S]*mend: /);
+    expect(await page.locator('[data-job="status"]').textContent()).toBe('NOT CLOSED');
     for (const part of ['glance', 'loop', 'streams', 'ledger', 'figures'])
       expect(await page.locator(`[data-part="${part}"]`).getAttribute('class')).toContain('void');
     await page.getByRole('button', { name: 'Reset all' }).click();
     await page.getByText('all as in the file').waitFor();
     expect(await page.locator('.void').count()).toBe(0);
-    expect(await page.locator('#lead').innerText()).toBe('');
+    expect(await page.locator('#lead').textContent()).toBe('');
     await page.context().close();
   });
 
@@ -94,7 +98,7 @@ describe.skipIf(noBrowser !== '')(`a page in the browser${noBrowser}`, () => {
     );
     await page.getByText('The link moves no.such').waitFor();
     const set = ['condenser.temperature=-12.5 degC', 'purge.fractions.bleed=3 %'];
-    expect(await figuresIn(page)).toEqual(await figuresOf(ammonia, set));
+    expectSame(await figuresIn(page), await figuresOf(ammonia, set));
     await slide(page, 'converter.reactions.synthesis.approach', 5);
     await page.getByText('3 settings are moved').waitFor();
     const moved = await figuresIn(page);
@@ -104,7 +108,7 @@ describe.skipIf(noBrowser !== '')(`a page in the browser${noBrowser}`, () => {
     expect((await download).suggestedFilename()).toBe('round-trip-moved.yaml');
     expect(saved).toContain('temperature: -12.5 degC\n    pressure_drop: 4 bar');
     expect(saved.slice(saved.indexOf('# Ammonia loop')).split('\n')).toHaveLength(ammonia.split('\n').length);
-    expect(await figuresOf(saved, [])).toEqual(moved);
+    expectSame(await figuresOf(saved, []), moved);
     const again = await open(page.url());
     await again.getByText('3 settings are moved').waitFor();
     expect(await figuresIn(again)).toEqual(moved);
@@ -116,7 +120,7 @@ describe.skipIf(noBrowser !== '')(`a page in the browser${noBrowser}`, () => {
   test('numbers are written as the reader of the page does, and the file stays with the point', async () => {
     const page = await open(await write('german', ammonia), { locale: 'de-DE' });
     await page.getByText('all as in the file').waitFor();
-    expect(await page.locator('[data-part="loop"]').innerText()).toContain('16.938 kmol/h');
+    expect(await page.locator('[data-part="loop"]').textContent()).toContain('16.938 kmol/h');
     expect(await page.getByRole('textbox', { name: 'purge.fractions.bleed' }).inputValue()).toBe('2,2');
     await type(page, 'purge.fractions.bleed', '1.234');
     await page.getByText('may mean two numbers').waitFor();
@@ -129,7 +133,7 @@ describe.skipIf(noBrowser !== '')(`a page in the browser${noBrowser}`, () => {
   test('markup in every text of a file is shown as text', async () => {
     const evil =
       '</script><img src=x onerror="document.title=1"><svg onload=alert(1)>&quot;\u05e9\u05dc\u05d5\u05dd';
-    const text = shippedText('reference-loop.yaml')
+    const text = reference
       .replace(/^title: .*$/m, `title: ${JSON.stringify(evil)}`)
       .replace(/^notes: .*$/m, `notes: ${JSON.stringify(`${evil} ${'long '.repeat(2000)}`)}`)
       .replace(
@@ -139,7 +143,7 @@ describe.skipIf(noBrowser !== '')(`a page in the browser${noBrowser}`, () => {
     const page = await open(await write('evil', text));
     await page.getByText('all as in the file').waitFor();
     expect(await page.title()).toContain('<img src=x');
-    expect(await page.locator('h1').innerText()).toContain('<img src=x onerror="document.title=1">');
+    expect(await page.locator('h1').textContent()).toContain('<img src=x onerror="document.title=1">');
     expect(await page.locator('img, script:not([type]) ~ svg').count()).toBe(0);
     expect(await page.evaluate('document.documentElement.scrollWidth <= window.innerWidth')).toBe(true);
     expect(complaints).toEqual([]);
@@ -163,7 +167,7 @@ describe.skipIf(noBrowser !== '')(`a page in the browser${noBrowser}`, () => {
     ['light', 390],
     ['dark', 390],
   ] as const)('axe finds nothing amiss in %s at %d', async (colorScheme, width) => {
-    const page = await open(await write('axe', ammonia), { colorScheme, viewport: { width, height: 844 } });
+    const page = await open(await write('axe', reference), { colorScheme, viewport: { width, height: 844 } });
     await slide(page, 'condenser.temperature', 20);
     await type(page, 'purge.fractions.bleed', 'much');
     await page.getByRole('alert').filter({ hasText: 'why:' }).waitFor();
@@ -205,23 +209,28 @@ async function type(page: Page, path: string, text: string): Promise<void> {
   await field.press('Enter');
 }
 
-/** Key figures of the page to the last bit, as JSON that the page keeps beside its table. */
+/** To 1e-9: engines differ in the last digits of their logarithms. */
+function expectSame(found: Record<string, number>, wanted: Record<string, number>): void {
+  expect(Object.keys(found)).toEqual(Object.keys(wanted));
+  for (const [name, value] of Object.entries(wanted))
+    expect(Math.abs(found[name]! - value), name).toBeLessThanOrEqual(1e-9 * Math.abs(value));
+}
+
+/** Key figures of the page as it keeps them beside what it shows. */
 async function figuresIn(page: Page): Promise<Record<string, number>> {
-  const cells = await page
-    .locator('[data-part="figures"] tbody tr')
-    .evaluateAll((rows) =>
-      (
-        rows as unknown as {
-          querySelector(s: string): { textContent: string; getAttribute(n: string): string };
-        }[]
-      ).map(
-        (row) =>
-          [
-            row.querySelector('th').textContent,
-            Number(row.querySelector('data').getAttribute('value')),
-          ] as const,
-      ),
-    );
+  const cells = await page.locator('[data-part="figures"] tbody tr').evaluateAll((rows) =>
+    (
+      rows as unknown as {
+        querySelector(s: string): { textContent: string; getAttribute(n: string): string };
+      }[]
+    ).map(
+      (row) =>
+        [
+          row.querySelector('th').textContent,
+          Number(row.querySelector('data').getAttribute('value')),
+        ] as const,
+    ),
+  );
   return Object.fromEntries(cells);
 }
 
