@@ -2,3 +2,5 @@
 export function buildCli(folder: string): Promise<void>;
 /** Bundle the script of live pages into a folder: live.js. */
 export function buildLive(folder: string): Promise<void>;
+/** Bundle the scripts of the pages of studies into a folder. */
+export function buildPageScripts(folder: string): Promise<void>;

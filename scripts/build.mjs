@@ -94,7 +94,7 @@ export async function buildCli(folder) {
 }
 
 /** What runs in the browser: one file each, which the command line writes into its pages. */
-async function buildPageScripts(folder) {
+export async function buildPageScripts(folder) {
   await build({
     ...shared,
     splitting: false,

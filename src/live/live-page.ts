@@ -120,6 +120,7 @@ export async function bringToLife(data: LiveData): Promise<void> {
     sheet.voidFigures(false);
     show(found, 'figures');
     panel.place(at, inFile);
+    sheet.showCase(flowsheet, moves);
   }
 
   function settle(afterMs: number): void {
@@ -151,6 +152,7 @@ export async function bringToLife(data: LiveData): Promise<void> {
     at = standing(flowsheet, handles);
     sound = new Map(moves);
     panel.place(at, inFile);
+    sheet.showCase(flowsheet, moves);
     const count = moves.size === 1 ? '1 setting is moved.' : `${moves.size} settings are moved.`;
     const isClosed = outcome.kind === 'closed';
     sheet.voidFigures(!isClosed);

@@ -1,5 +1,6 @@
+import type { Flowsheet } from '../model/flowsheet.ts';
 import { drawingWords } from '../sheets/drawing/words.ts';
-import { closingText, notClosedText, statusText } from '../sheets/page/job.ts';
+import { caseText, closingText, notClosedText, statusText } from '../sheets/page/job.ts';
 import { glanceSection } from '../sheets/page/panel.ts';
 import { partsAfter, partsBefore } from '../sheets/page/parts.ts';
 import type { PagePart, PageView } from '../sheets/page/view.ts';
@@ -11,6 +12,8 @@ export interface SheetView {
    *   put in at once, the rest when the browser has time
    */
   show(view: PageView, scope: 'figures' | 'all'): void;
+  /** the case in the title block, with what was moved in it */
+  showCase(flowsheet: Flowsheet, moves: ReadonlyMap<string, string>): void;
   /** strike out what belongs to another state than the one asked for */
   voidFigures(isVoid: boolean): void;
   /** the title block of a state that did not close */
@@ -64,6 +67,9 @@ export function createSheetView(): SheetView {
       }
       job('status').innerHTML = statusText(view).markup;
       job('closing').textContent = closingText(view);
+    },
+    showCase(flowsheet, moves) {
+      job('case').innerHTML = caseText({ flowsheet }, moves).markup;
     },
     notClosed() {
       job('status').innerHTML = notClosedText.markup;

@@ -21,8 +21,8 @@ export type Outcome =
   | { readonly kind: 'refused'; readonly diagnostics: readonly Diagnostic[] };
 
 /**
- * Closes the flowsheet of a page again and again: quickly while a setting is on the move, and then exactly as
- * `looptally balance FILE --set ...` does, to the last bit.
+ * Closes the flowsheet of a page again and again: quickly while a setting is on the move, and then by the same
+ * steps as `looptally balance FILE --set ...`.
  */
 export interface LiveSolver {
   /** read the file with the moves made, and close it from the feeds */

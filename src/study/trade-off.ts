@@ -44,8 +44,7 @@ export function* tradeOffSteps(
   handle: Handle,
   formulas: readonly Formula[],
 ): Generator<void, TradeOff> {
-  const [low, high] = handle.between;
-  const values = Float64Array.from({ length: PLACES }, (_, k) => low + ((high - low) * k) / (PLACES - 1));
+  const values = placesOver(handle.between);
   const figures = formulas.map((formula) => ({ formula, values: new Float64Array(PLACES) }));
   const runner = createCaseRunner(flowsheet, { settings: [handle.path], record: formulas });
   const out = new Float64Array(formulas.length);
@@ -66,4 +65,13 @@ export function tradeOff(flowsheet: Flowsheet, handle: Handle, formulas: readonl
     const { done, value } = steps.next();
     if (done) return value;
   }
+}
+
+/** Even steps; even ratios where the range spans a decade, as that of a purge does, which bends most at its low end. */
+function placesOver([low, high]: readonly [number, number]): Float64Array {
+  const share = (k: number) => k / (PLACES - 1);
+  const isWide = low > 0 && high >= 10 * low;
+  return Float64Array.from({ length: PLACES }, (_, k) =>
+    isWide ? low * (high / low) ** share(k) : low + (high - low) * share(k),
+  );
 }

@@ -18,7 +18,7 @@ import {
 import { type Marked, markedPoint } from './marked-point.ts';
 import { PAPER, type SeriesLook, seriesLook } from './palette.ts';
 import { seriesLabels } from './series-labels.ts';
-import { type RuledLine, ruledLines, type Stretch, stretches } from './stretches.ts';
+import { type LimitLine, limitLines, type Stretch, stretches } from './stretches.ts';
 
 export interface LineSeries {
   /** '' where there is one series and nothing to tell apart */
@@ -37,7 +37,7 @@ export interface LineChartSpec {
   readonly series: readonly LineSeries[];
   /** e.g. the operating point */
   readonly marked?: readonly Marked[];
-  readonly ruled?: readonly RuledLine[];
+  readonly limits?: readonly LimitLine[];
   /** parts of the x axis that are set apart, e.g. where a limit does not hold */
   readonly stretches?: readonly Stretch[];
   /** the points themselves are shown; false for smooth curves of many points */
@@ -56,13 +56,13 @@ const MOST_MARKS = 30;
  * @throws Error where the id is none, or a series has x and y of different length
  */
 export function lineChart(spec: LineChartSpec): string {
-  const { id, title, series, marked = [], ruled = [], points = true } = spec;
+  const { id, title, series, marked = [], limits = [], points = true } = spec;
   checkId(id);
   for (const { x, y } of series) if (x.length !== y.length) throw new Error('x and y differ in length');
   const width = spec.width ?? CHART_WIDTH;
   const height = spec.height ?? CHART_HEIGHT;
   const x = createAxisScale(spec.x, allOf(series, marked, 'x'), ticksAcross(width), true);
-  const near = ruled.filter(({ axis, value }) => axis === 'y' && isNear(value, allOf(series, marked, 'y')));
+  const near = limits.filter(({ axis, value }) => axis === 'y' && isNear(value, allOf(series, marked, 'y')));
   const y = createAxisScale(
     spec.y,
     [...allOf(series, marked, 'y'), ...near.map(({ value }) => value)],
@@ -70,11 +70,11 @@ export function lineChart(spec: LineChartSpec): string {
   );
   const labels = seriesLabels(series, width);
   const frame = createFrame(x, y, { width, height, right: labels.right, below: labels.below });
-  const inside = ruled.filter(({ axis, value }) => isWithin(axis === 'x' ? x : y, value));
+  const inside = limits.filter(({ axis, value }) => isWithin(axis === 'x' ? x : y, value));
   const body = [
     stretches(id, spec.stretches ?? [], frame),
     gridLines(frame),
-    ruledLines(inside, frame),
+    limitLines(inside, frame),
     axes(frame, spec.x, spec.y, width),
     ...series.map((one, k) => curve(one, seriesLook(k), frame, points)),
     labels.draw(frame),

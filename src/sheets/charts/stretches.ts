@@ -13,7 +13,7 @@ export interface Stretch {
 }
 
 /** A line through a value of one axis: a limit, or where something stands. */
-export interface RuledLine {
+export interface LimitLine {
   readonly axis: 'x' | 'y';
   readonly value: number;
   readonly label: string;
@@ -45,7 +45,7 @@ export function stretches(id: string, wanted: readonly Stretch[], { plot, x, atX
 }
 
 /** Dash-dot lines for limits, thin dotted ones for places, with their names inside the plot. */
-export function ruledLines(lines: readonly RuledLine[], { plot, atX, atY }: Frame): string {
+export function limitLines(lines: readonly LimitLine[], { plot, atX, atY }: Frame): string {
   return lines
     .map(({ axis, value, label, light = false, nameOnTop = false }) => {
       const at = axis === 'x' ? atX(value) : atY(value);

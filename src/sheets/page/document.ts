@@ -116,7 +116,7 @@ function dataText(data: unknown): string {
 
 /** A drawing or chart with its words for those who do not see it. */
 export function figure(svg: string, label: string, caption: Part = null): Html {
-  return html`<figure><div class="picture" role="img" aria-label="${label}">${ownMarkup(svg)}</div>${
+  return html`<figure><div class="scroll" role="region" aria-label="${label}" tabindex="0"><div class="picture" role="img" aria-label="${label}">${ownMarkup(svg)}</div></div>${
     caption === null ? null : html`<figcaption>${caption}</figcaption>`
   }</figure>`;
 }

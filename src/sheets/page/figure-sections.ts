@@ -3,7 +3,7 @@ import { figureDisplay, shownValue } from '../figure-display.ts';
 import { figureUnits } from '../figure-units.ts';
 import { significant } from '../numbers.ts';
 import { story } from '../story.ts';
-import { type Html, html, joined, type Part, userText } from './html.ts';
+import { type Html, html, joined, nameText, type Part } from './html.ts';
 import { definitions, headCell, numberCell, table, textCell, unitCell } from './tables.ts';
 import { type PageView, sheetOptions } from './view.ts';
 
@@ -14,7 +14,7 @@ export function storySection(view: PageView): Html {
     const line = view.words(text.replaceAll('\u00a0', ' '));
     const last = rows.at(-1);
     if (label === '' && last !== undefined) last[1].push(line);
-    else rows.push([userText(label.trim()), [line]]);
+    else rows.push([nameText(label.trim()), [line]]);
   }
   return html`${definitions(rows.map(([label, lines]) => [label, joined(lines, '<br>')]))}${aims(view)}`;
 }
@@ -45,7 +45,9 @@ export function figuresSection({ result, flowsheet, words }: PageView): Html {
   const units = figureUnits(flowsheet);
   const rows = [...figureLeaves(result.figures)].map(([name, value]) => {
     const display = figureDisplay(name, units);
-    return [headCell(name), numberCell(shownValue(value, display), words), unitCell(display.unit)];
+    // The number of the contract stands beside what is shown of it, for whoever copies or checks the page.
+    const shown = html`<data value="${value}">${words(shownValue(value, display))}</data>`;
+    return [headCell(name), { content: shown, kind: 'number' as const }, unitCell(display.unit)];
   });
   const heads = [{ text: 'figure' }, { text: 'value', right: true }, { text: 'unit' }];
   return table({ caption: 'Key figures by the names that formulas call them', heads, rows, mark: 'long' });

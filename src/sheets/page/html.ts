@@ -31,12 +31,23 @@ export function ownMarkup(markup: string): Html {
 
 /** Text as HTML takes it, in content and in attributes; control characters and marks of direction are taken out. */
 export function escapeHtml(text: string): string {
-  return escaped(plainText(text));
+  // A blank at either end of a piece of text may be what parts it from its neighbour.
+  return escaped(plainText(`|${text}|`).slice(1, -1));
 }
 
 /** Text of the user's in a run of its own, so that writing from right to left turns nothing about around it. */
 export function userText(text: string): Html {
   return html`<bdi>${text}</bdi>`;
+}
+
+/** A name or path that may be broken behind its dots and dashes, and nowhere else if that is enough. */
+export function nameText(name: string): Html {
+  return html`<bdi>${joined(
+    escapeHtml(name)
+      .split(/(?<=[._])/)
+      .map((piece) => new Html(piece)),
+    '<wbr>',
+  )}</bdi>`;
 }
 
 export function joined(parts: readonly Part[], between = ''): Html {

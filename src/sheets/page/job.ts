@@ -7,7 +7,7 @@ import type { PageView } from './view.ts';
 
 /** The fields of the title block after ISO 7200; what only the user can fill in stays blank where it is not given. */
 export function jobFields(view: PageView, fields: TitleBlock, version: string): JobField[] {
-  const { flowsheet, result } = view;
+  const { flowsheet } = view;
   const given = (label: string, value: string | undefined, span: number): JobField => ({
     label,
     value: userText(value ?? ''),
@@ -23,10 +23,21 @@ export function jobFields(view: PageView, fields: TitleBlock, version: string): 
     given('approval person', fields.approver, 3),
     given('flowsheet file', file, 3),
     { label: 'worked out by', value: `Looptally ${version}`.trim(), span: 3 },
-    { label: 'case', value: userText(result.case ?? 'as in the file'), span: 3, name: 'case' },
-    { label: 'status', value: statusText(view), span: 3, name: 'status' },
+    { label: 'case', value: caseText(view, new Map()), span: 4, name: 'case' },
+    { label: 'status', value: statusText(view), span: 2, name: 'status' },
     { label: 'closing', value: closingText(view), span: 6, name: 'closing' },
   ];
+}
+
+/** @param moves  settings that were moved in the page, by path: a sheet must tell what it is a sheet of */
+export function caseText(
+  { flowsheet }: Pick<PageView, 'flowsheet'>,
+  moves: ReadonlyMap<string, string>,
+): Html {
+  const moved = [...moves].map(([path, text]) => `${path} = ${text}`).join(', ');
+  return html`${userText(flowsheet.caseName ?? 'as in the file')}${
+    moved === '' ? null : html`; <mark>moved</mark> ${userText(moved)}`
+  }`;
 }
 
 export const notClosedText = html`<strong class="alarm-word">NOT CLOSED</strong>`;

@@ -4,7 +4,7 @@ import { planFlowsheet } from '../../tally/plan.ts';
 import { settingDisplay, shownValue } from '../figure-display.ts';
 import { closureText, significant } from '../numbers.ts';
 import { caution, studyTool } from '../sheet.ts';
-import { type Html, html, userText } from './html.ts';
+import { type Html, html, nameText, userText } from './html.ts';
 import { bulletList, headCell, numberCell, table, textCell, unitCell } from './tables.ts';
 import type { PageView } from './view.ts';
 
@@ -24,7 +24,7 @@ export function settingsSection({ result, flowsheet, asInFile, words }: PageView
     const old = was === undefined ? null : settingText(was);
     const isMoved = old !== null && old.text !== text;
     const remark = isMoved ? `moved; in the file ${words(old.text)} ${old.unit}`.trimEnd() : '';
-    const cell = isNumber ? numberCell(text, words) : { ...textCell(text), mark: 'prose' };
+    const cell = isNumber ? numberCell(text, words) : { ...textCell(nameText(text)), mark: 'r prose' };
     return [headCell(path), cell, unitCell(unit), textCell(isMoved ? html`<mark>${remark}</mark>` : remark)];
   });
   return table({

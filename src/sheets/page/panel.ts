@@ -1,7 +1,7 @@
 import type { Handle } from '../../model/flowsheet.ts';
 import { glances } from './figure-sections.ts';
 import { numberOf, placeOf } from './handle-text.ts';
-import { type Html, html, userText } from './html.ts';
+import { type Html, html, nameText, userText } from './html.ts';
 import type { PageView } from './view.ts';
 
 /**
@@ -34,7 +34,7 @@ function handleRow(handle: Handle, k: number, value: number): Html {
   const shown = numberOf(handle, value);
   const unit = handle.unit === '' ? 'no unit' : handle.unit;
   return html`<div class="handle" data-handle="${handle.path}">
-<div class="handle-head" id="handle-${k}">${userText(handle.path)}</div>
+<div class="handle-head" id="handle-${k}">${nameText(handle.path)}</div>
 <div class="handle-row">
 <input type="range" min="0" max="${handle.places - 1}" step="1" value="${placeOf(handle, value)}" aria-labelledby="handle-${k}" aria-valuetext="${shown} ${handle.unit}">
 <input type="text" autocomplete="off" spellcheck="false" value="${shown}" aria-label="${handle.path}, in ${unit} where no unit is typed" aria-describedby="handle-${k}-fault handle-${k}-moved">

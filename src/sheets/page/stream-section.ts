@@ -1,5 +1,5 @@
 import { type StreamRow, streamRows } from '../stream-rows.ts';
-import { type Html, html, joined, userText } from './html.ts';
+import { type Html, html, joined, nameText, userText } from './html.ts';
 import { type Cell, headCell, numberCell, table, textCell } from './tables.ts';
 import type { PageView } from './view.ts';
 
@@ -41,6 +41,8 @@ function line(
     { ...headCell(head === '  port' ? html`port` : head.trim()), mark },
     ...cells
       .slice(from, from + count)
-      .map((cell) => (WORDS.has(head) ? { ...textCell(cell), mark: 'r' } : numberCell(cell, words))),
+      .map((cell) =>
+        WORDS.has(head) ? { ...textCell(nameText(cell)), mark: 'r word' } : numberCell(cell, words),
+      ),
   ];
 }

@@ -1,4 +1,4 @@
-import { Html, html, joined, type Part, userText } from './html.ts';
+import { Html, html, joined, nameText, type Part, userText } from './html.ts';
 
 /** A cell of a table: text stands to the left, a number to the right. */
 export interface Cell {
@@ -31,7 +31,7 @@ export function unitCell(unit: string): Cell {
 
 /** The head of a row. */
 export function headCell(content: string | Html): Cell {
-  return { content: content instanceof Html ? content : userText(content), kind: 'head' };
+  return { content: content instanceof Html ? content : nameText(content), kind: 'head' };
 }
 
 export interface TableParts {

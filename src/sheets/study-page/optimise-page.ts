@@ -63,12 +63,15 @@ export function optimisePage(found: Optimised, options: StudyPageOptions): strin
   );
 }
 
-/** The tables of the text; columns of numbers stand to the right. */
+/** The tables of the text; columns of numbers stand to the right, and no head is left empty. */
 function partTable({ title, rows, left }: OptimisePart): Html {
   const [heads, ...body] = rows as readonly (readonly string[])[];
   return table({
     caption: title,
-    heads: heads!.map((text, c) => ({ text: userText(text), right: !left.includes(c) })),
+    heads: heads!.map((text, c) => ({
+      text: userText(text || (c === 0 ? 'no.' : 'remark')),
+      right: !left.includes(c),
+    })),
     rows: body.map((row) =>
       row.map((cell, c): Cell => (left.includes(c) ? textCell(cell) : numberCell(cell))),
     ),

@@ -6,7 +6,7 @@ import type { ChartAxis } from '../charts/axis-scale.ts';
 import { contourChart } from '../charts/contour-chart.ts';
 import { lineChart } from '../charts/line-chart.ts';
 import { decimalsOfDigits, pointText } from '../charts/number-text.ts';
-import type { RuledLine, Stretch } from '../charts/stretches.ts';
+import type { LimitLine, Stretch } from '../charts/stretches.ts';
 import type { FigureDisplay } from '../figure-display.ts';
 import { formulaDisplay } from '../formula-display.ts';
 
@@ -67,10 +67,10 @@ function curveOver(view: View, column: number, a: number): StudyChart {
   const rows = order.map((i) => rowOf(swept, held.with(a, i)));
   const x = order.map((i) => axis.numbers[i]!);
   const y = rows.map((row) => shown(cellOf(swept, row, column), display));
-  const limits = (flowsheet.objective?.limits ?? []).filter(({ formula }) => formula.text.trim() === name);
+  const own = (flowsheet.objective?.limits ?? []).filter(({ formula }) => formula.text.trim() === name);
   const here = inFile(flowsheet, axis);
-  const ruled: RuledLine[] = [
-    ...limits.map(({ bound, text }) => ({ axis: 'y' as const, value: shown(bound, display), label: text })),
+  const limits: LimitLine[] = [
+    ...own.map(({ bound, text }) => ({ axis: 'y' as const, value: shown(bound, display), label: text })),
     ...(here === null ? [] : [{ axis: 'x' as const, value: here, label: 'as in the file', light: true }]),
   ];
   const broken =
@@ -86,7 +86,7 @@ function curveOver(view: View, column: number, a: number): StudyChart {
     x: settingAxis(axis),
     y: title,
     series: [{ name: '', x, y }],
-    ruled,
+    limits,
     stretches: broken,
   });
   const gaps = rows.filter((row) => swept.converged[row] === 0).length;

@@ -1,7 +1,7 @@
 import type { FigureSpread, Share, Uncertainty } from '../../study/uncertainty.ts';
 import { type Bar, barChart } from '../charts/bar-chart.ts';
 import { lineChart } from '../charts/line-chart.ts';
-import type { RuledLine } from '../charts/stretches.ts';
+import type { LimitLine } from '../charts/stretches.ts';
 import { shownValue } from '../figure-display.ts';
 import { significant } from '../numbers.ts';
 import { type Html, html, userText } from '../page/html.ts';
@@ -143,7 +143,7 @@ function cumulative(
   );
   const { percentiles } = summary;
   const told = [percentiles[0], percentiles[Math.floor(percentiles.length / 2)], percentiles.at(-1)];
-  const ruled = [...new Set(told)].flatMap((one, k): RuledLine[] =>
+  const limits = [...new Set(told)].flatMap((one, k): LimitLine[] =>
     one === undefined
       ? []
       : [
@@ -169,7 +169,7 @@ function cumulative(
         y: ranks.map((rank) => (last === 0 ? 50 : (100 * rank) / last)),
       },
     ],
-    ruled,
+    limits,
     marked:
       asInFile === null
         ? []

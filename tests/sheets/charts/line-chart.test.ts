@@ -101,7 +101,7 @@ test('markup in a name, a title or a label is text', () => {
       x: { title: evil, unit: evil },
       series: [{ ...several[0]!, name: evil }],
       marked: [{ x: -10, y: 4.1, label: evil }],
-      ruled: [{ axis: 'y', value: 4.05, label: evil }],
+      limits: [{ axis: 'y', value: 4.05, label: evil }],
       stretches: [{ from: -25, to: 0, label: evil }],
     }),
   );
@@ -154,8 +154,8 @@ test('a log axis over values that are not all above zero is linear', () => {
 });
 
 test('a limit near the curves is drawn, one far away is not allowed to flatten them', () => {
-  const near = lineChart(spec({ ruled: [{ axis: 'y', value: 5.2, label: 'at most 5.2' }] }));
-  const far = lineChart(spec({ ruled: [{ axis: 'y', value: 50, label: 'at most 50' }] }));
+  const near = lineChart(spec({ limits: [{ axis: 'y', value: 5.2, label: 'at most 5.2' }] }));
+  const far = lineChart(spec({ limits: [{ axis: 'y', value: 50, label: 'at most 50' }] }));
   expect(near).toContain('at most 5.2');
   expect(near).toContain('class="limit"');
   expect(far).not.toContain('class="limit"');
