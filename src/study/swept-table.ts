@@ -70,8 +70,8 @@ export function sweepOfStudy(flowsheet: Flowsheet, most: number): FileStudy | nu
   const grid = createGrid(axes);
   const sweep = createSweeper(flowsheet, { grid, record });
   const columns = [
-    ...axes.map(({ path: name, unit }) => ({ name, unit })),
-    ...record.map(({ text }) => ({ name: text.trim(), unit: '' })),
+    ...axes.map(({ path: name, unit }) => ({ name, unit, swept: true })),
+    ...record.map(({ text }) => ({ name: text.trim(), unit: '', swept: false })),
   ];
   const reading = createReading(study.note, columns);
   const paths = Array.from({ length: grid.paths }, (_, path) => sweep(path));

@@ -32,7 +32,7 @@ export function diagnose(plant: Plant, closure: PlantClosure, options: CloseOpti
   const failure = closure.failure;
   if (!failure) throw new Error('a plant that did not close names the group that failed');
   const { trouble } = failure;
-  const [before] = faultDiagnostics(plant, reportsBefore(plant, failure.group));
+  const before = faultBefore(plant, failure.group);
   if (before !== undefined) return before;
   if (trouble) {
     // Before anything else passes through the plant: the blocks still stand where the pass failed.
@@ -45,15 +45,12 @@ export function diagnose(plant: Plant, closure: PlantClosure, options: CloseOpti
   return diagnosticOf(finding, closure, facts);
 }
 
-/**
- * What the blocks ahead of a group say, whose streams are settled: what one of them could not do is the cause of whatever
- * fails behind it. The others say nothing here.
- */
-function reportsBefore(plant: Plant, group: Facts['group']): readonly BlockReport[] {
+/** What a block ahead of a group holds back, whose streams are settled: that is the cause of whatever fails behind it. */
+function faultBefore(plant: Plant, group: Facts['group']): Diagnostic | undefined {
   const ahead = new Set(plant.groups.slice(0, plant.groups.indexOf(group)).flatMap(({ blocks }) => blocks));
-  return plant.units.map((unit, b) =>
-    ahead.has(b) ? unit.report(plant.inlets[b], plant.outlets[b]) : quietReport({}),
-  );
+  return faultDiagnostics(plant, (b) =>
+    ahead.has(b) ? plant.units[b].report(plant.inlets[b], plant.outlets[b]) : quietReport({}),
+  )[0];
 }
 
 /**

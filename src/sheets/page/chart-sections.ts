@@ -1,5 +1,5 @@
 import { lineChart } from '../charts/line-chart.ts';
-import type { RuledLine } from '../charts/stretches.ts';
+import type { LimitLine } from '../charts/stretches.ts';
 import { type Html, html, joined, ownMarkup } from './html.ts';
 import { passTable } from './note-sections.ts';
 import type { PageView } from './view.ts';
@@ -14,7 +14,7 @@ export function heatCurvesSection(view: PageView): Html | null {
     const heat = curve['heat_kW'];
     if (heat === undefined) return [];
     const evaporator = details['evaporator_K'];
-    const ruled: RuledLine[] =
+    const limits: LimitLine[] =
       typeof evaporator === 'number' ? [{ axis: 'y', value: evaporator - 273.15, label: 'evaporator' }] : [];
     const lines = (['hot_K', 'process_K', 'cold_K'] as const).flatMap((key) => curve[key] ?? []).length;
     if (lines === 0) return [];
@@ -36,7 +36,7 @@ export function heatCurvesSection(view: PageView): Html | null {
             if (temperatures === undefined) return [];
             return [{ name: word, x: heat.map((kW) => kW / 1000), y: temperatures.map(degC) }];
           }),
-          ruled,
+          limits,
           points: false,
           width: WIDTH,
           height: HEIGHT,
