@@ -31,7 +31,7 @@ export function commandLine(): {
     program = mkdtempSync(join(tmpdir(), 'looptally-built-'));
     folder = mkdtempSync(join(tmpdir(), 'looptally-work-'));
     await buildCli(program);
-  });
+  }, 60_000);
   afterAll(() => {
     for (const made of [program, folder]) rmSync(made, { recursive: true, force: true });
   });
