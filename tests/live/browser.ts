@@ -7,7 +7,7 @@ import { buildLive } from '../../scripts/build.mjs';
 import { balance, readFlowsheet, renderers } from '../../src/index.ts';
 
 const PLACES = ['/usr/bin/chromium', '/usr/bin/chromium-browser', '/usr/bin/google-chrome'];
-const executablePath = [process.env['LOOPTALLY_BROWSER'] ?? '', ...PLACES].find(
+export const executablePath = [process.env['LOOPTALLY_BROWSER'] ?? '', ...PLACES].find(
   (path) => path !== '' && existsSync(path),
 );
 
@@ -17,7 +17,7 @@ export const noBrowser =
     ? ` (SKIPPED: no Chromium found; scripts/install-browser.sh installs one, LOOPTALLY_BROWSER names another)`
     : '';
 
-const FLAGS =
+export const FLAGS =
   '--headless --no-sandbox --disable-gpu --no-first-run --disable-background-networking --disable-component-update --disable-sync';
 
 /** Pages of flowsheets on the disk, opened in a browser without a network. */

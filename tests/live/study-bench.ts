@@ -1,19 +1,11 @@
-import { existsSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { type Browser, type BrowserContextOptions, chromium, type Page } from 'playwright-core';
 import { afterAll, beforeAll } from 'vitest';
 import { buildPageScripts } from '../../scripts/build.mjs';
 import type { StudyPageOptions } from '../../src/sheets/study-page/study-document.ts';
-
-const PLACES = ['/usr/bin/chromium', '/usr/bin/chromium-browser', '/usr/bin/google-chrome'];
-const executablePath = [process.env['LOOPTALLY_BROWSER'] ?? '', ...PLACES].find(
-  (path) => path !== '' && existsSync(path),
-);
-
-/** Why the tests in a browser are left out; '' where there is one. */
-export const noBrowser =
-  executablePath === undefined ? ' (SKIPPED: no Chromium found; LOOPTALLY_BROWSER names one)' : '';
+import { executablePath, FLAGS } from './browser.ts';
 
 /** Pages of studies on the disk, opened in a browser without a network. */
 export interface StudyBench {
@@ -34,7 +26,7 @@ export function studyBench(): StudyBench {
     if (executablePath === undefined) return;
     folder = mkdtempSync(join(tmpdir(), 'looptally-study-'));
     await buildPageScripts(folder);
-    browser = await chromium.launch({ executablePath, args: ['--no-sandbox', '--disable-gpu'] });
+    browser = await chromium.launch({ executablePath, args: FLAGS.split(' ') });
   }, 120_000);
   afterAll(async () => {
     await browser?.close();

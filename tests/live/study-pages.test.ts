@@ -15,7 +15,8 @@ import { uncertainty } from '../../src/study/uncertainty.ts';
 import { readPage } from '../sheets/study-page/page-checks.ts';
 import { flowsheetOf, formula } from '../study/read-study.ts';
 import { shippedText } from '../tally/shipped.ts';
-import { noBrowser, studyBench } from './study-bench.ts';
+import { noBrowser } from './browser.ts';
+import { studyBench } from './study-bench.ts';
 
 const axe = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
 

@@ -107,5 +107,5 @@ const studyStyle = `
 .next{border-left:1px solid var(--hair);padding-left:.7rem}
 button{font:inherit;color:var(--ink);background:var(--wash);border:1px solid var(--rule);padding:.35rem .9rem;cursor:pointer}
 button:hover{background:var(--accent-wash)}
-@media print{.chart-figure .value{display:none}.long{max-height:none;overflow:visible}}
+@media print{.charts{grid-template-columns:1fr 1fr}.chart-figure .value{display:none}.long{max-height:none;overflow:visible}.long th,.long td:last-child{white-space:normal}.note,.caution,.chart-figure figcaption{font-size:8pt}.long thead th{position:static}}
 `;

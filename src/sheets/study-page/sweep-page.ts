@@ -2,7 +2,7 @@ import type { Flowsheet } from '../../model/flowsheet.ts';
 import { countFailures } from '../../study/failures.ts';
 import { cellOf, type SweptTable } from '../../study/swept-table.ts';
 import { significant } from '../numbers.ts';
-import { type Html, html, userText } from '../page/html.ts';
+import { type Html, html, nameText, userText } from '../page/html.ts';
 import { bulletList, type Cell, headCell, numberCell, table, textCell } from '../page/tables.ts';
 import { figureAxis, numberText, shown, studyCharts } from './study-charts.ts';
 import {
@@ -152,7 +152,7 @@ function caseTable(swept: SweptTable, heads: readonly string[]): Html {
       : `The first ${count} of ${swept.rows} cases; the table to download has all. Figures in the units of formulas, fractions 0 to 1.`;
   return html`<p class="note">${note}</p><div class="long">${table({
     caption: 'The cases of the sweep',
-    heads: heads.map((text, c) => ({ text: userText(text), right: c < width || c === width + 1 })),
+    heads: heads.map((text, c) => ({ text: nameText(text), right: c < width || c === width + 1 })),
     rows,
   })}</div>`;
 }

@@ -13,7 +13,7 @@ export function readPage(html: string): PageRead {
   const body = html.replace(/<(style|script)[^>]*>[\s\S]*?<\/\1>/g, '');
   return {
     elements: [...body.matchAll(/<([a-z][\w-]*)/g)].map(([, name]) => name!),
-    text: plain(body.replace(/<title[^>]*>[^<]*<\/title>/g, '').replace(/<[^>]*>/g, ' ')).replace(
+    text: plain(body.replace(/<title[^>]*>[^<]*<\/title>|<wbr>/g, '').replace(/<[^>]*>/g, ' ')).replace(
       /\s+/g,
       ' ',
     ),
