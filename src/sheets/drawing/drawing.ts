@@ -2,7 +2,7 @@ import type { Result } from '../../model/result.ts';
 import { plainText } from '../plain.ts';
 import { arrange } from './arrange.ts';
 import { giveDirections } from './directions.ts';
-import { flagOf } from './flags.ts';
+import { flagOf, pressureDecimals } from './flags.ts';
 import { type DrawnStream, networkOf } from './network.ts';
 import { drawFrame, frameFor } from './sheet-frame.ts';
 import {
@@ -44,7 +44,8 @@ export interface Drawing {
 export async function drawingOf(result: Result, options: DrawingOptions = {}): Promise<Drawing> {
   const network = networkOf(result);
   giveDirections(network);
-  const flags = network.streams.map(({ tag, state }) => flagOf(tag, state));
+  const decimals = pressureDecimals(network.streams.map(({ state }) => state.pressure_bar));
+  const flags = network.streams.map(({ tag, state }) => flagOf(tag, state, decimals));
   const { boxes, layout } = await arrange(network, result, flags, options.product ?? null);
   const frame = frameFor(layout.width, layout.height);
   const { field } = frame;
