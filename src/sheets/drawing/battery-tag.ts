@@ -13,9 +13,12 @@ export function batteryBox(
   product: string | null,
 ): NodeBox {
   const stream = (node.kind === 'feed' ? leaving : entering)[0]!;
-  const lost = result.figures.purge?.streams.includes(stream.tag) ?? false;
+  const purges = result.figures.purge?.streams ?? [];
+  const lost = purges.includes(stream.tag);
+  // Where there are two they are told apart.
+  const purge = purges.length > 1 ? `purge ${stream.tag}` : 'purge';
   const lines = [
-    node.kind === 'feed' ? node.name : stream.tag === product ? 'product' : lost ? 'purge' : 'outlet',
+    node.kind === 'feed' ? node.name : stream.tag === product ? 'product' : lost ? purge : 'outlet',
     mainly(stream),
   ];
   const words = Math.min(NAME_WIDTH, Math.max(...lines.map((each, k) => textWidth(each, SMALL, k === 0))));

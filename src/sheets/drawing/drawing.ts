@@ -2,7 +2,7 @@ import type { Result } from '../../model/result.ts';
 import { plainText } from '../plain.ts';
 import { arrange } from './arrange.ts';
 import { giveDirections } from './directions.ts';
-import { flagOf } from './flags.ts';
+import { flagOf, pressureDecimals } from './flags.ts';
 import { type DrawnStream, networkOf } from './network.ts';
 import { bareFrame, drawFrame, frameFor } from './sheet-frame.ts';
 import {
@@ -50,7 +50,8 @@ export interface Drawing {
 export async function drawingOf(result: Result, options: DrawingOptions = {}): Promise<Drawing> {
   const network = networkOf(result);
   giveDirections(network);
-  const flags = network.streams.map(({ tag, state }) => flagOf(tag, state));
+  const decimals = pressureDecimals(network.streams.map(({ state }) => state.pressure_bar));
+  const flags = network.streams.map(({ tag, state }) => flagOf(tag, state, decimals));
   const { boxes, layout } = await arrange(network, result, flags, options.product ?? null);
   const forPage = options.forPage ?? false;
   const frame = forPage ? bareFrame(layout.width, layout.height) : frameFor(layout.width, layout.height);

@@ -14,17 +14,21 @@ const TAG_WIDTH = 90;
 const ROW = 11;
 const TAG_ROW = 14;
 
-/** What stands under the tag of a flag. */
-export function flagRows(state: StreamResult): readonly string[] {
+/**
+ * What stands under the tag of a flag.
+ *
+ * @param decimals  of all pressures of a drawing, so that 200.0 does not stand beside 20.00
+ */
+export function flagRows(state: StreamResult, decimals: number): readonly string[] {
   return [
     `${fixed(state.temperature_K - 273.15, 1, 1e-9)} °C`,
-    `${significant(state.pressure_bar, 4)} bar`,
+    `${state.pressure_bar.toFixed(decimals)} bar`,
     `${flowText(state.flow_kmol_h)} kmol/h`,
   ];
 }
 
-export function flagOf(tag: string, state: StreamResult): Flag {
-  const rows = flagRows(state);
+export function flagOf(tag: string, state: StreamResult, decimals: number): Flag {
+  const rows = flagRows(state, decimals);
   const head = text(tag, 4, 10, { bold: true, width: TAG_WIDTH });
   const frame = head.box.width + 8;
   return {
@@ -38,6 +42,12 @@ export function flagOf(tag: string, state: StreamResult): Flag {
       return { svg: rectangle({ x, y, width: frame, height: TAG_ROW - 1 }, THIN_LINE), texts };
     },
   };
+}
+
+/** Decimals that give the lowest of some pressures [bar] three figures, one at least and four at most. */
+export function pressureDecimals(pressures: readonly number[]): number {
+  const lowest = Math.min(...pressures.filter((pressure) => pressure > 0));
+  return Number.isFinite(lowest) ? Math.min(4, Math.max(1, 2 - Math.floor(Math.log10(lowest) + 1e-9))) : 1;
 }
 
 /** Four figures, and no decimals where there are more before the point. */

@@ -1,6 +1,6 @@
 import type { Result } from '../../model/result.ts';
 import { mainly } from './battery-tag.ts';
-import { flagRows } from './flags.ts';
+import { flagRows, pressureDecimals } from './flags.ts';
 import { networkOf } from './network.ts';
 import { blockWords } from './node-boxes.ts';
 
@@ -18,8 +18,9 @@ export function nodeWord(k: number): (line: number) => string {
 export function drawingWords(result: Result): Map<string, string> {
   const { nodes, lanes, streams } = networkOf(result);
   const words = new Map<string, string>();
+  const decimals = pressureDecimals(streams.map(({ state }) => state.pressure_bar));
   streams.forEach(({ state }, k) => {
-    flagRows(state).forEach((row, line) => {
+    flagRows(state, decimals).forEach((row, line) => {
       words.set(flagWord(k)(line + 1), row);
     });
   });
