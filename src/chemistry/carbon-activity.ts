@@ -5,6 +5,9 @@ import type { GasModel } from '../properties/gas-model.ts';
 import type { EnthalpyBasis } from '../properties/ideal-gas.ts';
 import { createIdealGas } from '../properties/ideal-gas.ts';
 
+/** Where a trace of hydrogen or of CO2 is all that holds carbon back, its activity passes every bound: kept a number. */
+const LARGEST_LN = 700;
+
 /** Activity of carbon against graphite; above 1 carbon can form. Null where the gas lacks a species of it. */
 export interface CarbonActivity {
   /** by 2 CO = C + CO2 */
@@ -62,7 +65,7 @@ export function createCarbonActivity(
         if (!(y[index] > 0)) return null;
         ln += nu * (gibbs(index) - Math.log(y[index]) - lnPhi[index] - lnPressure);
       }
-      return Math.exp(ln);
+      return Math.exp(Math.min(ln, LARGEST_LN));
     };
     /** −G°/(R T) */
     const gibbs = (i: number): number => (s[i] - h[i] / T) / R_NASA;

@@ -35,6 +35,12 @@ export function liquidVolumeSlope(c: Component, T: number): number {
   return curve.rackett ? rackettSlope(curve.rackett, T) : 0;
 }
 
+/** Where the liquid volume of a component is known [K]; null where it is one number or nothing for all temperatures. */
+export function liquidVolumeRange(c: Component): { readonly fromK: number; readonly toK: number } | null {
+  const { table, rackett: equation, fromK, toK } = curveOf(c);
+  return table === null && equation === null ? null : { fromK, toK };
+}
+
 interface Rackett {
   readonly z: number;
   readonly criticalK: number;

@@ -13,6 +13,7 @@ import type { EnthalpyBasis, IdealGas } from './ideal-gas.ts';
 import { createIdealGas } from './ideal-gas.ts';
 import { createLiquidPhase, type LiquidPhase, type MovedVapourPressures } from './liquid-phase.ts';
 import { createPhaseSplit, type PhaseSplit } from './phase-split.ts';
+import { type UseOutside, usesOutside } from './ranges.ts';
 import { solveState } from './solve-state.ts';
 import { createStateSlopes, type FillStateSlopes } from './state-slopes.ts';
 
@@ -62,6 +63,8 @@ export interface Mixture {
   mass(stream: StreamState): number;
   /** What a settled stream's liquid or gas asks of the data beyond their range, in plain sentences. */
   cautions(stream: StreamState): Caution[];
+  /** The correlations that a settled stream is computed with outside their ranges. */
+  usesOutside(stream: StreamState): UseOutside[];
   /** The same mixture with other condensables; the property data are shared. */
   withCondensables(condense: readonly string[]): Mixture;
 }
@@ -216,6 +219,7 @@ export function createMixture(spec: MixtureSpec): Mixture {
       for (let i = 0; i < size; i++) sum += stream.flowsMolPerS[i] * molarMass[i];
       return sum;
     },
+    usesOutside: (stream) => usesOutside(stream, components, roles, spec.liquid ?? 'antoine'),
     cautions: (stream) => cautionsOf(stream, components, roles, spec.liquid ?? 'antoine'),
     withCondensables: (condense) => createMixture({ ...spec, condense }),
   };

@@ -21,10 +21,7 @@ export const figureReaders: { readonly [K in KeyFigure]: (source: FigureSource) 
   overall_conversion: ({ plant, tallied }) => overallConversion(plant, tallied()),
   overall_yield: ({ plant, tallied }) => overallYield(plant, tallied()),
   production_t_d: ({ plant }) => productionTPerD(plant),
-  recycle_ratio: ({ plant, tallied }) =>
-    plant.flowsheet.ledger.recycle
-      ? total(state(plant, plant.flowsheet.ledger.recycle)) / sumOf(tallied().entering)
-      : null,
+  recycle_ratio: ({ plant, tallied }) => recycleRatio(plant, tallied),
   inerts: ({ plant }) => inerts(plant),
   purge: ({ plant, tallied }) => purge(plant, tallied()),
   power_kW: ({ plant, reports }) => powers(plant, reports()),
@@ -121,6 +118,14 @@ export function yieldReaction(
   );
 }
 
+/** Mol that goes round per mol that is fed; null where nothing is. */
+function recycleRatio(plant: Plant, tallied: () => Tallied): number | null {
+  const { recycle } = plant.flowsheet.ledger;
+  if (!recycle) return null;
+  const fed = sumOf(tallied().entering);
+  return fed > 0 ? total(state(plant, recycle)) / fed : null;
+}
+
 /** Mass of the product component in the product stream [t/d]. */
 function productionTPerD(plant: Plant): number | null {
   const { product } = plant.flowsheet.ledger;
@@ -148,7 +153,8 @@ function inerts(plant: Plant): Figures['inerts'] {
 
 function purge(plant: Plant, { entering }: Tallied): Figures['purge'] {
   const tags = plant.flowsheet.ledger.purge;
-  if (tags.length === 0) return null;
+  // Of a plant that is fed with nothing no part can be lost.
+  if (tags.length === 0 || sumOf(entering) === 0) return null;
   const lost = new Float64Array(plant.mixture.size);
   for (const tag of tags) {
     const { flowsMolPerS } = state(plant, tag);

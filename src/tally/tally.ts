@@ -5,6 +5,7 @@ import type { PlantClosure } from './close-plant.ts';
 import { keyFigures } from './figures.ts';
 import { closures, count, ledger } from './ledger.ts';
 import type { Plant } from './plant.ts';
+import { rangeWarnings } from './range-warnings.ts';
 import { reportsOf } from './reports.ts';
 import { createPlantScope } from './scope.ts';
 import { streamResults } from './stream-results.ts';
@@ -49,7 +50,12 @@ export function tally(plant: Plant, closure: PlantClosure, options: TallyOptions
     ledger: ledger(plant, tallied),
     closure: closed,
     aims,
-    warnings: [...blockWarnings(plant, reports), ...yieldWarnings(figures), ...closureWarnings(closed)],
+    warnings: [
+      ...blockWarnings(plant, reports),
+      ...rangeWarnings(plant, reports),
+      ...yieldWarnings(figures),
+      ...closureWarnings(closed),
+    ],
     assumptions: assumptionsOf(plant, reports),
   };
 }

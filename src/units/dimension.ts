@@ -31,6 +31,10 @@ export interface DimensionFacts {
   /** least value that makes sense [SI]; `above` excludes it */
   readonly min?: number;
   readonly above?: number;
+  /** greatest value that makes sense [SI]: beyond it states and balances lose their digits or overflow */
+  readonly max?: number;
+  /** smallest size other than 0 [SI] */
+  readonly least?: number;
 }
 
 export const dimensions: Readonly<Record<Dimension, DimensionFacts>> = {
@@ -40,7 +44,8 @@ export const dimensions: Readonly<Record<Dimension, DimensionFacts>> = {
     shown: 'degC',
     offered: ['degC', 'K', 'degF'],
     examples: ['450 degC', '723.15 K'],
-    above: 0,
+    min: 1,
+    max: 1e5,
   },
   temperatureDifference: {
     noun: 'a temperature difference',
@@ -48,6 +53,8 @@ export const dimensions: Readonly<Record<Dimension, DimensionFacts>> = {
     shown: 'K',
     offered: ['K', 'degF'],
     examples: ['10 K'],
+    min: -1e5,
+    max: 1e5,
   },
   pressure: {
     noun: 'a pressure',
@@ -56,6 +63,8 @@ export const dimensions: Readonly<Record<Dimension, DimensionFacts>> = {
     offered: ['bar', 'barg', 'MPa', 'atm', 'psia', 'psig'],
     examples: ['200 bar', '199 barg', '20 MPa'],
     above: 0,
+    max: 1e12,
+    least: 1e-3,
   },
   pressureDifference: {
     noun: 'a pressure difference',
@@ -63,6 +72,8 @@ export const dimensions: Readonly<Record<Dimension, DimensionFacts>> = {
     shown: 'bar',
     offered: ['bar', 'kPa', 'mbar', 'psi'],
     examples: ['4 bar', '50 mbar'],
+    min: -1e12,
+    max: 1e12,
   },
   molarFlow: {
     noun: 'a molar flow',
@@ -71,6 +82,8 @@ export const dimensions: Readonly<Record<Dimension, DimensionFacts>> = {
     offered: ['kmol/h', 'mol/s', 'lbmol/h'],
     examples: ['6500 kmol/h', '1800 mol/s'],
     min: 0,
+    max: 1e15,
+    least: 1e-15,
   },
   massFlow: {
     noun: 'a mass flow',
@@ -79,6 +92,8 @@ export const dimensions: Readonly<Record<Dimension, DimensionFacts>> = {
     offered: ['kg/h', 't/d', 'kg/s', 'lb/h'],
     examples: ['50000 kg/h', '1200 t/d'],
     min: 0,
+    max: 1e15,
+    least: 1e-15,
   },
   normalVolumeFlow: {
     noun: 'a normal volume flow',
@@ -87,6 +102,8 @@ export const dimensions: Readonly<Record<Dimension, DimensionFacts>> = {
     offered: ['Nm3/h', 'Sm3/h', 'MMscf/d'],
     examples: ['145000 Nm3/h', '120 MMscf/d'],
     min: 0,
+    max: 1e15,
+    least: 1e-15,
   },
   power: {
     noun: 'a heat flow or power',
@@ -94,6 +111,8 @@ export const dimensions: Readonly<Record<Dimension, DimensionFacts>> = {
     shown: 'kW',
     offered: ['kW', 'MW', 'GJ/h', 'kcal/h', 'MMBtu/h'],
     examples: ['1500 kW', '-12 MW'],
+    min: -1e20,
+    max: 1e20,
   },
   fraction: {
     noun: 'a fraction',
@@ -108,6 +127,8 @@ export const dimensions: Readonly<Record<Dimension, DimensionFacts>> = {
     shown: 'kJ/mol',
     offered: ['kJ/mol', 'J/mol', 'kcal/mol'],
     examples: ['-45.9 kJ/mol'],
+    min: -1e9,
+    max: 1e9,
   },
   molarHeatCapacity: {
     noun: 'a molar entropy or heat capacity',
@@ -115,6 +136,8 @@ export const dimensions: Readonly<Record<Dimension, DimensionFacts>> = {
     shown: 'J/(mol K)',
     offered: ['J/(mol K)', 'cal/(mol K)'],
     examples: ['192.8 J/(mol K)'],
+    min: -1e6,
+    max: 1e6,
   },
   molarVolume: {
     noun: 'a molar volume',
@@ -123,6 +146,7 @@ export const dimensions: Readonly<Record<Dimension, DimensionFacts>> = {
     offered: ['cm3/mol', 'm3/kmol', 'L/mol'],
     examples: ['25 cm3/mol'],
     above: 0,
+    max: 1e6,
   },
   volume: {
     noun: 'a volume',
@@ -131,6 +155,8 @@ export const dimensions: Readonly<Record<Dimension, DimensionFacts>> = {
     offered: ['m3', 'L', 'ft3'],
     examples: ['60 m3'],
     above: 0,
+    max: 1e15,
+    least: 1e-15,
   },
   mass: {
     noun: 'a mass',
@@ -139,6 +165,8 @@ export const dimensions: Readonly<Record<Dimension, DimensionFacts>> = {
     offered: ['kg', 't', 'g', 'lb'],
     examples: ['40 t', '34.8 g'],
     above: 0,
+    max: 1e15,
+    least: 1e-15,
   },
   density: {
     noun: 'a density',
@@ -147,6 +175,8 @@ export const dimensions: Readonly<Record<Dimension, DimensionFacts>> = {
     offered: ['kg/m3', 'kg/L', 'lb/ft3'],
     examples: ['1100 kg/m3'],
     above: 0,
+    max: 1e15,
+    least: 1e-15,
   },
   heatTransferPerVolume: {
     noun: 'a heat transfer per volume',
@@ -155,6 +185,7 @@ export const dimensions: Readonly<Record<Dimension, DimensionFacts>> = {
     offered: ['kW/(m3 K)', 'W/(m3 K)'],
     examples: ['50 kW/(m3 K)'],
     min: 0,
+    max: 1e15,
   },
   number: { noun: 'a plain number', si: '', shown: '', offered: [], examples: ['3', '0.85'] },
 };

@@ -55,12 +55,22 @@ export function withinLimits(
   limits: Limits,
 ): QuantityResult {
   const facts = dimensions[dimension];
+  if (facts.least !== undefined && value !== 0 && Math.abs(value) < facts.least) {
+    const limit = formatQuantity(facts.least, dimension);
+    return {
+      ok: false,
+      code: 'out-of-range',
+      what: `the value ${shown} is out of range.`,
+      why: `${facts.noun} that is not 0 must be at least ${limit}: nothing smaller can be told apart from 0`,
+      mend: facts.min === 0 ? `write 0, or at least ${limit}` : `write at least ${limit}`,
+    };
+  }
   const natural = beyond(value, facts);
   const asked = beyond(value, limits);
   // Adding 0 turns -0 into 0: no sheet should show a minus there.
   if (natural === null && asked === null) return { ok: true, value: value + 0 };
   const [direction, bound, open] = (natural ?? asked)!;
-  const limit = dimension === 'temperature' && bound === 0 ? '0 K' : formatQuantity(bound, dimension);
+  const limit = dimension === 'temperature' && bound <= 1 ? `${bound} K` : formatQuantity(bound, dimension);
   const asPerCent =
     dimension === 'fraction' && direction === 'high' && value > 1 && value <= 100 && /^[\d.]+$/.test(shown)
       ? `write ${shown} %, or ${value / 100}`
