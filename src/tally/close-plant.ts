@@ -20,7 +20,7 @@ export interface PlantClosure {
   readonly method: MethodName;
   /** passes of the recycle that took most, the one that found its start values included */
   readonly passes: number;
-  /** largest residual of the recycles */
+  /** largest residual of the recycles; NaN where no pass came to its end */
   readonly residual: number;
   readonly history: readonly TraceEntry[];
   /** the group that failed, with its closure and the names of its variables; null when all is closed */
@@ -57,7 +57,7 @@ export function closePlant(plant: Plant, options: CloseOptions): PlantClosure {
     for (const record of closure.history) {
       history.push({
         pass: record.pass + spent,
-        residual: record.residual,
+        residual: Number.isFinite(record.residual) ? record.residual : null,
         worst: problem.names[record.worst] ?? '',
         method: record.method,
         // Worked out when the trace is read: a study reads none.
