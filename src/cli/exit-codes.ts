@@ -6,4 +6,7 @@ export const exitCodes = {
   badInput: 2,
   notClosed: 3,
   aimNotReached: 4,
+  /** 128 and the number of the signal, as shells have it: SIGINT (Ctrl-C), SIGTERM */
+  interrupted: 130,
+  terminated: 143,
 } as const;

@@ -1,12 +1,13 @@
 import type { Command } from 'commander';
 import { command } from './common-options.ts';
+import { openSlice } from './open-slice.ts';
 import { usageRefusal, usageRefusals } from './refusal.ts';
-import { openTextSlice, type Slice } from './slice-file.ts';
+import type { Slice } from './slice-file.ts';
 import { isPage } from './study-page.ts';
 import { writeTrouble } from './sweep-resume.ts';
 import { tableKind, tableKinds, writeRenamed } from './table-file.ts';
 import { printJson, say } from './terminal.ts';
-import { checkOutputs } from './write-files.ts';
+import { checkOutputs, isSameFile } from './write-files.ts';
 
 interface GatherOptions {
   readonly out: string;
@@ -28,7 +29,8 @@ export function gatherCommand(): Command {
 }
 
 async function runGather(paths: readonly string[], { out, json, quiet }: GatherOptions): Promise<void> {
-  checkOutputs([out], null);
+  for (const path of paths) checkOutputs([out], path);
+  checkTwice(paths);
   checkKinds(paths, out);
   const slices: Slice[] = [];
   for (const path of paths) slices.push(await openSlice(path));
@@ -53,22 +55,17 @@ async function runGather(paths: readonly string[], { out, json, quiet }: GatherO
     say(`${out}: ${total} cases from ${paths.length} ${paths.length === 1 ? 'slice' : 'slices'}`);
 }
 
-async function openSlice(path: string): Promise<Slice> {
-  try {
-    if (tableKind(path) !== '.parquet') return openTextSlice(path);
-    const { openParquetSlice } = await import('./parquet-slices.ts');
-    return await openParquetSlice(path);
-  } catch (error) {
-    const { code } = error as NodeJS.ErrnoException;
-    if (code === undefined || !/^E[A-Z]/.test(code)) throw error;
-    throw usageRefusal(
-      'cannot-read',
-      `${path} cannot be read.`,
-      code === 'ENOENT' ? 'there is no such file' : `the system says ${code}`,
-      'check its name',
-      path,
-    );
-  }
+/** One file named twice is a slip of the fingers, and the slice that was meant instead will be missing. */
+function checkTwice(paths: readonly string[]): void {
+  const again = paths.find((path, k) => paths.slice(0, k).some((before) => isSameFile(before, path)));
+  if (again === undefined) return;
+  throw usageRefusal(
+    'slices-overlap',
+    `${again} is named twice.`,
+    'its rows would be in the table twice',
+    'name each slice once; perhaps another one was meant',
+    again,
+  );
 }
 
 function checkKinds(paths: readonly string[], out: string): void {

@@ -11,24 +11,38 @@ const WORTH_MS = 1500;
 /** Paths that may be finished ahead of the one that is written next, for each worker. */
 const AHEAD = 4;
 
+/** A worker thread ended before its work did. */
+export class WorkerLost extends Error {
+  constructor(why: string) {
+    super(why);
+    this.name = 'WorkerLost';
+  }
+}
+
 export interface PathsWanted {
   /** paths [from, to) */
   readonly from: number;
   readonly to: number;
   /** worker threads; undefined: as many as there are processors, where that is worth it */
   readonly workers: number | undefined;
+  /** ends the work between two paths */
+  readonly signal?: AbortSignal | undefined;
 }
 
 /** A path leaves little behind; with the usual room for young objects each worker would take 50 MB more [MB]. */
 const YOUNG_MB = 16;
 
-/** Make the paths of a job and hand them over in their order, whoever finishes first. */
+/**
+ * Make the paths of a job and hand them over in their order, whoever finishes first.
+ *
+ * @throws WorkerLost; the reason of the signal; what `take` throws
+ */
 export async function makePaths(
   job: SweepJob,
   wanted: PathsWanted,
   take: (table: PathTable) => void,
 ): Promise<void> {
-  const { to } = wanted;
+  const { to, signal } = wanted;
   let next = wanted.from;
   let workers = wanted.workers ?? Number.POSITIVE_INFINITY;
   const entry = workerEntry();
@@ -39,13 +53,16 @@ export async function makePaths(
       take(sweep(next++));
       // Signals and the progress bar have their turn between two paths.
       await new Promise(setImmediate);
+      if (signal?.aborted) break;
       if (wanted.workers !== undefined || entry === null) continue;
       const spent = performance.now() - began;
       if (spent > ALONE_MS && (spent / (next - wanted.from)) * (to - next) > WORTH_MS) break;
     }
     workers = availableParallelism();
   }
-  if (next < to) await withWorkers(job, entry!, next, to, Math.min(workers, to - next), take);
+  signal?.throwIfAborted();
+  if (next < to)
+    await withWorkers(job, entry!, { from: next, to, signal }, Math.min(workers, to - next), take);
 }
 
 /** The bundled worker lies beside the command line; run from its sources, a sweep works in one thread. */
@@ -57,8 +74,7 @@ function workerEntry(): string | null {
 function withWorkers(
   job: SweepJob,
   entry: string,
-  from: number,
-  to: number,
+  { from, to, signal }: Omit<PathsWanted, 'workers'>,
   count: number,
   take: (table: PathTable) => void,
 ): Promise<void> {
@@ -74,15 +90,24 @@ function withWorkers(
     let ended = false;
     const end = (finish: () => void) => {
       ended = true;
+      signal?.removeEventListener('abort', stop);
       for (const worker of workers) void worker.terminate();
       finish();
     };
+    const stop = () => end(() => reject(signal?.reason));
+    signal?.addEventListener('abort', stop);
     const giveOut = () => {
       while (idle.length > 0 && given < to && given < due + AHEAD * count) idle.pop()!.postMessage(given++);
     };
     for (const worker of workers) {
       idle.push(worker);
-      worker.on('error', (error) => end(() => reject(error)));
+      worker.on('error', (error: NodeJS.ErrnoException) => {
+        const isMemory = error.code === 'ERR_WORKER_OUT_OF_MEMORY';
+        end(() => reject(isMemory ? new WorkerLost('it ran out of memory') : error));
+      });
+      worker.on('exit', (code) => {
+        if (!ended) end(() => reject(new WorkerLost(`it ended by itself with code ${code}`)));
+      });
       worker.on('message', (table: PathTable) => {
         if (ended) return;
         waiting.set(table.path, table);

@@ -1,7 +1,8 @@
 import { createHash } from 'node:crypto';
 import { existsSync, rmSync, statfsSync } from 'node:fs';
 import { dirname } from 'node:path';
-import { type Refusal, usageRefusal } from './refusal.ts';
+import { exitCodes } from './exit-codes.ts';
+import { type Refusal, usageRefusal, usageRefusals } from './refusal.ts';
 import type { SweepJob } from './sweep-job.ts';
 import {
   createJournal,
@@ -12,6 +13,7 @@ import {
   resumeJournal,
 } from './sweep-journal.ts';
 import { version } from './version.ts';
+import { systemSays } from './write-files.ts';
 
 /** What a sweep is made from: where one of these differs, the rows would. */
 export function identityOf(job: SweepJob, part: string): Identity {
@@ -76,22 +78,30 @@ export function checkRoom(out: string, rows: number, numbers: number): void {
 
 /** What the system says when a table cannot be written, in words; everything else as it came. */
 export function writeTrouble(path: string, error: unknown, begun: boolean): unknown {
-  const { code } = error as NodeJS.ErrnoException;
-  if (code === undefined || !/^E[A-Z]/.test(code)) return error;
-  const why =
-    code === 'ENOSPC' || code === 'EDQUOT'
-      ? 'the disk is full'
-      : code === 'EFBIG'
-        ? 'a file may not grow any larger here'
-        : code === 'EACCES' || code === 'EPERM' || code === 'EROFS'
-          ? 'the system denies access to it'
-          : `the system says ${code}`;
+  const why = systemSays(error);
+  if (why === null) return error;
   return usageRefusal(
     'cannot-write',
     `${path} cannot be written.`,
     begun ? `${why}; what is done so far is kept` : why,
     begun ? 'make room and repeat the command with --resume' : 'check the folder, or name another file',
     path.replace(/\.part$/, ''),
+  );
+}
+
+/** A worker is gone: neither the user nor the flowsheet did that, and going on by itself might only repeat it. */
+export function workerLost({ message }: Error, kept: string, mend: string): Refusal {
+  return usageRefusals(
+    [
+      {
+        code: 'worker-lost',
+        what: 'a thread of this sweep ended before its work was done.',
+        why: `${message}${kept}`,
+        mend,
+        at: null,
+      },
+    ],
+    exitCodes.fault,
   );
 }
 

@@ -1,42 +1,36 @@
-import { rmSync } from 'node:fs';
 import { type Command, InvalidArgumentError } from 'commander';
 import type { Flowsheet } from '../model/flowsheet.ts';
 import { createGrid, type Grid, pathsOfPart } from '../study/grid.ts';
-import { createReading, type ReadingColumn, type StudyReading } from '../study/reading.ts';
-import { sweepHeads } from '../study/sweep.ts';
+import { createReading, type ReadingColumn } from '../study/reading.ts';
+import { type PathTable, sweepHeads } from '../study/sweep.ts';
 import { limitsToRecord } from '../study/swept-table.ts';
 import { collect, fileCommand, positiveInteger } from './common-options.ts';
 import { exitCodes } from './exit-codes.ts';
 import { openFlowsheet } from './open-flowsheet.ts';
 import { createProgress } from './progress.ts';
 import { aboutSource, commandLine, type Source, usageRefusal } from './refusal.ts';
-import { balanceOptions, type SolveOptions, withSolveOptions } from './solve.ts';
+import { balanceOptions, withSolveOptions } from './solve.ts';
 import { checkPageRows, isPage } from './study-page.ts';
 import { planOf, type SweepJob } from './sweep-job.ts';
-import { createPageSink, noPageOfPart } from './sweep-page.ts';
+import { noPageOfPart } from './sweep-page.ts';
 import { type AxisWanted, planAxes, typedAxes } from './sweep-plan.ts';
-import { makePaths } from './sweep-pool.ts';
+import { makePaths, WorkerLost } from './sweep-pool.ts';
 import { printedTable } from './sweep-print.ts';
 import { checkDetails, typedRecord, usualRecord } from './sweep-record.ts';
-import { checkRoom, fingerprintOf, identityOf, openJournal, writeTrouble } from './sweep-resume.ts';
-import { tableKind, tableKinds, writeRenamed } from './table-file.ts';
-import { print, printJson, say } from './terminal.ts';
+import { workerLost } from './sweep-resume.ts';
+import {
+  counter,
+  type Part,
+  type Run,
+  rowsOf,
+  type SweepOptions,
+  summary,
+  type Tallied,
+} from './sweep-run.ts';
+import { toFile } from './sweep-to-file.ts';
+import { tableKind, tableKinds } from './table-file.ts';
+import { say } from './terminal.ts';
 import { checkOutputs } from './write-files.ts';
-
-interface SweepOptions extends SolveOptions {
-  readonly over?: readonly string[];
-  readonly record?: readonly string[];
-  readonly out?: string;
-  readonly workers?: number;
-  readonly resume?: boolean;
-  readonly part?: Part;
-  readonly yes?: boolean;
-}
-
-interface Part {
-  readonly part: number;
-  readonly of: number;
-}
 
 /** `looptally sweep FILE`: a table of closed cases over a grid of settings. */
 export function sweepCommand(): Command {
@@ -123,119 +117,31 @@ async function runSweep(file: string, options: SweepOptions): Promise<void> {
     options,
   };
   const tallied = out === undefined ? await toStandardOutput(run) : await toFile({ ...run, out });
-  process.exitCode = tallied.cases === tallied.notClosed ? exitCodes.notClosed : exitCodes.done;
-}
-
-interface Run {
-  readonly flowsheet: Flowsheet;
-  /** limits whose figures are recorded for a page though nobody asked */
-  readonly added: readonly string[];
-  readonly job: SweepJob;
-  readonly grid: Grid;
-  readonly from: number;
-  readonly to: number;
-  readonly part: Part;
-  readonly reading: StudyReading;
-  readonly options: SweepOptions;
-}
-
-interface Tallied {
-  readonly cases: number;
-  readonly notClosed: number;
+  if (tallied !== null && tallied.cases === tallied.notClosed) process.exitCode = exitCodes.notClosed;
 }
 
 async function toStandardOutput({ job, grid, from, to, reading, options }: Run): Promise<Tallied> {
   const table = printedTable(sweepHeads(planOf(job)), job.axes.length, options.json === true);
   const progress = await createProgress(rowsOf(grid, from, to), 0, options.quiet === true || isTerminal());
   const count = counter();
-  await makePaths(job, { from, to, workers: options.workers }, (rows) => {
+  const take = (rows: PathTable) => {
     count.add(rows.converged);
     reading.add(rows);
     table.add(rows);
     progress.tell(count.cases, count.notClosed);
-  });
-  progress.end();
+  };
+  try {
+    await makePaths(job, { from, to, workers: options.workers }, take);
+  } catch (error) {
+    if (error instanceof WorkerLost)
+      throw workerLost(error, '', 'repeat the command with fewer --workers, or with --out');
+    throw error;
+  } finally {
+    progress.end();
+  }
   table.end({ cases: count.cases, not_converged: count.notClosed, note: reading.lines() });
   if (!options.quiet && count.notClosed > 0) say(summary(count));
   return count;
-}
-
-async function toFile(run: Run & { readonly out: string }): Promise<Tallied> {
-  const { flowsheet, added, job, grid, from, to, part, reading, options, out } = run;
-  const heads = sweepHeads(planOf(job));
-  checkRoom(out, rowsOf(grid, from, to), heads.length - 3);
-  const identity = identityOf(job, `${part.part}/${part.of}`);
-  const journal = openJournal(out, identity, from, options.resume === true);
-  const count = counter();
-  try {
-    for (const { converged } of journal.tables()) count.add(converged);
-    const before = count.cases;
-    const progress = await createProgress(rowsOf(grid, from, to), before, options.quiet === true);
-    await makePaths(job, { from: from + journal.paths, to, workers: options.workers }, (rows) => {
-      journal.add(rows);
-      count.add(rows.converged);
-      progress.tell(count.cases, count.notClosed);
-    });
-    progress.end();
-    await writeRenamed(out, async (write) => {
-      const sink = isPage(out)
-        ? createPageSink({ flowsheet, added, job, heads, reading, out, write })
-        : await tableKinds.get(tableKind(out))!(heads, write);
-      for (const rows of journal.tables()) {
-        reading.add(rows);
-        sink.add(rows);
-      }
-      sink.end(part.of === 1 ? null : sliceMark(run, fingerprintOf(identity)));
-    });
-  } catch (error) {
-    throw writeTrouble(`${out}.part`, error, true);
-  } finally {
-    journal.close();
-  }
-  rmSync(`${out}.part`);
-  const note = reading.lines();
-  if (options.json) printJson({ table: out, cases: count.cases, not_converged: count.notClosed, note });
-  else print(note.map((line) => `${line}\n`).join(''));
-  if (!options.quiet && !options.json) say(`${out}: ${summary(count)}${share(run)}`);
-  return count;
-}
-
-/** What a slice has of the whole; silent for the whole. */
-function share(run: Run): string {
-  if (run.part.of === 1) return '';
-  const { first, last, total } = sliceMark(run, '');
-  return `; rows ${first} to ${last} of ${total}`;
-}
-
-function sliceMark({ grid, from, to, part }: Run, sweep: string) {
-  return {
-    part: `${part.part}/${part.of}`,
-    first: from * grid.pathRows + 1,
-    last: Math.min(to * grid.pathRows, grid.size),
-    total: grid.size,
-    sweep,
-  };
-}
-
-function counter() {
-  const count = {
-    cases: 0,
-    notClosed: 0,
-    add(converged: Uint8Array) {
-      count.cases += converged.length;
-      for (const one of converged) if (one === 0) count.notClosed++;
-    },
-  };
-  return count;
-}
-
-function summary({ cases, notClosed }: Tallied): string {
-  const all = `${cases} ${cases === 1 ? 'case' : 'cases'}`;
-  return notClosed === 0 ? all : `${all}, ${notClosed} of them not closed; their notes say why`;
-}
-
-function rowsOf({ pathRows, size }: Grid, from: number, to: number): number {
-  return Math.min(to * pathRows, size) - from * pathRows;
 }
 
 function axesWanted(flowsheet: Flowsheet, source: Source, { over }: SweepOptions): AxisWanted[] {

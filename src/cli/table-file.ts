@@ -1,8 +1,9 @@
 import { createHash } from 'node:crypto';
-import { closeSync, fsyncSync, openSync, renameSync, rmSync, writeSync } from 'node:fs';
+import { closeSync, fsyncSync, openSync, renameSync, rmSync, statSync, writeSync } from 'node:fs';
 import { basename, dirname, extname, join } from 'node:path';
 import { type SweepFormat, sweepCsv, sweepNdjson } from '../sheets/sweep.ts';
 import type { PathTable } from '../study/sweep.ts';
+import { realTarget } from './write-files.ts';
 
 /** What a slice of a sweep says of itself, so that `gather` can tell where it belongs. */
 export interface SliceMark {
@@ -68,23 +69,25 @@ function textSink(
 
 /**
  * Write a file under a temporary name beside its own, and rename it when it is whole. What the body throws leaves
- * nothing behind.
+ * nothing behind. A link is followed; what is no plain file (a pipe, a device) is written to directly.
  */
 export async function writeRenamed(path: string, body: (write: Write) => Promise<void>): Promise<void> {
-  const temporary = join(dirname(path), `.${basename(path)}.${process.pid}.tmp`);
+  const target = realTarget(path);
+  const isPlain = statSync(target, { throwIfNoEntry: false })?.isFile() ?? true;
+  const temporary = isPlain ? join(dirname(target), `.${basename(target)}.${process.pid}.tmp`) : target;
   const file = openSync(temporary, 'w', 0o666);
   let open = true;
   try {
     await body((bytes) => {
       for (let done = 0; done < bytes.length; ) done += writeSync(file, bytes, done, bytes.length - done);
     });
-    fsyncSync(file);
+    if (isPlain) fsyncSync(file);
     closeSync(file);
     open = false;
-    renameSync(temporary, path);
+    if (isPlain) renameSync(temporary, target);
   } catch (error) {
     if (open) closeSync(file);
-    rmSync(temporary, { force: true });
+    if (isPlain) rmSync(temporary, { force: true });
     throw error;
   }
 }

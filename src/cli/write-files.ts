@@ -1,5 +1,7 @@
 import {
+  accessSync,
   closeSync,
+  constants,
   fsyncSync,
   openSync,
   realpathSync,
@@ -50,6 +52,16 @@ export function checkOutputs(paths: readonly string[], input: string | null): vo
         path,
       );
     }
+    // A device or a pipe is written to as it is; everything else comes into being beside its name.
+    if (there === null || there.isFile()) checkFolder(path, dirname(target));
+  }
+}
+
+function checkFolder(path: string, folder: string): void {
+  try {
+    accessSync(folder, constants.W_OK);
+  } catch (error) {
+    throw cannotWrite(path, error as NodeJS.ErrnoException);
   }
 }
 
@@ -97,7 +109,7 @@ function writeWhole(path: string, content: string | Uint8Array, mode: number): v
 }
 
 /** The file a path leads to, through links; the path itself where nothing is there yet. */
-function realTarget(path: string): string {
+export function realTarget(path: string): string {
   try {
     return realpathSync(path);
   } catch {
@@ -109,7 +121,8 @@ function realTarget(path: string): string {
   }
 }
 
-function isSameFile(target: string, input: string): boolean {
+/** Do two paths lead to one file that is there? */
+export function isSameFile(target: string, input: string): boolean {
   const a = statOf(target);
   const b = statOf(input);
   return a !== null && b !== null && a.dev === b.dev && a.ino === b.ino;
@@ -132,24 +145,37 @@ function sameTwice(path: string): Refusal {
 function overwritesInput(path: string): Refusal {
   return usageRefusal(
     'bad-output',
-    `${path} is the flowsheet itself.`,
-    'the sheet would overwrite the file it is made from',
+    `${path} is read and would be written.`,
+    'the result would overwrite the file it is made from',
     'give --out another name',
     path,
   );
 }
 
 function cannotWrite(path: string, error: NodeJS.ErrnoException): unknown {
-  if (error.code === undefined) return error;
+  const why = systemSays(error);
+  if (why === null) return error;
   return usageRefusal(
     'cannot-write',
     `${path} cannot be written.`,
-    error.code === 'EACCES' || error.code === 'EPERM'
-      ? 'the system denies access to it'
-      : error.code === 'ENOSPC'
-        ? 'the disk is full'
-        : `the system says ${error.code}`,
+    why,
     'check the folder and its permissions, or name another file; nothing was changed',
     path,
   );
 }
+
+/** What the system says when a file cannot be written, in words; null where the error is not one of the system. */
+export function systemSays(error: unknown): string | null {
+  const { code } = error as NodeJS.ErrnoException;
+  if (code === undefined || !/^E[A-Z]/.test(code)) return null;
+  return refusals[code] ?? `the system says ${code}`;
+}
+
+const refusals: Readonly<Record<string, string>> = {
+  ENOSPC: 'the disk is full',
+  EDQUOT: 'the disk is full',
+  EFBIG: 'a file may not grow any larger here',
+  EACCES: 'the system denies access to it',
+  EPERM: 'the system denies access to it',
+  EROFS: 'it lies where nothing can be written',
+};

@@ -101,12 +101,14 @@ export const codes: Readonly<Record<string, string>> = {
   // Sweeps
   'bad-note': 'a sentence of a study with a blank that stands for nothing',
   'bad-part': 'a slice that the grid does not have',
+  'held-by-another': 'a file that another run is writing',
   'bad-range': 'values of a setting that cannot be read or are none',
   'grid-too-large': 'a grid of more points than can be meant or calculated',
   'no-slice': 'a file that is no slice of a sweep, or not all of one',
   'other-sweep': 'a side file or slice of another flowsheet or other options',
   'slices-missing': 'rows that no slice holds',
   'slices-overlap': 'rows that two slices hold',
+  'worker-lost': 'a thread of a sweep that ended before its work was done',
   'unfinished-sweep': 'a side file that would be lost',
 
   // While the loop is closed

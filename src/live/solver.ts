@@ -85,7 +85,9 @@ function closedFromHere(plant: Plant): Result | null {
         : closeWithAims(plant, options);
     if (!closure.converged) return null;
     const reports = reportsOf(plant);
-    return faultDiagnostics(plant, reports).length > 0 ? null : tally(plant, closure, { aims, reports });
+    return faultDiagnostics(plant, (b) => reports[b]!).length > 0
+      ? null
+      : tally(plant, closure, { aims, reports });
   } catch (trouble) {
     if (trouble instanceof PassTrouble) return null;
     throw trouble;

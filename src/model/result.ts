@@ -3,8 +3,11 @@ import type { Phase } from './stream.ts';
 /** One pass of the solver, for `--trace`. */
 export interface TraceEntry {
   readonly pass: number;
-  /** scaled residual of the tears after this pass; of method aims the largest of what tears and aims leave open */
-  readonly residual: number;
+  /**
+   * scaled residual of the tears after this pass; of method aims the largest of what tears and aims leave open; null where
+   * a block could not be evaluated
+   */
+  readonly residual: number | null;
   /** name of the worst tear variable, e.g. S8.Ar, or of the aim */
   readonly worst: string;
   /** the method that made the guess of this pass */
@@ -100,7 +103,8 @@ export interface Result {
     readonly method: string;
     /** all that were made, for aims as well; with several recycles those of the one that took most */
     readonly passes: number;
-    readonly residual: number;
+    /** null where no pass came to its end */
+    readonly residual: number | null;
     readonly tears: readonly string[];
     readonly history: readonly TraceEntry[];
   };

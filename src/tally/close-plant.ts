@@ -21,7 +21,7 @@ export interface PlantClosure {
   readonly method: MethodName;
   /** passes of the recycle that took most, the one that found its start values included */
   readonly passes: number;
-  /** largest residual of the recycles */
+  /** largest residual of the recycles; NaN where no pass came to its end */
   readonly residual: number;
   readonly history: readonly TraceEntry[];
   /** the group that failed, with its closure and the names of its variables; null when all is closed */
@@ -87,7 +87,7 @@ interface ClosedGroup {
 function traceOf({ closure, spent, names }: ClosedGroup): TraceEntry[] {
   return closure.history.map(({ pass, residual, worst, method, note }) => ({
     pass: pass + spent,
-    residual,
+    residual: Number.isFinite(residual) ? residual : null,
     worst: names[worst] ?? '',
     method,
     note,

@@ -29,7 +29,8 @@ export function tally(plant: Plant, closure: PlantClosure, options: TallyOptions
   const streams = streamResults(plant);
   const blocks = blockResults(plant, reports);
   const plain = keyFigures(plant, tallied, reports);
-  if (curves) addCurves(plant, blocks, reports);
+  // A curve runs between settled streams; those of a plant that did not close need not agree with one another.
+  if (curves && closure.converged) addCurves(plant, blocks, reports);
   const figures = { ...plain, user: userFigures(plant, reports) };
   const closed = closures(plant, tallied, reports);
   return {
@@ -40,7 +41,7 @@ export function tally(plant: Plant, closure: PlantClosure, options: TallyOptions
       converged: closure.converged,
       method: closure.method,
       passes: closure.passes,
-      residual: closure.residual,
+      residual: Number.isFinite(closure.residual) ? closure.residual : null,
       tears: plant.groups.flatMap((group) => group.tears.map((s) => flowsheet.streams[s].tag)),
       history: closure.history,
     },

@@ -28,7 +28,7 @@ export function noRealExit(facts: Facts): Finding | null {
     code: 'exit-too-small',
     isOfDirectPasses: true,
     what: `${piling.id} has no way out to speak of`,
-    why: `${supplyText(piling)}, and only ${kmolPerHour(piling.leaves)} leave (${exitsText(piling)}): to leave as fast as it comes, ${kmolPerHour(needed(piling))} of it would have to go round`,
+    why: `${supplyText(piling)}, and ${piling.leaves > 0 ? `only ${kmolPerHour(piling.leaves)} leave (${exitsText(piling)}): to leave as fast as it comes, ${kmolPerHour(needed(piling))} of it would have to go round` : `none leaves (${exitsText(piling)})`}`,
     mend: exitAdvice(facts, piling),
     ...placeOfExit(facts, piling),
   };

@@ -6,7 +6,7 @@ import { type CloseOptions, closePlant } from './close-plant.ts';
 import type { Group, Plant } from './plant.ts';
 import { createRecycleProblem } from './recycle-problem.ts';
 import { type ComponentFlows, componentFlows } from './why-flows.ts';
-import { isOfUse, type Trial, tryOut } from './why-trial.ts';
+import { createPatience, isOfUse, type Trial, tryOut } from './why-trial.ts';
 import { type Phases, phasesIn, vesselsOf } from './why-vessels.ts';
 
 /** Direct passes looked at from the last good pass on. */
@@ -92,6 +92,7 @@ export function gatherFacts(
   const closed = closedAsItIs(plant, group, options);
   const radius = spectralRadius(problem, direct.x, sizes(problem, direct.x, direct.g));
   const { flows } = countAt(direct.x);
+  const patience = createPatience();
   return {
     plant,
     group,
@@ -110,7 +111,7 @@ export function gatherFacts(
     answer: closed !== null && isOfUse(closed) ? closed : null,
     beyond: closed !== null && !isOfUse(closed) ? closed : null,
     tryOut(changes) {
-      const found = tryOut(plant, group, options.tolerance, changes);
+      const found = tryOut(plant, group, options.tolerance, changes, 'auto', patience);
       return found !== null && isOfUse(found) ? found : null;
     },
   };

@@ -3,8 +3,17 @@ import { closePlant } from './close-plant.ts';
 import { createPlant, type Group, type Plant } from './plant.ts';
 import { phasesIn, vesselsOf } from './why-vessels.ts';
 
-/** Passes that a trial may take: what closes at all closes well within this. */
+/** Passes that a trial may take, or several together: what closes at all closes well within this. */
 const TRIAL_PASSES = 250;
+
+/** What is left for the trials of one question: a loop at which all of them fail is not to take many times as long. */
+export interface Patience {
+  passes: number;
+}
+
+export function createPatience(): Patience {
+  return { passes: TRIAL_PASSES };
+}
 
 /** A change is worth advising where the recycle is no more than so many times the feed. */
 export const SENSIBLE_RECYCLE = 20;
@@ -35,6 +44,7 @@ export function isOfUse({ timesFed }: Trial): boolean {
  * remember of other passes has no part in it, and whoever repeats the trial finds the same.
  *
  * @param changes  values in SI by path
+ * @param patience  passes that are left for trials; those of this one are taken off
  * @returns null where it does not close
  */
 export function tryOut(
@@ -43,11 +53,14 @@ export function tryOut(
   tolerance: number,
   changes: readonly (readonly [path: string, value: number])[],
   method: MethodName = 'auto',
+  patience: Patience = createPatience(),
 ): Trial | null {
+  if (patience.passes <= 0) return null;
   const other = createPlant({ ...plant.flowsheet, blocks: plant.blocks, feeds: plant.feeds });
   const sameGroup = other.groups[plant.groups.indexOf(group)]!;
   for (const [path, value] of changes) other.set(path, value);
-  const closure = closePlant(other, { method, tolerance, maxPasses: TRIAL_PASSES });
+  const closure = closePlant(other, { method, tolerance, maxPasses: patience.passes });
+  patience.passes -= closure.passes;
   if (!closure.converged) return null;
   const largest = largestTear(other, sameGroup);
   const recycle = other.mixture.total(other.streams[largest]);

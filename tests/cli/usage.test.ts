@@ -259,7 +259,7 @@ describe('a command line that cannot be followed is told in four parts with exit
     {
       words: ['sheet', 'methanol.yaml', '--out', 'link.md'],
       message: `command line:1:37 error bad-output
-  link.md is the flowsheet itself.
+  link.md is read and would be written.
    1 | looptally sheet methanol.yaml --out link.md
      |                                     ^^^^^^^
   why:  the sheet would overwrite the file it is made from

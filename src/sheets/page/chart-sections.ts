@@ -123,7 +123,9 @@ function bedProfile(view: PageView, name: string, details: Details, k: number): 
 /** Residual after each pass, and what the solver did. */
 export function passesSection(view: PageView): Html {
   const { history } = view.result.convergence;
-  const shown = history.filter(({ residual }) => residual > 0);
+  const shown = history.flatMap(({ pass, residual }) =>
+    residual !== null && residual > 0 ? [{ pass, residual }] : [],
+  );
   const chart =
     shown.length < 2
       ? null

@@ -1,0 +1,79 @@
+import { readFileSync } from 'node:fs';
+import { describe, expect, test } from 'vitest';
+import { readFlowsheet } from '../../src/flowsheet/read.ts';
+import { type Balance, balance } from '../../src/tally/balance.ts';
+import { createPlant } from '../../src/tally/plant.ts';
+import { createPatience, tryOut } from '../../src/tally/why-trial.ts';
+
+/** What mutants of shipped flowsheets have found, made smaller: each was once broken. */
+async function mutant(name: string, ...changes: readonly (readonly [from: string, to: string])[]) {
+  let text = readFileSync(new URL(`../../flowsheets/${name}.yaml`, import.meta.url), 'utf8');
+  for (const [from, to] of changes) {
+    expect(text).toContain(from);
+    text = text.replace(from, to);
+  }
+  const { flowsheet, diagnostics } = await readFlowsheet(text, { file: 'mutant.yaml' });
+  if (flowsheet === null) throw new Error(diagnostics.map(({ what }) => what).join('\n'));
+  return flowsheet;
+}
+
+function notANumber({ result }: Balance): boolean {
+  return JSON.stringify(result, (_, value) =>
+    Object.is(value, Number.NaN) ? 'not a number' : value,
+  ).includes('not a number');
+}
+
+describe('a pass that fails', () => {
+  test('has no residual: null, and no NaN that JSON would turn into one', async () => {
+    const found = balance(await mutant('conversion-loop', ['H2: 74.25 kmol/h', 'H2: 0.668 t/d']));
+    expect(found.diagnosis?.code).toBe('reactant-used-up');
+    expect(found.result.convergence.residual).toBeNull();
+    expect(notANumber(found)).toBe(false);
+  });
+
+  test('on the way has none in the trace', async () => {
+    const found = balance(
+      await mutant(
+        'methanation',
+        ['S1: syngas -> mixer', 'S1: syngas -> divider'],
+        ['S6: knock_out.gas -> divider', 'S6: knock_out.gas -> mixer'],
+      ),
+      { maxPasses: 25 },
+    );
+    expect(found.result.convergence.history.some(({ residual }) => residual === null)).toBe(true);
+    expect(notANumber(found)).toBe(false);
+  });
+});
+
+test('of a component that does not leave at all nothing is said to go round without end', async () => {
+  const swapped = await mutant(
+    'purge-study',
+    ['S1: makeup -> mixer', 'S1: condenser.gas -> mixer'],
+    ['S4: condenser.gas -> purge', 'S4: makeup -> purge'],
+  );
+  const { diagnosis } = balance(swapped, { maxPasses: 25 });
+  expect(diagnosis?.code).toBe('exit-too-small');
+  expect(diagnosis?.why).toContain('none leaves');
+  expect(`${diagnosis?.what} ${diagnosis?.why} ${diagnosis?.mend}`).not.toContain('Infinity');
+});
+
+test('the curves of a converter that did not close are not drawn, where they would end the program', async () => {
+  const hot = await mutant('methanol-adiabatic-beds', [
+    '{kind: heater, temperature: 215 degC',
+    '{kind: heater, temperature: 2150000 degC',
+  ]);
+  const found = balance(hot, { maxPasses: 25 });
+  expect(found.diagnosis?.code).toBe('reactor-at-bound');
+  expect(notANumber(found)).toBe(false);
+});
+
+test('trials for an advice share their passes, so that a slow loop is not tried for minutes', async () => {
+  const plant = createPlant(await mutant('reference-loop'));
+  const patience = createPatience();
+  const group = plant.groups.find(({ tears }) => tears.length > 0)!;
+  const before = patience.passes;
+  const trial = tryOut(plant, group, 1e-9, [], 'auto', patience);
+  expect(before - patience.passes).toBe(trial!.passes);
+  expect(tryOut(plant, group, 1e-9, [], 'auto', { passes: 2 })).toBeNull();
+  expect(tryOut(plant, group, 1e-9, [], 'auto', { passes: 0 })).toBeNull();
+});
