@@ -250,7 +250,7 @@ describe('a command line that cannot be followed is told in four parts with exit
   There is no sheet of the format .pdf.
    1 | looptally sheet methanol.yaml --out loop.pdf
      |                                     ^^^^^^^^
-  why:  the ending of the name says the format; there are .csv, .md, .svg and .xlsx
+  why:  the ending of the name says the format; there are .csv, .html, .md, .svg and .xlsx
   mend: write --out loop.md
 
 1 error
