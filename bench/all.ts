@@ -1,6 +1,7 @@
 import { benchCommand } from './command.ts';
 import { benchKernels } from './kernels.ts';
 import { benchMethods } from './methods.ts';
+import { benchPage } from './page.ts';
 import { benchRandomLoops } from './random-loops.ts';
 import { benchScale } from './scale.ts';
 import { benchScipy } from './scipy.ts';
@@ -18,6 +19,7 @@ const parts: Readonly<Record<string, () => Promise<void>>> = {
   scale: benchScale,
   sweep: benchSweep,
   command: benchCommand,
+  page: benchPage,
 };
 
 const asked = process.argv.slice(2);

@@ -5,6 +5,7 @@ import type { Flowsheet } from '../src/model/flowsheet.ts';
 
 export const FOLDER = 'flowsheets';
 export const AMMONIA = join(FOLDER, 'ammonia-loop.yaml');
+export const REFERENCE = join(FOLDER, 'reference-loop.yaml');
 
 /** File names of the flowsheets that come with the program. */
 export function shippedFiles(): string[] {

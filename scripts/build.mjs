@@ -79,7 +79,7 @@ export async function buildLive(folder) {
 
 /** Bundle the command line into a folder: cli.js, the worker of sweeps, the script of pages and chunks beside it. */
 export async function buildCli(folder) {
-  await buildLive(folder);
+  const live = buildLive(folder);
   const { metafile } = await build({
     ...shared,
     entryPoints: { cli: 'src/cli/main.ts', 'sweep-worker': 'src/cli/sweep-worker.ts' },
@@ -88,9 +88,10 @@ export async function buildCli(folder) {
     banner: { js: banner },
     metafile: true,
   });
+  const { inputs } = await live;
   chmodSync(join(folder, 'cli.js'), 0o755);
   await buildPageScripts(folder);
-  return metafile;
+  return { ...metafile, inputs: { ...metafile.inputs, ...inputs } };
 }
 
 /** What runs in the browser: one file each, which the command line writes into its pages. */

@@ -21,8 +21,12 @@ export function chosenHandles(flowsheet: Flowsheet): readonly Handle[] {
       const { value } = setting;
       if (kind === 'condenser' && rest.join('.') === 'temperature')
         return [handle(setting, value - 20, value + 20, 81)];
-      if (kind === 'splitter' && rest[0] === 'fractions' && value > 0 && value < 1)
-        return [handle(setting, value / 3, Math.min(3 * value, (1 + value) / 2), 101)];
+      if (kind === 'splitter' && rest[0] === 'fractions' && value > 0 && value < 1) {
+        const low = Number((value / 3).toPrecision(1));
+        const high = Number(Math.min(3 * value, (1 + value) / 2).toPrecision(2));
+        const step = 10 ** (Math.floor(Math.log10(low)) - 1);
+        return [handle(setting, low, high, Math.round((high - low) / step) + 1)];
+      }
       return [];
     })
     .slice(0, MOST);

@@ -49,7 +49,8 @@ export function savedFile(
   let text = data.text;
   for (const { start, end, text: put } of edits.toSorted((a, b) => b.start - a.start))
     text = text.slice(0, start) + put + text.slice(end);
-  return { text: head(data, changes) + text };
+  const mark = text.startsWith('\ufeff') ? '\ufeff' : '';
+  return { text: mark + head(data, changes) + text.slice(mark.length) };
 }
 
 function head({ file }: LiveData, changes: ReadonlyMap<string, string>): string {

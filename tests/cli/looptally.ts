@@ -31,7 +31,6 @@ export function commandLine(): {
     program = mkdtempSync(join(tmpdir(), 'looptally-built-'));
     folder = mkdtempSync(join(tmpdir(), 'looptally-work-'));
     await buildCli(program);
-    // Three bundles take seconds, and a busy machine several times that.
   }, 60_000);
   afterAll(() => {
     for (const made of [program, folder]) rmSync(made, { recursive: true, force: true });

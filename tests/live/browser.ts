@@ -4,7 +4,7 @@ import { join } from 'node:path';
 import { type Browser, type BrowserContextOptions, chromium, type Page } from 'playwright-core';
 import { afterAll, beforeAll } from 'vitest';
 import { buildLive } from '../../scripts/build.mjs';
-import { type BalanceOptions, balance, readFlowsheet, renderers } from '../../src/index.ts';
+import { balance, readFlowsheet, renderers } from '../../src/index.ts';
 
 const PLACES = ['/usr/bin/chromium', '/usr/bin/chromium-browser', '/usr/bin/google-chrome'];
 export const executablePath = [process.env['LOOPTALLY_BROWSER'] ?? '', ...PLACES].find(
@@ -73,16 +73,16 @@ export function bench(): Bench {
   };
 }
 
-/** The page as the command line writes it. */
+/** The page as the command line writes it; without a script one that stands still. */
 export async function pageOf(
   file: string,
   text: string,
-  script: string,
+  script: string | null,
   options: { set?: string[]; case?: string } = {},
 ): Promise<string> {
   const { flowsheet, diagnostics } = await readFlowsheet(text, { file, ...options });
   if (flowsheet === null) throw new Error(diagnostics.map(({ what }) => what).join('\n'));
-  const { result } = balance(flowsheet, {} satisfies BalanceOptions);
-  const live = { script, text, set: options.set ?? [] };
-  return (await renderers.get('.html')!.render(result, { flowsheet, live })) as string;
+  const { result } = balance(flowsheet);
+  const live = script === null ? {} : { live: { script, text, set: options.set ?? [] } };
+  return (await renderers.get('.html')!.render(result, { flowsheet, ...live })) as string;
 }

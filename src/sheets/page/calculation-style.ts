@@ -45,7 +45,8 @@ button:disabled{color:var(--soft);border-color:var(--hair);cursor:default}
 .void>*{text-decoration:line-through;opacity:.4}
 .void::before{content:'No values: the loop does not close at these settings. What is struck out belongs to the last ones at which it did.';display:block;border-left:4px solid var(--alarm);background:var(--alarm-wash);padding:.4rem .8rem;margin-bottom:.6rem}
 .waiting .charts{opacity:.55}
-@media (min-width:70rem){.desk.with-panel:has(.panel:not([hidden])){grid-template-columns:21rem minmax(0,1fr)}.desk.with-panel .title-block{grid-column:1/-1}.desk.with-panel .panel{position:sticky;top:0;align-self:start;max-height:100vh;overflow:auto;border-right:0;scrollbar-width:thin}}
+@media screen and (min-width:70rem){.desk.with-panel:has(.panel:not([hidden])){grid-template-columns:21rem minmax(0,1fr)}.desk.with-panel .title-block{grid-column:1/-1}.desk.with-panel .panel{position:sticky;top:0;align-self:start;max-height:100vh;overflow:auto;border-right:0;scrollbar-width:thin}}
+@media screen and (max-width:50rem){.long .prose{min-width:9rem}.streams td.word{min-width:4rem}}
 @media print{.panel{display:none}mark{border:.5pt solid #000}.diagram{page:wide;break-before:page;break-after:page}.diagram .picture svg{min-width:0;width:100%;max-width:100%;max-height:165mm}.streams th:first-child,.long th:first-child,.blocks th:first-child{position:static}.prose{min-width:0}.void>*{display:none}}
 @page wide{size:A4 landscape;margin:14mm 12mm 14mm 18mm}
 `;

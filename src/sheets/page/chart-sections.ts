@@ -131,7 +131,8 @@ export function passesSection(view: PageView): Html {
           lineChart({
             id: 'passes',
             title: 'Residual of the tears after each pass',
-            x: { title: 'pass', unit: '', text: view.axisText },
+            // There is no half pass.
+            x: { title: 'pass', unit: '', text: (pass) => (Number.isInteger(pass) ? String(pass) : '') },
             y: { title: 'residual', unit: 'relative', log: true, text: view.axisText },
             series: [
               { name: '', x: shown.map(({ pass }) => pass), y: shown.map(({ residual }) => residual) },

@@ -23,8 +23,8 @@ export function jobFields(view: PageView, fields: TitleBlock, version: string): 
     given('approval person', fields.approver, 3),
     given('flowsheet file', file, 3),
     { label: 'worked out by', value: `Looptally ${version}`.trim(), span: 3 },
-    { label: 'case', value: caseText(view, new Map()), span: 4, name: 'case' },
     { label: 'status', value: statusText(view), span: 2, name: 'status' },
+    { label: 'case', value: caseText(view, new Map()), span: 4, name: 'case' },
     { label: 'closing', value: closingText(view), span: 6, name: 'closing' },
   ];
 }
