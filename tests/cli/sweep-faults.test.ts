@@ -34,7 +34,7 @@ describe('before the first case it is told in four parts:', () => {
       `command line error unknown-key
   condenser has an unknown key temprature.
   why:  the nearest known key is temperature
-  mend: write temperature
+  mend: write condenser.temperature
 
 1 error
 `,
@@ -157,8 +157,8 @@ describe('before the first case it is told in four parts:', () => {
       [...T, '--record', 'figures.recycle_ratio,blocks.condenser.condensed'],
       `command line error unknown-figure
   blocks.condenser.condensed is not known.
-  why:  blocks.condenser has the parts temperature_K, condensed_kmol_h, gas_fraction, duty, power
-  mend: write blocks.condenser.NAME, NAME one of these
+  why:  the nearest is condensed_kmol_h
+  mend: write blocks.condenser.condensed_kmol_h
 
 1 error
 `,
