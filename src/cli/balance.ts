@@ -4,6 +4,7 @@ import { fileCommand } from './common-options.ts';
 import { figureUnits } from './figure-units.ts';
 import { resultJson, type SolveOptions, solve, tellShortfall, withSolveOptions } from './solve.ts';
 import { paintFor, print, printJson } from './terminal.ts';
+import { version } from './version.ts';
 
 interface BalanceCommandOptions extends SolveOptions {
   readonly trace?: boolean;
@@ -34,6 +35,7 @@ async function runBalance(file: string, options: BalanceCommandOptions): Promise
       figureUnits: figureUnits(solved.flowsheet),
       paint: paintFor(process.stdout),
       trace: options.trace === true,
+      version,
     }),
   );
   tellShortfall(solved);

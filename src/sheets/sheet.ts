@@ -6,6 +6,8 @@ export interface SheetOptions {
   readonly paint?: Paint;
   /** adds the table of passes */
   readonly trace?: boolean;
+  /** version of Looptally, said on the sheet */
+  readonly version?: string;
 }
 
 export interface Paint {
@@ -14,11 +16,3 @@ export interface Paint {
 }
 
 export const noPaint: Paint = { head: (text) => text, alarm: (text) => text };
-
-/** What every sheet must say. */
-export const studyTool =
-  'A study tool, not a design certificate. Hydrogen, ammonia, carbon monoxide and high pressure: design, ' +
-  'materials and relief follow local codes and belong in the hands of licensed practice.';
-
-/** What every sheet ends with. */
-export const caution = `${studyTool} Check the assumptions above before a figure leaves this sheet.`;

@@ -26,6 +26,8 @@ export interface DrawingOptions {
   /** tag of the product stream */
   readonly product?: string;
   readonly titleBlock?: TitleBlock;
+  /** version of Looptally, said below the notes */
+  readonly version?: string;
 }
 
 /** A small flowsheet is drawn larger than a large one, up to this. */
@@ -60,7 +62,11 @@ export async function drawingOf(result: Result, options: DrawingOptions = {}): P
     height: scale * box.height,
   });
 
-  const edge = drawFrame(frame, result, { notes: options.notes ?? '', titleBlock: options.titleBlock ?? {} });
+  const edge = drawFrame(frame, result, {
+    notes: options.notes ?? '',
+    titleBlock: options.titleBlock ?? {},
+    version: options.version,
+  });
   const drawnFlags = flags.map((flag, k) => flag.draw(layout.flags[k]!));
   const texts: { text: string; box: Box }[] = [
     ...edge.texts,
