@@ -108,31 +108,45 @@ export async function buildPageScripts(folder) {
 }
 
 async function buildLibrary(folder) {
-  await build({
+  const { metafile } = await build({
     ...shared,
     entryPoints: { index: 'src/index.ts' },
     outdir: folder,
     chunkNames: 'chunks/[name]-[hash]',
+    metafile: true,
   });
+  return metafile;
 }
 
-/** The licences of the packages that went into a bundle, as they ask for. */
-function collectLicences(folder, metafile) {
-  const packages = new Set(
-    Object.keys(metafile.inputs).flatMap((file) => {
-      const match = file.match(/^node_modules\/((?:@[^/]+\/)?[^/]+)\//);
-      return match ? [match[1]] : [];
-    }),
-  );
-  const texts = [...packages].sort().map((name) => {
-    const home = join(root, 'node_modules', name);
-    const file = readdirSync(home).find((entry) => /^licen[cs]e/i.test(entry));
-    const { license } = JSON.parse(readFileSync(join(home, 'package.json'), 'utf8'));
-    const text = file ? readFileSync(join(home, file), 'utf8').trim() : `licence: ${license}`;
-    return `${name}\n${'='.repeat(name.length)}\n\n${text}\n`;
-  });
+/** The licences of the packages that went into the bundles, as they ask for: name, licence, source and its whole text. */
+function collectLicences(folder, metafiles) {
+  const homes = new Map();
+  for (const file of metafiles.flatMap(({ inputs }) => Object.keys(inputs))) {
+    // A package may bring packages of its own: the last folder is the one whose file it is.
+    const match = /^(.*\/)?node_modules\/((?:@[^/]+\/)?[^/]+)\//.exec(file);
+    if (match !== null) homes.set(match[2], join(root, match[0]));
+  }
+  const texts = [...homes]
+    .sort(([a], [b]) => (a < b ? -1 : 1))
+    .map(([name, home]) => {
+      const { license, version, repository, homepage, author } = JSON.parse(
+        readFileSync(join(home, 'package.json'), 'utf8'),
+      );
+      if (typeof license !== 'string') throw new Error(`${name} does not say its licence`);
+      const title = `${name} ${version}`;
+      const source = (typeof repository === 'object' ? repository.url : repository) ?? homepage;
+      const file = readdirSync(home).find((entry) => /^(licen[cs]e|copying)/i.test(entry));
+      const text =
+        file === undefined
+          ? `The package brings no text of its licence; by ${author?.name ?? author}.`
+          : readFileSync(join(home, file), 'utf8').trim();
+      return `${title}\n${'='.repeat(title.length)}\nlicence: ${license}\nsource: ${source}\n\n${text}\n`;
+    });
   writeFileSync(join(folder, 'THIRD-PARTY-LICENSES.txt'), texts.join('\n\n'));
 }
+
+// zod is bundled: who installs the package has no types of it, and needs none.
+const ZOD_TYPE = '/** a schema of zod */\ninterface ZodType<T> { parse(value: unknown): T; }';
 
 function declareTypes(folder) {
   const compiler = createRequire(import.meta.url).resolve('typescript/bin/tsc');
@@ -142,14 +156,18 @@ function declareTypes(folder) {
   for (const entry of readdirSync(folder, { recursive: true, withFileTypes: true })) {
     if (!entry.isFile() || !entry.name.endsWith('.d.ts')) continue;
     const file = join(entry.parentPath, entry.name);
-    writeFileSync(file, readFileSync(file, 'utf8').replace(/((?:from|import\()\s*'\.[^']*)\.ts'/g, "$1.js'"));
+    const text = readFileSync(file, 'utf8')
+      .replace(/((?:from|import\()\s*'\.[^']*)\.ts'/g, "$1.js'")
+      .replace("import type { ZodType } from 'zod';", ZOD_TYPE);
+    writeFileSync(file, text);
   }
 }
 
-if (process.argv[1] === fileURLToPath(import.meta.url)) {
-  const dist = join(root, 'dist');
-  rmSync(dist, { recursive: true, force: true });
-  collectLicences(dist, await buildCli(dist));
-  await buildLibrary(dist);
-  declareTypes(join(dist, 'types'));
+/** All that is shipped of dist/, into a folder made anew: command line, library, types and licences. */
+export async function buildAll(folder) {
+  rmSync(folder, { recursive: true, force: true });
+  collectLicences(folder, [await buildCli(folder), await buildLibrary(folder)]);
+  declareTypes(join(folder, 'types'));
 }
+
+if (process.argv[1] === fileURLToPath(import.meta.url)) await buildAll(join(root, 'dist'));

@@ -4,6 +4,7 @@ import { textSheet } from '../sheets/text.ts';
 import { fileCommand } from './common-options.ts';
 import { resultJson, type SolveOptions, solve, tellShortfall, withSolveOptions } from './solve.ts';
 import { paintFor, print, printJson } from './terminal.ts';
+import { version } from './version.ts';
 
 interface BalanceCommandOptions extends SolveOptions {
   readonly trace?: boolean;
@@ -35,6 +36,7 @@ async function runBalance(file: string, options: BalanceCommandOptions): Promise
       paint: paintFor(process.stdout),
       diagnosis: solved.diagnosis,
       trace: options.trace === true,
+      version,
     }),
   );
   tellShortfall(solved);

@@ -20,6 +20,7 @@ import { aboutSource, Refusal, type Source } from './refusal.ts';
 import { balanceOptions, type SolveOptions, withSolveOptions } from './solve.ts';
 import { pageOptions } from './study-page.ts';
 import { paintFor, print, printJson, say } from './terminal.ts';
+import { version } from './version.ts';
 import { checkOutputs, writeOutputs } from './write-files.ts';
 
 interface OptimiseCommandOptions extends SolveOptions {
@@ -92,7 +93,8 @@ async function runOptimise(file: string, options: OptimiseCommandOptions): Promi
   }
   const paint = paintFor(process.stdout);
   print(optimiseText(found, { paint }));
-  if (closed !== null) print(`\n${textSheet(closed.result, { paint, figureUnits: figureUnits(flowsheet) })}`);
+  if (closed !== null)
+    print(`\n${textSheet(closed.result, { paint, figureUnits: figureUnits(flowsheet), version })}`);
   if (shortfall !== null) tell([shortfall], source);
   else if (paths.length > 0 && !options.quiet) say(`wrote ${paths.join(', ')}`);
 }

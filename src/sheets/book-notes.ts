@@ -1,7 +1,7 @@
 import type { Flowsheet } from '../model/flowsheet.ts';
 import type { Result } from '../model/result.ts';
 import { planFlowsheet } from '../tally/plan.ts';
-import { caution } from './sheet.ts';
+import { caution, dangersOf } from './cautions.ts';
 import { heightOf } from './xlsx-head.ts';
 import { heads, looks, number, text, unitHeads } from './xlsx-looks.ts';
 import { type Page, put } from './xlsx-model.ts';
@@ -38,12 +38,14 @@ export function fillTrace(page: Page, { convergence }: Result): void {
   if (convergence.history.length === 0) put(page, [null, null, text('nothing had to be closed')]);
 }
 
-/** Warnings of the blocks and the balances, and the caution that every sheet ends with. */
-export function fillWarnings(page: Page, { warnings }: Result): void {
+/** Warnings of the blocks and the balances, the dangers of what is in them, and the caution that every sheet ends with. */
+export function fillWarnings(page: Page, result: Result): void {
+  const { warnings } = result;
   put(page, heads(['where', 'code', 'warning'], 3));
   for (const { where, code, message } of warnings) prose(page, [where, code, message]);
   if (warnings.length === 0) put(page, [text('none')]);
   put(page, []);
+  for (const danger of dangersOf(result)) prose(page, ['all of it', 'danger', danger]);
   prose(page, ['all of it', 'caution', caution]);
 }
 

@@ -1,12 +1,12 @@
 import type { Comparison } from '../study/compare.ts';
 import { natural } from '../study/compare.ts';
 import { nameInFormulas } from '../tally/figure-leaves.ts';
+import { caution } from './cautions.ts';
 import { cellText, columnLine, differingFigures, displayOf, figureName, unitOf } from './compare.ts';
 import { csvCell, FRACTION } from './csv.ts';
 import { shownStep, shownValue } from './figure-display.ts';
 import { escaped, list, table } from './markdown.ts';
 import { percent } from './numbers.ts';
-import { caution } from './sheet.ts';
 
 /** Forms of a written comparison by the extension of the file. */
 export const compareRenderers: ReadonlyMap<string, (found: Comparison) => string> = new Map([

@@ -1,9 +1,10 @@
 import type { Result } from '../model/result.ts';
 import { blockDetails, blockRows, closureRows } from './block-rows.ts';
+import { caution, dangersOf, madeBy } from './cautions.ts';
 import { ledgerRows } from './ledger-rows.ts';
 import { settingText, significant } from './numbers.ts';
 import { plainText } from './plain.ts';
-import { caution, diagnosisRows, type SheetOptions } from './sheet.ts';
+import { diagnosisRows, type SheetOptions } from './sheet.ts';
 import { story } from './story.ts';
 import { streamRows } from './stream-rows.ts';
 import { columnGroups, pickColumns, type Rows } from './table.ts';
@@ -28,7 +29,8 @@ export function markdownSheet(result: Result, options: SheetOptions = {}): strin
     section('Blocks', blocks(result)),
     section('Closure, relative', table(closureRows(result), 0)),
     section('Assumptions', list(result.assumptions)),
-    `---\n\n${caution}`,
+    section('Cautions', list(dangersOf(result))),
+    `---\n\n${madeBy(options.version)}. ${caution}`,
   ]
     .filter((part) => part !== '')
     .join('\n\n')

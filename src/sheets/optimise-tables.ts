@@ -1,9 +1,9 @@
 import type { Optimised } from '../study/optimise.ts';
+import { caution } from './cautions.ts';
 import { csvCell } from './csv.ts';
 import { escaped, table } from './markdown.ts';
 import { moveUnits } from './move-units.ts';
 import { answerLine, optimiseParts } from './optimise.ts';
-import { caution } from './sheet.ts';
 
 /** Forms of a written optimum by the extension of the file. */
 export const optimiseRenderers: ReadonlyMap<string, (found: Optimised) => string> = new Map([

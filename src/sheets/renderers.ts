@@ -9,8 +9,6 @@ import type { SheetOptions } from './sheet.ts';
 export interface RenderOptions extends SheetOptions {
   /** the flowsheet that was closed: a workbook lists its settings and sources */
   readonly flowsheet: Flowsheet;
-  /** version of Looptally, for the head of a workbook */
-  readonly version?: string;
   /** which table a CSV file holds */
   readonly table?: CsvTableName;
   /** what a drawing says beyond the result */
@@ -53,7 +51,8 @@ export const renderers: ReadonlyMap<string, Renderer> = new Map([
     '.svg',
     {
       summary: 'the flow diagram',
-      render: async (result, options) => (await drawingOf(result, options.drawing)).svg,
+      render: async (result, { drawing, version }) =>
+        (await drawingOf(result, { ...drawing, ...(version === undefined ? {} : { version }) })).svg,
     },
   ],
   [

@@ -10,6 +10,8 @@ export interface SheetOptions {
   readonly diagnosis?: Diagnostic | null;
   /** adds the table of passes */
   readonly trace?: boolean;
+  /** version of Looptally, said on the sheet */
+  readonly version?: string;
 }
 
 export interface Paint {
@@ -29,11 +31,3 @@ export function diagnosisRows({ diagnosis }: SheetOptions): readonly (readonly [
     ['mend', mend],
   ];
 }
-
-/** What every sheet must say. */
-export const studyTool =
-  'A study tool, not a design certificate. Hydrogen, ammonia, carbon monoxide and high pressure: design, ' +
-  'materials and relief follow local codes and belong in the hands of licensed practice.';
-
-/** What every sheet ends with. */
-export const caution = `${studyTool} Check the assumptions above before a figure leaves this sheet.`;

@@ -1,9 +1,10 @@
 import type { Result } from '../model/result.ts';
 import { blockDetails, blockRows, closureRows } from './block-rows.ts';
+import { caution, dangersOf, madeBy } from './cautions.ts';
 import { ledgerRows } from './ledger-rows.ts';
 import { closureText, settingText, significant } from './numbers.ts';
 import { plainText, wrapped } from './plain.ts';
-import { caution, diagnosisRows, noPaint, type SheetOptions } from './sheet.ts';
+import { diagnosisRows, noPaint, type SheetOptions } from './sheet.ts';
 import { story } from './story.ts';
 import { streamRows } from './stream-rows.ts';
 import { aligned, columnGroups, pickColumns } from './table.ts';
@@ -30,8 +31,12 @@ export function textSheet(result: Result, options: SheetOptions = {}): string {
       'Assumptions',
       result.assumptions.flatMap((text) => wrapped(plainText(text), WIDTH, '  - ', '    ')),
     ),
+    ...section(
+      'Cautions',
+      dangersOf(result).flatMap((text) => wrapped(text, WIDTH, '  - ', '    ')),
+    ),
     '',
-    ...wrapped(caution, WIDTH),
+    ...wrapped(`${madeBy(options.version)}. ${caution}`, WIDTH),
     '',
   ].join('\n');
 }

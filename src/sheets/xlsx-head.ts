@@ -1,6 +1,6 @@
 import type { Result } from '../model/result.ts';
+import { madeBy, studyTool } from './cautions.ts';
 import { plainText } from './plain.ts';
-import { studyTool } from './sheet.ts';
 import { closingLine } from './text.ts';
 import { looks, text } from './xlsx-looks.ts';
 import { type Cell, type Page, put } from './xlsx-model.ts';
@@ -31,7 +31,7 @@ export function createPage(
   across(text(plainText(result.title) || 'Untitled flowsheet', looks.title));
   page.heights.set(0, 20);
   wrapped(caseLine(result), result.convergence.converged ? looks.note : looks.alarm);
-  wrapped(`${version === undefined ? 'Looptally' : `Looptally ${version}`}. ${studyTool}`, looks.caution);
+  wrapped(`${madeBy(version)}. ${studyTool}`, looks.caution);
   const open = openLine(result);
   wrapped(open === '' ? 'No warnings.' : open, open === '' ? looks.note : looks.alarm);
   put(page, []);

@@ -7,7 +7,7 @@ import { commandLine } from './looptally.ts';
 const root = fileURLToPath(new URL('../..', import.meta.url));
 const { run, folder } = commandLine();
 
-test('looptally sheet writes the drawing that the library makes', () => {
+test('looptally sheet writes the drawing that the library makes, and its version on it', () => {
   copyFileSync(join(root, 'flowsheets/ammonia-loop.yaml'), join(folder(), 'loop.yaml'));
   expect(run(['sheet', 'loop.yaml', '--out', 'loop.svg'])).toEqual({
     code: 0,
@@ -15,5 +15,9 @@ test('looptally sheet writes the drawing that the library makes', () => {
     err: 'wrote loop.svg\n',
   });
   const golden = join(root, 'tests/sheets/__golden__/drawings/ammonia-loop.svg');
-  expect(readFileSync(join(folder(), 'loop.svg'), 'utf8')).toBe(readFileSync(golden, 'utf8'));
+  const { version } = JSON.parse(readFileSync(join(root, 'package.json'), 'utf8'));
+  const maker = new RegExp(`<text[^>]*>Looptally ${version}</text>`);
+  const drawn = readFileSync(join(folder(), 'loop.svg'), 'utf8');
+  expect(drawn).toMatch(maker);
+  expect(drawn.replace(maker, '')).toBe(readFileSync(golden, 'utf8'));
 });

@@ -32,6 +32,8 @@ export interface DrawingOptions {
    * by which `drawingWords` names them in data-word
    */
   readonly forPage?: boolean;
+  /** version of Looptally, said below the notes */
+  readonly version?: string;
 }
 
 /** A small flowsheet is drawn larger than a large one, up to this. */
@@ -70,7 +72,11 @@ export async function drawingOf(result: Result, options: DrawingOptions = {}): P
 
   const edge = forPage
     ? { svg: '', texts: [] }
-    : drawFrame(frame, result, { notes: options.notes ?? '', titleBlock: options.titleBlock ?? {} });
+    : drawFrame(frame, result, {
+        notes: options.notes ?? '',
+        titleBlock: options.titleBlock ?? {},
+        version: options.version,
+      });
   const drawnFlags = flags.map((flag, k) => flag.draw(layout.flags[k]!));
   const texts: { text: string; box: Box }[] = [
     ...edge.texts,

@@ -1,13 +1,18 @@
 import type { Result } from '../../model/result.ts';
-import { studyTool } from '../sheet.ts';
+import { madeBy, studyTool } from '../cautions.ts';
 import { closingLine } from '../text.ts';
 import { type Box, LINE, line, MAIN_LINE, type PlacedText, SMALL, text } from './svg.ts';
 import { textWidth } from './text-width.ts';
 
 const ROW = 13;
 
-/** What the lines mean, what the user noted, and what the drawing is not. */
-export function drawNotes(box: Box, result: Result, ownNotes: string): { svg: string; texts: PlacedText[] } {
+/** What the lines mean, what the user noted, what the drawing is not and who made it. */
+export function drawNotes(
+  box: Box,
+  result: Result,
+  ownNotes: string,
+  version: string | undefined,
+): { svg: string; texts: PlacedText[] } {
   const x = box.x + 10;
   const width = box.width - 20;
   const texts: PlacedText[] = [];
@@ -20,6 +25,8 @@ export function drawNotes(box: Box, result: Result, ownNotes: string): { svg: st
       : [`Warnings (${result.warnings.length}) stand in the sheet of the result.`]),
   ];
   texts.push(text('Key and notes', x, y, { bold: true }));
+  const maker = version === undefined ? '' : madeBy(version);
+  if (maker !== '') texts.push(text(maker, x + width - textWidth(maker, SMALL), y));
   y += ROW + 2;
   const svg =
     line(

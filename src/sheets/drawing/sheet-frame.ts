@@ -69,6 +69,7 @@ export function bareFrame(width: number, height: number): Frame {
 export interface FrameWords {
   readonly notes: string;
   readonly titleBlock: TitleBlock;
+  readonly version?: string | undefined;
 }
 
 /** Frame, title block, key and notes. */
@@ -86,7 +87,12 @@ export function drawFrame(
     height: BLOCK_HEIGHT,
   };
   const title = drawTitleBlock(block, size, result, words.titleBlock);
-  const left = drawNotes({ ...block, x: FILING, width: block.x - FILING }, result, words.notes);
+  const left = drawNotes(
+    { ...block, x: FILING, width: block.x - FILING },
+    result,
+    words.notes,
+    words.version,
+  );
   return {
     svg: rectangle(border, MAIN_LINE) + title.svg + left.svg,
     texts: [...title.texts, ...left.texts],

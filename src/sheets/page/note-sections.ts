@@ -1,9 +1,9 @@
 import { natural } from '../../study/compare.ts';
 import { type SettingValue, settingList } from '../../study/setting-list.ts';
 import { planFlowsheet } from '../../tally/plan.ts';
+import { caution, dangersOf } from '../cautions.ts';
 import { settingDisplay, shownValue } from '../figure-display.ts';
 import { closureText, significant } from '../numbers.ts';
-import { caution, studyTool } from '../sheet.ts';
 import { type Html, html, nameText, userText } from './html.ts';
 import { bulletList, headCell, numberCell, table, textCell, unitCell } from './tables.ts';
 import type { PageView } from './view.ts';
@@ -105,7 +105,8 @@ export function sourcesSection({ flowsheet }: PageView): Html {
   });
 }
 
-export function cautionsSection({ flowsheet }: PageView): Html {
+export function cautionsSection({ flowsheet, result }: PageView): Html {
   const notes = flowsheet.notes.trim();
-  return html`${notes === '' ? null : html`<p><span class="u">Notes of the file:</span> ${userText(notes)}</p>`}<p class="caution">${studyTool}${caution.slice(studyTool.length)}</p>`;
+  const dangers = dangersOf(result).map((danger) => html`<li>${danger}</li>`);
+  return html`${notes === '' ? null : html`<p><span class="u">Notes of the file:</span> ${userText(notes)}</p>`}<div class="caution"><p>${caution}</p><ul>${dangers}</ul></div>`;
 }

@@ -1,9 +1,9 @@
+import { studyTool } from '../cautions.ts';
 import { chartStyle } from '../charts/palette.ts';
 import { csvCell } from '../csv.ts';
 import { type JobField, type PageSection, pageDocument } from '../page/document.ts';
 import { type Html, html, ownMarkup, userText } from '../page/html.ts';
 import { bulletList } from '../page/tables.ts';
-import { studyTool } from '../sheet.ts';
 
 /** What the rim hands to every page of a study. */
 export interface StudyPageOptions {
