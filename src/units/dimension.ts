@@ -44,8 +44,9 @@ export const dimensions: Readonly<Record<Dimension, DimensionFacts>> = {
     shown: 'degC',
     offered: ['degC', 'K', 'degF'],
     examples: ['450 degC', '723.15 K'],
-    min: 1,
+    above: 0,
     max: 1e5,
+    least: 1,
   },
   temperatureDifference: {
     noun: 'a temperature difference',
