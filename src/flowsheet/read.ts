@@ -26,7 +26,7 @@ import { readSpreads, spreadableSettings } from './spreads.ts';
 import { readStudy } from './study.ts';
 import { readStreams } from './topology.ts';
 import { readYaml } from './yaml-document.ts';
-import { child, entriesOf, scalarsOf, type YamlNode } from './yaml-tree.ts';
+import { child, entriesOf, scalarsOf, type YamlNode, type YamlScalar } from './yaml-tree.ts';
 
 export interface ReadOptions {
   /** name of the file, for messages */
@@ -56,11 +56,16 @@ export async function readFlowsheet(text: string, options: ReadOptions): Promise
     ...readSetChanges(options.set ?? [], findings),
   ];
   const root = applyChanges(document.root, changes, findings);
-  if ([...scalarsOf(root)].some((scalar) => needsUnitEngine(scalar.text))) await loadUnitEngine();
+  if (scalarsWithUnits(root).some(({ text }) => needsUnitEngine(text))) await loadUnitEngine();
   const flowsheet = readTree({ root, findings }, document.root, file, caseName, changes);
   const diagnostics = inOrder([...document.diagnostics, ...findings.list], file);
   const sound = diagnostics.every((d) => d.severity === 'warning');
   return { flowsheet: sound ? flowsheet : null, diagnostics };
+}
+
+/** Prices are per units of a table of their own. */
+function scalarsWithUnits(root: YamlNode): YamlScalar[] {
+  return entriesOf(root).flatMap(({ key, value }) => (key === 'prices' ? [] : [...scalarsOf(value)]));
 }
 
 function hasErrors({ list }: Reading['findings']): boolean {
@@ -126,8 +131,10 @@ function readTree(
     : null;
   const spreads = readSpreads(reading, spreadable, aims);
   const correlations = readCorrelations(reading, spreads);
+  // Prices become formulas, and those cannot hold a name with other characters than names have.
+  const isWellNamed = !findings.list.some(({ code }) => code === 'bad-name' || code === 'reserved-name');
   const priced =
-    world === null || !whole
+    world === null || !whole || !isWellNamed
       ? null
       : readPrices(reading, components!, streams, feeds.names, blocks ?? [], ledger?.ledger ?? null);
   const objective =

@@ -74,10 +74,13 @@ export function withinLimits(
   };
 }
 
-/** True where a text is a number with a unit that only mathjs can know. */
+/** True where a text is a number, or a range `a..b` of two, with a unit that only mathjs can know. */
 export function needsUnitEngine(text: string): boolean {
-  const split = text.length <= 80 ? splitQuantity(text) : null;
-  return split !== null && isUnitText(split.unit) && dimensionsOf(split.unit).length === 0;
+  if (text.length > 80) return false;
+  return text.split('..').some((part) => {
+    const split = splitQuantity(part);
+    return split !== null && isUnitText(split.unit) && dimensionsOf(split.unit).length === 0;
+  });
 }
 
 /** A value in SI as the trade writes it: `450 degC`, `200 bar`, `3 %`. */
