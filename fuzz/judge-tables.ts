@@ -80,7 +80,9 @@ export async function judgeSlice(
   writeFileSync(file, bytes);
   try {
     if (kind === '.parquet') {
-      await openParquetSlice(file);
+      const { mark, head } = await openParquetSlice(file);
+      if (JSON.stringify(mark) !== JSON.stringify(MARK) || head !== JSON.stringify(HEADS))
+        throw new Error('a slice with another mark was taken for whole');
       return 'opened';
     }
     const slice = openTextSlice(file);

@@ -1,12 +1,13 @@
+import { createHash } from 'node:crypto';
 import { ByteWriter, ParquetWriter, schemaFromColumnData } from 'hyparquet-writer';
 import { plainText } from '../sheets/plain.ts';
 import type { PathTable } from '../study/sweep.ts';
-import type { SliceMark, TableSink, Write } from './table-file.ts';
+import { markText, type SliceMark, type TableSink, type Write } from './table-file.ts';
 
 /** Rows that are packed together: what is kept in memory, and what a reader may skip as one. */
 const GROUP_ROWS = 20_000;
 
-/** Name of the mark of a slice among the key-value metadata of the file. */
+/** Name of the mark of a slice among the key-value metadata of the file; with it goes the checksum of all before those and of itself. */
 export const SLICE_KEY = 'looptally_slice';
 
 type Cell = number | boolean | string | null;
@@ -27,8 +28,11 @@ export function createParquetSink(heads: readonly string[], write: Write): Table
     schema: schemaFromColumnData({ columnData: columns }),
     createdBy: 'looptally',
   });
+  const sum = createHash('sha256');
   const flush = () => {
-    write(new Uint8Array(bytes.getBytes()));
+    const chunk = new Uint8Array(bytes.getBytes());
+    sum.update(chunk);
+    write(chunk);
     bytes.index = 0;
   };
   const pack = () => {
@@ -51,7 +55,11 @@ export function createParquetSink(heads: readonly string[], write: Write): Table
     },
     end(mark: SliceMark | null) {
       if (columns[0]!.data.length > 0) pack();
-      if (mark !== null) writer.kvMetadata = [{ key: SLICE_KEY, value: JSON.stringify(mark) }];
+      flush();
+      if (mark !== null) {
+        const value = JSON.stringify({ ...mark, sha256: sum.copy().update(markText(mark)).digest('hex') });
+        writer.kvMetadata = [{ key: SLICE_KEY, value }];
+      }
       writer.finish();
       flush();
     },

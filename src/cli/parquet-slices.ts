@@ -1,25 +1,54 @@
+import { createHash } from 'node:crypto';
+import { statSync } from 'node:fs';
 import { asyncBufferFromFile, type FileMetaData, parquetMetadataAsync, parquetReadObjects } from 'hyparquet';
 import type { PathTable } from '../study/sweep.ts';
 import { createParquetSink, SLICE_KEY } from './parquet-file.ts';
-import { noSlice, type Slice } from './slice-file.ts';
-import { type SliceMark, writeRenamed } from './table-file.ts';
+import { changed, copyBytes, noSlice, type Slice } from './slice-file.ts';
+import { markText, type SliceMark, writeRenamed } from './table-file.ts';
 
 /** Rows that are unpacked at once. */
 const STEP_ROWS = 5000;
 
-/** @throws Refusal where the file is no slice */
+/** Behind the metadata of a Parquet file: their length and four letters. @source the Parquet format */
+const TAIL_BYTES = 8;
+
+/** @throws Refusal where the file is no slice, or not as it was written */
 export async function openParquetSlice(path: string): Promise<Slice> {
   const metadata = await metadataOf(path);
-  const mark = metadata?.key_value_metadata?.find(({ key }) => key === SLICE_KEY)?.value;
-  if (metadata === null || mark === undefined) throw noSlice(path);
+  const found = metadata === null ? null : markOf(metadata);
+  if (metadata === null || found === null) throw noSlice(path);
+  const { sha256, ...mark } = found;
+  const rows = mark.last - mark.first + 1;
+  if (Number(metadata.num_rows) !== rows || sumOf(path, metadata.metadata_length, mark) !== sha256)
+    throw changed(path);
   return {
     path,
-    mark: JSON.parse(mark) as SliceMark,
+    mark,
     head: JSON.stringify(headsOf(metadata)),
     copyRows() {
       throw new Error('rows of a Parquet slice are not copied');
     },
   };
+}
+
+function markOf({ key_value_metadata }: FileMetaData): (SliceMark & { readonly sha256: string }) | null {
+  try {
+    const mark = JSON.parse(key_value_metadata?.find(({ key }) => key === SLICE_KEY)?.value ?? '');
+    const { part, first, last, total, sweep, sha256 } = mark;
+    const isMark =
+      [part, sweep, sha256].every((word) => typeof word === 'string') &&
+      [first, last, total].every((row) => Number.isSafeInteger(row) && row > 0);
+    return isMark ? { part, first, last, total, sweep, sha256 } : null;
+  } catch {
+    return null;
+  }
+}
+
+function sumOf(path: string, metadataLength: number, mark: SliceMark): string {
+  const sum = createHash('sha256');
+  const end = statSync(path).size - metadataLength - TAIL_BYTES;
+  copyBytes(path, 0, Math.max(0, end), (bytes) => sum.update(bytes));
+  return sum.update(markText(mark)).digest('hex');
 }
 
 /** Unpack the slices and pack them again as the whole sweep would have been. */

@@ -1,7 +1,7 @@
 import { createHash } from 'node:crypto';
 import { closeSync, fstatSync, openSync, readSync } from 'node:fs';
 import { usageRefusal } from './refusal.ts';
-import { csvMark, ndjsonMark, type SliceMark, tableKind, type Write } from './table-file.ts';
+import { csvMark, markText, ndjsonMark, type SliceMark, tableKind, type Write } from './table-file.ts';
 
 /** A slice that says of itself where it belongs. */
 export interface Slice {
@@ -32,10 +32,10 @@ export function openTextSlice(path: string): Slice {
     const start = read(file, 0, Math.min(end, HEAD_BYTES)).toString('utf8');
     const head = isCsv ? start.slice(0, start.indexOf('\n') + 1) : '';
     const sum = createHash('sha256');
-    copy(path, 0, end, (bytes) => sum.update(bytes));
-    if (sum.digest('hex') !== found.sha256) throw changed(path);
+    copyBytes(path, 0, end, (bytes) => sum.update(bytes));
+    if (sum.update(markText(found.mark)).digest('hex') !== found.sha256) throw changed(path);
     const from = Buffer.byteLength(head);
-    return { path, mark: found.mark, head, copyRows: (write) => copy(path, from, end, write) };
+    return { path, mark: found.mark, head, copyRows: (write) => copyBytes(path, from, end, write) };
   } finally {
     closeSync(file);
   }
@@ -51,7 +51,7 @@ export function noSlice(path: string) {
   );
 }
 
-function changed(path: string) {
+export function changed(path: string) {
   return usageRefusal(
     'no-slice',
     `${path} is not as it was written.`,
@@ -85,7 +85,8 @@ function ndjsonMarkOf(line: string): { mark: SliceMark; sha256: string } | null 
   }
 }
 
-function copy(path: string, from: number, to: number, write: Write): void {
+/** Hand over the bytes [from, to) of a file, piece by piece. */
+export function copyBytes(path: string, from: number, to: number, write: Write): void {
   const file = openSync(path, 'r');
   try {
     for (let at = from; at < to; at += CHUNK_BYTES) write(read(file, at, Math.min(at + CHUNK_BYTES, to)));

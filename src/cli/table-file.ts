@@ -17,6 +17,11 @@ export interface SliceMark {
   readonly sweep: string;
 }
 
+/** A mark as it goes into the checksum of its slice, behind the rows. */
+export function markText({ part, first, last, total, sweep }: SliceMark): string {
+  return `${part} ${first} ${last} ${total} ${sweep}`;
+}
+
 /** Takes the pieces of a table in their order. */
 export interface TableSink {
   add(table: PathTable): void;
@@ -62,7 +67,7 @@ function textSink(
   return {
     add: (table) => put(format.rows(table, heads)),
     end: (mark) => {
-      if (mark !== null) write(Buffer.from(markLine(mark, sum.copy().digest('hex'))));
+      if (mark !== null) write(Buffer.from(markLine(mark, sum.update(markText(mark)).digest('hex'))));
     },
   };
 }

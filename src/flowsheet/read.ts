@@ -35,7 +35,7 @@ import { readSpreads, spreadableSettings } from './spreads.ts';
 import { readStudy } from './study.ts';
 import { readStreams } from './topology.ts';
 import { readYaml } from './yaml-document.ts';
-import { child, entriesOf, scalarsOf, type YamlNode } from './yaml-tree.ts';
+import { child, entriesOf, scalarsOf, type YamlNode, type YamlScalar } from './yaml-tree.ts';
 
 export interface ReadOptions {
   /** name of the file, for messages */
@@ -89,8 +89,13 @@ async function readChanged(
   if (caseName !== null) changes.push(...chosenCase(written, caseName, findings));
   changes.push(...readSetChanges(set, findings));
   const root = applyChanges(written, changes, findings);
-  for (const scalar of scalarsOf(root)) if (needsUnitEngine(scalar.text)) await loadUnitEngine();
+  if (scalarsWithUnits(root).some(({ text }) => needsUnitEngine(text))) await loadUnitEngine();
   return readTree({ root, findings }, written, file, caseName, changes);
+}
+
+/** Prices are per units of a table of their own. */
+function scalarsWithUnits(root: YamlNode): YamlScalar[] {
+  return entriesOf(root).flatMap(({ key, value }) => (key === 'prices' ? [] : [...scalarsOf(value)]));
 }
 
 function hasErrors({ list }: Reading['findings']): boolean {
@@ -156,8 +161,10 @@ function readTree(
     : null;
   const spreads = readSpreads(reading, spreadable, aims);
   const correlations = readCorrelations(reading, spreads);
+  // Prices become formulas, and those cannot hold a name with other characters than names have.
+  const isWellNamed = !findings.list.some(({ code }) => code === 'bad-name' || code === 'reserved-name');
   const priced =
-    world === null || !whole
+    world === null || !whole || !isWellNamed
       ? null
       : readPrices(reading, components!, streams, feeds.names, blocks ?? [], ledger?.ledger ?? null);
   const objective =

@@ -24,7 +24,7 @@ const ofComponents: readonly (readonly [components: readonly string[], words: st
   ],
   [
     ['CH3OH', 'CH3OCH3', 'C2H5OH'],
-    'The product burns, methanol with a flame hardly to be seen; methanol is toxic.',
+    'Methanol, ethanol and dimethyl ether burn, methanol with a flame hardly to be seen; methanol is toxic.',
   ],
   [['SO2', 'SO3', 'H2SO4'], 'Sulphur oxides are toxic, and make acid with any water.'],
   [['NO', 'NO2', 'N2O4'], 'Oxides of nitrogen are toxic, with effects that come hours later.'],

@@ -86,10 +86,13 @@ export function withinLimits(
   };
 }
 
-/** True where a text is a number with a unit that only mathjs can know. */
+/** True where a text is a number, or a range `a..b` of two, with a unit that only mathjs can know. */
 export function needsUnitEngine(text: string): boolean {
-  const split = splitQuantity(text);
-  return split !== null && isUnitText(split.unit) && dimensionsOf(split.unit).length === 0;
+  if (text.length > 2 * LONGEST_QUANTITY) return false;
+  return text.split('..').some((part) => {
+    const split = splitQuantity(part);
+    return split !== null && isUnitText(split.unit) && dimensionsOf(split.unit).length === 0;
+  });
 }
 
 /** A value in SI as the trade writes it: `450 degC`, `200 bar`, `3 %`. */

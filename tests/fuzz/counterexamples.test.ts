@@ -1,5 +1,8 @@
-import { readFileSync } from 'node:fs';
+import { mkdtempSync, readFileSync, rmSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
 import { describe, expect, test } from 'vitest';
+import { createTables, judgeSlice } from '../../fuzz/judge-tables.ts';
 import { readFlowsheet } from '../../src/flowsheet/read.ts';
 import { type Balance, balance } from '../../src/tally/balance.ts';
 import { createPlant } from '../../src/tally/plant.ts';
@@ -76,4 +79,33 @@ test('trials for an advice share their passes, so that a slow loop is not tried 
   expect(before - patience.passes).toBe(trial!.passes);
   expect(tryOut(plant, group, 1e-9, [], 'auto', { passes: 2 })).toBeNull();
   expect(tryOut(plant, group, 1e-9, [], 'auto', { passes: 0 })).toBeNull();
+});
+
+test('a stream whose name no formula can hold is a fault of its name, where prices name it as well', async () => {
+  const text = readFileSync(new URL('../../flowsheets/methanol-optimum.yaml', import.meta.url), 'utf8');
+  const doubled = text.replace(/^( {2})(S\w+)(: makeup -> .*)$/m, "$1$2$3\n$1$2'$3");
+  expect(doubled).not.toBe(text);
+  const { flowsheet, diagnostics } = await readFlowsheet(doubled, { file: 'mutant.yaml' });
+  expect(flowsheet).toBeNull();
+  expect(diagnostics.map(({ code }) => code)).toContain('bad-name');
+});
+
+test('a Parquet slice with any byte of its rows or its mark changed is refused', async () => {
+  const scratch = mkdtempSync(join(tmpdir(), 'looptally-slices-'));
+  try {
+    const { slices } = await createTables(scratch);
+    const whole = slices.get('.parquet')!;
+    expect(await judgeSlice(whole, '.parquet', whole, scratch)).toBe('opened');
+    const mark = Buffer.from(whole).indexOf('"part"');
+    for (const at of [4, 100, mark, mark + 1, mark + 20, mark + 60]) {
+      const damaged = Buffer.from(whole);
+      damaged[at] = damaged[at]! ^ 1;
+      expect({ at, outcome: await judgeSlice(damaged, '.parquet', whole, scratch) }).toEqual({
+        at,
+        outcome: 'refused',
+      });
+    }
+  } finally {
+    rmSync(scratch, { recursive: true, force: true });
+  }
 });
