@@ -3,8 +3,6 @@ import { invisibleIn } from './invisible.ts';
 
 /** Characters of a quantity: more than any number with its unit has. */
 export const LONGEST_QUANTITY = 100;
-/** Numbers nearer to zero than this have lost digits. */
-const SMALLEST = 2.2250738585072014e-308;
 
 /**
  * Why a text is no number with a unit, and what to write: the commonest slips by name.
@@ -77,12 +75,12 @@ function extreme(
   }
   if (!isTooSmall(written, number) && !isTooSmall(valueInSi, number)) return null;
   return {
-    why: 'it is nearer to 0 than the smallest number there is, 2.2e-308 in SI units',
+    why: 'it is nearer to 0 than the smallest number there is, 5e-324 in SI units',
     mend: `${mend}, or 0`,
   };
 }
 
-/** True where digits of a number as written were lost below the smallest number: the value is 0 or next to it. */
+/** True where a number that was not written as 0 has become 0, below the smallest that there is. */
 export function isTooSmall(value: number, written: string): boolean {
-  return Math.abs(value) < SMALLEST && /[1-9]/.test(written.split(/[eE]/)[0]!);
+  return value === 0 && /[1-9]/.test(written.split(/[eE]/)[0]!);
 }

@@ -73,6 +73,8 @@ test('a condensate below its freezing point is warned of', async () => {
   const cooling = 'cooling: {water: 25 degC, approach: 10 K}';
   expect(await warnings(plant(`unit: {kind: condenser, temperature: -20 degC, ${cooling}}`))).toEqual([
     'below-freezing in unit',
+    // of the gases in the water, in the liquid of the feed and in the condensate
+    ...['S1', 'S1', 'S3', 'S3'].map((tag) => `henry-out-of-range in ${tag}`),
   ]);
 });
 
@@ -83,5 +85,6 @@ test('intercooling hotter than the discharge is warned of', async () => {
 test('refrigeration that nobody counts is warned of', async () => {
   expect(await warnings(plant('unit: {kind: condenser, temperature: 5 degC}'))).toEqual([
     'refrigeration-not-counted in unit',
+    ...['S1', 'S1', 'S3'].map((tag) => `henry-out-of-range in ${tag}`),
   ]);
 });
