@@ -24,10 +24,10 @@ beforeAll(() => {
   writeFileSync(at('loop.yaml'), shipped('reference-loop'));
 });
 
-/** A sweep of some seconds: 64 x 60 cases. */
+/** A sweep that does not come to its end before it is stopped: 64 x 600 cases. */
 const sweep = (name: string, ...more: string[]) => [
   ...['sweep', 'loop.yaml', '--over', 'condenser.temperature=-25 degC..10 degC:64'],
-  ...['--over', 'purge.fractions.bleed=0.5 %..10 %:60', '--out', name, ...more],
+  ...['--over', 'purge.fractions.bleed=0.5 %..10 %:600', '--out', name, ...more],
 ];
 const short = (name: string, ...more: string[]) => [
   ...['sweep', 'loop.yaml', '--over', 'condenser.temperature=-25 degC..10 degC:16', '--out', name, ...more],
