@@ -49,8 +49,10 @@ export function makeCase({ corpus, tables, scratch }: Bench, seed: number, index
     );
   }
   if (dice < 82) {
-    const { path } = settingIn(tree, chance);
-    const over = chance.once(12) ? path : `${path}=${valuesText(chance, corpus)}`;
+    const { path, value } = settingIn(tree, chance);
+    const near = `${value},${scalarInstead(String(value), chance, corpus)}`;
+    const values = chance.once(2) ? near : valuesText(chance, corpus);
+    const over = chance.once(12) ? path : `${path}=${values}`;
     return file('over', text, () => judgeOver(text, over), `--over ${JSON.stringify(over)}`);
   }
   if (dice < 88) {
@@ -73,7 +75,7 @@ export function makeCase({ corpus, tables, scratch }: Bench, seed: number, index
   }
   const ending = chance.pick([...tables.slices.keys()]);
   const whole = tables.slices.get(ending)!;
-  const content = slip(whole, chance);
+  const content = chance.once(8) ? whole : slip(whole, chance);
   return {
     kind: 'slice',
     content,
