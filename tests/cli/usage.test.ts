@@ -262,7 +262,7 @@ describe('a command line that cannot be followed is told in four parts with exit
   link.md is read and would be written.
    1 | looptally sheet methanol.yaml --out link.md
      |                                     ^^^^^^^
-  why:  the sheet would overwrite the file it is made from
+  why:  the result would overwrite the file it is made from
   mend: give --out another name
 
 1 error
