@@ -37,7 +37,11 @@ function readHandle(reading: Reading, world: HandleWorld, { key, keyPlace, value
   const setting = world.known.find((one) => one.path === key);
   if (setting === undefined) return cannot(keyPlace, noSetting(key, world.known));
   const aim = world.aims.find((one) => one.move === key);
-  if (aim !== undefined) return cannot(keyPlace, movedByAim(key, aim));
+  if (aim !== undefined) {
+    // No error: who adds an aim to a file with handles shall not have to take the file apart.
+    reading.findings.warning(keyPlace, movedByAim(key, aim));
+    return [];
+  }
   const ends: number[] = [];
   for (const { text, offset, length } of range.ends) {
     const place = placeInside(node, offset, length);
@@ -126,7 +130,7 @@ function movedByAim(path: string, aim: Aim): Fault {
   return {
     code: 'bad-handle',
     what: `${path} is a handle and moved by the aim ${aim.name}.`,
-    why: 'the aim finds its value, whatever the handle says',
+    why: 'the aim finds its value, whatever the handle says: a page shows no handle for it',
     mend: 'take out the handle, or the aim',
   };
 }
