@@ -75,7 +75,10 @@ test('what an aim moves is no handle', async () => {
     'aims: {cap: {move: purge.fractions.bleed, between: [0.5 %, 20 %], until: streams.S4.y.Ar = 5 %}}\n',
   );
   const { flowsheet, diagnostics } = await readFlowsheet(text, { file: 'loop.yaml' });
-  expect(flowsheet!.handles.map(({ path }) => path)).toEqual(['condenser.temperature', 'converter.temperature']);
+  expect(flowsheet!.handles.map(({ path }) => path)).toEqual([
+    'condenser.temperature',
+    'converter.temperature',
+  ]);
   expect(diagnostics).toMatchObject([{ code: 'bad-handle', severity: 'warning' }]);
   expect(diagnostics[0]!.what).toBe('purge.fractions.bleed is a handle and moved by the aim cap.');
 });
