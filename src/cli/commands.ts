@@ -67,7 +67,7 @@ export const commands: ReadonlyMap<string, CommandEntry> = new Map([
   [
     'sheet',
     {
-      summary: 'close the loop and write its sheet to files (.md, .xlsx, .svg, .csv)',
+      summary: 'close the loop and write its sheet to files (.html, .xlsx, .svg, .md, .csv)',
       load: async () => (await import('./sheet.ts')).sheetCommand(),
     },
   ],

@@ -15,19 +15,22 @@ export interface PageWanted {
   /** limits whose figures are recorded though nobody asked */
   readonly added: readonly string[];
   readonly reading: StudyReading;
+  /** of the first case */
+  readonly warnings: readonly string[];
   readonly out: string;
   readonly write: Write;
 }
 
 /** Takes the pieces of a table and writes the page when all are there. */
 export function createPageSink(wanted: PageWanted): TableSink {
-  const { flowsheet, job, heads, added, reading, out, write } = wanted;
+  const { flowsheet, job, heads, added, reading, warnings, out, write } = wanted;
   const paths: PathTable[] = [];
   return {
     add: (path) => paths.push(path),
     end() {
       const swept = joinedPaths(job.axes, job.record, paths);
-      const content = { flowsheet, swept, heads, reading: reading.lines(), addedLimits: added };
+      const lines = [...reading.lines(), ...warnings.map((one) => `Warning of the first case: ${one}.`)];
+      const content = { flowsheet, swept, heads, reading: lines, addedLimits: added };
       write(Buffer.from(sweepPage(content, pageOptions(out))));
     },
   };

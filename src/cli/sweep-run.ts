@@ -3,6 +3,7 @@ import type { Grid } from '../study/grid.ts';
 import type { StudyReading } from '../study/reading.ts';
 import type { SolveOptions } from './solve.ts';
 import type { SweepJob } from './sweep-job.ts';
+import { say } from './terminal.ts';
 
 export interface SweepOptions extends SolveOptions {
   readonly over?: readonly string[];
@@ -30,6 +31,8 @@ export interface Run {
   readonly to: number;
   readonly part: Part;
   readonly reading: StudyReading;
+  /** of the first case */
+  readonly warnings: readonly string[];
   readonly options: SweepOptions;
 }
 
@@ -53,6 +56,11 @@ export function counter() {
 export function summary({ cases, notClosed }: Tallied): string {
   const all = `${cases} ${cases === 1 ? 'case' : 'cases'}`;
   return notClosed === 0 ? all : `${all}, ${notClosed} of them not closed; their notes say why`;
+}
+
+/** Say what the first case warns of, on standard error. */
+export function sayWarnings({ warnings, options }: Run): void {
+  if (!options.quiet) for (const warning of warnings) say(`warning, first case: ${warning}`);
 }
 
 export function rowsOf({ pathRows, size }: Grid, from: number, to: number): number {

@@ -93,7 +93,7 @@ async function markOf(out: string): Promise<unknown> {
 }
 
 async function calculated(run: FileRun, signal: AbortSignal): Promise<Tallied> {
-  const { flowsheet, added, job, grid, from, to, part, reading, options, out } = run;
+  const { flowsheet, added, job, grid, from, to, part, reading, warnings, options, out } = run;
   const heads = sweepHeads(planOf(job));
   checkRoom(out, rowsOf(grid, from, to), heads.length - 3);
   const identity = identityOf(job, `${part.part}/${part.of}`);
@@ -104,7 +104,7 @@ async function calculated(run: FileRun, signal: AbortSignal): Promise<Tallied> {
     await calculateRest(run, journal, count, signal);
     await writeRenamed(out, async (write) => {
       const sink = isPage(out)
-        ? createPageSink({ flowsheet, added, job, heads, reading, out, write })
+        ? createPageSink({ flowsheet, added, job, heads, reading, warnings, out, write })
         : await tableKinds.get(tableKind(out))!(heads, write);
       for (const rows of journal.tables()) {
         reading.add(rows);

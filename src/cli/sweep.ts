@@ -10,6 +10,7 @@ import { openFlowsheet } from './open-flowsheet.ts';
 import { createProgress } from './progress.ts';
 import { aboutSource, commandLine, type Source, usageRefusal } from './refusal.ts';
 import { balanceOptions, withSolveOptions } from './solve.ts';
+import { Stopped, stoppable, tellStopped } from './stop-signals.ts';
 import { checkPageRows, isPage } from './study-page.ts';
 import { planOf, type SweepJob } from './sweep-job.ts';
 import { noPageOfPart } from './sweep-page.ts';
@@ -24,10 +25,12 @@ import {
   type Run,
   rowsOf,
   type SweepOptions,
+  sayWarnings,
   summary,
   type Tallied,
 } from './sweep-run.ts';
 import { toFile } from './sweep-to-file.ts';
+import { firstWarnings } from './sweep-warnings.ts';
 import { tableKind, tableKinds } from './table-file.ts';
 import { say } from './terminal.ts';
 import { checkOutputs } from './write-files.ts';
@@ -114,13 +117,16 @@ async function runSweep(file: string, options: SweepOptions): Promise<void> {
     to,
     part,
     reading,
+    warnings: options.quiet && !isPage(out) ? [] : firstWarnings(flowsheet, axes),
     options,
   };
   const tallied = out === undefined ? await toStandardOutput(run) : await toFile({ ...run, out });
+  if (tallied !== null) sayWarnings(run);
   if (tallied !== null && tallied.cases === tallied.notClosed) process.exitCode = exitCodes.notClosed;
 }
 
-async function toStandardOutput({ job, grid, from, to, reading, options }: Run): Promise<Tallied> {
+/** @returns null where it was stopped */
+async function toStandardOutput({ job, grid, from, to, reading, options }: Run): Promise<Tallied | null> {
   const table = printedTable(sweepHeads(planOf(job)), job.axes.length, options.json === true);
   const progress = await createProgress(rowsOf(grid, from, to), 0, options.quiet === true || isTerminal());
   const count = counter();
@@ -131,8 +137,12 @@ async function toStandardOutput({ job, grid, from, to, reading, options }: Run):
     progress.tell(count.cases, count.notClosed);
   };
   try {
-    await makePaths(job, { from, to, workers: options.workers }, take);
+    await stoppable((signal) => makePaths(job, { from, to, workers: options.workers, signal }, take));
   } catch (error) {
+    if (error instanceof Stopped) {
+      tellStopped(error, 'the table above is not whole; with --out NAME.csv what is done is kept');
+      return null;
+    }
     if (error instanceof WorkerLost)
       throw workerLost(error, '', 'repeat the command with fewer --workers, or with --out');
     throw error;

@@ -72,13 +72,21 @@ export function createPanelView(
     };
     slider.addEventListener('input', () => slide(false));
     slider.addEventListener('change', () => slide(true));
+    field.addEventListener('input', () => {
+      field.dataset['typing'] = 'yes';
+    });
+    field.addEventListener('blur', () => {
+      delete field.dataset['typing'];
+    });
     field.addEventListener('change', () => {
+      delete field.dataset['typing'];
       const text = typedText(field.value, handle.unit, numbers);
       if (text === null) fault(handle.path, twoMeanings(field.value, numbers));
       else events.typed(handle, text);
     });
     field.addEventListener('keydown', (event) => {
       if (event.key !== 'Escape') return;
+      delete field.dataset['typing'];
       fault(handle.path, null);
       events.reset(handle);
     });
@@ -105,7 +113,10 @@ export function createPanelView(
         const number = numberOf(handle, value);
         slider.value = String(placeOf(handle, value));
         slider.setAttribute('aria-valuetext', withUnit(number, handle));
-        if (field.getAttribute('aria-invalid') !== 'true') field.value = fieldText(number, numbers);
+        // A closing that ends while somebody types must not take the words out of the field.
+        const isTyping = field === document.activeElement && field.dataset['typing'] === 'yes';
+        if (!isTyping && field.getAttribute('aria-invalid') !== 'true')
+          field.value = fieldText(number, numbers);
         const isMoved = number !== numberOf(handle, own);
         moved.hidden = !isMoved;
         moved.querySelector('span')!.textContent =

@@ -179,7 +179,7 @@ describe('before the first case it is told in four parts:', () => {
       [...T, '--out', 'table'],
       `command line error bad-output
   table has no ending that tells what to write.
-  why:  a table is written as .csv, .ndjson, .parquet
+  why:  a table is written as .csv, .ndjson, .parquet, a page as .html
   mend: write e.g. --out table.csv
 
 1 error
@@ -233,7 +233,7 @@ describe('before the first case it is told in four parts:', () => {
 
   test('what is wrong with the study of a file, at its place', () => {
     expect(told(run(['sweep', 'study.yaml']).err)).toMatchInlineSnapshot(`
-      "study.yaml:54:34 error wrong-unit
+      "study.yaml:60:34 error wrong-unit
         10 bar is no temperature.
         why:  "bar" is a unit of pressure, and a temperature is needed here
         mend: write it in degC, K, degF
@@ -242,12 +242,12 @@ describe('before the first case it is told in four parts:', () => {
       "
     `);
     expect(told(run(['sweep', 'note.yaml']).err)).toMatchInlineSnapshot(`
-      "note.yaml:56:29 error bad-note
+      "note.yaml:62:29 error bad-note
         study: figures.recycle_ration is no column of its table.
         why:  the nearest column is figures.recycle_ratio
         mend: write figures.recycle_ratio
 
-      note.yaml:56:63 error bad-note
+      note.yaml:62:63 error bad-note
         study: {best figures.recycle_ratio} is no blank.
         why:  a blank says which number of a column it stands for: first, last, least, most or ratio
         mend: write {last COLUMN}, {most COLUMN; %} or {COLUMN at most COLUMN}

@@ -97,7 +97,8 @@ describe('the table', () => {
     ]);
     expect({ out, err }).toMatchInlineSnapshot(`
       {
-        "err": "",
+        "err": "warning, first case: condenser: cooling water does not reach -20.0 degC, and the power of the refrigeration is not counted; set cooling, e.g. cooling: {water: 25 degC, approach: 10 K}
+      ",
         "out": "condenser.temperature [degC]  streams.S2.T  converged  passes  note
                                -20         271.8        yes       5
                                  5       288.604        yes       4

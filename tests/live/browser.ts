@@ -61,7 +61,7 @@ export function bench(): Bench {
         ...options,
       });
       // On a machine with other work, half a minute is soon gone.
-      context.setDefaultTimeout(55_000);
+      context.setDefaultTimeout(40_000);
       const page = await context.newPage();
       page.on('console', (message) => {
         if (message.type() === 'error' || message.type() === 'warning') complaints.push(message.text());

@@ -175,7 +175,7 @@ describe('details of a block', () => {
         outlet_temperature_K: 273.15,
         approach_K: { synthesis: 10 },
         heat_of_reaction_kW: -42000.2,
-        carbon_activity: 0.51234,
+        carbon_activity_inlet: 0.51234,
         stages: 2,
         ln_K: { synthesis: -9.79671 },
         temperature_rise_K: 0.04,
@@ -186,7 +186,7 @@ describe('details of a block', () => {
       }),
     ).toEqual([
       'outlet temperature 0 degC, approach synthesis 10.000 K, heat of reaction -42000 kW, ' +
-        'carbon activity 0.5123, stages 2, ln K synthesis -9.797, temperature rise 0.040000 K, ' +
+        'carbon activity inlet 0.5123, stages 2, ln K synthesis -9.797, temperature rise 0.040000 K, ' +
         'carbon at inlet 1.24e+8, power 0 100.00 kW, adiabatic yes',
     ]);
   });

@@ -40,6 +40,9 @@ export interface DrawingOptions {
 const LARGEST_SCALE = 1.5;
 const ORIGIN = { x: 0, y: 0 };
 
+/** Room left around the diagram on a page. */
+const MARGIN = 8;
+
 /** A drawing as SVG, and where everything on it stands. */
 export interface Drawing {
   readonly svg: string;
@@ -91,11 +94,15 @@ export async function drawingOf(result: Result, options: DrawingOptions = {}): P
     texts.push(...box.texts.map(({ text, box: inner }) => ({ text, box: boxOnSheet(inner, corner) })));
     return `<g transform="translate(${num(corner.x)} ${num(corner.y)})">${box.svg}${words(box.texts, forPage ? nodeWord(k) : null)}</g>`;
   });
-  const { width, height } = frame;
+  const lines = network.streams.map(({ tag }, k) => ({ tag, points: layout.lines[k]!.map(onSheet) }));
+  const { x, y, width, height } = forPage
+    ? around([...texts, ...symbols], lines)
+    : { x: 0, y: 0, width: frame.width, height: frame.height };
+  const corner = x === 0 && y === 0 ? '' : `x="${x}" y="${y}" `;
   const svg = [
-    `<svg xmlns="http://www.w3.org/2000/svg" width="${width / MM}mm" height="${height / MM}mm" viewBox="0 0 ${width} ${height}">`,
+    `<svg xmlns="http://www.w3.org/2000/svg" width="${width / MM}mm" height="${height / MM}mm" viewBox="${x} ${y} ${width} ${height}">`,
     `<title>${escaped(plainText(result.title) || 'Untitled flowsheet')}</title>`,
-    `<rect width="${width}" height="${height}" fill="#fff"/>`,
+    `<rect ${corner}width="${width}" height="${height}" fill="#fff"/>`,
     `<g fill="none" stroke="#000" stroke-width="${LINE}" font-family="${FACES}" font-size="${SMALL}">`,
     ...(forPage ? [] : [`<g id="frame">${edge.svg}${words(edge.texts)}</g>`]),
     `<g transform="translate(${num(by.x)} ${num(by.y)}) scale(${num(scale)})">`,
@@ -113,7 +120,6 @@ export async function drawingOf(result: Result, options: DrawingOptions = {}): P
     `</svg>`,
     '',
   ].join('\n');
-  const lines = network.streams.map(({ tag }, k) => ({ tag, points: layout.lines[k]!.map(onSheet) }));
   return { svg, texts, symbols, lines };
 
   /** An id belongs to one drawing in a file of its own; in a page it might meet another. */
@@ -156,4 +162,17 @@ function drawStream({ loop }: DrawnStream, points: readonly Point[], isReturn: b
     { x: end.x - 0.6 * HEAD * along.x, y: end.y - 0.6 * HEAD * along.y },
   ];
   return line(shortened, loop ? MAIN_LINE : LINE) + head(0) + (isReturn ? head(HEAD) : '');
+}
+
+/** The whole numbers around all that is drawn. */
+function around(boxed: readonly { readonly box: Box }[], lines: Drawing['lines']): Box {
+  const points = [
+    ...boxed.flatMap(({ box }) => [box, { x: box.x + box.width, y: box.y + box.height }]),
+    ...lines.flatMap((line) => line.points),
+  ];
+  const low = (values: number[]) => Math.floor(Math.min(...values) - MARGIN);
+  const high = (values: number[]) => Math.ceil(Math.max(...values) + MARGIN);
+  const xs = points.map((point) => point.x);
+  const ys = points.map((point) => point.y);
+  return { x: low(xs), y: low(ys), width: high(xs) - low(xs), height: high(ys) - low(ys) };
 }

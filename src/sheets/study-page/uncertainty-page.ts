@@ -52,7 +52,7 @@ export function uncertaintyPage(found: Uncertainty, options: StudyPageOptions): 
           heading:
             asked.shares === 'sobol'
               ? 'What each figure follows: share of its variance'
-              : 'What each figure follows: square of the rank correlation',
+              : 'What each figure follows: share of the variance of its ranks',
           html: shareCharts(found),
         },
         failures.length === 0
@@ -184,20 +184,26 @@ const SMALL = 0.005;
 
 function shareCharts({ figures, options }: Uncertainty): Html {
   const isSobol = options.shares === 'sobol';
-  const sizeOf = ({ sobol, rankCorrelation }: Share) =>
-    (isSobol ? sobol?.total : (rankCorrelation ?? 0) ** 2) ?? 0;
+  const sizeOf = ({ sobol, rankShare }: Share) => (isSobol ? sobol?.total : rankShare) ?? 0;
   const charts = figures.flatMap(({ expression, summary, shares }, f): Html[] => {
     if (summary === null) return [];
-    const large = shares.filter((share) => sizeOf(share) >= SMALL);
+    // Spreads that vary together have one share: one bar, told by the first of them.
+    const large = shares.filter(
+      (share) => sizeOf(share) >= SMALL && (isSobol || share.together[0] === share.path),
+    );
     if (large.length === 0) return [];
     const bars = large
       .toSorted((a, b) => sizeOf(b) - sizeOf(a))
       .map((share): Bar => {
         const { rankCorrelation, sobol } = share;
+        const isOne = isSobol || share.together.length === 1;
         const text = isSobol
           ? `${(100 * sizeOf(share)).toFixed(0)} ± ${(100 * (sobol?.totalError ?? 0)).toFixed(0)} %`
-          : `${(100 * sizeOf(share)).toFixed(0)} % (${rankCorrelation! < 0 ? '' : '+'}${rankCorrelation!.toFixed(2)})`;
-        return { label: share.path, value: sizeOf(share), text, hatched: (rankCorrelation ?? 0) < 0 };
+          : !isOne
+            ? `${(100 * sizeOf(share)).toFixed(0)} % together`
+            : `${(100 * sizeOf(share)).toFixed(0)} % (${rankCorrelation! < 0 ? '' : '+'}${rankCorrelation!.toFixed(2)})`;
+        const label = isOne ? share.path : share.together.join(' with ');
+        return { label, value: sizeOf(share), text, hatched: isOne && (rankCorrelation ?? 0) < 0 };
       });
     const svg = barChart({ id: `shares-${f + 1}`, title: `What ${expression} follows`, bars, full: 1 });
     return [chartFigure(svg, shortName(expression))];
@@ -205,6 +211,6 @@ function shareCharts({ figures, options }: Uncertainty): Html {
   if (charts.length === 0) return html`<p>No figure follows any of the spreads.</p>`;
   const what = isSobol
     ? 'A bar is the share of the variance that a spread has a part in, with the others or alone.'
-    : 'A bar is the square of the rank correlation, behind it the correlation itself.';
+    : 'A bar is the share of the variance of the ranks, behind it the rank correlation; spreads that vary together have one bar. Of few samples a small share may be chance.';
   return html`<p class="note">${what} Full: the figure rises with the spread; hatched: it falls.</p>${chartGrid(charts)}`;
 }

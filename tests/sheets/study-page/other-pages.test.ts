@@ -126,7 +126,7 @@ describe('an uncertainty', async () => {
       'What was spread',
       'What becomes of the figures',
       'Share of cases below a value',
-      'What each figure follows: square of the rank correlation',
+      'What each figure follows: share of the variance of its ranks',
       'Data and use',
     ]);
     expect(page.text).toContain('32 samples of 8 spreads');

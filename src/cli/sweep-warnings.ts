@@ -1,0 +1,14 @@
+import type { Flowsheet } from '../model/flowsheet.ts';
+import type { Axis } from '../study/axis.ts';
+import { balanceAt } from '../study/balance-at.ts';
+
+/**
+ * What the first case of a sweep warns of, each in a sentence: a table of numbers says nothing of refrigeration that is not
+ * counted, or of data used outside their range. Empty where that case does not close, which its note says.
+ */
+export function firstWarnings(flowsheet: Flowsheet, axes: readonly Axis[]): string[] {
+  const first = axes.map(({ path, values }) => ({ path, value: values[0]! }));
+  const { result, diagnosis } = balanceAt(flowsheet, first, { curves: false });
+  if (diagnosis !== null) return [];
+  return [...new Set(result.warnings.map(({ where, message }) => `${where}: ${message}`))];
+}
