@@ -1,8 +1,10 @@
+import { completeSafely } from '../convergence/attempt.ts';
 import type { Closure } from '../convergence/driver.ts';
 import type { FixedPointProblem } from '../convergence/problem.ts';
 import { spectralRadius } from '../convergence/spectral-radius.ts';
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
 import { type CloseOptions, closePlant } from './close-plant.ts';
+import { heatLeft } from './heat-left.ts';
 import type { Group, Plant } from './plant.ts';
 import { createRecycleProblem } from './recycle-problem.ts';
 import { type ComponentFlows, componentFlows } from './why-flows.ts';
@@ -80,9 +82,12 @@ export function gatherFacts(
   options: CloseOptions,
 ): Facts {
   const problem = createRecycleProblem(plant, group);
+  // As it was closed: what was left out of those passes may not be possible where they stopped.
+  const asClosed = createRecycleProblem(plant, group, heatLeft(plant, group));
   const g = new Float64Array(problem.size);
   const countAt = (x: Float64Array) => {
-    problem.evaluate(x, g);
+    asClosed.evaluate(x, g);
+    completeSafely(asClosed, x.slice(), g);
     const recycle = Math.max(...group.tears.map((s) => plant.mixture.total(plant.seen[s])));
     return { flows: componentFlows(plant, group), recycle };
   };
@@ -90,7 +95,7 @@ export function gatherFacts(
   const direct = directFromFeeds(plant, group, closure, options);
   const onward = passOnward(plant, group, problem, direct.x);
   const closed = closedAsItIs(plant, group, options);
-  const radius = spectralRadius(problem, direct.x, sizes(problem, direct.x, direct.g));
+  const radius = spectralRadius(asClosed, direct.x, sizes(problem, direct.x, direct.g));
   const { flows } = countAt(direct.x);
   const patience = createPatience();
   return {
