@@ -1,3 +1,4 @@
+import { InputError } from '../diagnostics/diagnostic.ts';
 import type { Flowsheet } from '../model/flowsheet.ts';
 import type { Axis } from '../study/axis.ts';
 import { balanceAt } from '../study/balance-at.ts';
@@ -8,7 +9,13 @@ import { balanceAt } from '../study/balance-at.ts';
  */
 export function firstWarnings(flowsheet: Flowsheet, axes: readonly Axis[]): string[] {
   const first = axes.map(({ path, values }) => ({ path, value: values[0]! }));
-  const { result, diagnosis } = balanceAt(flowsheet, first, { curves: false });
-  if (diagnosis !== null) return [];
-  return [...new Set(result.warnings.map(({ where, message }) => `${where}: ${message}`))];
+  try {
+    const { result, diagnosis } = balanceAt(flowsheet, first, { curves: false });
+    if (diagnosis !== null) return [];
+    return [...new Set(result.warnings.map(({ where, message }) => `${where}: ${message}`))];
+  } catch (error) {
+    // What can enter a loop and never leave it: no case of such a sweep closes, and this is why.
+    if (error instanceof InputError) return error.diagnostics.map(({ what }) => what);
+    throw error;
+  }
 }

@@ -27,6 +27,16 @@ function table(name: string, ...words: string[]): Buffer {
 
 beforeAll(() => writeFileSync(at('loop.yaml'), reference));
 
+test('a sweep of a loop that keeps a component for ever says so, and tells each case as not closed', () => {
+  const trapped = reference.replace('bleed: 3 %', 'bleed: 0 %').replace(/^handles:[\s\S]*/m, '');
+  writeFileSync(at('trapped.yaml'), trapped);
+  const over = ['--over', 'condenser.temperature=-20 degC, 0 degC', '--out', 'trapped.csv'];
+  const { code, err } = run(['sweep', 'trapped.yaml', ...over]);
+  expect(code).toBe(3);
+  expect(err).toContain('warning, first case: Ar can enter the loop of mixer, converter');
+  expect(read('trapped.csv').toString().split('\r\n')).toHaveLength(4);
+});
+
 describe('the table', () => {
   test('has a column for each setting and expression and says how each case went', () => {
     const text = table(
