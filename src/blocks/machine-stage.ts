@@ -12,7 +12,7 @@ export interface MachineStage {
   /** h₂ = h₁ + η (h₂s − h₁); what is returned is negative */
   expand(stream: StreamState, pressurePa: number, efficiency: number): number;
   /** Suction pressure of the last run [Pa]. */
-  readonly suctionPa: number;
+  suctionPa(): number;
   /**
    * Turn the derivatives of the suction of the last run into those of its discharge, in place.
    *
@@ -105,9 +105,7 @@ export function createMachineStage(mixture: Mixture): MachineStage {
       giveWork(stream, pressurePa, work, efficiency * (ideal.temperatureK - stream.temperatureK));
       return work;
     },
-    get suctionPa() {
-      return from.pressurePa;
-    },
+    suctionPa: () => from.pressurePa,
     carrySlopes: (matrix, pressure) => ran && slopes.carry(path, matrix, pressure),
   };
 

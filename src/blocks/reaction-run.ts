@@ -59,37 +59,38 @@ export function createReactionRun(
   const constants = equilibria.map((reaction) => createLnK(reaction, idealGas));
   const reachOf = (name: string): EquilibriumReach =>
     bed.approach !== undefined || bed.fraction_of_equilibrium !== undefined ? bed : settings[name];
-  const solver = createEquilibriumSolver(
-    equilibria.map((reaction, r) => ({
-      coefficients: reaction.coefficients,
-      lnK: constants[r].lnK,
-      standardPressurePa: constants[r].standardPressurePa,
-      get approachK() {
-        return reachOf(reaction.name).approach ?? 0;
-      },
-    })),
-    gas,
-    components,
-  );
+  const approached = equilibria.map((reaction, r) => ({
+    coefficients: reaction.coefficients,
+    lnK: constants[r].lnK,
+    standardPressurePa: constants[r].standardPressurePa,
+    approachK: 0,
+  }));
+  const solver = createEquilibriumSolver(approached, gas, components);
   const setConversions = conversions.map((reaction) => ({
     name: reaction.name,
     coefficients: reaction.coefficients,
-    get conversion() {
-      return settings[reaction.name].conversion!;
-    },
+    conversion: 0,
     of: components.findIndex((c) => c.id === settings[reaction.name].of),
   }));
   const heldEquilibria = equilibria.map((reaction) => ({
     name: reaction.name,
     coefficients: reaction.coefficients,
-    get fraction() {
-      return reachOf(reaction.name).fraction_of_equilibrium ?? 1;
-    },
+    fraction: 1,
   }));
   const conversionExtents = new Float64Array(conversions.length);
   const equilibriumExtents = new Float64Array(equilibria.length);
   const converted = new Float64Array(mixture.size);
   const slopes = createReactionSlopes(mixture.size, solver, setConversions, heldEquilibria);
+
+  /** Settings can be moved between two passes. */
+  function readSettings(): void {
+    for (const one of setConversions) one.conversion = settings[one.name].conversion!;
+    for (const [r, one] of heldEquilibria.entries()) {
+      const reach = reachOf(one.name);
+      approached[r].approachK = reach.approach ?? 0;
+      one.fraction = reach.fraction_of_equilibrium ?? 1;
+    }
+  }
 
   function extents(): Record<string, number> {
     const of = (list: readonly Reaction[], values: Float64Array) =>
@@ -100,6 +101,7 @@ export function createReactionRun(
   return {
     extents,
     react(T, P, feed, product) {
+      readSettings();
       let from = feed;
       if (conversions.length > 0) {
         applyConversions(setConversions, components, feed, converted, conversionExtents);

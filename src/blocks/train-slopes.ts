@@ -25,13 +25,13 @@ export function carryAlongTrain(train: Train, size: number, matrix: Float64Array
   let byRatio = 0;
   for (const { suctionPa } of stages) {
     plain *= ratio;
-    byRatio = ratio * byRatio + suctionPa;
+    byRatio = ratio * byRatio + suctionPa();
   }
   const ratioSlope = (pressureSlope - plain) / byRatio;
   let slope = 1;
   for (let k = 0; k < stages.length; k++) {
     if (k > 0 && train.cools(k + 1)) matrix.fill(0, size * width, (size + 1) * width);
-    slope = ratio * slope + stages[k].suctionPa * ratioSlope;
+    slope = ratio * slope + stages[k].suctionPa() * ratioSlope;
     row[width - 1] = slope;
     if (!stages[k].carrySlopes(matrix, row)) return false;
   }

@@ -18,7 +18,7 @@ export function createAnderson(memory = ANDERSON_MEMORY): FixedPointMethod {
   let mixing: Float64Array;
   let used = 0;
   return {
-    name: 'anderson',
+    name: () => 'anderson',
     reset(n) {
       secants = createSecants(n, memory, ANDERSON_INDEPENDENCE);
       mixing = new Float64Array(n).fill(1);
@@ -27,6 +27,6 @@ export function createAnderson(memory = ANDERSON_MEMORY): FixedPointMethod {
       secants.record(x, g);
       used = secants.step(x, g, scale, mixing, xNext);
     },
-    note: () => (used < secants.held ? `${used} of ${secants.held} earlier passes used` : ''),
+    note: () => (used < secants.held() ? `${used} of ${secants.held()} earlier passes used` : ''),
   };
 }

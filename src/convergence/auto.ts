@@ -101,12 +101,10 @@ export function createAuto(): FixedPointMethod {
   }
 
   return {
-    get name() {
-      return passes < 2 && stages === BY_PASSES ? 'direct' : stages[stage];
-    },
-    get base() {
-      if (stages[stage] === 'newton' && newton.base) return newton.base;
-      return fromBest ? { x: xBest, g: gBest } : null;
+    name: () => (passes < 2 && stages === BY_PASSES ? 'direct' : stages[stage]),
+    base() {
+      const ofNewton = stages[stage] === 'newton' ? newton.base!() : null;
+      return ofNewton ?? (fromBest ? { x: xBest, g: gBest } : null);
     },
     reset(n, ofMap = null) {
       derivatives = ofMap;
@@ -144,7 +142,7 @@ export function createAuto(): FixedPointMethod {
         if (leading > 0 || residual > BETTER * last) sinceProgress++;
         if (sinceProgress >= patience(n)) changeOver(n, residual);
       }
-      if (derivatives !== null && stages[stage] === 'newton' && newton.isStuck)
+      if (derivatives !== null && stages[stage] === 'newton' && newton.isStuck!())
         changeOver(n, residual, 'singular derivatives');
       last = residual;
       if (passes === 1) {

@@ -57,7 +57,7 @@ export function createBroyden(): FixedPointMethod {
   }
 
   return {
-    name: 'broyden',
+    name: () => 'broyden',
     reset(n) {
       const room = (): Float64Array[] => Array.from({ length: MEMORY }, () => new Float64Array(n));
       a = room();

@@ -231,13 +231,13 @@ export function createCloser(problem: FixedPointProblem, name: MethodName): Clos
       } else if (++sinceBest >= STALL_PASSES + STALL_PASSES_EACH * n) return stop('stalled');
 
       method.next(x, g, scale, xNext);
-      madeBy = method.name;
+      madeBy = method.name();
       note = method.note();
       if (!allFinite(xNext)) {
         xNext.set(g);
         note = joined(note, 'the step was not a finite number: the direct step');
       }
-      const from = method.base ?? { x, g };
+      const from = method.base?.() ?? { x, g };
       const held = keepWithinBounds(problem, from.x, from.g, xNext);
       if (held > 0) note = joined(note, `${held} held at the bounds of a step`);
       x.set(xNext);

@@ -17,7 +17,7 @@ export function createEigenvalue(): FixedPointMethod {
   let sinceLeap = 0;
   let note = '';
   return {
-    name: 'eigenvalue',
+    name: () => 'eigenvalue',
     reset(n) {
       before = new Float64Array(n);
       sinceLeap = 0;

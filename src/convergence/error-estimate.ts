@@ -58,8 +58,8 @@ export function createErrorEstimate(n: number): ErrorEstimate {
       let most = residual;
       if (!Number.isNaN(known)) {
         most = Math.max(residual, known);
-        if (secants.held > 0) lookForAnswer(x, g, scale);
-      } else if (secants.held === 0) most = residual / SLOWEST;
+        if (secants.held() > 0) lookForAnswer(x, g, scale);
+      } else if (secants.held() === 0) most = residual / SLOWEST;
       else {
         secants.step(x, g, scale, mixing, xStar);
         for (let i = 0; i < n; i++) most = Math.max(most, Math.abs(xStar[i] - x[i]) / scale[i]);

@@ -14,7 +14,7 @@ export function wordsOf(note: Note): string {
  */
 export interface FixedPointMethod {
   /** as it appears in the trace; `auto` gives the method it is using at the moment */
-  readonly name: string;
+  name(): string;
   /**
    * Forget everything and make room for n variables.
    *
@@ -35,14 +35,14 @@ export interface FixedPointMethod {
    */
   next(x: Float64Array, g: Float64Array, scale: Float64Array, xNext: Float64Array): void;
   /** Guess and answer that the next guess starts from, where they are not those just handed in. */
-  readonly base?: { readonly x: Float64Array; readonly g: Float64Array } | null;
+  base?(): { readonly x: Float64Array; readonly g: Float64Array } | null;
   /**
    * The largest scaled distance of a guess from the fixed point, as the method's derivatives see it [-]; NaN where it has
    * none, Infinity where they are singular.
    */
   distance?(x: Float64Array, g: Float64Array, scale: Float64Array): number;
   /** It cannot do more than direct steps here. */
-  readonly isStuck?: boolean;
+  isStuck?(): boolean;
   /** What it did in the last call and why; empty when nothing is worth saying. */
   note(): Note;
 }

@@ -247,10 +247,8 @@ export function createNewton(): FixedPointMethod {
   }
 
   return {
-    name: 'newton',
-    get base() {
-      return phase === 'begin' ? null : base;
-    },
+    name: () => 'newton',
+    base: () => (phase === 'begin' ? null : base),
     reset(variables, ofMap = null) {
       if (variables !== n) makeRoom(variables);
       derivatives = ofMap;
@@ -263,9 +261,7 @@ export function createNewton(): FixedPointMethod {
       phase = 'begin';
       note = '';
     },
-    get isStuck() {
-      return singular >= SINGULAR_TIMES;
-    },
+    isStuck: () => singular >= SINGULAR_TIMES,
     resume() {
       if (phase !== 'step') return false;
       phase = 'kept';

@@ -1,7 +1,7 @@
 /** The last few differences of guess and residual: a model of how the residual answers to a step. */
 export interface Secants {
   /** pairs of differences held */
-  readonly held: number;
+  held(): number;
   /** Forget the differences and the last point. */
   clear(): void;
   /** Take in a point; from the second one on, a pair of differences is held. */
@@ -120,9 +120,7 @@ export function createSecants(n: number, memory: number, independence: number): 
   }
 
   return {
-    get held() {
-      return held;
-    },
+    held: () => held,
     clear() {
       points = 0;
       held = 0;

@@ -17,7 +17,7 @@ export function createWegstein(): FixedPointMethod {
   let gPrev = new Float64Array(0);
   let passes = 0;
   return {
-    name: 'wegstein',
+    name: () => 'wegstein',
     reset(n) {
       xPrev = new Float64Array(n);
       gPrev = new Float64Array(n);

@@ -49,13 +49,15 @@ export interface CaseRunner {
 /** Make a flowsheet ready for many cases: one plant is kept and moved, and only what is recorded is read out of it. */
 export function createCaseRunner(flowsheet: Flowsheet, options: CaseRunnerOptions): CaseRunner {
   const { settings, record } = options;
-  const close: CloseOptions = {
+  const cold: CloseOptions = {
     method: options.method ?? flowsheet.solve.method,
     tolerance: options.tolerance ?? flowsheet.solve.tolerance,
     maxPasses: options.maxPasses ?? flowsheet.solve.maxPasses,
+    warm: false,
   };
+  const near: CloseOptions = { ...cold, maxPasses: Math.min(cold.maxPasses, WARM_PASSES), warm: true };
   let plant = createPlant(flowsheet);
-  let reading = createPlantScope(plant);
+  const reading = createPlantScope(plant);
   const { aims } = flowsheet;
   const size = tearSize(plant);
   /** the torn streams, then the settings that the aims of the file move */
@@ -68,7 +70,7 @@ export function createCaseRunner(flowsheet: Flowsheet, options: CaseRunnerOption
   function renew(values: ArrayLike<number>): void {
     if (!untouched) {
       plant = plant.renewed();
-      reading = createPlantScope(plant);
+      reading.refresh(plant);
     }
     move(values);
   }
@@ -94,10 +96,9 @@ export function createCaseRunner(flowsheet: Flowsheet, options: CaseRunnerOption
     prediction.add(values, answer);
   }
 
-  function attempt(warm: boolean): Attempt {
+  function attempt(close: CloseOptions): Attempt {
     try {
-      const maxPasses = warm ? Math.min(close.maxPasses, WARM_PASSES) : close.maxPasses;
-      const { closure, missed } = closeOnce(plant, { ...close, maxPasses, warm });
+      const { closure, missed } = closeOnce(plant, close);
       reading.refresh();
       if (!closure.converged) return failed(closure.passes, whyNot(closure));
       const [fault] = faultDiagnostics(plant, reading.reportOf);
@@ -121,13 +122,13 @@ export function createCaseRunner(flowsheet: Flowsheet, options: CaseRunnerOption
       if (foreseen) {
         move(values);
         startFromForeseen();
-        end = attempt(true);
+        end = attempt(near);
       }
       if (!end.closed) {
         spent = end.passes;
         renew(values);
         untouched = false;
-        end = attempt(false);
+        end = attempt(cold);
       }
       const converged = end.closed && end.note === '';
       if (end.closed) remember(values);

@@ -40,21 +40,8 @@ export function closePlant(plant: Plant, options: CloseOptions): PlantClosure {
   let passes = 1;
   let residual = 0;
 
-  const outcome = (failure: PlantClosure['failure']): PlantClosure => {
-    let history: TraceEntry[] | null = null;
-    return {
-      converged: failure === null,
-      method: options.method,
-      passes,
-      residual,
-      failure,
-      // Worked out when the trace is read: a study reads none.
-      get history() {
-        history ??= closed.flatMap(traceOf);
-        return history;
-      },
-    };
-  };
+  const outcome = (failure: PlantClosure['failure']) =>
+    new Outcome(options.method, passes, residual, failure, closed);
 
   for (const group of plant.groups) {
     if (group.tears.length === 0) {
@@ -74,6 +61,40 @@ export function closePlant(plant: Plant, options: CloseOptions): PlantClosure {
     if (!closure.converged) return outcome({ group, closure, trouble: closure.trouble, names });
   }
   return outcome(null);
+}
+
+/**
+ * The trace is worked out when it is read: a study reads none. A class, for a getter of an object literal is kept with a
+ * hidden class of its own, made anew each time among the old objects, from where it holds on to the whole closing.
+ */
+class Outcome implements PlantClosure {
+  readonly converged: boolean;
+  readonly method: MethodName;
+  readonly passes: number;
+  readonly residual: number;
+  readonly failure: PlantClosure['failure'];
+  readonly #closed: readonly ClosedGroup[];
+  #history: TraceEntry[] | null = null;
+
+  constructor(
+    method: MethodName,
+    passes: number,
+    residual: number,
+    failure: PlantClosure['failure'],
+    closed: readonly ClosedGroup[],
+  ) {
+    this.converged = failure === null;
+    this.method = method;
+    this.passes = passes;
+    this.residual = residual;
+    this.failure = failure;
+    this.#closed = closed;
+  }
+
+  get history(): readonly TraceEntry[] {
+    this.#history ??= this.#closed.flatMap(traceOf);
+    return this.#history;
+  }
 }
 
 interface ClosedGroup {

@@ -1,5 +1,4 @@
 import type { BlockReport } from '../blocks/block.ts';
-import type { StreamState } from '../model/stream.ts';
 import { figureReaders } from './figures.ts';
 import { count } from './ledger.ts';
 import type { Plant } from './plant.ts';
@@ -18,48 +17,54 @@ export interface PlantScope {
   readonly scope: Readonly<Record<string, unknown>>;
   /** what a block says of the last pass */
   readonly reportOf: (block: number) => BlockReport;
-  /** to be called when the plant has been calculated again */
-  refresh(): void;
+  /**
+   * To be called when the plant has been calculated again.
+   *
+   * @param renewed  the plant to read from now on, where it has been renewed (`Plant.renewed`)
+   */
+  refresh(renewed?: Plant): void;
 }
 
 /** @param known  what the blocks say, when that has been asked already; good until `refresh` */
-export function createPlantScope(plant: Plant, known?: readonly BlockReport[]): PlantScope {
-  const { flowsheet, mixture } = plant;
+export function createPlantScope(first: Plant, known?: readonly BlockReport[]): PlantScope {
+  const { flowsheet, mixture, blocks } = first;
+  let plant = first;
   const forget: (() => void)[] = [];
-  const kept = <T>(work: () => T, first?: T): (() => T) => {
-    let value = first;
+  const kept = <T>(work: () => T, before?: T): (() => T) => {
+    let value = before;
     forget.push(() => {
       value = undefined;
     });
     return () => (value ??= work());
   };
-  const byBlock = plant.units.map((unit, b) =>
-    kept(() => unit.report(plant.inlets[b], plant.outlets[b]), known?.[b]),
+  const byBlock = blocks.map((_, b) =>
+    kept(() => plant.units[b]!.report(plant.inlets[b]!, plant.outlets[b]!), known?.[b]),
   );
   const reportOf = (b: number) => byBlock[b]!();
   const reports = kept(() => byBlock.map((report) => report()));
   const source = { plant, tallied: kept(() => count(plant)), reports };
   const ids = mixture.components.map((c) => c.id);
 
-  function streamScope(state: StreamState): object {
-    const flows = state.flowsMolPerS;
-    const kgPerH = (i: number) => flows[i]! * KMOL_H * 1e3 * mixture.components[i]!.molarMassKgPerMol;
+  function streamScope(s: number): object {
+    const state = () => plant.streams[s]!;
+    const flow = (i: number) => state().flowsMolPerS[i]!;
+    const kgPerH = (i: number) => flow(i) * KMOL_H * 1e3 * mixture.components[i]!.molarMassKgPerMol;
     const share = (part: number, whole: number) => (whole > 0 ? part / whole : 0);
     const byComponent = (value: (i: number) => number) => {
       const parts = getters(ids.map((id, i) => [id, () => value(i)]));
       return () => parts;
     };
     return getters([
-      ['n', byComponent((i) => flows[i]! * KMOL_H)],
-      ['y', byComponent((i) => share(flows[i]!, mixture.total(state)))],
+      ['n', byComponent((i) => flow(i) * KMOL_H)],
+      ['y', byComponent((i) => share(flow(i), mixture.total(state())))],
       ['m', byComponent(kgPerH)],
-      ['w', byComponent((i) => share(kgPerH(i), mixture.mass(state) * 3600))],
-      ['T', () => state.temperatureK],
-      ['P', () => state.pressurePa / 1e5],
-      ['flow', () => mixture.total(state) * KMOL_H],
-      ['mass', () => mixture.mass(state) * 3600],
-      ['vapour_fraction', () => state.vapourFraction],
-      ['enthalpy', () => state.enthalpyW / 1e3],
+      ['w', byComponent((i) => share(kgPerH(i), mixture.mass(state()) * 3600))],
+      ['T', () => state().temperatureK],
+      ['P', () => state().pressurePa / 1e5],
+      ['flow', () => mixture.total(state()) * KMOL_H],
+      ['mass', () => mixture.mass(state()) * 3600],
+      ['vapour_fraction', () => state().vapourFraction],
+      ['enthalpy', () => state().enthalpyW / 1e3],
     ]);
   }
 
@@ -69,8 +74,8 @@ export function createPlantScope(plant: Plant, known?: readonly BlockReport[]): 
   };
   const user = getters(flowsheet.figures.map(({ name, formula }) => [name, () => formula.evaluate(scope)]));
   const scope: Readonly<Record<string, unknown>> = {
-    streams: Object.fromEntries(flowsheet.streams.map(({ tag }, s) => [tag, streamScope(plant.streams[s]!)])),
-    blocks: getters(plant.blocks.map(({ name }, b) => [name, kept(() => blockScope(b))])),
+    streams: Object.fromEntries(flowsheet.streams.map(({ tag }, s) => [tag, streamScope(s)])),
+    blocks: getters(blocks.map(({ name }, b) => [name, kept(() => blockScope(b))])),
     figures: getters([
       ...Object.entries(figureReaders).map(([name, read]): [string, () => unknown] => [
         name,
@@ -82,7 +87,9 @@ export function createPlantScope(plant: Plant, known?: readonly BlockReport[]): 
   return {
     scope,
     reportOf,
-    refresh() {
+    refresh(renewed = plant) {
+      plant = renewed;
+      source.plant = renewed;
       for (const drop of forget) drop();
     },
   };
