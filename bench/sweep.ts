@@ -8,6 +8,7 @@ import { createSweeper } from '../src/study/sweep.ts';
 import { compileFormula } from '../src/units/formula.ts';
 import { column, cpuMs, median, title } from './measure.ts';
 import { FOLDER, openShipped } from './shipped.ts';
+import { speedRatio } from './take-turns.ts';
 
 const LOOP = join(FOLDER, 'reference-loop.yaml');
 const PROGRAM = 'dist/bench/command/cli.js';
@@ -67,6 +68,9 @@ async function oneThread(): Promise<void> {
 /** Rows of the small and of the large grid along the condenser temperature; each has a hundred of the purge. */
 const FEW = 100;
 const MANY = 1000;
+/** More than is done while it is watched, and what is done first: some 60,000 points of 45 bytes. */
+const ENDLESS = 9000;
+const WARM_BYTES = 2.7e6;
 
 async function command(folder: string): Promise<void> {
   const rounds: { few: Run; many: Run }[][] = [];
@@ -77,12 +81,19 @@ async function command(folder: string): Promise<void> {
     }
     rounds.push(runs);
   }
+  const turns = [1, 2].map((workers) => ({
+    args: commandOf(ENDLESS, workers),
+    out: join(folder, `turns-${workers}.csv`),
+  }));
+  const steady = await speedRatio(turns[0]!, turns[1]!, WARM_BYTES);
+  console.log(
+    `${column(steady, 8)}  times as many cases a second with two workers as with one, both warmed up and taking turns`,
+  );
   const gain = (ms: (runs: { few: Run; many: Run }) => number) =>
     column(median(rounds.map(([one, two]) => ms(one!) / ms(two!))), 8);
   console.log(
-    `${gain(({ few, many }) => many.ms - few.ms)}  times as fast with two workers as with one, after warming up (from ${FEW * 100} to ${MANY * 100} points)`,
+    `${gain(({ many }) => many.ms)}  times as fast for ${MANY * 100} points, start and table included`,
   );
-  console.log(`${gain(({ many }) => many.ms)}  the same for ${MANY * 100} points, start and table included`);
   console.log(`${gain(({ few }) => few.ms)}  the same for ${FEW * 100} points, where starting takes longest`);
   for (const [workers, name] of ['one worker', 'two workers'].entries()) {
     const peak = (of: 'few' | 'many') =>
@@ -101,14 +112,7 @@ interface Run {
 function sweep(folder: string, count: number, workers: number): Promise<Run> {
   const began = performance.now();
   const out = join(folder, 'table.csv');
-  const over = [`condenser.temperature=${temperatures(count)}`, `purge.fractions.bleed=${PURGE}`];
-  const child = spawn(process.execPath, [
-    PROGRAM,
-    'sweep',
-    LOOP,
-    ...over.flatMap((axis) => ['--over', axis]),
-    ...['--record', RECORD.join(','), '--out', out, '--workers', String(workers), '--quiet'],
-  ]);
+  const child = spawn(process.execPath, [...commandOf(count, workers), '--out', out]);
   let peakMB = Number.NaN;
   const watch = setInterval(() => {
     peakMB = peakOf(child.pid) ?? peakMB;
@@ -120,6 +124,17 @@ function sweep(folder: string, count: number, workers: number): Promise<Run> {
       else reject(new Error(`the sweep ended with ${code}`));
     });
   });
+}
+
+function commandOf(count: number, workers: number): string[] {
+  const over = [`condenser.temperature=${temperatures(count)}`, `purge.fractions.bleed=${PURGE}`];
+  return [
+    PROGRAM,
+    'sweep',
+    LOOP,
+    ...over.flatMap((axis) => ['--over', axis]),
+    ...['--record', RECORD.join(','), '--workers', String(workers), '--quiet'],
+  ];
 }
 
 /** The high-water mark that the system keeps of a process; null where it is gone or the system keeps none. */

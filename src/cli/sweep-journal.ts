@@ -80,13 +80,14 @@ export function resumeJournal(path: string, begins: number, firstPath: number): 
 function journalOf(file: number, begins: number, from: number, firstPath: number, done: number): Journal {
   let end = from;
   let paths = done;
+  const room = createRoom();
   return {
     get paths() {
       return paths;
     },
     add(table) {
       if (table.path !== firstPath + paths) throw new Error(`path ${table.path} came out of turn`);
-      const record = encode(table);
+      const record = encode(table, room);
       writeWhole(file, record, end);
       end += record.length;
       paths++;
@@ -129,18 +130,37 @@ function checksum(path: number, body: Uint8Array): Buffer {
   return createHash('sha256').update(`${path} `).update(body).digest().subarray(0, 8);
 }
 
-function encode({ path, rows, cells, passes, converged, notes }: PathTable): Buffer {
+/** One piece of memory for record after record: as many pieces as paths would lie about until they are collected. */
+function createRoom(): (bytes: number) => Buffer {
+  let room = Buffer.alloc(0);
+  return (bytes) => {
+    if (room.length < bytes) room = Buffer.alloc(2 * bytes);
+    return room.subarray(0, bytes);
+  };
+}
+
+/** @returns a record in the room, which the next one will take */
+function encode(
+  { path, rows, cells, passes, converged, notes }: PathTable,
+  room: (bytes: number) => Buffer,
+): Buffer {
   const said = Buffer.from(
     JSON.stringify(Object.fromEntries(notes.flatMap((note, row) => (note === '' ? [] : [[row, note]])))),
   );
-  const sizes = Buffer.alloc(8);
-  sizes.writeUInt32LE(rows, 0);
-  sizes.writeUInt32LE(said.length, 4);
-  const body = Buffer.concat([sizes, bytesOf(cells), bytesOf(passes), converged, said]);
-  const head = Buffer.alloc(8);
-  head.writeUInt32LE(path, 0);
-  head.writeUInt32LE(body.length, 4);
-  return Buffer.concat([head, checksum(path, body), body]);
+  const parts = [bytesOf(cells), bytesOf(passes), converged, said];
+  const length = parts.reduce((sum, part) => sum + part.length, 8);
+  const record = room(HEAD + length);
+  record.writeUInt32LE(path, 0);
+  record.writeUInt32LE(length, 4);
+  record.writeUInt32LE(rows, HEAD);
+  record.writeUInt32LE(said.length, HEAD + 4);
+  let at = HEAD + 8;
+  for (const part of parts) {
+    record.set(part, at);
+    at += part.length;
+  }
+  record.set(checksum(path, record.subarray(HEAD)), 8);
+  return record;
 }
 
 function decode(path: number, body: Buffer): PathTable {

@@ -4,12 +4,15 @@ import { fileURLToPath } from 'node:url';
 import { Worker } from 'node:worker_threads';
 import type { PathTable } from '../study/sweep.ts';
 import { openJob, type SweepJob } from './sweep-job.ts';
+import { createSlots, type PathMade, type WorkerJob } from './sweep-slots.ts';
 
 /** Without --workers: so long the first paths are made here, and what is left must take so long to start workers [ms]. */
 const ALONE_MS = 400;
 const WORTH_MS = 1500;
 /** Paths that may be finished ahead of the one that is written next, for each worker. */
-const AHEAD = 4;
+const AHEAD = 6;
+/** Paths that a worker has before it: while it waits for its next one, it does nothing. */
+const IN_HAND = 2;
 
 /** A worker thread ended before its work did. */
 export class WorkerLost extends Error {
@@ -29,12 +32,16 @@ export interface PathsWanted {
   readonly signal?: AbortSignal | undefined;
 }
 
-/** A path leaves little behind; with the usual room for young objects each worker would take 50 MB more [MB]. */
-const YOUNG_MB = 16;
+/**
+ * Of what a path leaves behind, little lives on: with the usual room for young objects each worker would take 50 MB more, and
+ * with the usual one for old objects it would let them pile up to four times what it needs before it looks [MB].
+ */
+const HEAP = { maxYoungGenerationSizeMb: 8, maxOldGenerationSizeMb: 1000 };
 
 /**
  * Make the paths of a job and hand them over in their order, whoever finishes first.
  *
+ * @param take  what it is handed is good until it returns
  * @throws WorkerLost; the reason of the signal; what `take` throws
  */
 export async function makePaths(
@@ -79,13 +86,16 @@ function withWorkers(
   take: (table: PathTable) => void,
 ): Promise<void> {
   return new Promise((resolve, reject) => {
-    const waiting = new Map<number, PathTable>();
-    const idle: Worker[] = [];
+    const slots = createSlots(job, AHEAD * count);
+    const workerData: WorkerJob = { job, slots: AHEAD * count, memory: slots.memory };
+    const waiting = new Map<number, PathMade>();
+    /** workers, each as often as it can be given a path */
+    const ready: Worker[] = [];
     let given = from;
     let due = from;
     const workers = Array.from(
       { length: count },
-      () => new Worker(entry, { workerData: job, resourceLimits: { maxYoungGenerationSizeMb: YOUNG_MB } }),
+      () => new Worker(entry, { workerData, resourceLimits: HEAP }),
     );
     let ended = false;
     const end = (finish: () => void) => {
@@ -97,10 +107,11 @@ function withWorkers(
     const stop = () => end(() => reject(signal?.reason));
     signal?.addEventListener('abort', stop);
     const giveOut = () => {
-      while (idle.length > 0 && given < to && given < due + AHEAD * count) idle.pop()!.postMessage(given++);
+      while (ready.length > 0 && given < to && given < due + AHEAD * count)
+        ready.shift()!.postMessage(given++);
     };
+    for (let hand = 0; hand < IN_HAND; hand++) ready.push(...workers);
     for (const worker of workers) {
-      idle.push(worker);
       worker.on('error', (error: NodeJS.ErrnoException) => {
         const isMemory = error.code === 'ERR_WORKER_OUT_OF_MEMORY';
         end(() => reject(isMemory ? new WorkerLost('it ran out of memory') : error));
@@ -108,14 +119,14 @@ function withWorkers(
       worker.on('exit', (code) => {
         if (!ended) end(() => reject(new WorkerLost(`it ended by itself with code ${code}`)));
       });
-      worker.on('message', (table: PathTable) => {
+      worker.on('message', (made: PathMade) => {
         if (ended) return;
-        waiting.set(table.path, table);
-        idle.push(worker);
+        waiting.set(made.path, made);
+        ready.push(worker);
         try {
-          for (let ready = waiting.get(due); ready !== undefined; ready = waiting.get(due)) {
+          for (let next = waiting.get(due); next !== undefined; next = waiting.get(due)) {
             waiting.delete(due++);
-            take(ready);
+            take(slots.table(next));
           }
         } catch (error) {
           end(() => reject(error));

@@ -1,11 +1,12 @@
 import { parentPort, workerData } from 'node:worker_threads';
-import { openJob, type SweepJob } from './sweep-job.ts';
+import { openJob } from './sweep-job.ts';
+import { createSlots, type WorkerJob } from './sweep-slots.ts';
 
-/** A worker of a sweep: told the number of a path, it sends back the rows of it. */
+/** A worker of a sweep: told the number of a path, it puts the rows of it into the slot of that. */
 const port = parentPort!;
-const sweep = await openJob(workerData as SweepJob);
+const { job, slots: count, memory } = workerData as WorkerJob;
+const slots = createSlots(job, count, memory);
+const sweep = await openJob(job);
 port.on('message', (path: number) => {
-  const table = sweep(path);
-  const { cells, converged, passes } = table;
-  port.postMessage(table, [cells.buffer, converged.buffer, passes.buffer] as ArrayBuffer[]);
+  port.postMessage(slots.put(sweep(path)));
 });

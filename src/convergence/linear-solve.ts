@@ -34,8 +34,14 @@ export function solveInPlace(
       holder[k] = -1;
       continue;
     }
-    [row[r], row[pivot]] = [row[pivot], row[r]];
-    [b[r], b[pivot]] = [b[pivot], b[r]];
+    if (pivot !== r) {
+      const lifted = row[pivot];
+      row[pivot] = row[r];
+      row[r] = lifted;
+      const answer = b[pivot];
+      b[pivot] = b[r];
+      b[r] = answer;
+    }
     for (let i = r + 1; i < n; i++) {
       const factor = row[i][k] / row[r][k];
       if (factor === 0) continue;

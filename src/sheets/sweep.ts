@@ -12,10 +12,15 @@ export interface SweepFormat {
 export const sweepCsv: SweepFormat = {
   head: (heads) => csvLine(heads),
   rows: (table) => {
+    const width = table.cells.length / table.rows;
     let text = '';
     for (let row = 0; row < table.rows; row++) {
-      const line = [...numbersOf(table, row), closedOf(table, row), table.passes[row]!, table.notes[row]!];
-      text += csvLine(line);
+      // They have no more digits than are to be shown.
+      for (let c = row * width; c < (row + 1) * width; c++) {
+        const value = table.cells[c]!;
+        text += `${Number.isNaN(value) ? '' : value === 0 ? '0' : value},`;
+      }
+      text += `${closedOf(table, row)},${table.passes[row]!},${csvCell(table.notes[row]!)}\r\n`;
     }
     return text;
   },

@@ -2,7 +2,7 @@ import type { Flowsheet, Formula, MethodName } from '../model/flowsheet.ts';
 import { createCaseRunner } from './case-runner.ts';
 import { type Grid, indicesOf, rowsOfPath } from './grid.ts';
 
-/** Digits of what is recorded: warm starts move those behind them. */
+/** Digits of what a table holds: warm starts move those behind them. */
 const DIGITS = 12;
 
 export interface SweepPlan {
@@ -18,7 +18,7 @@ export interface SweepPlan {
 export interface PathTable {
   readonly path: number;
   readonly rows: number;
-  /** row by row: the settings in the units of their axes, then what was recorded; NaN where there is no value */
+  /** row by row: the settings in the units of their axes, then what was recorded, to 12 digits; NaN where there is no value */
   readonly cells: Float64Array;
   /** 1 where the case closed */
   readonly converged: Uint8Array;
@@ -49,6 +49,7 @@ export function createSweeper(flowsheet: Flowsheet, plan: SweepPlan): (path: num
     ...(tolerance === undefined ? {} : { tolerance }),
     ...(maxPasses === undefined ? {} : { maxPasses }),
   });
+  const numbers = axes.map((axis) => Float64Array.from(axis.numbers, rounded));
   const indices = new Int32Array(axes.length);
   const values = new Float64Array(axes.length);
   const found = new Float64Array(record.length);
@@ -65,7 +66,7 @@ export function createSweeper(flowsheet: Flowsheet, plan: SweepPlan): (path: num
       indicesOf(grid, first + row, indices);
       for (let a = 0; a < axes.length; a++) {
         values[a] = axes[a]!.values[indices[a]!]!;
-        cells[row * width + a] = axes[a]!.numbers[indices[a]!]!;
+        cells[row * width + a] = numbers[a]![indices[a]!]!;
       }
       const outcome = runner.run(values, found, { warm: k > 0 });
       converged[row] = outcome.converged ? 1 : 0;
@@ -73,13 +74,15 @@ export function createSweeper(flowsheet: Flowsheet, plan: SweepPlan): (path: num
       notes[row] = outcome.converged ? withoutValue(record, found) : outcome.note;
       for (let r = 0; r < record.length; r++) {
         const value = found[r]!;
-        cells[row * width + axes.length + r] = Number.isFinite(value)
-          ? Number(value.toPrecision(DIGITS))
-          : Number.NaN;
+        cells[row * width + axes.length + r] = Number.isFinite(value) ? rounded(value) : Number.NaN;
       }
     }
     return { path, rows: order.length, cells, converged, passes, notes };
   };
+}
+
+function rounded(value: number): number {
+  return Number(value.toPrecision(DIGITS));
 }
 
 function withoutValue(record: readonly Formula[], found: Float64Array): string {

@@ -53,7 +53,8 @@ export function balancePlant(plant: Plant, options: BalanceOptions = {}): Balanc
     return { result: tally(plant, closure, read), diagnosis: diagnose(plant, last, close) };
   // Streams that agree with one another are no answer where a block could not do as it was told.
   const [fault = null] = faultDiagnostics(plant, (b) => reports[b]!);
-  return { result: tally(plant, { ...closure, converged: fault === null }, read), diagnosis: fault };
+  const kept = fault === null ? closure : { ...closure, history: closure.history, converged: false };
+  return { result: tally(plant, kept, read), diagnosis: fault };
 }
 
 function closed(plant: Plant, options: CloseOptions) {

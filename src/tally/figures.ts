@@ -142,8 +142,8 @@ function inerts(plant: Plant): Figures['inerts'] {
       const inlet = fedTo(plant, b);
       const running = reactionsOf(plant, b);
       let idle = 0;
-      for (const [, i] of idsWhere(plant, (i) => running.every((one) => one.coefficients[i] === 0))) {
-        idle += inlet[i];
+      for (let i = 0; i < inlet.length; i++) {
+        if (running.every(({ coefficients }) => coefficients[i] === 0)) idle += inlet[i];
       }
       const all = sumOf(inlet);
       return [plant.blocks[b].name, all > 0 ? idle / all : 0];
@@ -206,5 +206,7 @@ function total(stream: StreamState): number {
 }
 
 function sumOf(flows: Float64Array): number {
-  return flows.reduce((sum, flow) => sum + flow, 0);
+  let sum = 0;
+  for (let i = 0; i < flows.length; i++) sum += flows[i];
+  return sum;
 }

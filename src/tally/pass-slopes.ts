@@ -82,15 +82,15 @@ export function createPassSlopes(plant: Plant, group: Group, left: HeatLeft | nu
       differences(step, slopes);
     }
     const only = step.ahead === null ? -1 : portOf(plant, step.block, step.ahead);
-    outlets.forEach((outlet, o) => {
-      if (only >= 0 && o !== only) return;
-      const out = moves.get(outlet)!;
+    for (let o = 0; o < outlets.length; o++) {
+      if (only >= 0 && o !== only) continue;
+      const out = moves.get(outlets[o])!;
       out.fill(0);
-      inlets.forEach((inlet, i) => {
-        const of = moves.get(inlet);
+      for (let i = 0; i < inlets.length; i++) {
+        const of = moves.get(inlets[i]);
         if (of !== undefined) addProduct(slopes.of[o][i], of, out);
-      });
-    });
+      }
+    }
   }
 
   function addProduct(slope: Float64Array, of: Float64Array, out: Float64Array): void {
@@ -161,9 +161,8 @@ export function createPassSlopes(plant: Plant, group: Group, left: HeatLeft | nu
         if (!(trouble instanceof PassTrouble)) throw trouble;
         return false;
       }
-      group.tears.forEach((s, t) => {
-        out.set(moves.get(plant.streams[s])!, t * width * columns);
-      });
+      for (let t = 0; t < group.tears.length; t++)
+        out.set(moves.get(plant.streams[group.tears[t]])!, t * width * columns);
       return true;
     },
   };

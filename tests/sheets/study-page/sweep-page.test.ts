@@ -42,7 +42,8 @@ function swept(
       rest = Math.floor(rest / numbers.length);
     }
     const values = Object.values(record).map((f) => (notes[row] === '' ? f(...settings) : Number.NaN));
-    cells.push(...settings, ...values);
+    // A table holds 12 digits.
+    cells.push(...[...settings, ...values].map((value) => Number(value.toPrecision(12))));
   }
   const path: PathTable = {
     path: 0,
