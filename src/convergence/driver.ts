@@ -42,9 +42,6 @@ export interface PassRecord {
   readonly note: string;
 }
 
-/** What a pass showed. */
-type Seen = Omit<PassRecord, 'pass' | 'method' | 'note'>;
-
 export interface Closure {
   readonly converged: boolean;
   /** why it stopped */
@@ -74,14 +71,6 @@ const STALL_PASSES = 60;
 const STALL_PASSES_EACH = 7;
 /** What an answer must be better by to count; slow direct substitution (0.01 % purge) gains 1e-4 a pass. */
 const STALL_SHARE = 1 - 1e-6;
-const failedPass: Seen = {
-  residual: NaN,
-  worst: -1,
-  error: NaN,
-  guess: NaN,
-  answer: NaN,
-  extraError: NaN,
-};
 /** Halvings of a step that makes a block fail, before the direct step is tried. */
 const HALVINGS = 5;
 
@@ -170,17 +159,18 @@ export function createCloser(problem: FixedPointProblem, name: MethodName): Clos
       };
     };
 
-    const log = (seen: Seen, remark: Note): void => {
-      const entry = new LoggedPass(history.length + 1, madeBy, seen, remark);
+    const log = (entry: LoggedPass): void => {
       history.push(entry);
       options.onPass?.(entry);
     };
+    const logFailed = (says: string): void =>
+      log(new LoggedPass(history.length + 1, madeBy, joined(note, says), NaN, -1, NaN, NaN, NaN, NaN));
 
-    for (let pass = 1; pass <= maxPasses; pass++) {
+    while (history.length < maxPasses) {
       const failure = evaluateSafely(problem, x, g);
 
       if (failure !== null) {
-        log(failedPass, joined(note, failure.says));
+        logFailed(failure.says);
         if (!hasGood || halvings > HALVINGS) return stop(failure.reason, failure.trouble);
         halvings++;
         if (halvings <= HALVINGS) {
@@ -209,14 +199,15 @@ export function createCloser(problem: FixedPointProblem, name: MethodName): Clos
       if (residual <= tolerance && error <= tolerance && extraError <= tolerance && problem.complete) {
         const failure = completeSafely(problem, x, g);
         if (failure !== null) {
-          log(failedPass, joined(note, failure.says));
+          logFailed(failure.says);
           return stop(failure.reason, failure.trouble);
         }
         xGood.set(x);
         gGood.set(g);
         extraError = problem.extraError?.() ?? 0;
       }
-      log({ residual, worst, error, guess: x[worst], answer: g[worst], extraError }, note);
+      const pass = history.length + 1;
+      log(new LoggedPass(pass, madeBy, note, residual, worst, error, x[worst], g[worst], extraError));
 
       if (residual <= tolerance && error <= tolerance && extraError <= tolerance) {
         // An estimate from the last passes may swing; what the map itself knows has the last word.
@@ -285,14 +276,24 @@ class LoggedPass implements PassRecord {
   readonly method: string;
   #note: Note;
 
-  constructor(pass: number, method: string, seen: Seen, note: Note) {
+  constructor(
+    pass: number,
+    method: string,
+    note: Note,
+    residual: number,
+    worst: number,
+    error: number,
+    guess: number,
+    answer: number,
+    extraError: number,
+  ) {
     this.pass = pass;
-    this.residual = seen.residual;
-    this.worst = seen.worst;
-    this.error = seen.error;
-    this.guess = seen.guess;
-    this.answer = seen.answer;
-    this.extraError = seen.extraError;
+    this.residual = residual;
+    this.worst = worst;
+    this.error = error;
+    this.guess = guess;
+    this.answer = answer;
+    this.extraError = extraError;
     this.method = method;
     this.#note = note;
   }

@@ -42,14 +42,28 @@ export function keyFigures(plant: Plant, tallied: Tallied, reports: readonly Blo
   return { ...(Object.fromEntries(read) as Omit<Figures, 'user'>), user: {} };
 }
 
-/** The reactions that run in a block, and per component whether it is a reactant of one, or takes no part. */
+/** The reactions that run in a block. */
 function reactionsOf(plant: Plant, block: number): readonly Reaction[] {
-  const names = plant.kinds[block].reactionsIn?.(plant.blocks[block].settings) ?? [];
-  return plant.flowsheet.reactions.filter((reaction) => names.includes(reaction.name));
+  return running(plant)[block];
 }
 
 function reactors(plant: Plant): number[] {
-  return plant.blocks.flatMap((_, b) => (reactionsOf(plant, b).length > 0 ? [b] : []));
+  return running(plant).flatMap((reactions, b) => (reactions.length > 0 ? [b] : []));
+}
+
+/** By block; which reactions it names cannot be moved, and a study asks in every case. */
+const runningIn = new WeakMap<Plant['blocks'], (readonly Reaction[])[]>();
+
+function running({ blocks, kinds, flowsheet }: Plant): (readonly Reaction[])[] {
+  let known = runningIn.get(blocks);
+  if (known === undefined) {
+    known = blocks.map(({ settings }, b) => {
+      const names = kinds[b].reactionsIn?.(settings) ?? [];
+      return flowsheet.reactions.filter((reaction) => names.includes(reaction.name));
+    });
+    runningIn.set(blocks, known);
+  }
+  return known;
 }
 
 /** All that enters a block, the cold shots of a reactor too, per component [mol/s]. */
@@ -108,14 +122,18 @@ export function yieldReaction(
   product: number,
   reactant: number,
 ): Reaction | null {
-  const share = ({ coefficients }: Reaction) => coefficients[product] / -coefficients[reactant];
-  const fitting = reactions.filter(
-    ({ coefficients }) => coefficients[product] > 0 && coefficients[reactant] < 0,
-  );
-  return fitting.reduce<Reaction | null>(
-    (best, one) => (best === null || share(one) > share(best) ? one : best),
-    null,
-  );
+  let best: Reaction | null = null;
+  let most = 0;
+  for (const reaction of reactions) {
+    const { coefficients } = reaction;
+    if (!(coefficients[product] > 0 && coefficients[reactant] < 0)) continue;
+    const share = coefficients[product] / -coefficients[reactant];
+    if (share > most) {
+      best = reaction;
+      most = share;
+    }
+  }
+  return best;
 }
 
 /** Mol that goes round per mol that is fed; null where nothing is. */
@@ -140,11 +158,8 @@ function inerts(plant: Plant): Figures['inerts'] {
   return Object.fromEntries(
     reactors(plant).map((b) => {
       const inlet = fedTo(plant, b);
-      const running = reactionsOf(plant, b);
       let idle = 0;
-      for (let i = 0; i < inlet.length; i++) {
-        if (running.every(({ coefficients }) => coefficients[i] === 0)) idle += inlet[i];
-      }
+      for (let i = 0; i < inlet.length; i++) if (!takesPart(reactionsOf(plant, b), i)) idle += inlet[i];
       const all = sumOf(inlet);
       return [plant.blocks[b].name, all > 0 ? idle / all : 0];
     }),
@@ -183,6 +198,11 @@ function powers(plant: Plant, reports: readonly BlockReport[]): Record<string, n
   const refrigeration = reports.reduce((sum, report) => sum + report.refrigerationW, 0) / 1e3;
   const sum = machines.reduce((all, [, kW]) => all + kW, refrigeration);
   return { ...Object.fromEntries(machines), refrigeration, total: sum };
+}
+
+function takesPart(reactions: readonly Reaction[], i: number): boolean {
+  for (const { coefficients } of reactions) if (coefficients[i] !== 0) return true;
+  return false;
 }
 
 function isReactant(reactions: readonly Reaction[], i: number): boolean {

@@ -8,7 +8,7 @@ import { enthalpyBasisFor } from '../properties/ideal-gas.ts';
 import { createMixture, type Mixture } from '../properties/mixture.ts';
 import { type Step, stepGraph } from './calculation-steps.ts';
 import { feedFlows } from './feed-flows.ts';
-import { moveSetting, readSetting } from './setting-path.ts';
+import { type SettingAt, settingAt } from './setting-path.ts';
 import { type Wiring, wire } from './wiring.ts';
 
 /** Blocks that are closed together: those of one recycle system, or a single block. */
@@ -138,6 +138,7 @@ function equip(frame: Frame): Plant {
   const feedNumber = new Map(feeds.map(({ name }, f) => [name, f]));
   const feedOf = wiring.enters.map((s) => feedNumber.get(flowsheet.streams[s].from.name)!);
   const settings = { blocks, feeds, ids: components.map((c) => c.id), reactions, vapourPressures };
+  const bySettingPath = new Map<string, SettingAt>();
   const entering = { flowsMolPerS: new Float64Array(components.length), enthalpyW: 0 };
 
   return {
@@ -185,8 +186,8 @@ function equip(frame: Frame): Plant {
         throw named(trouble, block);
       }
     },
-    set: (path, value) => moveSetting(path, value, settings),
-    get: (path) => readSetting(path, settings),
+    set: (path, value) => found(path).move(value),
+    get: (path) => found(path).read(),
     renewed() {
       if (vapourPressures.lnFactors.some((factor) => factor !== 0)) {
         vapourPressures.lnFactors.fill(0);
@@ -195,6 +196,15 @@ function equip(frame: Frame): Plant {
       return equip(frame);
     },
   };
+
+  function found(path: string): SettingAt {
+    let setting = bySettingPath.get(path);
+    if (setting === undefined) {
+      setting = settingAt(path, settings);
+      bySettingPath.set(path, setting);
+    }
+    return setting;
+  }
 
   function named(trouble: unknown, block: number): unknown {
     if (trouble instanceof PassTrouble) trouble.block ??= blocks[block].name;

@@ -13,55 +13,83 @@ export interface Settings {
   readonly vapourPressures: MovedVapourPressures;
 }
 
-/**
- * Move the setting at a path that the reader has checked, e.g. `purge.fractions.bleed`, `makeup.composition.Ar`, or the
- * factor on a constant (flowsheet/constants.ts).
- *
- * @param value  SI; a flow in mol/s, kg/s or normal m3/s as the file counts it
- */
-export function moveSetting(path: string, value: number, settings: Settings): void {
-  const constant = constantAt(path);
-  if (constant !== null) {
-    moveConstant(constant, value, settings);
-    return;
-  }
-  const [name, ...rest] = path.split('.');
-  const block = settings.blocks.find((b) => b.name === name);
-  if (block) {
-    const { holder, key } = leaf(block.settings, rest);
-    const present = holder[key];
-    if (isFlow(present)) holder[key] = { ...present, value };
-    else holder[key] = value;
-    return;
-  }
-  const f = settings.feeds.findIndex((feed) => feed.name === name);
-  const feed = settings.feeds[f];
-  if (!feed) throw new Error(`no block or feed ${name} in setting path ${path}`);
-  const [field, id] = rest;
-  if (field === 'temperature') settings.feeds[f] = { ...feed, temperatureK: value };
-  else if (field === 'pressure') settings.feeds[f] = { ...feed, pressurePa: value };
-  else if (field === 'flow' && feed.flow) settings.feeds[f] = { ...feed, flow: { ...feed.flow, value } };
-  else feed.parts[settings.ids.indexOf(id!)] = value;
+/** One setting of a plant, found by its path. */
+export interface SettingAt {
+  /** the number, undefined where the setting is left to its default */
+  read(): number | undefined;
+  /** @param value  SI; a flow in mol/s, kg/s or normal m3/s as the file counts it */
+  move(value: number): void;
 }
 
-/** The number at a path, undefined where the setting is left to its default. */
-export function readSetting(path: string, settings: Settings): number | undefined {
+/**
+ * The setting at a path that the reader has checked, e.g. `purge.fractions.bleed`, `makeup.composition.Ar`, or the factor
+ * on a constant (flowsheet/constants.ts).
+ */
+export function settingAt(path: string, settings: Settings): SettingAt {
   const constant = constantAt(path);
-  if (constant !== null) return Math.exp(lnFactorOf(constant, settings));
+  if (constant !== null) {
+    return {
+      read: () => Math.exp(lnFactorOf(constant, settings)),
+      move: (value) => moveConstant(constant, value, settings),
+    };
+  }
   const [name, ...rest] = path.split('.');
   const block = settings.blocks.find((b) => b.name === name);
-  if (block) {
-    const { holder, key } = leaf(block.settings, rest);
-    const present = holder[key];
-    if (isFlow(present)) return present.value;
-    return typeof present === 'number' ? present : undefined;
+  if (block) return ofBlock(block, rest);
+  const f = settings.feeds.findIndex((feed) => feed.name === name);
+  if (f < 0) throw new Error(`no block or feed ${name} in setting path ${path}`);
+  return ofFeed(settings, f, rest);
+}
+
+function ofBlock(block: BlockSpec, keys: readonly string[]): SettingAt {
+  const { holder, key } = leaf(block.settings, keys);
+  return {
+    read() {
+      const present = holder[key];
+      if (isFlow(present)) return present.value;
+      return typeof present === 'number' ? present : undefined;
+    },
+    move(value) {
+      const present = holder[key];
+      holder[key] = isFlow(present) ? { ...present, value } : value;
+    },
+  };
+}
+
+function ofFeed({ feeds, ids }: Settings, f: number, [field, id]: readonly string[]): SettingAt {
+  switch (field) {
+    case 'temperature':
+      return {
+        read: () => feeds[f]!.temperatureK,
+        move(value) {
+          feeds[f] = { ...feeds[f]!, temperatureK: value };
+        },
+      };
+    case 'pressure':
+      return {
+        read: () => feeds[f]!.pressurePa,
+        move(value) {
+          feeds[f] = { ...feeds[f]!, pressurePa: value };
+        },
+      };
+    case 'flow':
+      return {
+        read: () => feeds[f]!.flow?.value,
+        move(value) {
+          const feed = feeds[f]!;
+          feeds[f] = { ...feed, flow: { ...feed.flow!, value } };
+        },
+      };
+    default: {
+      const i = ids.indexOf(id!);
+      return {
+        read: () => feeds[f]!.parts[i],
+        move(value) {
+          feeds[f]!.parts[i] = value;
+        },
+      };
+    }
   }
-  const feed = settings.feeds.find((one) => one.name === name);
-  const [field, id] = rest;
-  if (field === 'temperature') return feed?.temperatureK;
-  if (field === 'pressure') return feed?.pressurePa;
-  if (field === 'flow') return feed?.flow?.value;
-  return feed?.parts[settings.ids.indexOf(id!)];
 }
 
 function moveConstant({ of, name }: ConstantPath, value: number, settings: Settings): void {
