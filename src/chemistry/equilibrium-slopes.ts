@@ -160,7 +160,8 @@ export function createEquilibriumSlopes(rows: ReactionRows, activity: GasActivit
       }
       if (!solveLinear(matrix, count - first, columns)) return false;
       spread(first, byFeed, extents);
-      return byFeed.every(Number.isFinite);
+      for (let i = 0; i < byFeed.length; i++) if (!Number.isFinite(byFeed[i])) return false;
+      return true;
     },
   };
 }
