@@ -1,9 +1,8 @@
 import { formulaRoots, misnamed, nearestName, worldOf } from '../flowsheet/formula-scope.ts';
 import type { Flowsheet } from '../model/flowsheet.ts';
-import { createCaseRunner } from '../study/case-runner.ts';
-import { createPlantScope } from '../tally/scope.ts';
 import { compileFormula, type FormulaName } from '../units/formula.ts';
 import { type UsageFault, usageRefusals } from './refusal.ts';
+import type { FirstCase } from './sweep-first-case.ts';
 
 /** Expressions of `--record A,B --record C`, a comma inside brackets aside; each with the word it stands in. */
 function expressionsOf(words: readonly string[]) {
@@ -82,21 +81,13 @@ export function usualRecord({ ledger, figures }: Flowsheet): string[] {
  *
  * @throws Refusal
  */
-export function checkDetails(
-  flowsheet: Flowsheet,
-  record: readonly string[],
-  first: readonly { readonly path: string; readonly value: number }[],
-): void {
+export function checkDetails(record: readonly string[], scope: FirstCase['scope']): void {
+  if (scope === null) return;
   const named = record.flatMap((text) => {
     const formula = compileFormula(text, formulaRoots);
     const names = formula.ok ? formula.names : [];
     return names.filter(({ parts }) => parts[0] === 'blocks').map((name) => ({ text, name }));
   });
-  if (named.length === 0) return;
-  const runner = createCaseRunner(flowsheet, { settings: first.map(({ path }) => path), record: [] });
-  const values = first.map(({ value }) => value);
-  if (!runner.run(values, new Float64Array(0)).converged) return;
-  const { scope } = createPlantScope(runner.plant);
   const faults = named.flatMap(({ text, name }) => faultOf(text, name, scope));
   if (faults.length > 0) throw usageRefusals(faults);
 }

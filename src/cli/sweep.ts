@@ -12,6 +12,7 @@ import { aboutSource, commandLine, type Source, usageRefusal } from './refusal.t
 import { balanceOptions, withSolveOptions } from './solve.ts';
 import { Stopped, stoppable, tellStopped } from './stop-signals.ts';
 import { checkPageRows, isPage } from './study-page.ts';
+import { closeFirstCase } from './sweep-first-case.ts';
 import { planOf, type SweepJob } from './sweep-job.ts';
 import { noPageOfPart } from './sweep-page.ts';
 import { type AxisWanted, planAxes, typedAxes } from './sweep-plan.ts';
@@ -30,7 +31,6 @@ import {
   type Tallied,
 } from './sweep-run.ts';
 import { toFile } from './sweep-to-file.ts';
-import { firstWarnings } from './sweep-warnings.ts';
 import { tableKind, tableKinds } from './table-file.ts';
 import { say } from './terminal.ts';
 import { checkOutputs } from './write-files.ts';
@@ -92,13 +92,8 @@ async function runSweep(file: string, options: SweepOptions): Promise<void> {
   const grid = createGrid(axes);
   checkPart(part, grid);
   if (isPage(out)) checkPageRows(grid.size, out!);
-  aboutSource(source, () =>
-    checkDetails(
-      flowsheet,
-      record,
-      axes.map(({ path, values }) => ({ path, value: values[0]! })),
-    ),
-  );
+  const first = closeFirstCase(flowsheet, axes, balanceOptions(options));
+  aboutSource(source, () => checkDetails(record, first.scope));
   const [from, to] = pathsOfPart(grid, part.part, part.of);
   const isWhole = part.of === 1;
   const columns = [
@@ -117,7 +112,7 @@ async function runSweep(file: string, options: SweepOptions): Promise<void> {
     to,
     part,
     reading,
-    warnings: options.quiet && !isPage(out) ? [] : firstWarnings(flowsheet, axes),
+    warnings: first.warnings,
     options,
   };
   const tallied = out === undefined ? await toStandardOutput(run) : await toFile({ ...run, out });
