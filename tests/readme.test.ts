@@ -58,6 +58,30 @@ describe('README', () => {
   );
 });
 
+describe('the flowsheet that README shows', () => {
+  const [flowsheet, ...pieces] = filePieces(page);
+
+  test('is accepted with nothing to say, and so is every piece shown later when it is put at its end', () => {
+    expect(pieces.map((piece) => /^\w+/.exec(piece)?.[0])).toEqual(
+      expect.arrayContaining(['ledger', 'prices', 'study', 'handles', 'spreads']),
+    );
+    for (const [k, piece] of ['', ...pieces].entries()) {
+      const name = `shown-${k}.yaml`;
+      writeFileSync(join(cli.folder(), name), `${flowsheet}\n${piece}`);
+      const { code, err } = shell(`looptally check ${name}`);
+      expect({ piece, code, err }).toEqual({ piece, code: 0, err: '' });
+    }
+  });
+
+  test('is swept by the study shown', () => {
+    const { code, out } = shell(
+      `looptally sweep shown-${1 + pieces.findIndex((piece) => piece.startsWith('study:'))}.yaml`,
+    );
+    expect(code).toBe(0);
+    expect(out).toContain('the recycle ratio is');
+  });
+});
+
 describe('a page of our own', () => {
   const own = [
     'Text with `looptally nonsense` in it.',
@@ -140,6 +164,12 @@ describe('a page of our own', () => {
     expect(() => between('<!-- deviations: begin -->', deviationMarks)).toThrow('deviations: end');
   });
 });
+
+/** The first block of a page is a whole flowsheet; those behind it that are no file of their own are pieces of it. */
+function filePieces(text: string): string[] {
+  const all = [...text.matchAll(/^```yaml\n([\s\S]*?)^```$/gm)].map(([, inside]) => inside!);
+  return all.filter((inside, k) => k === 0 || !/^looptally:/m.test(inside));
+}
 
 interface Command {
   readonly text: string;

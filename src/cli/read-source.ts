@@ -97,7 +97,7 @@ function tooLarge(name: string, bytes: Uint8Array, maxBytes: number): Refusal {
         severity: 'error',
         where,
         what: `${name} is larger than ${sizeText(maxBytes)}.`,
-        why: 'a plant of 2,000 blocks takes less than half a MiB; this is probably another kind of file',
+        why: 'a plant of 2,000 blocks takes some 0.2 MiB; this is probably another kind of file',
         mend: `name the flowsheet itself${more > maxBytes ? `, or allow more: --max-size '${sizeText(more)}'` : ''}`,
       },
     ],

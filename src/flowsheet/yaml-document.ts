@@ -28,7 +28,7 @@ export function readYaml(text: string, file: string, maxBytes: number = limits.b
   if (bytes > maxBytes) {
     const where = { file, line: 1, column: 1, length: 1 };
     const what = `the file is larger than ${sizeText(maxBytes)}.`;
-    const why = `it has ${bytes} bytes; a plant of 2,000 blocks takes less than half a MiB`;
+    const why = `it has ${bytes} bytes; a plant of 2,000 blocks takes some 0.2 MiB`;
     return failed(
       trouble('file-too-large', where, what, why, 'name the flowsheet itself, or allow a larger file'),
     );

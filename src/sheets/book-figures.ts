@@ -5,6 +5,7 @@ import type { Figures, Result } from '../model/result.ts';
 import { yieldReaction } from '../tally/figures.ts';
 import type { Closed, ClosureCells } from './book-closure.ts';
 import { figureDisplay } from './figure-display.ts';
+import { isWithoutPower } from './no-power.ts';
 import { plainText } from './plain.ts';
 import { feedStreams } from './story.ts';
 import { heads, looks, number, ownFormat, text, unitHeads } from './xlsx-looks.ts';
@@ -187,7 +188,7 @@ function powers(context: FigureContext, production: Term | null): void {
   const sum = { term: total(range), expected: power_kW['total'] ?? 0 };
   const all = write(context, 'power', 'total', 'kW', sum, 'power_total');
   const specific =
-    specific_power_kWh_t === null || production === null
+    specific_power_kWh_t === null || production === null || isWithoutPower(result.figures)
       ? null
       : { term: over(times(constant(24), all!), production), expected: specific_power_kWh_t };
   write(context, 'specific power', '', 'kWh/t', specific, 'specific_power');

@@ -2,6 +2,7 @@ import type { Flowsheet } from '../model/flowsheet.ts';
 import type { Result } from '../model/result.ts';
 import { planFlowsheet } from '../tally/plan.ts';
 import { caution, dangersOf } from './cautions.ts';
+import { unlistedPasses } from './trace.ts';
 import { heightOf } from './xlsx-head.ts';
 import { heads, looks, number, text, unitHeads } from './xlsx-looks.ts';
 import { type Page, put } from './xlsx-model.ts';
@@ -34,6 +35,11 @@ export function fillTrace(page: Page, { convergence }: Result): void {
       text(note, looks.remark),
     ]);
     page.heights.set(row, heightOf(note, page.widths[4]!));
+  }
+  const unlisted = unlistedPasses(convergence.history);
+  if (unlisted !== '') {
+    const row = put(page, [null, null, null, null, text(unlisted, looks.remark)]);
+    page.heights.set(row, heightOf(unlisted, page.widths[4]!));
   }
   if (convergence.history.length === 0) put(page, [null, null, text('nothing had to be closed')]);
 }

@@ -1,3 +1,4 @@
+import type { Flowsheet } from '../model/flowsheet.ts';
 import type { Result } from '../model/result.ts';
 
 /** What every sheet must say, whatever it is of. */
@@ -38,20 +39,36 @@ const ofComponents: readonly (readonly [components: readonly string[], words: st
 /** The dangers of what is in a result, one sentence or two each: its components, its pressure, its catalyst. */
 export function dangersOf({ ledger, streams, blocks }: Result): string[] {
   const bar = Math.max(0, ...Object.values(streams).map(({ pressure_bar }) => pressure_bar));
-  const isCatalytic = Object.values(blocks).some(({ kind }) => kind === 'reactor' || kind === 'kinetic_bed');
+  const isCatalytic = Object.values(blocks).some(holdsCatalyst);
   return [
-    ...ofComponents.flatMap(([ids, words]) => (ids.some((id) => id in ledger) ? [words] : [])),
+    ...dangersOfComponents(Object.keys(ledger)),
     ...(bar >= HIGH_PRESSURE
       ? [
           `Gas at ${bar.toFixed(0)} bar holds the energy of an explosion; a leak cuts, and relief is not looked at here.`,
         ]
       : []),
-    ...(isCatalytic
-      ? [
-          'Reduced catalyst catches fire in air by itself; carbon, poisons and runaway are the business of its maker and of the plant.',
-        ]
-      : []),
+    ...(isCatalytic ? [ofCatalyst] : []),
   ];
+}
+
+/** The dangers of what flowsheets are about, where there is no one result to tell the pressure of. */
+export function dangersOfAll(flowsheets: readonly Flowsheet[]): string[] {
+  const isCatalytic = flowsheets.some(({ blocks }) => blocks.some(holdsCatalyst));
+  return [
+    ...dangersOfComponents(flowsheets.flatMap(({ components }) => components.map(({ id }) => id))),
+    ...(isCatalytic ? [ofCatalyst] : []),
+  ];
+}
+
+const ofCatalyst =
+  'Reduced catalyst catches fire in air by itself; carbon, poisons and runaway are the business of its maker and of the plant.';
+
+function holdsCatalyst({ kind }: { readonly kind: string }): boolean {
+  return kind === 'reactor' || kind === 'kinetic_bed';
+}
+
+function dangersOfComponents(present: readonly string[]): string[] {
+  return ofComponents.flatMap(([ids, words]) => (ids.some((id) => present.includes(id)) ? [words] : []));
 }
 
 /** Who made a sheet. @param version  left out: not said */

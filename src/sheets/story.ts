@@ -1,4 +1,5 @@
 import type { Result, StreamResult } from '../model/result.ts';
+import { isWithoutPower } from './no-power.ts';
 import { fixed, percent, significant } from './numbers.ts';
 import { plainText } from './plain.ts';
 import type { SheetOptions } from './sheet.ts';
@@ -125,7 +126,7 @@ function power(result: Result): StoryLine[] {
   const parts = Object.entries(machines)
     .filter(([name, value]) => value !== 0 || name !== 'refrigeration')
     .map(([name, value]) => `${plainText(name)} ${significant(value)}`);
-  if (parts.length === 0 && !total) return [{ label: 'Power', text: 'none' }];
+  if (isWithoutPower(result.figures)) return [{ label: 'Power', text: 'none' }];
   const sum = total ?? Object.values(machines).reduce((a, b) => a + b, 0);
   const lines = listed('Power', `${significant(sum)} kW`, parts, ': ');
   const specific = result.figures.specific_power_kWh_t;

@@ -76,7 +76,7 @@ function spreadLines({ spreads, flowsheet }: Uncertainty): string[] {
 export function cutNotes({ spread, setting, distribution }: DrawnSpread): string[] {
   const { low, high } = setting.bounds;
   const note = (share: number, side: string, bound: number) =>
-    share < 1e-12
+    share === 0
       ? []
       : [
           `${spread.path} is cut off ${side} ${valueText(setting, bound)}: ${significant(100 * share, 2)} % of it lay beyond.`,

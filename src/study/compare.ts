@@ -73,11 +73,37 @@ export function compare(
 }
 
 function settingRows(lists: readonly Map<string, SettingValue>[]): SettingRow[] {
-  return unionOfKeys(lists)
+  const rows = unionOfKeys(lists)
     .map((path) => ({ path, values: lists.map((list) => list.get(path) ?? null) }))
     .filter(({ values }) => values.some((value) => !isSame(value, values[0]!)))
     .filter((row, _, rows) => !onlySaysThatABlockIsThere(row, rows));
+  const unmatched = rows.filter(isUnmatchedStream);
+  return rows.flatMap((row) => {
+    if (!unmatched.includes(row)) return [row];
+    return row === unmatched[0] ? [countOfStreams(lists)] : [];
+  });
 }
+
+/** A stream whose tag not all columns have: mostly one that was numbered otherwise, which one line is enough for. */
+function isUnmatchedStream({ path, values }: SettingRow): boolean {
+  return path.startsWith(STREAM) && values.includes(null);
+}
+
+/** How many streams each column has, and how many of them the first has not and the other way about. */
+function countOfStreams(lists: readonly Map<string, SettingValue>[]): SettingRow {
+  const [first, ...others] = lists.map((list) => [...list.keys()].filter((path) => path.startsWith(STREAM)));
+  const texts = others.map((tags) => {
+    const more = tags.filter((tag) => !first.includes(tag)).length;
+    const fewer = first.filter((tag) => !tags.includes(tag)).length;
+    return more + fewer === 0 ? `${tags.length}` : `${tags.length}: ${more} new, ${fewer} gone`;
+  });
+  return {
+    path: 'streams (by tag)',
+    values: [`${first.length}`, ...texts].map((text): SettingValue => ({ kind: 'text', text })),
+  };
+}
+
+const STREAM = 'streams.';
 
 /** The kind of a block that not all files have says no more than its settings do, where it has any. */
 function onlySaysThatABlockIsThere({ path, values }: SettingRow, rows: readonly SettingRow[]): boolean {

@@ -16,16 +16,21 @@ export interface Distribution {
   readonly cutAbove: number;
 }
 
+/** No number of samples shows that a share below this was cut off: it counts as none. */
+const NO_SHARE = 1e-12;
+
 /** Cut a shape off at the bounds of its setting. */
 export function createDistribution(shape: Shape, { low, high }: Bounds): Distribution {
   const { share, quantile } = functionsOf(shape);
-  const cutBelow = low === Number.NEGATIVE_INFINITY ? 0 : share(low);
-  const upTo = high === Number.POSITIVE_INFINITY ? 1 : share(high);
-  const kept = upTo - cutBelow;
+  const below = low === Number.NEGATIVE_INFINITY ? 0 : share(low);
+  const cutBelow = below < NO_SHARE ? 0 : below;
+  const above = high === Number.POSITIVE_INFINITY ? 0 : 1 - share(high);
+  const cutAbove = above < NO_SHARE ? 0 : above;
+  const kept = 1 - cutAbove - cutBelow;
   return {
     quantile: (u) => Math.min(Math.max(quantile(cutBelow + u * kept), low), high),
     cutBelow,
-    cutAbove: 1 - upTo,
+    cutAbove,
   };
 }
 

@@ -96,7 +96,9 @@ describe('balance', () => {
 
   test('--trace adds the passes, as many as were counted', () => {
     const { out } = run(['balance', 'conversion.yaml', '--trace']);
-    expect(out).toMatch(/\nPasses\n {2}pass {2}residual {2}method/);
+    expect(out).toMatch(/\nPasses\n {2}Pass(?:es)? 1 .*from the feeds.*\n {2}pass {2}residual {2}method/);
+    const [, counted] = /closed in (\d+) passes/.exec(out)!;
+    expect(out).toMatch(new RegExp(`\\n {2,}${counted} .*\\n\\nAssumptions`));
   });
 
   test('--method and --tolerance overrule the file', () => {

@@ -106,7 +106,7 @@ describe('a file larger than 1 MiB', () => {
   ${name} is larger than 1 MiB.
    1 | ${line}
      | ^
-  why:  a plant of 2,000 blocks takes less than half a MiB; this is probably another kind of file
+  why:  a plant of 2,000 blocks takes some 0.2 MiB; this is probably another kind of file
   mend: name the flowsheet itself, or allow more: --max-size '4 MiB'
 
 1 error

@@ -31,7 +31,7 @@ test('a file larger than 1 MiB is refused, and one just as large is read', async
   The file is larger than 1 MiB.
    1 | looptally: 1
      | ^
-  why:  it has 1048577 bytes; a plant of 2,000 blocks takes less than half a MiB
+  why:  it has 1048577 bytes; a plant of 2,000 blocks takes some 0.2 MiB
   mend: name the flowsheet itself, or allow a larger file
 
 1 error`);
@@ -114,6 +114,8 @@ test('aliases are counted, and so is what they bring in', async () => {
 test('a plant of 2,000 blocks is well below the limits', async () => {
   const text = randomFlowsheet({ blocks: 2000, recycles: 20, seed: 1 });
   expect(text.length).toBeLessThan(limits.bytes / 4);
+  // the size that README and the messages name
+  expect(text.length / 2 ** 20).toBeCloseTo(0.2, 1);
   const { flowsheet, diagnostics } = await readFlowsheet(text, { file: 'f.yaml' });
   expect(diagnostics).toEqual([]);
   expect(flowsheet?.blocks).toHaveLength(2000);

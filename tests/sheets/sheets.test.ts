@@ -122,4 +122,13 @@ describe('the table of passes', () => {
   test('says so when there was nothing to close', () => {
     expect(traceText([])).toBe('no passes to show: nothing had to be closed\n');
   });
+
+  test('says what the passes were that it does not list', () => {
+    const at = (...passes: number[]) =>
+      traceText(passes.map((pass) => ({ pass, residual: 0.1, worst: 'S8.H2', method: 'newton', note: '' })));
+    expect(at(1, 2, 3)).toMatch(/^ +pass/);
+    expect(at(2, 3)).toMatch(/^ {2}Pass 1 went through from the feeds[^\n]*\n +pass/);
+    expect(at(3, 4, 5, 3, 4)).toMatch(/^ {2}Passes 1 and 2 went [^\n]*\n +pass/);
+    expect(at(4, 5, 10)).toMatch(/^ {2}Passes 1 to 3 went [^\n]*to start\. Where numbers are left out/);
+  });
 });

@@ -1,5 +1,6 @@
 import { describe, expect, test } from 'vitest';
 import { randomFlowsheet } from '../../bench/random-flowsheet.ts';
+import { isWithoutPower } from '../../src/sheets/no-power.ts';
 import { bookOf, workbook } from '../../src/sheets/workbook.ts';
 import { workbookBytes } from '../../src/sheets/xlsx-file.ts';
 import type { Page } from '../../src/sheets/xlsx-model.ts';
@@ -71,7 +72,7 @@ describe.each(shipped)('the workbook of %s', async (name) => {
       ['purge_per_feed', figures.purge?.fraction_of_makeup],
       ['purge_heating_value', figures.purge?.lhv_MW],
       ['power_total', figures.power_kW['total']],
-      ['specific_power', figures.specific_power_kWh_t],
+      ['specific_power', isWithoutPower(figures) ? null : figures.specific_power_kWh_t],
       ...Object.entries(figures.inerts).map(([b, value]) => [`inerts_${b}`, value] as [string, number]),
       ...Object.entries(figures.overall_conversion).map(
         ([id, value]) => [`overall_conversion_${id}`, value] as [string, number],

@@ -39,6 +39,35 @@ test('the setting that differs stands alone among the settings, and the figures 
   expect([row.differences[0], row.relative[0]]).toEqual([null, null]);
 });
 
+test('streams are matched by their tags, and those that not all have are counted in one line', async () => {
+  const base = await read(text);
+  const renamed = await read(text.replaceAll(/\bS2\b/g, 'X2').replaceAll(/\bS3\b/g, 'X3'));
+  const found = compare([
+    { name: 'A', flowsheet: base },
+    { name: 'B', flowsheet: renamed },
+  ]);
+  expect(found.settings.filter(({ path }) => path.startsWith('streams'))).toEqual([
+    {
+      path: 'streams (by tag)',
+      values: [
+        { kind: 'text', text: '8' },
+        { kind: 'text', text: '8: 2 new, 2 gone' },
+      ],
+    },
+  ]);
+  expect(compareText(found)).toMatch(/streams \(by tag\) +8 +8: 2 new, 2 gone\n/);
+});
+
+test('the per cent of a change has the sign of the change where the value is negative', async () => {
+  const found = await compared('purge.fractions.bleed=12 %');
+  const row = found.figures.find(
+    ({ values, differences }) => values[0] !== null && values[0] < 0 && differences[1] !== 0,
+  )!;
+  expect(row.figure).toMatch(/^duty_kW/);
+  expect(Math.sign(row.relative[1]!)).toBe(Math.sign(row.differences[1]!));
+  expect(row.relative[1]).toBeCloseTo(row.differences[1]! / -row.values[0]!, 12);
+});
+
 test('equal flowsheets have no differing settings and differences of zero', async () => {
   const same = await read(text, { set: ['makeup.temperature=298.15 K'] });
   const twin = await read(text, { set: ['makeup.temperature=25 degC'] });

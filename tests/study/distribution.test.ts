@@ -43,6 +43,14 @@ describe('distributions', () => {
     expect(cut.quantile(0.5)).toBeCloseTo(0.4417705466865811, 10);
   });
 
+  test('a bound so far away that no sample would ever meet it cuts nothing off', () => {
+    const far = createDistribution({ kind: 'normal', mean: 300, sd: 2 }, { low: 200, high: 400 });
+    expect([far.cutBelow, far.cutAbove]).toEqual([0, 0]);
+    expect(far.quantile(0.5)).toBeCloseTo(300, 10);
+    const near = createDistribution({ kind: 'normal', mean: 0, sd: 1 }, { low: -6, high: 6 });
+    expect(near.cutBelow).toBeCloseTo(9.866e-10, 13);
+  });
+
   const shapes = fc.oneof(
     fc.record({
       kind: fc.constant('normal' as const),

@@ -1,6 +1,7 @@
 import { figureLeaves } from '../../tally/figure-leaves.ts';
 import { figureDisplay, shownValue } from '../figure-display.ts';
 import { figureUnits } from '../figure-units.ts';
+import { isOfPower, isWithoutPower } from '../no-power.ts';
 import { significant } from '../numbers.ts';
 import { story } from '../story.ts';
 import { type Html, html, joined, nameText, type Part } from './html.ts';
@@ -43,8 +44,10 @@ function aims({ result, words }: PageView): Html | null {
 /** Every key figure by its name. */
 export function figuresSection({ result, flowsheet, words }: PageView): Html {
   const units = figureUnits(flowsheet);
+  const withoutPower = isWithoutPower(result.figures);
   const rows = [...figureLeaves(result.figures)].map(([name, value]) => {
     const display = figureDisplay(name, units);
+    if (withoutPower && isOfPower(name)) return [headCell(name), numberCell('none'), unitCell('')];
     // The number of the contract stands beside what is shown of it, for whoever copies or checks the page.
     const shown = html`<data value="${value}">${words(shownValue(value, display))}</data>`;
     return [headCell(name), { content: shown, kind: 'number' as const }, unitCell(display.unit)];
@@ -67,6 +70,7 @@ export function glances({ result, flowsheet, words }: PageView): Glance[] {
   return [...leaves].flatMap(([name, value]) => {
     const label = glanceLabel(name, result.figures.overall_yield?.reactant ?? '');
     if (label === null) return [];
+    if (isOfPower(name) && isWithoutPower(result.figures)) return [{ label, value: 'none', unit: '' }];
     const display = figureDisplay(name, units);
     const shown = name === 'recycle_ratio' ? significant(value, 4) : shownValue(value, display);
     return [{ label, value: words(shown), unit: display.unit }];

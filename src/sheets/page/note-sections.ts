@@ -4,6 +4,7 @@ import { planFlowsheet } from '../../tally/plan.ts';
 import { caution, dangersOf } from '../cautions.ts';
 import { settingDisplay, shownValue } from '../figure-display.ts';
 import { closureText, significant } from '../numbers.ts';
+import { unlistedPasses } from '../trace.ts';
 import { type Html, html, nameText, userText } from './html.ts';
 import { bulletList, headCell, numberCell, table, textCell, unitCell } from './tables.ts';
 import type { PageView } from './view.ts';
@@ -62,7 +63,8 @@ export function warningsSection({ result, words }: PageView): Html {
 export function passTable({ result, words }: PageView): Html {
   const { history } = result.convergence;
   if (history.length === 0) return html`<p>Nothing goes round, so nothing had to be closed.</p>`;
-  return table({
+  const unlisted = unlistedPasses(history);
+  return html`${unlisted === '' ? null : html`<p class="note">${unlisted}</p>`}${table({
     caption: 'Passes of the solver',
     heads: [
       { text: 'pass', right: true },
@@ -78,7 +80,7 @@ export function passTable({ result, words }: PageView): Html {
       textCell(worst),
       { ...textCell(note), mark: 'prose' },
     ]),
-  });
+  })}`;
 }
 
 export function assumptionsSection({ result }: PageView): Html {

@@ -24,6 +24,7 @@ export function comparePage(found: Comparison, options: StudyPageOptions): strin
     {
       document: 'Comparison',
       title: first.flowsheet.title,
+      flowsheets: columns.map(({ flowsheet }) => flowsheet),
       job: [
         { label: 'Held against', value: userText(first.name), span: 4 },
         { label: 'Columns', value: String(columns.length), span: 2 },

@@ -20,6 +20,7 @@ export function optimisePage(found: Optimised, options: StudyPageOptions): strin
     {
       document: found.front.length > 0 ? 'Trade-off' : 'Best settings',
       title: flowsheet.title,
+      flowsheets: [flowsheet],
       job: [
         {
           label: 'Wanted',

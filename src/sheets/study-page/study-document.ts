@@ -1,4 +1,5 @@
-import { studyTool } from '../cautions.ts';
+import type { Flowsheet } from '../../model/flowsheet.ts';
+import { dangersOfAll, studyTool } from '../cautions.ts';
 import { chartStyle } from '../charts/palette.ts';
 import { csvCell } from '../csv.ts';
 import { type JobField, type PageSection, pageDocument } from '../page/document.ts';
@@ -19,6 +20,8 @@ export interface StudyPageParts {
   /** e.g. Sweep */
   readonly document: string;
   readonly title: string;
+  /** what the study is of, for the dangers that the page names */
+  readonly flowsheets: readonly Flowsheet[];
   /** fields of the title block that say what was asked */
   readonly job: readonly JobField[];
   readonly lead?: Html;
@@ -44,7 +47,7 @@ export function studyDocument(parts: StudyPageParts, options: StudyPageOptions):
       { label: 'Issued', value: '', span: 3 },
     ],
     ...(parts.lead === undefined ? {} : { lead: parts.lead }),
-    sections: [...parts.sections.filter((one) => one !== null), takeAway(csvName)],
+    sections: [...parts.sections.filter((one) => one !== null), takeAway(csvName, parts.flowsheets)],
     style: chartStyle + studyStyle,
     script,
     data: { csv: { name: csvName, text: parts.csv } },
@@ -52,11 +55,12 @@ export function studyDocument(parts: StudyPageParts, options: StudyPageOptions):
 }
 
 /** The button is of no use without the script, which shows it. */
-function takeAway(csvName: string): PageSection {
+function takeAway(csvName: string, flowsheets: readonly Flowsheet[]): PageSection {
+  const dangers = dangersOfAll(flowsheets).map((danger) => html`<li>${danger}</li>`);
   return {
     id: 'data',
     heading: 'Data and use',
-    html: html`<p>The table behind this page is kept in it, numbers in full.</p><p class="screen-only"><button type="button" id="take-csv" hidden>Download ${csvName}</button></p><p class="caution">${studyTool} What the flowsheet assumes is told by looptally check.</p>`,
+    html: html`<p>The table behind this page is kept in it, numbers in full.</p><p class="screen-only"><button type="button" id="take-csv" hidden>Download ${csvName}</button></p><div class="caution"><p>${studyTool} What the flowsheet assumes is told by looptally check.</p><ul>${dangers}</ul></div>`,
   };
 }
 

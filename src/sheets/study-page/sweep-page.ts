@@ -38,6 +38,7 @@ export function sweepPage(content: SweepPageContent, options: StudyPageOptions):
     {
       document: 'Sweep',
       title: flowsheet.title,
+      flowsheets: [flowsheet],
       job: [
         {
           label: 'Settings',

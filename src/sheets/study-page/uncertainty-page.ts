@@ -25,6 +25,7 @@ export function uncertaintyPage(found: Uncertainty, options: StudyPageOptions): 
     {
       document: 'Uncertainty',
       title: flowsheet.title,
+      flowsheets: [flowsheet],
       job: [
         { label: 'Sample', value: sampleLine(found), span: 12 },
         { label: 'Flowsheet', value: userText(flowsheet.file), span: 8 },

@@ -55,6 +55,13 @@ describe('a comparison', async () => {
     expect(page.csv).toEqual({ name: 'study.csv', text: compareCsv(found) });
   });
 
+  test('names the dangers of what is compared, and no others', () => {
+    for (const words of ['Nelson curves', 'Ammonia is toxic', 'Reduced catalyst'])
+      expect(page.text).toContain(words);
+    for (const words of ['Carbon monoxide is toxic', 'Sulphur oxides'])
+      expect(page.text).not.toContain(words);
+  });
+
   test('says in words which column did not close', () => {
     const [first, second] = found.columns as [(typeof found.columns)[0], (typeof found.columns)[0]];
     const open = { ...found, columns: [first, { ...second, closed: false }] };
