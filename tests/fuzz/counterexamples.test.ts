@@ -90,14 +90,16 @@ test('a stream whose name no formula can hold is a fault of its name, where pric
   expect(diagnostics.map(({ code }) => code)).toContain('bad-name');
 });
 
-test('a Parquet slice with any byte of its rows or its mark changed is refused', async () => {
+test('a Parquet slice with any byte of its rows, its mark or its heads changed is refused', async () => {
   const scratch = mkdtempSync(join(tmpdir(), 'looptally-slices-'));
   try {
     const { slices } = await createTables(scratch);
     const whole = slices.get('.parquet')!;
     expect(await judgeSlice(whole, '.parquet', whole, scratch)).toBe('opened');
     const mark = Buffer.from(whole).indexOf('"part"');
-    for (const at of [4, 100, mark, mark + 1, mark + 20, mark + 60]) {
+    const head = Buffer.from(whole).lastIndexOf('figures.recycle_ratio');
+    const all = Array.from({ length: Math.ceil(whole.length / 23) }, (_, k) => 23 * k);
+    for (const at of [mark, mark + 1, mark + 20, mark + 60, head, head + 5, ...all]) {
       const damaged = Buffer.from(whole);
       damaged[at] = damaged[at]! ^ 1;
       expect({ at, outcome: await judgeSlice(damaged, '.parquet', whole, scratch) }).toEqual({
