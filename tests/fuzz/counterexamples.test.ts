@@ -2,6 +2,7 @@ import { mkdtempSync, readFileSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { describe, expect, test } from 'vitest';
+import { judgeText } from '../../fuzz/judge-file.ts';
 import { createTables, judgeSlice } from '../../fuzz/judge-tables.ts';
 import { readFlowsheet } from '../../src/flowsheet/read.ts';
 import { type Balance, balance } from '../../src/tally/balance.ts';
@@ -88,6 +89,11 @@ test('a stream whose name no formula can hold is a fault of its name, where pric
   const { flowsheet, diagnostics } = await readFlowsheet(doubled, { file: 'mutant.yaml' });
   expect(flowsheet).toBeNull();
   expect(diagnostics.map(({ code }) => code)).toContain('bad-name');
+});
+
+test('a title may be any words: a sheet that says them is no fault', async () => {
+  const text = readFileSync(new URL('../../flowsheets/reference-loop.yaml', import.meta.url), 'utf8');
+  expect(await judgeText(text.replace(/^title: .*$/m, 'title: NaN kmol/h'))).toBe('closed');
 });
 
 test('a Parquet slice with any byte of its rows, its mark or its heads changed is refused', async () => {
