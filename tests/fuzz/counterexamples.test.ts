@@ -91,6 +91,19 @@ test('a stream whose name no formula can hold is a fault of its name, where pric
   expect(diagnostics.map(({ code }) => code)).toContain('bad-name');
 });
 
+test.each([300, 100, 30, 20, 10, 3])(
+  'a recycle beside which rounding is no less than the feed closes in the ledger too, or is said not to: purge of %d ppb',
+  async (ppb) => {
+    const text = readFileSync(new URL('../../flowsheets/reference-loop.yaml', import.meta.url), 'utf8');
+    const set = [`purge.fractions.bleed=${ppb * 1e-7} %`];
+    const { flowsheet } = await readFlowsheet(text, { file: 'mutant.yaml', set });
+    const { result, diagnosis } = balance(flowsheet!, { tolerance: 1e-9, maxPasses: 25 });
+    const open = Math.max(...Object.values(result.ledger).map(({ closure }) => Math.abs(closure)));
+    expect(result.convergence.converged).toBe(open <= 1e-9);
+    expect(diagnosis?.code ?? 'closed').toBe(open <= 1e-9 ? 'closed' : 'exit-too-small');
+  },
+);
+
 test('a title may be any words: a sheet that says them is no fault', async () => {
   const text = readFileSync(new URL('../../flowsheets/reference-loop.yaml', import.meta.url), 'utf8');
   expect(await judgeText(text.replace(/^title: .*$/m, 'title: NaN kmol/h'))).toBe('closed');
