@@ -23,7 +23,7 @@ async function mutant(name: string, ...changes: readonly (readonly [from: string
 
 function notANumber({ result }: Balance): boolean {
   return JSON.stringify(result, (_, value) =>
-    Object.is(value, Number.NaN) ? 'not a number' : value,
+    typeof value === 'number' && !Number.isFinite(value) ? 'not a number' : value,
   ).includes('not a number');
 }
 
@@ -103,6 +103,14 @@ test.each([300, 100, 30, 20, 10, 3])(
     expect(diagnosis?.code ?? 'closed').toBe(open <= 1e-9 ? 'closed' : 'exit-too-small');
   },
 );
+
+test('figures for each tonne of next to nothing, or of a feed of next to nothing, are left out and not infinite', async () => {
+  const swamped = await mutant('methanation-two-stage', ['H2: 73.6', "H2: '1.7976931348623157e308'"]);
+  const found = balance(swamped, { maxPasses: 25 });
+  expect(found.result.figures.specific_power_kWh_t).toBeNull();
+  expect(found.result.figures.overall_conversion['CO']).toBeUndefined();
+  expect(notANumber(found)).toBe(false);
+});
 
 test('a title may be any words: a sheet that says them is no fault', async () => {
   const text = readFileSync(new URL('../../flowsheets/reference-loop.yaml', import.meta.url), 'utf8');
