@@ -9,6 +9,8 @@ const KELVIN = 0.01;
 const BAR = 1e-5;
 /** A flow this small beside its stream is measured against the stream [-]. */
 const TRACE = 1e-6;
+/** Rounding counts from here [-]: a finer tolerance asks for passes, not for more digits than a number has. */
+const LEDGER = 1e-9;
 
 /** The recycles of one group of blocks as a fixed-point problem, with the names of its variables. */
 export interface RecycleProblem extends FixedPointProblem {
@@ -149,18 +151,20 @@ export function createRecycleProblem(
   }
 
   /**
-   * What is left open of each component, against what enters the flowsheet or is formed in the group: by the tears, and by
-   * rounding in the blocks between, which beside a recycle of ten million times the feed is no less.
+   * What is left open of each component, against what enters the flowsheet or is formed in the group: by the tears, and
+   * where the ledger would show it by rounding in the blocks between, which no further pass makes less.
    */
   function materialError(): number {
     let worst = 0;
     for (let i = 0; i < mixture.size; i++) {
       let open = 0;
       for (const s of group.tears) open += streams[s].flowsMolPerS[i] - seen[s].flowsMolPerS[i];
-      for (const block of carriers) open -= made(block, i);
+      let rounded = open;
+      for (const block of carriers) rounded -= made(block, i);
       let formed = 0;
       for (const block of reactors) formed += made(block, i);
       const entering = Math.max(formed, 0) + plant.entering.flowsMolPerS[i];
+      if (Math.abs(rounded) > LEDGER * entering) open = rounded;
       if (entering > 0) worst = Math.max(worst, Math.abs(open) / entering);
     }
     return worst;
