@@ -55,10 +55,10 @@ function judgeBalance(flowsheet: Flowsheet, text: string): string {
   const plan = planFlowsheet(flowsheet);
   checkDiagnostics(plan.diagnostics, text);
   if (plan.diagnostics.some(({ severity }) => severity === 'error')) return 'refused by its plan';
-  checkWords(checkText(flowsheet, plan, { paint: noPaint }));
+  checkWords(checkText(flowsheet, plan, { paint: noPaint }), text);
   const { result, diagnosis } = balance(flowsheet, { maxPasses: MOST_PASSES, tolerance: CLOSED });
   checkNumbers(result, 'result');
-  for (const sheet of [textSheet(result), markdownSheet(result, {})]) checkWords(sheet);
+  for (const sheet of [textSheet(result), markdownSheet(result, {})]) checkWords(sheet, text);
   if (diagnosis !== null) checkDiagnostics([diagnosis], text);
   if (result.convergence.converged !== (diagnosis === null))
     throw new Error('closed with a diagnosis, or not without one');
@@ -112,9 +112,10 @@ function checkDiagnostics(diagnostics: readonly Diagnostic[], text: string): voi
 
 const STRANGE = ['undefined', '[object', 'NaN', 'Infinity'];
 
-function checkWords(sheet: string): void {
-  const word = /\b(undefined|\[object|NaN)\b/.exec(sheet)?.[0];
-  if (word !== undefined) throw new Error(`a sheet says ${word}`);
+function checkWords(sheet: string, text: string): void {
+  // A title may be any words, and stands in the sheet.
+  for (const [word] of sheet.matchAll(/\b(?:undefined|NaN)\b|\[object\b/g))
+    if (!text.includes(word)) throw new Error(`a sheet says ${word}`);
 }
 
 /** JSON has no NaN: it would be a null that nobody meant. */

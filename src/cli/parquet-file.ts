@@ -2,13 +2,16 @@ import { createHash } from 'node:crypto';
 import { ByteWriter, ParquetWriter, schemaFromColumnData } from 'hyparquet-writer';
 import { plainText } from '../sheets/plain.ts';
 import type { PathTable } from '../study/sweep.ts';
-import { markText, type SliceMark, type TableSink, type Write } from './table-file.ts';
+import type { SliceMark, TableSink, Write } from './table-file.ts';
 
 /** Rows that are packed together: what is kept in memory, and what a reader may skip as one. */
 const GROUP_ROWS = 20_000;
 
-/** Name of the mark of a slice among the key-value metadata of the file; with it goes the checksum of all before those and of itself. */
+/** Name of the mark of a slice among the key-value metadata of the file; with it goes the checksum of the file. */
 export const SLICE_KEY = 'looptally_slice';
+
+/** Stands for the checksum while the checksum is taken, so that it covers the metadata that hold it: heads, types, offsets. */
+export const NO_SUM = '0'.repeat(64);
 
 type Cell = number | boolean | string | null;
 
@@ -29,16 +32,16 @@ export function createParquetSink(heads: readonly string[], write: Write): Table
     createdBy: 'looptally',
   });
   const sum = createHash('sha256');
-  const flush = () => {
-    const chunk = new Uint8Array(bytes.getBytes());
+  const taken = () => {
+    const chunk = Buffer.from(new Uint8Array(bytes.getBytes()));
     sum.update(chunk);
-    write(chunk);
     bytes.index = 0;
+    return chunk;
   };
   const pack = () => {
     writer.write({ columnData: columns, rowGroupSize: GROUP_ROWS });
     for (const { data } of columns) data.length = 0;
-    flush();
+    write(taken());
   };
   return {
     add({ cells, rows, converged, passes, notes }: PathTable) {
@@ -55,13 +58,13 @@ export function createParquetSink(heads: readonly string[], write: Write): Table
     },
     end(mark: SliceMark | null) {
       if (columns[0]!.data.length > 0) pack();
-      flush();
-      if (mark !== null) {
-        const value = JSON.stringify({ ...mark, sha256: sum.copy().update(markText(mark)).digest('hex') });
-        writer.kvMetadata = [{ key: SLICE_KEY, value }];
-      }
+      if (mark !== null)
+        writer.kvMetadata = [{ key: SLICE_KEY, value: JSON.stringify({ ...mark, sha256: NO_SUM }) }];
       writer.finish();
-      flush();
+      const end = taken();
+      // The last one, for a head may look like it: the writer puts key-value metadata behind the columns.
+      if (mark !== null) end.write(sum.digest('hex'), end.lastIndexOf(NO_SUM), 'latin1');
+      write(end);
     },
   };
 }

@@ -2,9 +2,9 @@ import { createHash } from 'node:crypto';
 import { statSync } from 'node:fs';
 import { asyncBufferFromFile, type FileMetaData, parquetMetadataAsync, parquetReadObjects } from 'hyparquet';
 import type { PathTable } from '../study/sweep.ts';
-import { createParquetSink, SLICE_KEY } from './parquet-file.ts';
+import { createParquetSink, NO_SUM, SLICE_KEY } from './parquet-file.ts';
 import { changed, copyBytes, noSlice, type Slice } from './slice-file.ts';
-import { markText, type SliceMark, writeRenamed } from './table-file.ts';
+import { type SliceMark, writeRenamed } from './table-file.ts';
 
 /** Rows that are unpacked at once. */
 const STEP_ROWS = 5000;
@@ -19,7 +19,7 @@ export async function openParquetSlice(path: string): Promise<Slice> {
   if (metadata === null || found === null) throw noSlice(path);
   const { sha256, ...mark } = found;
   const rows = mark.last - mark.first + 1;
-  if (Number(metadata.num_rows) !== rows || sumOf(path, metadata.metadata_length, mark) !== sha256)
+  if (Number(metadata.num_rows) !== rows || sumOf(path, metadata.metadata_length, sha256) !== sha256)
     throw changed(path);
   return {
     path,
@@ -44,11 +44,18 @@ function markOf({ key_value_metadata }: FileMetaData): (SliceMark & { readonly s
   }
 }
 
-function sumOf(path: string, metadataLength: number, mark: SliceMark): string {
+/** Checksum of a file in whose metadata `stated` has not been filled in yet. */
+function sumOf(path: string, metadataLength: number, stated: string): string {
+  const { size } = statSync(path);
+  const end = Math.max(0, size - metadataLength - TAIL_BYTES);
   const sum = createHash('sha256');
-  const end = statSync(path).size - metadataLength - TAIL_BYTES;
-  copyBytes(path, 0, Math.max(0, end), (bytes) => sum.update(bytes));
-  return sum.update(markText(mark)).digest('hex');
+  copyBytes(path, 0, end, (bytes) => sum.update(bytes));
+  const pieces: Uint8Array[] = [];
+  copyBytes(path, end, size, (bytes) => pieces.push(bytes));
+  const metadata = Buffer.concat(pieces);
+  const at = metadata.lastIndexOf(stated);
+  if (at >= 0) metadata.write(NO_SUM, at, 'latin1');
+  return sum.update(metadata).digest('hex');
 }
 
 /** Unpack the slices and pack them again as the whole sweep would have been. */

@@ -13,6 +13,9 @@ export interface FigureSource {
   readonly reports: () => readonly BlockReport[];
 }
 
+/** A flow [mol/s], or a production [t/d], of no more than this is none: what is divided by it may be more than a number can be. */
+const NOTHING = 1e-100;
+
 type KeyFigure = Exclude<keyof Figures, 'user'>;
 
 /** The key figures one by one, so that a study reads those it records and no others. */
@@ -27,7 +30,9 @@ export const figureReaders: { readonly [K in KeyFigure]: (source: FigureSource) 
   power_kW: ({ plant, reports }) => powers(plant, reports()),
   specific_power_kWh_t: ({ plant, reports }) => {
     const production = productionTPerD(plant);
-    return production ? (24 * powers(plant, reports())['total']) / production : null;
+    return production !== null && Math.abs(production) > NOTHING
+      ? (24 * powers(plant, reports())['total']) / production
+      : null;
   },
   duty_kW: ({ plant, reports }) =>
     Object.fromEntries(
@@ -93,7 +98,7 @@ function perPassConversion(plant: Plant): Figures['per_pass_conversion'] {
 function overallConversion(plant: Plant, { entering, leaving }: Tallied): Figures['overall_conversion'] {
   const running = reactors(plant).flatMap((b) => reactionsOf(plant, b));
   return Object.fromEntries(
-    idsWhere(plant, (i) => entering[i] > 0 && isReactant(running, i)).map(([id, i]) => [
+    idsWhere(plant, (i) => entering[i] > NOTHING && isReactant(running, i)).map(([id, i]) => [
       id,
       (entering[i] - leaving[i]) / entering[i],
     ]),
@@ -107,7 +112,7 @@ function overallYield(plant: Plant, { entering }: Tallied): Figures['overall_yie
   const p = index(plant, product.component);
   const r = index(plant, reactant);
   const reaction = yieldReaction(plant.flowsheet.reactions, p, r);
-  if (!reaction || entering[r] === 0) return null;
+  if (!reaction || entering[r] <= NOTHING) return null;
   const possible = (entering[r] * reaction.coefficients[p]) / -reaction.coefficients[r];
   const made = state(plant, product.stream).flowsMolPerS[p] - entering[p];
   return { product: product.component, reactant, value: made / possible };
@@ -182,7 +187,7 @@ function purge(plant: Plant, { entering }: Tallied): Figures['purge'] {
     fraction_of_makeup: sumOf(lost) / sumOf(entering),
     lost_kmol_h: Object.fromEntries(everything.map(([id, i]) => [id, lost[i] * KMOL_H])),
     lost_fraction: Object.fromEntries(
-      everything.filter(([, i]) => entering[i] > 0).map(([id, i]) => [id, lost[i] / entering[i]]),
+      everything.filter(([, i]) => entering[i] > NOTHING).map(([id, i]) => [id, lost[i] / entering[i]]),
     ),
     lhv_MW: everything.reduce(
       (sum, [, i]) => sum + (lost[i] * plant.mixture.components[i].lowerHeatingJPerMol) / 1e6,

@@ -2,6 +2,7 @@ import { mkdtempSync, readFileSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { describe, expect, test } from 'vitest';
+import { judgeText } from '../../fuzz/judge-file.ts';
 import { createTables, judgeSlice } from '../../fuzz/judge-tables.ts';
 import { readFlowsheet } from '../../src/flowsheet/read.ts';
 import { type Balance, balance } from '../../src/tally/balance.ts';
@@ -22,7 +23,7 @@ async function mutant(name: string, ...changes: readonly (readonly [from: string
 
 function notANumber({ result }: Balance): boolean {
   return JSON.stringify(result, (_, value) =>
-    Object.is(value, Number.NaN) ? 'not a number' : value,
+    typeof value === 'number' && !Number.isFinite(value) ? 'not a number' : value,
   ).includes('not a number');
 }
 
@@ -90,14 +91,42 @@ test('a stream whose name no formula can hold is a fault of its name, where pric
   expect(diagnostics.map(({ code }) => code)).toContain('bad-name');
 });
 
-test('a Parquet slice with any byte of its rows or its mark changed is refused', async () => {
+test.each([300, 100, 30, 20, 10, 3])(
+  'a recycle beside which rounding is no less than the feed closes in the ledger too, or is said not to: purge of %d ppb',
+  async (ppb) => {
+    const text = readFileSync(new URL('../../flowsheets/reference-loop.yaml', import.meta.url), 'utf8');
+    const set = [`purge.fractions.bleed=${ppb * 1e-7} %`];
+    const { flowsheet } = await readFlowsheet(text, { file: 'mutant.yaml', set });
+    const { result, diagnosis } = balance(flowsheet!, { tolerance: 1e-9, maxPasses: 25 });
+    const open = Math.max(...Object.values(result.ledger).map(({ closure }) => Math.abs(closure)));
+    expect(result.convergence.converged).toBe(open <= 1e-9);
+    expect(diagnosis?.code ?? 'closed').toBe(open <= 1e-9 ? 'closed' : 'exit-too-small');
+  },
+);
+
+test('figures for each tonne of next to nothing, or of a feed of next to nothing, are left out and not infinite', async () => {
+  const swamped = await mutant('methanation-two-stage', ['H2: 73.6', "H2: '1.7976931348623157e308'"]);
+  const found = balance(swamped, { maxPasses: 25 });
+  expect(found.result.figures.specific_power_kWh_t).toBeNull();
+  expect(found.result.figures.overall_conversion['CO']).toBeUndefined();
+  expect(notANumber(found)).toBe(false);
+});
+
+test('a title may be any words: a sheet that says them is no fault', async () => {
+  const text = readFileSync(new URL('../../flowsheets/reference-loop.yaml', import.meta.url), 'utf8');
+  expect(await judgeText(text.replace(/^title: .*$/m, 'title: NaN kmol/h'))).toBe('closed');
+});
+
+test('a Parquet slice with any byte of its rows, its mark or its heads changed is refused', async () => {
   const scratch = mkdtempSync(join(tmpdir(), 'looptally-slices-'));
   try {
     const { slices } = await createTables(scratch);
     const whole = slices.get('.parquet')!;
     expect(await judgeSlice(whole, '.parquet', whole, scratch)).toBe('opened');
     const mark = Buffer.from(whole).indexOf('"part"');
-    for (const at of [4, 100, mark, mark + 1, mark + 20, mark + 60]) {
+    const head = Buffer.from(whole).lastIndexOf('figures.recycle_ratio');
+    const all = Array.from({ length: Math.ceil(whole.length / 23) }, (_, k) => 23 * k);
+    for (const at of [mark, mark + 1, mark + 20, mark + 60, head, head + 5, ...all]) {
       const damaged = Buffer.from(whole);
       damaged[at] = damaged[at]! ^ 1;
       expect({ at, outcome: await judgeSlice(damaged, '.parquet', whole, scratch) }).toEqual({
