@@ -18,6 +18,8 @@ export interface ClosureOptions {
   readonly maxPasses?: number;
   /** the start is the answer of a neighbouring map: keep what the method has learnt of that */
   readonly warm?: boolean;
+  /** Asked before every pass: true ends it as if no more passes were allowed. */
+  readonly isEnough?: () => boolean;
   /** Called after every pass, for a live trace. */
   readonly onPass?: (pass: PassRecord) => void;
 }
@@ -176,7 +178,7 @@ export function createCloser(problem: FixedPointProblem, name: MethodName): Clos
       options.onPass?.(entry);
     };
 
-    for (let pass = 1; pass <= maxPasses; pass++) {
+    for (let pass = 1; pass <= maxPasses && !options.isEnough?.(); pass++) {
       const failure = evaluateSafely(problem, x, g);
 
       if (failure !== null) {
