@@ -95,6 +95,11 @@ export interface Unit {
    * it has none at this point (a kink, a limit that holds): then they are taken by differences of passes.
    */
   slopes?(inlets: readonly StreamState[], outlets: readonly StreamState[], slopes: BlockSlopes): boolean;
+  /**
+   * How often what a pass spends its time on has been evaluated since the unit was made (a rate law along a bed):
+   * a count, not a time, so that what is bounded by it ends at the same place everywhere. Left out: a pass takes little.
+   */
+  evaluations?(): number;
   /** Heat, power and details for the inlets and outlets of the last pass. */
   report(inlets: readonly StreamState[], outlets: readonly StreamState[]): BlockReport;
 }

@@ -24,6 +24,8 @@ export interface BedPath {
   pass(inlet: StreamState, out: StreamState): void;
   /** extents of the named reactions over the last pass [mol/s] */
   readonly extents: Float64Array;
+  /** how often rates along the bed have been evaluated so far */
+  evaluations(): number;
   /** Follow the gas again, with stops at 0, 1/sections, ..., 1. */
   follow(inlet: StreamState, sections: number, at: (place: BedPlace) => void): void;
 }
@@ -59,7 +61,7 @@ export function createBedPath(
     flowsMolPerS: new Float64Array(size),
     rates: new Float64Array(count),
   };
-  const at = { total: 0, enthalpyW: 0, inletPa: 0, dropPa: 0, amount: 0, coolingWPerK: 0 };
+  const at = { total: 0, enthalpyW: 0, inletPa: 0, dropPa: 0, amount: 0, coolingWPerK: 0, evaluations: 0 };
 
   /** Take in the inlet and the settings as they stand; false where nothing flows. */
   function enter(inlet: StreamState): boolean {
@@ -100,6 +102,7 @@ export function createBedPath(
   }
 
   function slope(z: number, state: Float64Array, out: Float64Array): void {
+    at.evaluations++;
     goTo(z, state);
     const { temperatureK, pressurePa, flowsMolPerS, rates } = place;
     chemistry.rates(temperatureK, pressurePa, flowsMolPerS, feed, rates);
@@ -119,6 +122,7 @@ export function createBedPath(
 
   return {
     extents,
+    evaluations: () => at.evaluations,
     pass(inlet, out) {
       const flows = enter(inlet);
       if (flows) march.through(x);

@@ -43,6 +43,7 @@ function createKineticBed(setting: KineticBedSettings, context: BlockContext): U
   const report = createBedReport(setting, law, chemistry, path, context);
   return {
     pass: ([inlet], [out]) => path.pass(inlet!, out!),
+    evaluations: path.evaluations,
     report: ([inlet], [out]) => report(inlet!, out!),
   };
 }

@@ -18,6 +18,8 @@ export interface ClosureOptions {
   readonly maxPasses?: number;
   /** the start is the answer of a neighbouring map: keep what the method has learnt of that */
   readonly warm?: boolean;
+  /** Asked before every pass: true ends it as if no more passes were allowed. */
+  readonly isEnough?: () => boolean;
   /** Called after every pass, for a live trace. */
   readonly onPass?: (pass: PassRecord) => void;
 }
@@ -166,7 +168,7 @@ export function createCloser(problem: FixedPointProblem, name: MethodName): Clos
     const logFailed = (says: string): void =>
       log(new LoggedPass(history.length + 1, madeBy, joined(note, says), NaN, -1, NaN, NaN, NaN, NaN));
 
-    while (history.length < maxPasses) {
+    while (history.length < maxPasses && !options.isEnough?.()) {
       const failure = evaluateSafely(problem, x, g);
 
       if (failure !== null) {

@@ -13,6 +13,8 @@ export interface CloseOptions {
   readonly maxPasses: number;
   /** true starts from the streams as they stand (a neighbouring case), false from the feeds */
   readonly warm?: boolean;
+  /** asked before every pass of a recycle: true ends it as if no more passes were allowed */
+  readonly isEnough?: () => boolean;
 }
 
 /** How the closing of a plant went. */

@@ -3,12 +3,13 @@ import type { Closure } from '../convergence/driver.ts';
 import type { FixedPointProblem } from '../convergence/problem.ts';
 import { spectralRadius } from '../convergence/spectral-radius.ts';
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
+import type { MethodName } from '../model/flowsheet.ts';
 import { type CloseOptions, closePlant } from './close-plant.ts';
 import { heatLeft } from './heat-left.ts';
 import type { Group, Plant } from './plant.ts';
 import { createRecycleProblem } from './recycle-problem.ts';
 import { type ComponentFlows, componentFlows } from './why-flows.ts';
-import { createPatience, isOfUse, type Trial, tryOut } from './why-trial.ts';
+import { createPatience, isOfUse, isOutOfWork, type Trial, tryOut, wouldRepeat } from './why-trial.ts';
 import { type Phases, phasesIn, vesselsOf } from './why-vessels.ts';
 
 /** Direct passes looked at from the last good pass on. */
@@ -65,6 +66,8 @@ export interface Facts {
   readonly answer: Trial | null;
   /** the same where the recycle is beyond all use: rounding decides there; null where nothing closes like that */
   readonly beyond: Trial | null;
+  /** methods by which trials as it is came to their end and gave no answer of use */
+  readonly failing: readonly MethodName[];
   /** close with settings moved, by the automatic method; null where it does not, or only with a recycle beyond all use */
   tryOut(changes: readonly (readonly [path: string, value: number])[]): Trial | null;
 }
@@ -94,7 +97,7 @@ export function gatherFacts(
   const last = countAt(closure.x);
   const direct = directFromFeeds(plant, group, closure, options);
   const onward = passOnward(plant, group, problem, direct.x);
-  const closed = closedAsItIs(plant, group, options);
+  const { closed, failing } = closedAsItIs(plant, group, closure, options);
   const radius = spectralRadius(asClosed, direct.x, sizes(problem, direct.x, direct.g));
   const { flows } = countAt(direct.x);
   const patience = createPatience();
@@ -115,6 +118,7 @@ export function gatherFacts(
     onwardFails: onward.length < ONWARD,
     answer: closed !== null && isOfUse(closed) ? closed : null,
     beyond: closed !== null && !isOfUse(closed) ? closed : null,
+    failing,
     tryOut(changes) {
       const found = tryOut(plant, group, options.tolerance, changes, 'auto', patience);
       return found !== null && isOfUse(found) ? found : null;
@@ -122,13 +126,24 @@ export function gatherFacts(
   };
 }
 
-/** The first way by which the loop closes with its settings as they stand. */
-function closedAsItIs(plant: Plant, group: Group, options: CloseOptions): Trial | null {
+/**
+ * The first way by which the loop closes with its settings as they stand. Each method has its passes, all share the
+ * evaluations; what the closing itself has shown is not tried again. With aims that may have been on a plant whose
+ * units remember other settings, so then it is.
+ */
+function closedAsItIs(plant: Plant, group: Group, closure: Closure, options: CloseOptions) {
+  const failing: MethodName[] = [];
+  const patience = createPatience();
+  const isFirst = !options.warm && plant.flowsheet.aims.length === 0;
   for (const method of TRIED) {
-    const found = tryOut(plant, group, options.tolerance, [], method);
-    if (found !== null) return found;
+    if (isFirst && wouldRepeat(method, closure)) continue;
+    patience.passes = createPatience().passes;
+    const closed = tryOut(plant, group, options.tolerance, [], method, patience);
+    if (closed !== null) return { closed, failing };
+    if (isOutOfWork(patience)) break;
+    failing.push(method);
   }
-  return null;
+  return { closed: null, failing };
 }
 
 /** The closing itself where it was made by direct passes enough; else such passes, or it where they fail. */

@@ -1,3 +1,4 @@
+import { listed } from '../blocks/checks.ts';
 import { diagnose as readTrend } from '../convergence/diagnosis.ts';
 import { answerText, type Finding, slowestModeText } from './why.ts';
 import type { Facts } from './why-facts.ts';
@@ -40,9 +41,10 @@ export function tooFewPasses(facts: Facts): Finding | null {
 }
 
 /** What trials as it is came to, none of which gave an answer of use. */
-function triedText({ beyond }: Facts): string {
+function triedText({ beyond, failing }: Facts): string {
+  if (beyond === null && failing.length === 0) return '';
   return beyond === null
-    ? 'trials by --method auto, newton and anderson did not close either'
+    ? `${failing.length === 1 ? 'a trial' : 'trials'} by --method ${listed(failing)} did not close either`
     : `a trial by --method ${beyond.method} closed with ${figure(beyond.timesFed)} times the feed going round, which is no answer of use`;
 }
 

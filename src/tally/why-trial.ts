@@ -1,3 +1,4 @@
+import type { Closure } from '../convergence/driver.ts';
 import type { MethodName } from '../model/flowsheet.ts';
 import { closePlant } from './close-plant.ts';
 import { createPlant, type Group, type Plant } from './plant.ts';
@@ -6,13 +7,26 @@ import { phasesIn, vesselsOf } from './why-vessels.ts';
 /** Passes that a trial may take, or several together: what closes at all closes well within this. */
 const TRIAL_PASSES = 250;
 
+/**
+ * Evaluations that trials may take together for one question, of blocks that count them (`Unit.evaluations`): a pass
+ * through a bed that is stiff takes some hundred times as long as one through another loop. Counted, not timed, so that
+ * the same is told everywhere.
+ */
+const TRIAL_EVALUATIONS = 150_000;
+
 /** What is left for the trials of one question: a loop at which all of them fail is not to take many times as long. */
 export interface Patience {
   passes: number;
+  evaluations: number;
 }
 
 export function createPatience(): Patience {
-  return { passes: TRIAL_PASSES };
+  return { passes: TRIAL_PASSES, evaluations: TRIAL_EVALUATIONS };
+}
+
+/** Were trials ended, or not begun, for want of evaluations? */
+export function isOutOfWork({ evaluations }: Patience): boolean {
+  return evaluations <= 0;
 }
 
 /** A change is worth advising where the recycle is no more than so many times the feed. */
@@ -34,6 +48,11 @@ export interface Trial {
   readonly dry: ReadonlySet<string>;
 }
 
+/** Would a trial as it is make the passes of a closing from the feeds again, and end where that did? */
+export function wouldRepeat(method: MethodName, closure: Closure): boolean {
+  return method === closure.method && (closure.reason !== 'max-passes' || closure.passes >= TRIAL_PASSES);
+}
+
 /** May an answer be relied on, or is its recycle beyond all use? */
 export function isOfUse({ timesFed }: Trial): boolean {
   return timesFed <= LARGEST_RECYCLE;
@@ -44,8 +63,8 @@ export function isOfUse({ timesFed }: Trial): boolean {
  * remember of other passes has no part in it, and whoever repeats the trial finds the same.
  *
  * @param changes  values in SI by path
- * @param patience  passes that are left for trials; those of this one are taken off
- * @returns null where it does not close
+ * @param patience  what is left for trials; what this one spends is taken off
+ * @returns null where it does not close within what is left
  */
 export function tryOut(
   plant: Plant,
@@ -55,12 +74,18 @@ export function tryOut(
   method: MethodName = 'auto',
   patience: Patience = createPatience(),
 ): Trial | null {
-  if (patience.passes <= 0) return null;
+  if (patience.passes <= 0 || isOutOfWork(patience)) return null;
   const other = createPlant({ ...plant.flowsheet, blocks: plant.blocks, feeds: plant.feeds });
   const sameGroup = other.groups[plant.groups.indexOf(group)]!;
   for (const [path, value] of changes) other.set(path, value);
-  const closure = closePlant(other, { method, tolerance, maxPasses: patience.passes });
+  const closure = closePlant(other, {
+    method,
+    tolerance,
+    maxPasses: patience.passes,
+    isEnough: () => evaluationsOf(other) >= patience.evaluations,
+  });
   patience.passes -= closure.passes;
+  patience.evaluations -= evaluationsOf(other);
   if (!closure.converged) return null;
   const largest = largestTear(other, sameGroup);
   const recycle = other.mixture.total(other.streams[largest]);
@@ -77,6 +102,11 @@ export function tryOut(
         .map(({ name }) => name),
     ),
   };
+}
+
+/** What the units of a plant have evaluated since it was made. */
+function evaluationsOf(plant: Plant): number {
+  return plant.units.reduce((sum, unit) => sum + (unit.evaluations?.() ?? 0), 0);
 }
 
 /** Index of the largest torn stream of a group. */

@@ -78,8 +78,8 @@ test('trials for an advice share their passes, so that a slow loop is not tried 
   const before = patience.passes;
   const trial = tryOut(plant, group, 1e-9, [], 'auto', patience);
   expect(before - patience.passes).toBe(trial!.passes);
-  expect(tryOut(plant, group, 1e-9, [], 'auto', { passes: 2 })).toBeNull();
-  expect(tryOut(plant, group, 1e-9, [], 'auto', { passes: 0 })).toBeNull();
+  expect(tryOut(plant, group, 1e-9, [], 'auto', { ...patience, passes: 2 })).toBeNull();
+  expect(tryOut(plant, group, 1e-9, [], 'auto', { ...patience, passes: 0 })).toBeNull();
 });
 
 test('a stream whose name no formula can hold is a fault of its name, where prices name it as well', async () => {
