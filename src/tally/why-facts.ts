@@ -8,8 +8,9 @@ import { type CloseOptions, closePlant } from './close-plant.ts';
 import { heatLeft } from './heat-left.ts';
 import type { Group, Plant } from './plant.ts';
 import { createRecycleProblem } from './recycle-problem.ts';
+import { closedAsItIs } from './why-as-is.ts';
 import { type ComponentFlows, componentFlows } from './why-flows.ts';
-import { createPatience, isOfUse, isOutOfWork, type Trial, tryOut, wouldRepeat } from './why-trial.ts';
+import { createPatience, evaluationsOf, isOfUse, type Trial, tryOut } from './why-trial.ts';
 import { type Phases, phasesIn, vesselsOf } from './why-vessels.ts';
 
 /** Direct passes looked at from the last good pass on. */
@@ -17,8 +18,6 @@ const ONWARD = 24;
 /** Direct passes from the feeds that a loop is looked at after; the first few find start values. */
 export const DIRECT_PASSES = 40;
 const START_PASSES = 4;
-/** Methods by which a loop is tried as it is, the surest first. */
-const TRIED = ['auto', 'newton', 'anderson'] as const;
 
 /** One direct pass after the last good one. */
 export interface OnwardPass {
@@ -84,6 +83,7 @@ export function gatherFacts(
   passes: number,
   options: CloseOptions,
 ): Facts {
+  const spent = evaluationsOf(plant);
   const problem = createRecycleProblem(plant, group);
   // As it was closed: what was left out of those passes may not be possible where they stopped.
   const asClosed = createRecycleProblem(plant, group, heatLeft(plant, group));
@@ -97,7 +97,7 @@ export function gatherFacts(
   const last = countAt(closure.x);
   const direct = directFromFeeds(plant, group, closure, options);
   const onward = passOnward(plant, group, problem, direct.x);
-  const { closed, failing } = closedAsItIs(plant, group, closure, options);
+  const { closed, failing } = closedAsItIs(plant, group, closure, spent, options);
   const radius = spectralRadius(asClosed, direct.x, sizes(problem, direct.x, direct.g));
   const { flows } = countAt(direct.x);
   const patience = createPatience();
@@ -124,26 +124,6 @@ export function gatherFacts(
       return found !== null && isOfUse(found) ? found : null;
     },
   };
-}
-
-/**
- * The first way by which the loop closes with its settings as they stand. Each method has its passes, all share the
- * evaluations; what the closing itself has shown is not tried again. With aims that may have been on a plant whose
- * units remember other settings, so then it is.
- */
-function closedAsItIs(plant: Plant, group: Group, closure: Closure, options: CloseOptions) {
-  const failing: MethodName[] = [];
-  const patience = createPatience();
-  const isFirst = !options.warm && plant.flowsheet.aims.length === 0;
-  for (const method of TRIED) {
-    if (isFirst && wouldRepeat(method, closure)) continue;
-    patience.passes = createPatience().passes;
-    const closed = tryOut(plant, group, options.tolerance, [], method, patience);
-    if (closed !== null) return { closed, failing };
-    if (isOutOfWork(patience)) break;
-    failing.push(method);
-  }
-  return { closed: null, failing };
 }
 
 /** The closing itself where it was made by direct passes enough; else such passes, or it where they fail. */

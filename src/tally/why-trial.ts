@@ -1,18 +1,17 @@
-import type { Closure } from '../convergence/driver.ts';
 import type { MethodName } from '../model/flowsheet.ts';
 import { closePlant } from './close-plant.ts';
 import { createPlant, type Group, type Plant } from './plant.ts';
 import { phasesIn, vesselsOf } from './why-vessels.ts';
 
 /** Passes that a trial may take, or several together: what closes at all closes well within this. */
-const TRIAL_PASSES = 250;
+export const TRIAL_PASSES = 250;
 
 /**
  * Evaluations that trials may take together for one question, of blocks that count them (`Unit.evaluations`): a pass
  * through a bed that is stiff takes some hundred times as long as one through another loop. Counted, not timed, so that
  * the same is told everywhere.
  */
-const TRIAL_EVALUATIONS = 150_000;
+export const TRIAL_EVALUATIONS = 150_000;
 
 /** What is left for the trials of one question: a loop at which all of them fail is not to take many times as long. */
 export interface Patience {
@@ -46,11 +45,6 @@ export interface Trial {
   readonly timesFed: number;
   /** blocks that part gas from liquid and hold no liquid */
   readonly dry: ReadonlySet<string>;
-}
-
-/** Would a trial as it is make the passes of a closing from the feeds again, and end where that did? */
-export function wouldRepeat(method: MethodName, closure: Closure): boolean {
-  return method === closure.method && (closure.reason !== 'max-passes' || closure.passes >= TRIAL_PASSES);
 }
 
 /** May an answer be relied on, or is its recycle beyond all use? */
@@ -105,7 +99,7 @@ export function tryOut(
 }
 
 /** What the units of a plant have evaluated since it was made. */
-function evaluationsOf(plant: Plant): number {
+export function evaluationsOf(plant: Plant): number {
   return plant.units.reduce((sum, unit) => sum + (unit.evaluations?.() ?? 0), 0);
 }
 
