@@ -11,7 +11,7 @@ export const TRIAL_PASSES = 250;
  * through a bed that is stiff takes some hundred times as long as one through another loop. Counted, not timed, so that
  * the same is told everywhere.
  */
-export const TRIAL_EVALUATIONS = 150_000;
+export const TRIAL_EVALUATIONS = 100_000;
 
 /** What is left for the trials of one question: a loop at which all of them fail is not to take many times as long. */
 export interface Patience {

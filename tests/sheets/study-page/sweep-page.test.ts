@@ -175,7 +175,9 @@ describe('limits', () => {
 
   test('are told by how far each case is from breaking one, against its bound', () => {
     const margins = limitMargins(methanol, one.table)!;
-    expect(Array.from(margins, (margin) => Math.round(1e9 * margin) / 1e9 + 0)).toEqual([-0.1, 0, 0.2, 0.6, 1.4]);
+    expect(Array.from(margins, (margin) => Math.round(1e9 * margin) / 1e9 + 0)).toEqual([
+      -0.1, 0, 0.2, 0.6, 1.4,
+    ]);
     expect(limitMargins(methanol, swept([bleed], { f: (p) => p }).table)).toBeNull();
   });
 });
