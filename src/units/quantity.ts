@@ -171,11 +171,14 @@ function beyond(value: number, limits: Limits): ['low' | 'high', number, boolean
   return null;
 }
 
+/** A number beyond it is no temperature that somebody meant, in whatever unit. */
+const HOTTEST_MEANT = 1e5;
+
 function bareNumber(text: string, number: number, dimension: Dimension): QuantityFault {
   const { noun, offered } = dimensions[dimension];
   const mend =
     dimension === 'temperature'
-      ? number > -273.15
+      ? number > -273.15 && number < HOTTEST_MEANT
         ? `write ${text} degC, or ${Number((number + 273.15).toPrecision(10))} K for the same temperature`
         : `write the temperature with its unit, e.g. 450 degC`
       : `write ${text} ${offered[0]} or another unit that fits: ${offered.slice(1).join(', ')}`;

@@ -112,6 +112,19 @@ test('figures for each tonne of next to nothing, or of a feed of next to nothing
   expect(notANumber(found)).toBe(false);
 });
 
+test.each(['1.7976931348623157e308', '1e5', '-300'])(
+  'a temperature of %s without a unit is asked for its unit, and no other number is made of it',
+  async (number) => {
+    const text = readFileSync(new URL('../../flowsheets/reference-loop.yaml', import.meta.url), 'utf8');
+    const { diagnostics } = await readFlowsheet(text, {
+      file: 'mutant.yaml',
+      set: [`condenser.temperature=${number}`],
+    });
+    const [fault] = diagnostics.filter(({ code }) => code === 'missing-unit');
+    expect(fault?.mend).toBe('write the temperature with its unit, e.g. 450 degC');
+  },
+);
+
 test('a title may be any words: a sheet that says them is no fault', async () => {
   const text = readFileSync(new URL('../../flowsheets/reference-loop.yaml', import.meta.url), 'utf8');
   expect(await judgeText(text.replace(/^title: .*$/m, 'title: NaN kmol/h'))).toBe('closed');
