@@ -97,10 +97,7 @@ function onward(
 }
 
 function reacts(plant: Plant, block: number, component: number, sign: 1 | -1): boolean {
-  const names = plant.kinds[block].reactionsIn?.(plant.blocks[block].settings) ?? [];
-  return plant.flowsheet.reactions.some(
-    (reaction) => names.includes(reaction.name) && sign * reaction.coefficients[component] > 0,
-  );
+  return plant.running[block].some(({ coefficients }) => sign * coefficients[component] > 0);
 }
 
 function passes(plant: Plant, block: number, port: string | null, component: number): boolean {

@@ -47,28 +47,8 @@ export function keyFigures(plant: Plant, tallied: Tallied, reports: readonly Blo
   return { ...(Object.fromEntries(read) as Omit<Figures, 'user'>), user: {} };
 }
 
-/** The reactions that run in a block. */
-function reactionsOf(plant: Plant, block: number): readonly Reaction[] {
-  return running(plant)[block];
-}
-
-function reactors(plant: Plant): number[] {
-  return running(plant).flatMap((reactions, b) => (reactions.length > 0 ? [b] : []));
-}
-
-/** By block; which reactions it names cannot be moved, and a study asks in every case. */
-const runningIn = new WeakMap<Plant['blocks'], (readonly Reaction[])[]>();
-
-function running({ blocks, kinds, flowsheet }: Plant): (readonly Reaction[])[] {
-  let known = runningIn.get(blocks);
-  if (known === undefined) {
-    known = blocks.map(({ settings }, b) => {
-      const names = kinds[b].reactionsIn?.(settings) ?? [];
-      return flowsheet.reactions.filter((reaction) => names.includes(reaction.name));
-    });
-    runningIn.set(blocks, known);
-  }
-  return known;
+function reactors({ running }: Plant): number[] {
+  return running.flatMap((reactions, b) => (reactions.length > 0 ? [b] : []));
 }
 
 /** All that enters a block, the cold shots of a reactor too, per component [mol/s]. */
@@ -85,7 +65,7 @@ function perPassConversion(plant: Plant): Figures['per_pass_conversion'] {
     reactors(plant).map((b) => {
       const inlet = fedTo(plant, b);
       const outlet = plant.outlets[b][0].flowsMolPerS;
-      const reactants = idsWhere(plant, (i) => inlet[i] > outlet[i] && isReactant(reactionsOf(plant, b), i));
+      const reactants = idsWhere(plant, (i) => inlet[i] > outlet[i] && isReactant(plant.running[b], i));
       return [
         plant.blocks[b].name,
         Object.fromEntries(reactants.map(([id, i]) => [id, (inlet[i] - outlet[i]) / inlet[i]])),
@@ -96,7 +76,7 @@ function perPassConversion(plant: Plant): Figures['per_pass_conversion'] {
 
 /** (in − out)/in over the battery limit of every reactant that is fed. */
 function overallConversion(plant: Plant, { entering, leaving }: Tallied): Figures['overall_conversion'] {
-  const running = reactors(plant).flatMap((b) => reactionsOf(plant, b));
+  const running = reactors(plant).flatMap((b) => plant.running[b]);
   return Object.fromEntries(
     idsWhere(plant, (i) => entering[i] > NOTHING && isReactant(running, i)).map(([id, i]) => [
       id,
@@ -164,7 +144,7 @@ function inerts(plant: Plant): Figures['inerts'] {
     reactors(plant).map((b) => {
       const inlet = fedTo(plant, b);
       let idle = 0;
-      for (let i = 0; i < inlet.length; i++) if (!takesPart(reactionsOf(plant, b), i)) idle += inlet[i];
+      for (let i = 0; i < inlet.length; i++) if (!takesPart(plant.running[b], i)) idle += inlet[i];
       const all = sumOf(inlet);
       return [plant.blocks[b].name, all > 0 ? idle / all : 0];
     }),

@@ -3,6 +3,7 @@ import { blockKinds } from '../blocks/registry.ts';
 import { PassTrouble } from '../diagnostics/diagnostic.ts';
 import { planCalculation } from '../graph/calculation-order.ts';
 import type { BlockSpec, Feed, Flowsheet } from '../model/flowsheet.ts';
+import type { Reaction } from '../model/reaction.ts';
 import { emptyStream, type StreamState } from '../model/stream.ts';
 import { enthalpyBasisFor } from '../properties/ideal-gas.ts';
 import { createMixture, type Mixture } from '../properties/mixture.ts';
@@ -27,6 +28,8 @@ export interface Plant {
   readonly mixture: Mixture;
   readonly blocks: readonly BlockSpec[];
   readonly kinds: readonly BlockKind[];
+  /** by block: the reactions that run in it; no setting that can be moved changes which */
+  readonly running: readonly (readonly Reaction[])[];
   readonly units: readonly Unit[];
   /** state of every stream as its source left it, in the order of the file */
   readonly streams: readonly StreamState[];
@@ -79,6 +82,7 @@ interface Frame {
   readonly mixture: Mixture;
   readonly vapourPressures: { readonly lnFactors: Float64Array; moves: number };
   readonly kinds: readonly BlockKind[];
+  readonly running: readonly (readonly Reaction[])[];
   readonly wiring: Wiring;
   readonly groups: readonly Group[];
   readonly smallestTears: boolean;
@@ -96,6 +100,10 @@ function frameOf(flowsheet: Flowsheet): Frame {
     moved: vapourPressures,
   });
   const kinds = blocks.map((b) => blockKinds.get(b.kind)!);
+  const running = blocks.map(({ settings }, b) => {
+    const names = kinds[b].reactionsIn?.(settings) ?? [];
+    return flowsheet.reactions.filter((reaction) => names.includes(reaction.name));
+  });
   const wiring = wire(flowsheet, blocks, kinds);
   const graph = stepGraph(flowsheet, blocks, kinds);
   const plan = planCalculation(
@@ -117,7 +125,7 @@ function frameOf(flowsheet: Flowsheet): Frame {
       tears: [...new Set(Array.from(group.tears, (edge) => graph.edgeStreams[edge]))],
     };
   });
-  return { flowsheet, mixture, vapourPressures, kinds, wiring, groups, smallestTears: plan.exact };
+  return { flowsheet, mixture, vapourPressures, kinds, running, wiring, groups, smallestTears: plan.exact };
 }
 
 /** Units, streams and settings of their own for a frame. */
@@ -146,6 +154,7 @@ function equip(frame: Frame): Plant {
     mixture,
     blocks,
     kinds,
+    running: frame.running,
     units,
     streams,
     seen,

@@ -80,8 +80,7 @@ function largestConversion(plant: Plant, b: number): { readonly id: string; read
   let id = '';
   let share = -1;
   for (const [i, component] of plant.mixture.components.entries()) {
-    const names = plant.kinds[b].reactionsIn!(plant.blocks[b].settings);
-    const isReactant = plant.flowsheet.reactions.some((r) => names.includes(r.name) && r.coefficients[i] < 0);
+    const isReactant = plant.running[b].some(({ coefficients }) => coefficients[i] < 0);
     const enters = plant.inlets[b].reduce((sum, state) => sum + state.flowsMolPerS[i], 0);
     if (!isReactant || !(enters > 0)) continue;
     const leaves = plant.outlets[b].reduce((sum, state) => sum + state.flowsMolPerS[i], 0);
